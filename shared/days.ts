@@ -1,4 +1,4 @@
-import { string, type StringSchema } from 'yup'
+import { string, type TestContext } from 'yup'
 
 /**
  * A calendar day as 'YYYY-MM-DD'. Text on purpose: no time zone can move a birthday.
@@ -225,13 +225,30 @@ export function correctedAge(input: {
   }
 }
 
+const startLower = (label: string): string => label.charAt(0).toLowerCase() + label.slice(1)
+
+function calendarDay(this: TestContext, label: string, value: string | null | undefined) {
+  if (value === undefined || value === null) return true
+  const problem = dayProblem(value)
+  return problem === null || this.createError({ message: `${label} ${problem}` })
+}
+
 /**
- * A yup field for a day sent as 'YYYY-MM-DD', with a message that says what is wrong with it ('The date of birth
- * cannot be 31 February 2026…'). `label` starts the message. Add `.required()` or `.nullable()` as the form needs.
+ * A yup field for a day that must be given, sent as 'YYYY-MM-DD'. `label` starts the message, which says what is
+ * wrong: 'The date of birth cannot be 31 February 2026: that month has 28 days'.
  */
-export const dayField = (label: string): StringSchema =>
-  string().test('calendar-day', (value, context) => {
-    if (value === undefined || value === null) return true
-    const problem = dayProblem(value)
-    return problem === null || context.createError({ message: `${label} ${problem}` })
-  })
+export const dayField = (label: string) =>
+  string()
+    .required(`Enter ${startLower(label)}`)
+    .test('calendar-day', function (value) {
+      return value === '' || calendarDay.call(this, label, value)
+    })
+
+/** As `dayField`, for a day that may be missing. Absence is null, never the empty string. */
+export const optionalDayField = (label: string) =>
+  string()
+    .nullable()
+    .defined()
+    .test('calendar-day', function (value) {
+      return calendarDay.call(this, label, value)
+    })

@@ -16,6 +16,7 @@ import {
   formatDay,
   formatMoment,
   isDay,
+  optionalDayField,
   usesCorrectedAge,
   weeksBetween,
   workingDaysBetween,
@@ -210,7 +211,7 @@ describe('working days', () => {
 })
 
 describe('dayField', () => {
-  const field = dayField('The date of birth').required('Enter the date of birth')
+  const field = dayField('The date of birth')
 
   it.each([
     ['2026-02-31', 'The date of birth cannot be 31 February 2026: that month has 28 days'],
@@ -222,9 +223,26 @@ describe('dayField', () => {
     await expect(field.validate(value)).rejects.toThrow(message)
   })
 
-  it('lets a real day through unchanged, and an absent one when it is not required', async () => {
+  it('lets a real day through unchanged', async () => {
     await expect(field.validate('2018-11-03')).resolves.toBe('2018-11-03')
-    await expect(dayField('The day').nullable().validate(null)).resolves.toBeNull()
-    await expect(dayField('The day').validate('')).rejects.toThrow('needs a day')
+  })
+
+  it.each([undefined, ''])(
+    'asks for a missing day once, with one message, when it gets %j',
+    async (value) => {
+      await expect(field.validate(value, { abortEarly: false })).rejects.toMatchObject({
+        errors: ['Enter the date of birth'],
+      })
+    },
+  )
+
+  it('takes null for an absent day only where it may be missing, and never the empty string', async () => {
+    const optional = optionalDayField('The next review')
+    await expect(optional.validate(null)).resolves.toBeNull()
+    await expect(optional.validate('2026-02-30')).rejects.toThrow(
+      'The next review cannot be 30 February 2026',
+    )
+    await expect(optional.validate('')).rejects.toThrow('The next review needs a day')
+    await expect(field.validate(null)).rejects.toThrow('Enter the date of birth')
   })
 })
