@@ -1,0 +1,14 @@
+import type { Page } from '@shared/pages.ts'
+import type { ClassChoice, SchoolClassDetails, SchoolDetails, SchoolView } from '@shared/schools.ts'
+import { http } from './http.ts'
+
+export const schoolsApi = {
+  page: (query: { page?: number; search?: string }) => http.get<Page<SchoolView>>('/schools', { query }),
+  classChoices: () => http.get<ClassChoice[]>('/class-choices'),
+  create: (details: SchoolDetails, idempotencyKey: string) =>
+    http.post<SchoolView>('/schools', details, { idempotencyKey }),
+  createClass: (details: SchoolClassDetails, idempotencyKey: string) =>
+    http.post<{ id: string }>('/classes', details, { idempotencyKey }),
+  updateClass: (id: string, details: SchoolClassDetails, version: number) =>
+    http.put<{ id: string }>(`/classes/${id}`, details, { ifMatch: version }),
+}

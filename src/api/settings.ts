@@ -1,0 +1,8 @@
+import type { ClinicSettings, ClinicSettingsView } from '@shared/settings.ts'
+import { http } from './http.ts'
+
+export const settingsApi = {
+  get: () => http.get<ClinicSettingsView>('/settings'),
+  update: (settings: ClinicSettings, version: number) =>
+    http.put<ClinicSettingsView>('/settings', settings, { ifMatch: version }),
+}
