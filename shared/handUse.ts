@@ -129,6 +129,11 @@ export const handUseStandingLabels: Record<HandUseStanding, string> = {
   not_scorable: 'Not scorable: fewer than 6 activities answered',
 }
 export type HandUseDirection = 'left' | 'mixed' | 'right'
+export const handUseDirectionLabels: Record<HandUseDirection, string> = {
+  left: 'Left',
+  mixed: 'Mixed',
+  right: 'Right',
+}
 
 /** Clinic rule, not a published one: how many answers a quotient needs. */
 export const leastForProvisional = 6
@@ -152,7 +157,10 @@ export interface HandUseScore {
 }
 
 /** The side a quotient is called under a set of cut-offs. */
-export function directionOf(quotient: number, cutOffs: CutOffSet): HandUseDirection {
+export function directionOf(
+  quotient: number,
+  cutOffs: Pick<CutOffSet, 'left' | 'right' | 'inclusive'>,
+): HandUseDirection {
   if (quotient < cutOffs.left || (cutOffs.inclusive && quotient === cutOffs.left)) return 'left'
   if (quotient > cutOffs.right || (cutOffs.inclusive && quotient === cutOffs.right)) return 'right'
   return 'mixed'
