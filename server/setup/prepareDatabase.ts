@@ -11,7 +11,8 @@ export const prepareDatabase = async (owner: DatabaseAccess, app: DatabaseAccess
     const account = await accountOf(app)
     await applyGrants(dataSource, owner.database, account)
     const [user, host] = account.split('@')
-    for (const view of ['guard_names', 'passing_keys']) await dataSource.query(`GRANT SELECT ON ${view} TO ?@?`, [user, host])
+    for (const view of ['guard_names', 'passing_keys'])
+      await dataSource.query(`GRANT SELECT ON ${view} TO ?@?`, [user, host])
   } finally {
     await dataSource.destroy()
   }

@@ -1,0 +1,9 @@
+let source = () => new Date()
+
+/** The one clock of the server: ages, waits, due dates, links and retention all read it. */
+export const now = (): Date => source()
+
+/** Tests put their own clock in place. */
+export const setClock = (next: () => Date): void => {
+  source = next
+}

@@ -1,0 +1,5 @@
+import { CreateClinic1764547200000 } from './1764547200000-CreateClinic.ts'
+import { CloseWhatIsClosed1764547300000 } from './1764547300000-CloseWhatIsClosed.ts'
+
+/** In order of time. */
+export const migrations = [CreateClinic1764547200000, CloseWhatIsClosed1764547300000]

@@ -1,0 +1,103 @@
+import type { EntityTarget, ObjectLiteral } from 'typeorm'
+import type { ConsentPurpose } from '../../shared/consents.ts'
+import type { ChildRelation } from '../../shared/roles.ts'
+import type { Viewer } from '../access/actor.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { now } from '../clock.ts'
+import { database, type Tx } from '../dataSource.ts'
+import { notFound } from '../errors.ts'
+import type { Fragment } from './sql.ts'
+
+/** Consent rows in force at :scopeNow for the child in `column`: given, not expired, not withdrawn (end exclusive). */
+export const consentInForce = (column: string, purposes: readonly ConsentPurpose[]): Fragment => ({
+  sql: `EXISTS (SELECT 1 FROM consents sc WHERE sc.childId = ${column} AND sc.kind = 'given'
+    AND sc.purpose IN (:scopePurposes) AND sc.at <= :scopeNow AND (sc.expiresAt IS NULL OR sc.expiresAt > :scopeNow)
+    AND NOT EXISTS (SELECT 1 FROM consents sw WHERE sw.withdrawsId = sc.id AND sw.at <= :scopeNow))`,
+  parameters: { scopePurposes: purposes, scopeNow: now() },
+})
+
+const heldByTherapist = (column: string) => `EXISTS (SELECT 1 FROM assignments sa WHERE sa.childId = ${column}
+  AND sa.therapistId = :scopeViewer AND sa.startedAt <= :scopeNow AND (sa.endedAt IS NULL OR sa.endedAt > :scopeNow))`
+
+const linkedGuardian = (column: string) => `EXISTS (SELECT 1 FROM guardians sg WHERE sg.childId = ${column}
+  AND sg.userId = :scopeViewer AND sg.restricted = 0 AND sg.verifiedAt <= :scopeNow
+  AND (sg.endedAt IS NULL OR sg.endedAt > :scopeNow))`
+
+const taughtNow = (column: string) => `EXISTS (SELECT 1 FROM children st
+  JOIN class_teachers sct ON sct.schoolClassId = st.schoolClassId
+  WHERE st.id = ${column} AND sct.teacherId = :scopeViewer AND sct.startedAt <= :scopeNow
+  AND (sct.endedAt IS NULL OR sct.endedAt > :scopeNow))`
+
+/** School purposes that make a child known to the teacher at all. */
+export const schoolPurposes: readonly ConsentPurpose[] = [
+  'share_school_seating',
+  'share_school_goals',
+  'share_school_samples',
+  'share_school_observation',
+]
+
+/**
+ * Condition that keeps rows to children to whom the viewer stands in this relation now.
+ * It belongs into every query on a child's data, so that nothing is loaded first and compared later.
+ */
+export const childScope = (viewer: Viewer, relation: ChildRelation, column: string): Fragment => {
+  const parameters = { scopeViewer: viewer.id, scopeNow: now() }
+  const holds = (role: (typeof viewer.roles)[number]) => viewer.roles.includes(role)
+  switch (relation) {
+    case 'guardian':
+      return { sql: linkedGuardian(column), parameters }
+    case 'assignedTherapist':
+      return holds('therapist') ? { sql: heldByTherapist(column), parameters } : nobody
+    case 'clinicLead':
+      return holds('clinicLead') ? everyChild : nobody
+    case 'administrator':
+      return holds('administrator') ? everyChild : nobody
+    case 'teacher': {
+      const consent = consentInForce(column, schoolPurposes)
+      return holds('teacher')
+        ? {
+            sql: `(${taughtNow(column)} AND ${consent.sql})`,
+            parameters: { ...consent.parameters, ...parameters },
+          }
+        : nobody
+    }
+  }
+}
+
+const everyChild: Fragment = { sql: '1 = 1', parameters: {} }
+const nobody: Fragment = { sql: '1 = 0', parameters: {} }
+
+/** The scope of an access that was found already, for the queries that follow it. */
+export const within = (access: ChildAccess, column: string): Fragment => {
+  const scope = childScope(access.viewer, access.relation, column)
+  return {
+    sql: `${column} = :scopeChild AND ${scope.sql}`,
+    parameters: { ...scope.parameters, scopeChild: access.childId },
+  }
+}
+
+/**
+ * Loads one entity of this child for writing, under the viewer's scope.
+ * `lock` takes the row FOR UPDATE inside the transaction. Absent or not theirs: the same 404.
+ */
+export const findForChild = async <E extends ObjectLiteral>(
+  access: ChildAccess,
+  target: EntityTarget<E>,
+  id: string,
+  tx?: Tx,
+  options: { lock?: boolean } = {},
+): Promise<E> => {
+  if (!isId(id)) throw notFound()
+  const scope = within(access, 'row.childId')
+  const query = (tx ?? database().manager)
+    .createQueryBuilder(target, 'row')
+    .where('row.id = :rowId', { rowId: id })
+    .andWhere(scope.sql.replace(/:scopePurposes/g, ':...scopePurposes'), scope.parameters)
+  if (options.lock) query.setLock('pessimistic_write')
+  const found = await query.getOne()
+  if (!found) throw notFound()
+  return found
+}
+
+export const isId = (value: string): boolean =>
+  /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/.test(value)

@@ -1,0 +1,225 @@
+import { createHash, randomBytes, randomUUID } from 'node:crypto'
+import type { TokenPurpose } from '../../shared/users.ts'
+import { systemActor, type Actor, type Viewer } from '../access/actor.ts'
+import { now } from '../clock.ts'
+import { database, type Tx } from '../dataSource.ts'
+import { User } from '../entities/User.ts'
+import { UserToken } from '../entities/UserToken.ts'
+import { forbidden, gone } from '../errors.ts'
+import { passwordChangedMail, passwordResetMail } from '../mail/mailTemplates.ts'
+import { recordAudit } from './audit.ts'
+import { enqueueMail } from './outbox.ts'
+import { assertStrongPassword, hashPassword, needsRehash, verifyPassword } from './passwords.ts'
+import { readSettings } from './settings.ts'
+import { clearAttempts, countAttempt, countHit } from './throttles.ts'
+import { transact } from './transact.ts'
+
+const resetMinutes = 30
+const invitationHours = 72
+
+export const hashToken = (token: string) => createHash('sha256').update(token).digest()
+export const newToken = () => randomBytes(32).toString('base64url')
+
+/** The person as requests know them; null for an unknown or disabled account. */
+export const findViewer = async (userId: string): Promise<(Viewer & { user: User }) | null> => {
+  const user = await database().manager.findOneBy(User, { id: userId })
+  if (!user || user.disabledAt) return null
+  return {
+    id: user.id,
+    displayName: user.displayName,
+    roles: user.roles,
+    newlyQualified: user.newlyQualified,
+    user,
+  }
+}
+
+export interface SignInAttempt {
+  email: string
+  password: string
+  address: string
+  /** Token of the browser's device cookie, when it has one. */
+  device: string | null
+  requestId: string
+}
+
+/**
+ * Checks an address and password. Unknown address, wrong password and disabled account answer alike (null) after the
+ * same work. A browser known for this account has a count of its own, so strangers' guesses cannot lock its owner out.
+ */
+export const checkSignIn = async ({
+  email,
+  password,
+  address,
+  device,
+  requestId,
+}: SignInAttempt): Promise<User | null> => {
+  const user = await database()
+    .manager.createQueryBuilder(User, 'u')
+    .addSelect('u.passwordHash')
+    .where('u.email = :email', { email })
+    .getOne()
+  const known = user && device ? await isKnownDevice(user.id, device) : false
+  const key = known ? `device:${device}` : `account:${email.toLowerCase()}`
+  await countHit(`address:${address}`, 30, 60)
+  await countAttempt(key)
+  const matches = await verifyPassword(user?.passwordHash ?? null, password)
+  if (!user || !matches || user.disabledAt) {
+    await recordAudit(
+      { ...systemActor(requestId) },
+      { action: 'sign_in.refused', objectType: 'user', objectId: user?.id, result: 'denied' },
+    )
+    return null
+  }
+  await clearAttempts(key)
+  if (user.passwordHash && needsRehash(user.passwordHash))
+    await database().manager.update(User, { id: user.id }, { passwordHash: await hashPassword(password) })
+  return user
+}
+
+const isKnownDevice = async (userId: string, device: string): Promise<boolean> => {
+  const [row] = (await database().query('SELECT id FROM known_devices WHERE tokenHash = ? AND userId = ?', [
+    hashToken(device),
+    userId,
+  ])) as { id: string }[]
+  return row !== undefined
+}
+
+/** Notes the sign-in and makes this browser a known one. */
+export const noteSignIn = async (user: User, requestId: string, device: string): Promise<void> => {
+  const actor: Actor = {
+    ...systemActor(requestId),
+    viewer: {
+      id: user.id,
+      displayName: user.displayName,
+      roles: user.roles,
+      newlyQualified: user.newlyQualified,
+    },
+  }
+  await transact(actor, async (tx, record) => {
+    await tx.update(User, { id: user.id }, { lastSignInAt: now() })
+    await tx.query(
+      `INSERT INTO known_devices (id, tokenHash, userId, createdAt, lastUsedAt) VALUES (?, ?, ?, ?, ?)
+       ON DUPLICATE KEY UPDATE lastUsedAt = VALUES(lastUsedAt)`,
+      [randomUUID(), hashToken(device), user.id, now(), now()],
+    )
+    record({ action: 'sign_in.done', objectType: 'user', objectId: user.id })
+  })
+}
+
+/** Makes a single-use link token; the caller's e-mail carries it, the database only its hash. */
+export const issueToken = async (tx: Tx, userId: string, purpose: TokenPurpose): Promise<string> => {
+  const token = newToken()
+  const minutes = purpose === 'invitation' ? invitationHours * 60 : resetMinutes
+  await tx.insert(UserToken, {
+    id: randomUUID(),
+    tokenHash: hashToken(token),
+    userId,
+    purpose,
+    createdAt: now(),
+    expiresAt: new Date(now().getTime() + minutes * 60_000),
+    usedAt: null,
+  })
+  return token
+}
+
+/** Sends a reset link when the address has an active account; says the same either way. */
+export const requestPasswordReset = async (
+  email: string,
+  address: string,
+  requestId: string,
+  appUrl: string,
+): Promise<void> => {
+  await countHit(`reset:${email.toLowerCase()}`, 3, 3600)
+  await countHit(`reset-address:${address}`, 20, 3600)
+  const user = await database().manager.findOneBy(User, { email })
+  const settings = await readSettings()
+  await transact(systemActor(requestId), async (tx, record) => {
+    record({ action: 'password_reset.requested', objectType: 'user', objectId: user?.id })
+    if (!user || user.disabledAt) return
+    const token = await issueToken(tx, user.id, 'password_reset')
+    const mail = passwordResetMail({
+      clinicName: settings.clinicName,
+      link: `${appUrl}/reset-password#${token}`,
+    })
+    await enqueueMail(tx, { kind: 'password_reset', recipient: user.email, ...mail }, null)
+  })
+}
+
+/**
+ * Sets a password through an invitation or reset link. The link works once and only for its purpose; anything else
+ * answers 410. All sign-ins of the person end; nobody is signed in by a link.
+ */
+export const useToken = async (
+  token: string,
+  purpose: TokenPurpose,
+  password: string,
+  address: string,
+  requestId: string,
+): Promise<void> => {
+  await countHit(`token:${address}`, 30, 60)
+  const spent = () => gone('link_used', 'This link has been used or is too old. Ask for a new one.')
+  const found = await database()
+    .manager.createQueryBuilder(UserToken, 't')
+    .innerJoinAndSelect('t.user', 'u')
+    .where('t.tokenHash = :hash AND t.purpose = :purpose', { hash: hashToken(token), purpose })
+    .getOne()
+  if (!found || found.usedAt || found.expiresAt <= now() || found.user.disabledAt) throw spent()
+  const settings = await readSettings()
+  assertStrongPassword(password, [found.user.displayName, found.user.email, settings.clinicName])
+  const passwordHash = await hashPassword(password)
+  await transact(systemActor(requestId), async (tx, record) => {
+    const used = (await tx.query(
+      'UPDATE user_tokens SET usedAt = ? WHERE id = ? AND usedAt IS NULL AND expiresAt > ?',
+      [now(), found.id, now()],
+    )) as { affectedRows: number }
+    if (used.affectedRows !== 1) throw spent()
+    await setPassword(tx, found.userId, passwordHash)
+    record({ action: `${purpose}.used`, objectType: 'user', objectId: found.userId })
+  })
+  await clearAttempts(`account:${found.user.email.toLowerCase()}`)
+}
+
+const setPassword = async (tx: Tx, userId: string, passwordHash: string) => {
+  await tx.update(User, { id: userId }, { passwordHash })
+  await tx.query('UPDATE user_tokens SET usedAt = ? WHERE userId = ? AND usedAt IS NULL', [now(), userId])
+  await tx.query('UPDATE user_sessions SET endedAt = ? WHERE userId = ? AND endedAt IS NULL', [now(), userId])
+}
+
+/** Changes the own password; every other sign-in ends and a notice goes out. `keep` is the hash of the current session. */
+export const changePassword = async (
+  actor: Actor,
+  viewer: Viewer,
+  current: string,
+  next: string,
+  keep: Buffer,
+): Promise<void> => {
+  const user = await database()
+    .manager.createQueryBuilder(User, 'u')
+    .addSelect('u.passwordHash')
+    .where('u.id = :id', { id: viewer.id })
+    .getOneOrFail()
+  await countAttempt(`password:${user.id}`)
+  if (!(await verifyPassword(user.passwordHash, current)))
+    throw forbidden('The current password is not right.')
+  await clearAttempts(`password:${user.id}`)
+  const settings = await readSettings()
+  assertStrongPassword(next, [user.displayName, user.email, settings.clinicName])
+  const passwordHash = await hashPassword(next)
+  await transact(actor, async (tx, record) => {
+    await tx.update(User, { id: user.id }, { passwordHash })
+    await tx.query(
+      'UPDATE user_sessions SET endedAt = ? WHERE userId = ? AND idHash <> ? AND endedAt IS NULL',
+      [now(), user.id, keep],
+    )
+    await enqueueMail(
+      tx,
+      {
+        kind: 'password_changed',
+        recipient: user.email,
+        ...passwordChangedMail({ clinicName: settings.clinicName }),
+      },
+      user.id,
+    )
+    record({ action: 'password.changed', objectType: 'user', objectId: user.id })
+  })
+}

@@ -1,0 +1,16 @@
+import type { DataSource } from 'typeorm'
+import { closeDatabase, openDatabase } from '../../server/dataSource.ts'
+import { openAuditChain } from '../../server/services/audit.ts'
+import { prepareDatabase } from '../../server/setup/prepareDatabase.ts'
+import { createEmptyDatabase } from './database.ts'
+
+/** A fresh migrated database with its grants, opened as the app account. Call in beforeAll; close in afterAll. */
+export const openClinicDatabase = async (): Promise<DataSource> => {
+  const access = await createEmptyDatabase()
+  await prepareDatabase(access.migrate, access.app)
+  const dataSource = await openDatabase(access.app)
+  await openAuditChain('test')
+  return dataSource
+}
+
+export const closeClinicDatabase = closeDatabase
