@@ -27,7 +27,7 @@ const compiled = wordingRules.map((rule) => ({
   patterns: rule.patterns.map((pattern) => new RegExp(pattern.replaceAll('’', "'"), 'giu')),
 }))
 
-const pastAct = /\b(?:was|were|had\s+been|has\s+been|have\s+been|been|used\s+to)\b/i
+const pastAct = /\b(?:was|were|had|been|used\s+to)\b/i
 const lookingAhead =
   /\b(?:will|should|must|needs?\s+to|can|could|shall|plan(?:s|ned)?\s+to|aims?\s+to|tr(?:y|ies)\s+to|decided|agreed|advis(?:e|es|ed)|recommend(?:s|ed)?|suggest(?:s|ed)?|let\s+us|please)\b/i
 const negated =

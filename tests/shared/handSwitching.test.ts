@@ -20,6 +20,9 @@ describe('asksToSwitchHand', () => {
     'We will correct his handedness',
     'Convert the writing hand',
     'TURN TO THE OTHER HAND',
+    'Switch Amara to the right hand',
+    'Correct Amara’s handedness',
+    'Transfer him over to writing with his right hand',
   ])('refuses "%s" whatever hand the child writes with', (text) => {
     expect(asksToSwitchHand(text)).toBe(true)
   })
@@ -46,6 +49,10 @@ describe('asksToSwitchHand', () => {
     'Moves to the next line on time',
     'Turns to the right page',
     'Writes the correct answer in the box',
+    'Moves her writing over to the right-hand side of the desk',
+    'Passes and moves the ball to the other hand',
+    'Moves a bean bag to the other hand and back',
+    'Learns the correct hand position for the scissors',
     'Changes into PE clothes in five minutes',
     'Ties laces, the left hand leading and the right hand helping',
   ])('lets "%s" stand', (text) => {
