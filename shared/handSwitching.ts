@@ -12,7 +12,7 @@ const someone = String.raw`(?!(?:ball|bag|bean|toy|object|cup|page|paper|book|ja
 
 /** "Switch to the right hand", "change his writing over to the other hand", "become right-handed". */
 export const changeOfHandPatterns: readonly string[] = [
-  String.raw`\b${change}\s+(?:(?:${whose}${tool}|(?:the\s+)?${someone})\s+)*?(?:over\s+)?(?:in)?to\s+(?:(?:using|use|writing|write|drawing|draw)\s+(?:with\s+)?)?${whose}${hand}`,
+  String.raw`\b${change}\s+(?:(?:${whose}${tool}|(?:the\s+)?${someone})\s+){0,3}?(?:over\s+)?(?:in)?to\s+(?:(?:using|use|writing|write|drawing|draw)\s+(?:with\s+)?)?${whose}${hand}`,
   String.raw`\b(?:become|becomes|becoming|learns? to be|be made|turn(?:s|ed)? into|make \p{L}+)\s+(?:a\s+)?(?:right|left)[\s-]+hand(?:ed|er)\b`,
   String.raw`\b(?:right|left|other|correct|proper)\s+hand\s+(?:instead of|rather than|not)\s+${whose}(?:left|right|other|wrong)\b`,
   String.raw`\b(?:stop|stops|avoid|avoids|discourage|discourages|less|not|never|without|quit|give up)\s+(?:the\s+)?(?:us(?:e|es|ing)|writ(?:e|es|ing)|draw(?:s|ing)?)(?:\s+of)?(?:\s+(?:with|in))?\s+${whose}(?:left|right)[\s-]+hand\b`,

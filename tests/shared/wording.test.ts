@@ -148,6 +148,13 @@ describe('checkWording: positions and order', () => {
     )
   })
 
+  it('reads a long letter of repeated near-misses without grinding', () => {
+    const text = 'change the hand the hand over to the child still using not a good hand '.repeat(300)
+    const started = performance.now()
+    checkWording(text)
+    expect(performance.now() - started).toBeLessThan(2000)
+  })
+
   it('gives every rule a reason and something to write instead, itself free of hits', () => {
     for (const rule of wordingRules) {
       expect(rule.why).not.toBe('')
