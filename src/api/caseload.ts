@@ -1,6 +1,6 @@
-import type { CaseloadPage, CaseloadQuery } from '@shared/caseload.ts'
-import { http } from './http.ts'
+import type { CaseloadPage } from '@shared/caseload.ts'
+import { http, type ReadOptions } from '@/api/http.ts'
 
 export const caseloadApi = {
-  page: (query: CaseloadQuery) => http.get<CaseloadPage>('/caseload', { query: { ...query } }),
+  page: (query: ReadOptions['query']) => http.get<CaseloadPage>('/caseload', { query }),
 }

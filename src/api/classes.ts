@@ -1,10 +1,10 @@
 import type { AdviceReplyGiven, PupilPage, PupilView, TeacherClassRow } from '@shared/schoolAdvice.ts'
-import { http } from './http.ts'
+import { http, type ReadOptions } from '@/api/http.ts'
 
 /** What a teacher may see and do. */
 export const classesApi = {
   all: () => http.get<TeacherClassRow[]>('/classes'),
-  pupils: (classId: string, query: { page?: number }) =>
+  pupils: (classId: string, query: ReadOptions['query']) =>
     http.get<PupilPage>(`/classes/${classId}/pupils`, { query }),
   pupil: (childId: string) => http.get<PupilView>(`/pupils/${childId}`),
   reply: (childId: string, adviceId: string, given: AdviceReplyGiven) =>

@@ -2,7 +2,7 @@ import type { ConsentPurpose } from '@shared/consents.ts'
 import type { MyChildRow, MyChildView } from '@shared/family.ts'
 import type { OwnContact } from '@shared/guardians.ts'
 import type { ReceivedLetter } from '@shared/letters.ts'
-import { http } from './http.ts'
+import { http } from '@/api/http.ts'
 
 /** What a parent or carer may see and do. */
 export const familyApi = {
@@ -15,7 +15,7 @@ export const familyApi = {
   withdrawConsent: (childId: string, consentId: string, reason: string) =>
     http.post<void>(`/my/children/${childId}/consents/${consentId}/withdraw`, { reason }),
   letter: (letterId: string) => http.get<ReceivedLetter>(`/my/letters/${letterId}`),
-  letterPdf: (letterId: string) => `/api/my/letters/${letterId}/pdf`,
+  letterPdfUrl: (letterId: string) => `/api/my/letters/${letterId}/pdf`,
   delivery: (deliveryId: string) =>
     http.get<{ letterId: string; childId: string }>(`/my/deliveries/${deliveryId}`),
 }

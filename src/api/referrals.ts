@@ -7,7 +7,7 @@ import type {
   ReferralView,
 } from '@shared/referrals.ts'
 import type { Day } from '@shared/days.ts'
-import { http } from './http.ts'
+import { http, type ReadOptions } from '@/api/http.ts'
 
 /** Who a referral is about, as far as a duplicate can be told. */
 export interface SameChildQuestion {
@@ -16,17 +16,8 @@ export interface SameChildQuestion {
   birthDate: Day
 }
 
-export interface ReferralQuery {
-  page?: number
-  size?: number
-  status?: string
-  search?: string
-  sort?: string
-  direction?: 'asc' | 'desc'
-}
-
 export const referralsApi = {
-  page: (query: ReferralQuery) => http.get<ReferralPage>('/referrals', { query: { ...query } }),
+  page: (query: ReadOptions['query']) => http.get<ReferralPage>('/referrals', { query }),
   byId: (id: string) => http.get<ReferralView>(`/referrals/${id}`),
   create: (details: ReferralDetails, idempotencyKey: string) =>
     http.post<ReferralView>('/referrals', details, { idempotencyKey }),

@@ -1,9 +1,9 @@
 import type { Page } from '@shared/pages.ts'
 import type { ClassChoice, SchoolClassDetails, SchoolDetails, SchoolView } from '@shared/schools.ts'
-import { http } from './http.ts'
+import { http, type ReadOptions } from '@/api/http.ts'
 
 export const schoolsApi = {
-  page: (query: { page?: number; search?: string }) => http.get<Page<SchoolView>>('/schools', { query }),
+  page: (query: ReadOptions['query']) => http.get<Page<SchoolView>>('/schools', { query }),
   classChoices: () => http.get<ClassChoice[]>('/class-choices'),
   create: (details: SchoolDetails, idempotencyKey: string) =>
     http.post<SchoolView>('/schools', details, { idempotencyKey }),

@@ -1,5 +1,5 @@
 import type { ClinicSettings, ClinicSettingsView } from '@shared/settings.ts'
-import { http } from './http.ts'
+import { http } from '@/api/http.ts'
 
 export const settingsApi = {
   get: () => http.get<ClinicSettingsView>('/settings'),

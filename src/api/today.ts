@@ -1,5 +1,5 @@
 import type { TodayView } from '@shared/today.ts'
-import { http } from './http.ts'
+import { http } from '@/api/http.ts'
 
 export const todayApi = {
   get: () => http.get<TodayView>('/today'),

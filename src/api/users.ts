@@ -1,9 +1,9 @@
 import type { Page } from '@shared/pages.ts'
 import type { StaffInvitation, TherapistChoice, UserChange, UserRow } from '@shared/users.ts'
-import { http } from './http.ts'
+import { http, type ReadOptions } from '@/api/http.ts'
 
 export const usersApi = {
-  page: (query: { page?: number; search?: string }) => http.get<Page<UserRow>>('/users', { query }),
+  page: (query: ReadOptions['query']) => http.get<Page<UserRow>>('/users', { query }),
   therapists: () => http.get<TherapistChoice[]>('/therapists'),
   invite: (invitation: StaffInvitation, idempotencyKey: string) =>
     http.post<UserRow>('/invitations', invitation, { idempotencyKey }),

@@ -80,7 +80,7 @@ describe('BirthDateField', () => {
     const described = wrapper.get('fieldset').attributes('aria-describedby')!.split(' ')
     expect(described.map((id) => wrapper.get(`#${id}`).text())).toEqual([
       'For example 27 3 2018',
-      'Check the year',
+      'Error: Check the year',
     ])
     for (const box of wrapper.findAll('input')) {
       expect(wrapper.find(`label[for="${box.attributes('id')}"]`).exists()).toBe(true)
