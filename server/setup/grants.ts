@@ -11,14 +11,17 @@ const migrationsTable = 'migrations'
 const rowRights = ['SELECT', 'INSERT', 'UPDATE', 'DELETE'] as const
 type RowRight = (typeof rowRights)[number]
 
+export type TableRights = { updatable: readonly string[]; deletable: readonly string[] }
+const productRights: TableRights = { updatable: updatableTables, deletable: deletableTables }
+
 /** What the app account may do with the rows of a table, and nothing else. */
-export function rightsOn(table: string): RowRight[] {
+function rightsOn(table: string, { updatable, deletable }: TableRights): RowRight[] {
   if (table === migrationsTable) return ['SELECT']
   return [
     'SELECT',
     'INSERT',
-    ...(updatableTables.includes(table) ? (['UPDATE'] as const) : []),
-    ...(deletableTables.includes(table) ? (['DELETE'] as const) : []),
+    ...(updatable.includes(table) ? (['UPDATE'] as const) : []),
+    ...(deletable.includes(table) ? (['DELETE'] as const) : []),
   ]
 }
 
@@ -40,15 +43,22 @@ export async function accountOf(access: DatabaseAccess): Promise<string> {
  * `appAccount` is `user@host` (see accountOf). Throws when tableRights.ts names a table that does not exist, so that a
  * misspelt name cannot pass for a right withheld.
  */
-export async function applyGrants(owner: SqlRunner, database: string, appAccount: string): Promise<void> {
+export async function applyGrants(
+  owner: SqlRunner,
+  database: string,
+  appAccount: string,
+  rights: TableRights = productRights,
+): Promise<void> {
   const tables = await tablesOf(owner, database)
-  const unknown = [...updatableTables, ...deletableTables].filter((name) => !tables.includes(name))
+  const unknown = [...new Set([...rights.updatable, ...rights.deletable])].filter(
+    (name) => !tables.includes(name),
+  )
   if (unknown.length > 0)
     throw new Error(`tableRights.ts names no table of the schema: ${unknown.join(', ')}`)
   const at = appAccount.lastIndexOf('@')
   const account = `${quoteText(appAccount.slice(0, at))}@${quoteText(appAccount.slice(at + 1))}`
   for (const table of tables) {
-    const given = rightsOn(table)
+    const given = rightsOn(table, rights)
     const taken = [...rowRights.filter((right) => !given.includes(right)), ...schemaRights]
     const target = `${quoteName(database)}.${quoteName(table)}`
     // First given, then taken: the grant makes the entry that a revoke insists on, and no right is missing in between.
@@ -64,7 +74,11 @@ const schemaRights = ['CREATE', 'DROP', 'ALTER', 'INDEX', 'REFERENCES', 'TRIGGER
  * For the check at boot: in which points the rights of the signed-in app account differ from what they should be.
  * An empty list means all is well. Covers rights on single tables, on whole databases and on the server.
  */
-export async function findRightsProblems(app: SqlRunner, database: string): Promise<string[]> {
+export async function findRightsProblems(
+  app: SqlRunner,
+  database: string,
+  rights: TableRights = productRights,
+): Promise<string[]> {
   const ofThisAccount = `REPLACE(GRANTEE, '''', '') = CURRENT_USER()`
   const wide = (await app.query(
     `SELECT PRIVILEGE_TYPE AS name, 'every table' AS place FROM information_schema.SCHEMA_PRIVILEGES
@@ -83,7 +97,7 @@ export async function findRightsProblems(app: SqlRunner, database: string): Prom
   const problems = wide.map(({ name, place }) => `the app account must not have ${name} on ${place}`)
   for (const table of await tablesOf(app, database)) {
     const actual = narrow.filter((right) => right.place === table).map((right) => right.name)
-    const wanted: string[] = rightsOn(table)
+    const wanted: string[] = rightsOn(table, rights)
     problems.push(
       ...wanted
         .filter((name) => !actual.includes(name))

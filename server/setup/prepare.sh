@@ -1,7 +1,7 @@
 # Read by start.sh, test.sh and dev.sh: brings a fresh Debian with only Node to the point where they can work.
 # Plain POSIX shell, because it runs before node_modules exists.
 
-say() { printf '%s\n' "$*" >&2; }
+say() { printf '%s\n' "$@" >&2; }
 stop() { say "$@"; exit 1; }
 
 need_node() {
@@ -29,8 +29,8 @@ need_packages() {
   # The first try fails when the package lists were never fetched, or are out of date.
   # shellcheck disable=SC2086
   if ! $line >"$log" 2>&1; then
-    if ! apt-get update >"$log" 2>&1 || ! $line >"$log" 2>&1; then
-      tail -n 5 "$log" >&2
+    if ! apt-get update >"$log" 2>&1 || ! $line >>"$log" 2>&1; then
+      grep -E '^[EW]: ' "$log" | head -n 5 >&2
       rm -f "$log"
       stop "Could not install: $*" "When the network is there, run:  apt-get update && $line"
     fi
