@@ -1,0 +1,57 @@
+/** What referral and history say. Null is "not asked or not known". */
+export interface RedFlagHistory {
+  ageMonths: number | null
+  /** Calendar age in months at which one hand was first preferred, as the family remembers it. */
+  firstPreferenceMonths: number | null
+  /** Whether that early preference was steady. */
+  preferenceConsistent: boolean | null
+  /** Completed weeks; the corrected age is used when known. */
+  gestationWeeks: number | null
+  handChanged: boolean | null
+  newWeakness: boolean | null
+  numbness: boolean | null
+  faceDroop: boolean | null
+  newHeadache: boolean | null
+  seizure: boolean | null
+  /** Pain, injury or plaster that explains the change of hand. */
+  armInjury: boolean | null
+  otherHandHardlyUsed: boolean | null
+  otherHandFisted: boolean | null
+  dropsThings: boolean | null
+  lostSkill: boolean | null
+  tremor: boolean | null
+  tremorSudden: boolean | null
+  otherNeurologicalSigns: boolean | null
+  swapsWithinTask: boolean | null
+  wideMotorDifficulty: boolean | null
+  /** 0 to 10 after ten minutes of writing. */
+  painAfter: number | null
+  punishedForHand: boolean | null
+  notBroughtInSixMonths: number | null
+}
+
+export const unknownHistory: RedFlagHistory = {
+  ageMonths: null,
+  firstPreferenceMonths: null,
+  preferenceConsistent: null,
+  gestationWeeks: null,
+  handChanged: null,
+  newWeakness: null,
+  numbness: null,
+  faceDroop: null,
+  newHeadache: null,
+  seizure: null,
+  armInjury: null,
+  otherHandHardlyUsed: null,
+  otherHandFisted: null,
+  dropsThings: null,
+  lostSkill: null,
+  tremor: null,
+  tremorSudden: null,
+  otherNeurologicalSigns: null,
+  swapsWithinTask: null,
+  wideMotorDifficulty: null,
+  painAfter: null,
+  punishedForHand: null,
+  notBroughtInSixMonths: null,
+}

@@ -1,0 +1,148 @@
+import type { Attention } from './attention.ts'
+import { ageInMonths, ageInYears, isDay, type Day } from './days.ts'
+import type { ReferralConcern } from './referrals.ts'
+
+/*
+ * Signs in a referral that must be looked at before a routine place on the waiting list. The software only points at
+ * words and answers that stand in the referral; whether they mean anything is for the licensed therapist to decide,
+ * and local codes and emergency arrangements come first. It never diagnoses.
+ */
+
+export const redFlagIds = [
+  'new_weakness',
+  'preference_before_12_months',
+  'preference_12_to_18_months',
+  'other_hand_little_used',
+  'change_of_hand',
+  'pain',
+  'pressure_to_switch',
+  'swaps_from_six',
+] as const
+export type RedFlagId = (typeof redFlagIds)[number]
+
+export interface RedFlag {
+  id: RedFlagId
+  /** What was noticed and what is usually done, for the person who decides. */
+  text: string
+  level: Attention
+  /** The words of the referral that raised it; null when an answer or the age did. */
+  words: string | null
+}
+
+interface FlaggedReferral {
+  reason: string
+  concerns: readonly ReferralConcern[]
+  birthDate: Day | null
+  receivedOn: Day | null
+}
+
+const texts: Record<RedFlagId, { text: string; level: Attention }> = {
+  // New one-sided weakness in a child is an emergency even after a fall: Bhate & Ganesan 2015 (acute hemiparesis).
+  new_weakness: {
+    text: 'Possible new weakness, numbness, drooping face, headache or seizure. Do not wait for an appointment: same-day medical advice, or the emergency number if it is new or getting worse, even after a fall.',
+    level: 'overdue',
+  },
+  // NICE NG127 (2019): hand preference before one year, corrected for early birth, is a reason to refer.
+  preference_before_12_months: {
+    text: 'One hand preferred before 12 months (counted from the due date if born early). Usual step: priority, and a referral to the child development service before therapy is planned.',
+    level: 'overdue',
+  },
+  // Evidence for the stretch between 12 and 18 months is weak: asking is the usual step.
+  preference_12_to_18_months: {
+    text: 'One hand preferred between 12 and 18 months. Usual step: ask about a weaker or stiffer side, a fisted hand and late milestones, then decide.',
+    level: 'due',
+  },
+  // NICE NG127 (2019): fisting, one-sided use and loss of a skill.
+  other_hand_little_used: {
+    text: 'One hand hardly used, held in a fist, dropping things, or a skill lost. Usual step: medical review first, no routine block.',
+    level: 'overdue',
+  },
+  // Common practice, from memory: cause and date are recorded, a doctor looks at it.
+  change_of_hand: {
+    text: 'A change of hand, or an injury or plaster of the arm. Usual step: write down date and cause, ask for a medical review, plan the way back.',
+    level: 'due',
+  },
+  // Common practice, from memory.
+  pain: {
+    text: 'Pain when writing. Usual step: ask how strong it is from 0 to 10; from 4 on it is looked at soon and the child’s welfare is kept in mind.',
+    level: 'due',
+  },
+  // Common practice, from memory; no hand is ever changed on this clinic's advice.
+  pressure_to_switch: {
+    text: 'Pressure or punishment for using the left hand. Usual step: think about the child’s welfare under the local safeguarding procedure, and advise home and school to leave the hand as it is.',
+    level: 'due',
+  },
+  // Common practice, from memory.
+  swaps_from_six: {
+    text: 'Hand not settled at six or older. Usual step: full assessment, and ask whether anybody has asked the child to change hands.',
+    level: 'soon',
+  },
+}
+
+const patterns: Partial<Record<RedFlagId, RegExp>> = {
+  new_weakness:
+    /\b(?:(?:new|sudden|suddenly|recent|growing)\s+(?:\w+\s+){0,3}?weak(?:ness|er)?|weak(?:ness)?\s+(?:in|of|on)\s+(?:(?:the|his|her|their|one)\s+)?(?:left|right|arm|hand|side|leg)|numb(?:ness)?|facial? droop\w*|droop\w*\s+(?:face|mouth|eye)|(?:face|mouth)\s+droop\w*|headaches?|seizures?|convulsions?|epilep\w+)/iu,
+  other_hand_little_used:
+    /\b(?:fist(?:ed|s|ing)?|(?:hardly|never|rarely|barely|does\s+not|doesn['’]t|stopped)\s+us(?:es?|ing)\s+(?:(?:the|his|her|their)\s+)?(?:left|right|other)|drop(?:s|ping)\s+things|(?:lost|losing)\s+(?:\w+\s+){0,2}?skills?|used\s+to\s+be\s+able)/iu,
+  change_of_hand:
+    /\b(?:(?:chang|switch|swapp)(?:ed|ing)\s+(?:to\s+(?:the|his|her|their)\s+(?:left|right|other)\s+hand|(?:\w+\s+)?hands?)|now\s+(?:writes|draws)\s+with\s+(?:the|his|her|their)?\s*(?:left|right|other)|fractur\w*|broken?\s+(?:\w+\s+)?(?:arm|wrist|hand|elbow|finger)|broke\s+(?:\w+\s+){1,3}(?:arm|wrist|hand|elbow|finger)|plaster(?:ed)?|(?:arm|wrist|hand|elbow)\s+injur\w*|injur\w+\s+(?:\w+\s+){0,2}(?:arm|wrist|hand|elbow))/iu,
+  pain: /\b(?:pain(?:s|ful)?|hurts?|hurting|aches?|aching|sore)\b/iu,
+  pressure_to_switch:
+    /\b(?:punish\w*|smack\w*|slapp\w*|hand\s+(?:is\s+|was\s+)?tied|(?:made|forced|told)\s+to\s+(?:use|write\s+with)\s+(?:the|his|her|their)\s+(?:right|other))/iu,
+}
+
+const early =
+  /\b(?:since|from|at|by|before|around|when)\b[^.;,]{0,24}?\b(\d{1,2})\s*(?:-|\s)?(?:months?|mths?|mo)\b|\bbefore\s+(?:the|his|her|their)\s+first\s+birthday\b/iu
+const aboutPreference = /\b(?:hand(?:ed|edness)?|left|right|prefer\w*)\b/iu
+const denied = /\b(?:no|not|never\s+(?:had|any)|without|denies|nor)\s+(?:[\w'’]+\s+){0,2}$/iu
+
+/** The matched words, unless the sentence says that it is not so ("no pain", "without any headache"). */
+function found(pattern: RegExp, reason: string): string | null {
+  const every = new RegExp(pattern.source, `g${pattern.flags}`)
+  for (const match of reason.matchAll(every)) {
+    const before =
+      reason
+        .slice(0, match.index)
+        .split(/[.;!?\n]/u)
+        .at(-1) ?? ''
+    if (!denied.test(before)) return match[0].trim()
+  }
+  return null
+}
+
+/** Age in months at which a preference was seen, where the referral says so. */
+function preferenceSince(reason: string): { months: number; words: string } | null {
+  const match = early.exec(reason)
+  if (!match) return null
+  const sentence = reason.slice(Math.max(0, match.index - 120), match.index + match[0].length + 60)
+  if (!aboutPreference.test(sentence)) return null
+  return { months: match[1] === undefined ? 11 : Number(match[1]), words: match[0].trim() }
+}
+
+/** Warning signs in the order of `redFlagIds`; each names the words that raised it. */
+export function redFlagsOf({ reason, concerns, birthDate, receivedOn }: FlaggedReferral): RedFlag[] {
+  const raised = new Map<RedFlagId, string | null>()
+  for (const [id, pattern] of Object.entries(patterns) as [RedFlagId, RegExp][]) {
+    const words = found(pattern, reason)
+    if (words !== null) raised.set(id, words)
+  }
+  if (concerns.includes('pain_fatigue') && !raised.has('pain')) raised.set('pain', null)
+  if (concerns.includes('pressure_to_switch') && !raised.has('pressure_to_switch'))
+    raised.set('pressure_to_switch', null)
+
+  const since = preferenceSince(reason)
+  if (since && since.months < 12) raised.set('preference_before_12_months', since.words)
+  else if (since && since.months <= 18) raised.set('preference_12_to_18_months', since.words)
+
+  // A date still being typed says nothing about age.
+  if (isDay(birthDate) && isDay(receivedOn) && birthDate <= receivedOn) {
+    const unclear = concerns.includes('hand_preference_unclear')
+    if (unclear && ageInYears(birthDate, receivedOn) >= 6) raised.set('swaps_from_six', null)
+    const noticed = since === null && ageInMonths(birthDate, receivedOn) < 12 && concerns.length > 0
+    if (noticed) raised.set('preference_before_12_months', null)
+  }
+  return redFlagIds.flatMap((id) => {
+    const words = raised.get(id)
+    return words === undefined ? [] : [{ id, words, ...texts[id] }]
+  })
+}

@@ -1,0 +1,85 @@
+import { describe, expect, it } from 'vitest'
+import type { ReferralConcern } from '../../shared/referrals.ts'
+import { redFlagsOf } from '../../shared/redFlags.ts'
+
+// What counts as a warning sign: NICE NG127 (2019) for early preference, fisting and loss of skill; Bhate & Ganesan
+// 2015 for new weakness; the rest is common practice, no source. The sentences are our own.
+const flags = (reason: string, concerns: ReferralConcern[] = ['handwriting'], birthDate = '2018-03-09') =>
+  redFlagsOf({ reason, concerns, birthDate, receivedOn: '2026-03-03' })
+const ids = (...given: Parameters<typeof flags>) => flags(...given).map(({ id }) => id)
+
+describe('warning signs in a referral', () => {
+  it.each<[string, string[]]>([
+    [
+      'New weakness in the left hand with headaches, now writes with the right.',
+      ['new_weakness', 'change_of_hand'],
+    ],
+    ['She has a weakness of the right arm since last week.', ['new_weakness']],
+    ['Had a seizure in the summer; since then the letters are smaller.', ['new_weakness']],
+    [
+      'Uses the left hand only since 8 months, the right is often fisted.',
+      ['preference_before_12_months', 'other_hand_little_used'],
+    ],
+    ['Always reached with the left hand, from before her first birthday.', ['preference_before_12_months']],
+    ['Parents noticed he prefers the left from 14 months.', ['preference_12_to_18_months']],
+    ['He hardly uses his right hand and drops things at lunch.', ['other_hand_little_used']],
+    ['Fractured the left arm in May, in plaster for six weeks.', ['change_of_hand']],
+    ['Her hand hurts after ten minutes of writing.', ['pain']],
+    ['At her last school she was told to write with the right hand.', ['pressure_to_switch']],
+    ['Smudges her work and bumps elbows with her neighbour, loves drawing.', []],
+    ['Left-handed, writes slowly, would like advice about scissors.', []],
+  ])('in "%s" finds %j', (reason, expected) => {
+    expect(ids(reason)).toEqual(expected)
+  })
+
+  it.each([
+    'No pain when writing, no headaches.',
+    'He writes without pain and has never had seizures.',
+    'There is not any numbness. She enjoys drawing.',
+  ])('finds nothing in "%s", which says that it is not so', (reason) => {
+    expect(ids(reason)).toEqual([])
+  })
+
+  it('does not let a denial in one sentence hide what the next one says', () => {
+    expect(ids('No headaches. The hand hurts after a page.')).toEqual(['pain'])
+  })
+
+  it('raises pain and pressure when they are ticked and the text is silent, and then quotes no words', () => {
+    expect(flags('Please see this child soon.', ['pain_fatigue', 'pressure_to_switch'])).toMatchObject([
+      { id: 'pain', words: null },
+      { id: 'pressure_to_switch', words: null },
+    ])
+  })
+
+  it.each([
+    ['2020-03-03', ['swaps_from_six']],
+    ['2020-03-04', []],
+  ])(
+    'asks for a full assessment of an unsettled hand from the sixth birthday on (born %s)',
+    (birthDate, expected) => {
+      expect(ids('Uses either hand for drawing.', ['hand_preference_unclear'], birthDate)).toEqual(expected)
+    },
+  )
+
+  it('says nothing about age while the date is still being typed', () => {
+    expect(ids('Uses either hand for drawing.', ['hand_preference_unclear'], '-03-')).toEqual([])
+  })
+
+  it('quotes the words that raised a sign and marks new weakness as the most pressing', () => {
+    const [first] = flags('There is sudden left-sided weakness since Monday.')
+    expect(first).toMatchObject({ id: 'new_weakness', level: 'overdue' })
+    expect(first!.words).toContain('weakness')
+    expect(first!.text).toMatch(/emergency/)
+  })
+
+  it('never advises changing a hand and never names a diagnosis', () => {
+    const all = flags(
+      'New weakness in one hand, since 8 months, hardly uses the right, broke his arm, it hurts, punished, either hand',
+      ['hand_preference_unclear', 'pain_fatigue', 'pressure_to_switch'],
+    )
+    expect(all.length).toBeGreaterThanOrEqual(6)
+    for (const { text } of all) {
+      expect(text).not.toMatch(/switch (?:to|the)|use the right|palsy|stroke|disorder|diagnos/i)
+    }
+  })
+})
