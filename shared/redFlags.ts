@@ -81,7 +81,7 @@ const texts: Record<RedFlagId, { text: string; level: Attention }> = {
 
 const patterns: Partial<Record<RedFlagId, RegExp>> = {
   new_weakness:
-    /\b(?:(?:new|sudden|suddenly|recent|growing)\s+(?:\w+\s+){0,3}?weak(?:ness|er)?|weak(?:ness)?\s+(?:in|of|on)\s+(?:(?:the|his|her|their|one)\s+)?(?:left|right|arm|hand|side|leg)|numb(?:ness)?|facial? droop\w*|droop\w*\s+(?:face|mouth|eye)|(?:face|mouth)\s+droop\w*|headaches?|seizures?|convulsions?|epilep\w+)/iu,
+    /\b(?:(?:new|sudden|suddenly|recent|growing)\s+(?:[\w'’-]+\s+){0,3}?weak(?:ness|er)?|(?:one|left|right)[\s-]sided\s+weakness|weak(?:ness)?\s+(?:in|of|on)\s+(?:(?:the|his|her|their|one)\s+)?(?:left|right|arm|hand|side|leg)|numb(?:ness)?|facial? droop\w*|droop\w*\s+(?:face|mouth|eye)|(?:face|mouth)\s+droop\w*|headaches?|seizures?|convulsions?|epilep\w+)/iu,
   other_hand_little_used:
     /\b(?:fist(?:ed|s|ing)?|(?:hardly|never|rarely|barely|does\s+not|doesn['’]t|stopped)\s+us(?:es?|ing)\s+(?:(?:the|his|her|their)\s+)?(?:left|right|other)|drop(?:s|ping)\s+things|(?:lost|losing)\s+(?:\w+\s+){0,2}?skills?|used\s+to\s+be\s+able)/iu,
   change_of_hand:

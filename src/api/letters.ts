@@ -1,4 +1,4 @@
-import { http } from '@/api/http.ts'
+import { http, type ReadOptions } from '@/api/http.ts'
 import type {
   LetterApproval,
   LetterChecks,
@@ -6,7 +6,6 @@ import type {
   LetterPage,
   LetterReturn,
   LetterSend,
-  LetterState,
   LetterView,
 } from '@shared/letters.ts'
 
@@ -14,10 +13,8 @@ const path = (childId: string) => `/children/${childId}/letters`
 
 export const lettersApi = {
   /** A therapist's own letters; all of them for a lead. */
-  list: (query: { page?: number; size?: number; state?: LetterState; search?: string }) =>
-    http.get<LetterPage>('/letters', { query }),
-  forChild: (childId: string, query: { page?: number; size?: number }) =>
-    http.get<LetterPage>(path(childId), { query }),
+  list: (query: ReadOptions['query']) => http.get<LetterPage>('/letters', { query }),
+  forChild: (childId: string, query: ReadOptions['query']) => http.get<LetterPage>(path(childId), { query }),
   assemble: (childId: string, idempotencyKey: string) =>
     http.post<LetterView>(path(childId), { kind: 'progress' }, { idempotencyKey }),
   one: (childId: string, id: string) => http.get<LetterView>(`${path(childId)}/${id}`),

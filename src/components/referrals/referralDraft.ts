@@ -9,7 +9,11 @@ export type CarerDraft = Omit<GuardianDetails, 'relation' | 'parentalResponsibil
 }
 
 /** A referral while the form is being filled. */
-export type ReferralDraft = Omit<ReferralDetails, 'source' | 'scriptDirection' | 'birthDate' | 'carers'> & {
+export type ReferralDraft = Omit<
+  ReferralDetails,
+  'source' | 'scriptDirection' | 'birthDate' | 'receivedOn' | 'carers'
+> & {
+  receivedOn: Day | null
   source: ReferralSource | null
   scriptDirection: ScriptDirection | null
   birthDate: Day | null
@@ -47,4 +51,40 @@ export const emptyReferral = (today: Day): ReferralDraft => ({
   schoolNote: null,
   lookedAfter: false,
   carers: [emptyCarer()],
+})
+
+/** The carers as far as it matters for what is missing: an answer not given yet is not known. */
+export const draftCarers = ({ carers }: Pick<ReferralDraft, 'carers'>) =>
+  carers.map((carer) => ({ parentalResponsibility: carer.parentalResponsibility ?? ('unknown' as const) }))
+
+/** A stored referral as the form opens it. Named one by one: the schema refuses what the view carries besides. */
+export const draftOf = (referral: ReferralDetails): ReferralDraft => ({
+  receivedOn: referral.receivedOn,
+  source: referral.source,
+  referrerName: referral.referrerName,
+  referrerRole: referral.referrerRole,
+  referrerEmail: referral.referrerEmail,
+  referrerPhone: referral.referrerPhone,
+  reason: referral.reason,
+  concerns: [...referral.concerns],
+  givenName: referral.givenName,
+  familyName: referral.familyName,
+  preferredName: referral.preferredName,
+  birthDate: referral.birthDate,
+  homeLanguages: referral.homeLanguages,
+  interpreterLanguage: referral.interpreterLanguage,
+  scriptDirection: referral.scriptDirection,
+  classId: referral.classId,
+  schoolNote: referral.schoolNote,
+  lookedAfter: referral.lookedAfter,
+  carers: referral.carers.map((carer) => ({
+    name: carer.name,
+    relation: carer.relation,
+    parentalResponsibility: carer.parentalResponsibility,
+    courtOrder: carer.courtOrder,
+    safeToContact: carer.safeToContact,
+    email: carer.email,
+    phone: carer.phone,
+    address: carer.address,
+  })),
 })
