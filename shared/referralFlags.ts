@@ -8,7 +8,7 @@ import type { ReferralConcern } from './referrals.ts'
  * and local codes and emergency arrangements come first. It never diagnoses.
  */
 
-export const redFlagIds = [
+export const referralFlagIds = [
   'new_weakness',
   'preference_before_12_months',
   'preference_12_to_18_months',
@@ -18,10 +18,10 @@ export const redFlagIds = [
   'pressure_to_switch',
   'swaps_from_six',
 ] as const
-export type RedFlagId = (typeof redFlagIds)[number]
+export type ReferralFlagId = (typeof referralFlagIds)[number]
 
-export interface RedFlag {
-  id: RedFlagId
+export interface ReferralFlag {
+  id: ReferralFlagId
   /** What was noticed and what is usually done, for the person who decides. */
   text: string
   level: Attention
@@ -36,7 +36,7 @@ interface FlaggedReferral {
   receivedOn: Day | null
 }
 
-const texts: Record<RedFlagId, { text: string; level: Attention }> = {
+const texts: Record<ReferralFlagId, { text: string; level: Attention }> = {
   // New one-sided weakness in a child is an emergency even after a fall: Bhate & Ganesan 2015 (acute hemiparesis).
   new_weakness: {
     text: 'Possible new weakness, numbness, drooping face, headache or seizure. Do not wait for an appointment: same-day medical advice, or the emergency number if it is new or getting worse, even after a fall.',
@@ -79,7 +79,7 @@ const texts: Record<RedFlagId, { text: string; level: Attention }> = {
   },
 }
 
-const patterns: Partial<Record<RedFlagId, RegExp>> = {
+const patterns: Partial<Record<ReferralFlagId, RegExp>> = {
   new_weakness:
     /\b(?:(?:new|sudden|suddenly|recent|growing)\s+(?:[\w'’-]+\s+){0,3}?weak(?:ness|er)?|(?:one|left|right)[\s-]sided\s+weakness|weak(?:ness)?\s+(?:in|of|on)\s+(?:(?:the|his|her|their|one)\s+)?(?:left|right|arm|hand|side|leg)|numb(?:ness)?|facial? droop\w*|droop\w*\s+(?:face|mouth|eye)|(?:face|mouth)\s+droop\w*|headaches?|seizures?|convulsions?|epilep\w+)/iu,
   other_hand_little_used:
@@ -119,10 +119,10 @@ function preferenceSince(reason: string): { months: number; words: string } | nu
   return { months: match[1] === undefined ? 11 : Number(match[1]), words: match[0].trim() }
 }
 
-/** Warning signs in the order of `redFlagIds`; each names the words that raised it. */
-export function redFlagsOf({ reason, concerns, birthDate, receivedOn }: FlaggedReferral): RedFlag[] {
-  const raised = new Map<RedFlagId, string | null>()
-  for (const [id, pattern] of Object.entries(patterns) as [RedFlagId, RegExp][]) {
+/** Warning signs in the order of `referralFlagIds`; each names the words that raised it. */
+export function referralFlagsOf({ reason, concerns, birthDate, receivedOn }: FlaggedReferral): ReferralFlag[] {
+  const raised = new Map<ReferralFlagId, string | null>()
+  for (const [id, pattern] of Object.entries(patterns) as [ReferralFlagId, RegExp][]) {
     const words = found(pattern, reason)
     if (words !== null) raised.set(id, words)
   }
@@ -132,7 +132,7 @@ export function redFlagsOf({ reason, concerns, birthDate, receivedOn }: FlaggedR
 
   const since = preferenceSince(reason)
   if (since && since.months < 12) raised.set('preference_before_12_months', since.words)
-  else if (since && since.months <= 18) raised.set('preference_12_to_18_months', since.words)
+  else if (since && since.months < 18) raised.set('preference_12_to_18_months', since.words)
 
   // A date still being typed says nothing about age.
   if (isDay(birthDate) && isDay(receivedOn) && birthDate <= receivedOn) {
@@ -141,7 +141,7 @@ export function redFlagsOf({ reason, concerns, birthDate, receivedOn }: FlaggedR
     const noticed = since === null && ageInMonths(birthDate, receivedOn) < 12 && concerns.length > 0
     if (noticed) raised.set('preference_before_12_months', null)
   }
-  return redFlagIds.flatMap((id) => {
+  return referralFlagIds.flatMap((id) => {
     const words = raised.get(id)
     return words === undefined ? [] : [{ id, words, ...texts[id] }]
   })

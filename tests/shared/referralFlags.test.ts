@@ -1,11 +1,11 @@
 import { describe, expect, it } from 'vitest'
 import type { ReferralConcern } from '../../shared/referrals.ts'
-import { redFlagsOf } from '../../shared/redFlags.ts'
+import { referralFlagsOf } from '../../shared/referralFlags.ts'
 
 // What counts as a warning sign: NICE NG127 (2019) for early preference, fisting and loss of skill; Bhate & Ganesan
 // 2015 for new weakness; the rest is common practice, no source. The sentences are our own.
 const flags = (reason: string, concerns: ReferralConcern[] = ['handwriting'], birthDate = '2018-03-09') =>
-  redFlagsOf({ reason, concerns, birthDate, receivedOn: '2026-03-03' })
+  referralFlagsOf({ reason, concerns, birthDate, receivedOn: '2026-03-03' })
 const ids = (...given: Parameters<typeof flags>) => flags(...given).map(({ id }) => id)
 
 describe('warning signs in a referral', () => {
@@ -22,6 +22,7 @@ describe('warning signs in a referral', () => {
     ],
     ['Always reached with the left hand, from before her first birthday.', ['preference_before_12_months']],
     ['Parents noticed he prefers the left from 14 months.', ['preference_12_to_18_months']],
+    ['Parents noticed he prefers the left from 18 months.', []],
     ['He hardly uses his right hand and drops things at lunch.', ['other_hand_little_used']],
     ['Fractured the left arm in May, in plaster for six weeks.', ['change_of_hand']],
     ['Her hand hurts after ten minutes of writing.', ['pain']],
