@@ -120,7 +120,12 @@ function preferenceSince(reason: string): { months: number; words: string } | nu
 }
 
 /** Warning signs in the order of `referralFlagIds`; each names the words that raised it. */
-export function referralFlagsOf({ reason, concerns, birthDate, receivedOn }: FlaggedReferral): ReferralFlag[] {
+export function referralFlagsOf({
+  reason,
+  concerns,
+  birthDate,
+  receivedOn,
+}: FlaggedReferral): ReferralFlag[] {
   const raised = new Map<ReferralFlagId, string | null>()
   for (const [id, pattern] of Object.entries(patterns) as [ReferralFlagId, RegExp][]) {
     const words = found(pattern, reason)
