@@ -147,8 +147,8 @@ export default tseslint.config(
   forbid(['src/composables/**/*.ts'], [noServer, noMarkup]),
   forbid(['src/api/**/*.ts'], [noServer, noComposables, noStores, noMarkup]),
   forbid(['server/**/*.ts'], [noClient]),
-  forbid(['server/routes/**/*.ts'], [noClient, noEntities, noTypeorm, noDataSource]),
-  forbid(['server/middleware/**/*.ts'], [noClient, noEntities, noTypeorm, noDataSource]),
+  forbid(['server/routes/**/*.ts'], [noClient, asType(noEntities), noTypeorm, noDataSource]),
+  forbid(['server/middleware/**/*.ts'], [noClient, asType(noEntities), noTypeorm, noDataSource]),
   forbid(['server/services/**/*.ts'], [noClient, noExpress, noRoutes]),
   forbid(['server/queries/**/*.ts'], [noClient, noExpress, noRoutes, noServices]),
   forbid(

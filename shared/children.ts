@@ -29,6 +29,8 @@ export type ChildIdentity = InferType<typeof childIdentitySchema>
 export const careSchema = body({
   writingHand: optionalChoice('the writing hand', writingHands),
   nextReviewOn: optionalDayField('The next review'),
+  /** One thing a line; letters to the family begin with them. */
+  strengths: optionalText('What the child enjoys and does well', { max: 1000 }),
 })
 export type CareDetails = InferType<typeof careSchema>
 
@@ -95,6 +97,7 @@ export interface TaskView {
 export interface GlanceView {
   child: ChildHeader
   writingHand: WritingHand | null
+  strengths: string | null
   scriptDirection: ScriptDirection
   homeLanguages: string | null
   reason: string | null

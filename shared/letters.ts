@@ -166,6 +166,8 @@ export interface LetterView extends LetterDraft {
     submit: boolean
     approve: boolean
     return: boolean
+    /** Open a submitted or approved, unsent letter for changes. */
+    takeBack: boolean
     send: boolean
     recall: boolean
     discard: boolean

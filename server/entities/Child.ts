@@ -33,6 +33,7 @@ export class Child {
   @JoinColumn({ name: 'schoolClassId' })
   schoolClass!: Relation<SchoolClass | null>
   @Column('date', { nullable: true }) nextReviewOn!: string | null
+  @Column('varchar', { length: 1000, nullable: true }) strengths!: string | null
   @Column('datetime', { precision: 6 }) createdAt!: Date
   @VersionColumn({ type: 'int' }) version!: number
 }

@@ -6,7 +6,8 @@ import type { User } from '../entities/User.ts'
 import { slowDown } from '../errors.ts'
 import { checkSignIn, findViewer, newToken } from '../services/accounts.ts'
 import { QueueFull } from '../services/passwords.ts'
-import { markSeen, SessionStore } from './sessionStore.ts'
+import { markSeen } from '../services/sessions.ts'
+import { SessionStore } from './sessionStore.ts'
 
 export interface SignInSettings {
   /** True when the configured address is https: the cookies are then Secure and carry the __Host- prefix. */

@@ -51,6 +51,7 @@ const statements = [
       \`writingHand\` varchar(8) NULL,
       \`schoolClassId\` uuid NULL,
       \`nextReviewOn\` date NULL,
+      \`strengths\` varchar(1000) NULL,
       \`createdAt\` datetime(6) NOT NULL,
       \`version\` int NOT NULL,
       INDEX \`IDX_50518958b68bdb51a6b6f54c0b\` (\`birthDate\`),

@@ -6,12 +6,13 @@ import { database, type Tx } from '../dataSource.ts'
 import { User } from '../entities/User.ts'
 import { UserToken } from '../entities/UserToken.ts'
 import { forbidden, gone } from '../errors.ts'
-import { passwordChangedMail, passwordResetMail } from '../mail/mailTemplates.ts'
+import { passwordChanged, passwordReset } from '../mail/mailTemplates.ts'
+import { formatMoment } from '../../shared/days.ts'
 import { recordAudit } from './audit.ts'
 import { enqueueMail } from './outbox.ts'
 import { assertStrongPassword, hashPassword, needsRehash, verifyPassword } from './passwords.ts'
 import { readSettings } from './settings.ts'
-import { clearAttempts, countAttempt, countHit } from './throttles.ts'
+import { clearAttempts, countAttempt, countHit, forgiveHit } from './throttles.ts'
 import { transact } from './transact.ts'
 
 const resetMinutes = 30
@@ -71,6 +72,7 @@ export const checkSignIn = async ({
     return null
   }
   await clearAttempts(key)
+  await forgiveHit(`address:${address}`)
   if (user.passwordHash && needsRehash(user.passwordHash))
     await database().manager.update(User, { id: user.id }, { passwordHash: await hashPassword(password) })
   return user
@@ -137,10 +139,8 @@ export const requestPasswordReset = async (
     record({ action: 'password_reset.requested', objectType: 'user', objectId: user?.id })
     if (!user || user.disabledAt) return
     const token = await issueToken(tx, user.id, 'password_reset')
-    const mail = passwordResetMail({
-      clinicName: settings.clinicName,
-      link: `${appUrl}/reset-password#${token}`,
-    })
+    const link = `${appUrl}/reset-password#${token}`
+    const mail = passwordReset({ clinic: settings, link, worksFor: `${resetMinutes} minutes` })
     await enqueueMail(tx, { kind: 'password_reset', recipient: user.email, ...mail }, null)
   })
 }
@@ -211,15 +211,11 @@ export const changePassword = async (
       'UPDATE user_sessions SET endedAt = ? WHERE userId = ? AND idHash <> ? AND endedAt IS NULL',
       [now(), user.id, keep],
     )
-    await enqueueMail(
-      tx,
-      {
-        kind: 'password_changed',
-        recipient: user.email,
-        ...passwordChangedMail({ clinicName: settings.clinicName }),
-      },
-      user.id,
-    )
+    const notice = passwordChanged({
+      clinic: settings,
+      changedAt: formatMoment(now().toISOString(), settings.timeZone),
+    })
+    await enqueueMail(tx, { kind: 'password_changed', recipient: user.email, ...notice }, user.id)
     record({ action: 'password.changed', objectType: 'user', objectId: user.id })
   })
 }

@@ -74,10 +74,12 @@ const unitOf = (text: string): string => {
   return text
 }
 
-const isRun = (text: string) => {
-  const steps = [...text].slice(1).map((sign, index) => sign.codePointAt(0)! - text.codePointAt(index)!)
-  return steps.every((step) => step === steps[0] && Math.abs(step) <= 1)
-}
+const rows = ['1234567890', 'abcdefghijklmnopqrstuvwxyz', 'qwertyuiopasdfghjklzxcvbnm']
+  .map((row) => row.repeat(13))
+  .flatMap((row) => [row, [...row].reverse().join('')])
+
+/** A walk along the digits, the alphabet or the keyboard, in either direction. */
+const isRun = (text: string) => rows.some((row) => row.includes(text))
 
 /**
  * Why a password that is long enough is still easy to guess, in words; null when nothing is known against it.

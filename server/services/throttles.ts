@@ -71,3 +71,10 @@ export const countHit = async (key: string, limit: number, windowSeconds: number
   if (row && row.failures > limit)
     throw slowDown(secondsUntil(new Date(row.windowStartedAt.getTime() + windowSeconds * 1000)))
 }
+
+/** Takes one hit back: what was counted in advance turned out not to be a failure. */
+export const forgiveHit = async (key: string): Promise<void> => {
+  await database().query('UPDATE throttles SET failures = GREATEST(failures, 1) - 1 WHERE keyHash = ?', [
+    keyHash(key),
+  ])
+}

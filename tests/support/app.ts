@@ -11,7 +11,7 @@ export const testAppUrl = 'http://127.0.0.1'
 let app: Express | null = null
 
 /** A fresh clinic database and the real app on it. Call in beforeAll, and `stopApp` in afterAll. */
-export const startApp = async (): Promise<Express> => {
+export const startApp = async (): Promise<void> => {
   await openClinicDatabase()
   app = createApp({
     appUrl: testAppUrl,
@@ -21,7 +21,6 @@ export const startApp = async (): Promise<Express> => {
     demoSignIns: [],
     clientDir: null,
   })
-  return app
 }
 
 export const stopApp = async (): Promise<void> => {

@@ -3,7 +3,7 @@ import type { DatabaseAccess } from './databaseAccess.ts'
 import { accountOf, applyGrants } from './grants.ts'
 
 /** Brings the schema up to date as the owner and gives the app account exactly its rights. Safe to run at every start. */
-export const prepareDatabase = async (owner: DatabaseAccess, app: DatabaseAccess): Promise<void> => {
+export const migrateDatabase = async (owner: DatabaseAccess, app: DatabaseAccess): Promise<void> => {
   const dataSource = createDataSource(owner)
   await dataSource.initialize()
   try {

@@ -1,0 +1,72 @@
+import { hostname } from 'node:os'
+import { fileURLToPath } from 'node:url'
+import type { SessionView } from '../shared/users.ts'
+import { createApp } from './app.ts'
+import { closeDatabase, openDatabase } from './dataSource.ts'
+import { readEnv, type Env } from './env.ts'
+import { openTransport } from './mail/transport.ts'
+import { seedDemoOnce } from './seeds/demo.ts'
+import { firstAdministratorLink } from './services/firstAdministrator.ts'
+import { openAuditChain } from './services/audit.ts'
+import { startOutboxWorker } from './services/outboxWorker.ts'
+import { databaseProblems } from './setup/checkDatabase.ts'
+import { migrateDatabase } from './setup/migrateDatabase.ts'
+import { listen, loadSessionSecret, prepareDatabase, prepareMail, printBlock } from './setup/lifecycle.ts'
+import { SetUpError } from './setup/setUpError.ts'
+import { createShutdown, type Shutdown } from './setup/shutdown.ts'
+
+const isBundle = import.meta.url.endsWith('.js')
+const clientDir = fileURLToPath(new URL('../dist', import.meta.url))
+
+const openClinic = async (env: Env, shutdown: Shutdown) => {
+  const addresses = await prepareDatabase(env, shutdown)
+  if (addresses.migrate) await migrateDatabase(addresses.migrate, addresses.app)
+  const dataSource = await openDatabase(addresses.app)
+  shutdown.add('the database connections', closeDatabase)
+  const problems = await databaseProblems(dataSource)
+  if (problems.length > 0)
+    throw new SetUpError(`The database is not as it must be:\n- ${problems.join('\n- ')}`)
+  await openAuditChain(process.env.INSTANCE ?? hostname().slice(0, 60))
+}
+
+const signInLines = (signIns: SessionView['demoSignIns']) =>
+  signIns.map(({ role, name, email, password }) => `  ${role.padEnd(14)} ${email}  ${password}  (${name})`)
+
+const start = async (shutdown: Shutdown) => {
+  const env = readEnv(process.env)
+  await openClinic(env, shutdown)
+  const { smtpUrl, inboxUrl } = await prepareMail(env, shutdown)
+  const demoSignIns = env.demo ? await seedDemoOnce() : []
+  const app = createApp({
+    appUrl: env.appUrl,
+    sessionSecret: loadSessionSecret(env),
+    demo: env.demo,
+    inboxUrl,
+    demoSignIns,
+    clientDir: isBundle ? clientDir : null,
+  })
+  await listen(app, env, shutdown)
+  const worker = startOutboxWorker(openTransport(smtpUrl))
+  shutdown.add('the outbox', worker.stop)
+  const firstLink = env.demo ? null : await firstAdministratorLink(env.appUrl)
+  printBlock([
+    `Fanflower is running at ${env.appUrl}`,
+    ...(inboxUrl ? [`E-mails arrive in the inbox at ${inboxUrl}`] : []),
+    ...(demoSignIns.length > 0
+      ? ['', 'Demo clinic with invented people. Sign in as', ...signInLines(demoSignIns)]
+      : []),
+    ...(firstLink
+      ? [
+          '',
+          'Nobody has an account yet. The first administrator begins here (works once, for 72 hours):',
+          firstLink,
+        ]
+      : []),
+    '',
+    'Stop with Ctrl-C.',
+  ])
+}
+
+const shutdown = createShutdown()
+start(shutdown).catch((error: unknown) => shutdown.fail(error))
+process.on('unhandledRejection', (error) => void shutdown.fail(error))

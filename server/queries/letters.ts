@@ -1,0 +1,240 @@
+import type {
+  DeliveryState,
+  LetterApproval,
+  LetterDraft,
+  LetterFact,
+  LetterKind,
+  LetterState,
+} from '../../shared/letters.ts'
+import type { GuardianRelation } from '../../shared/guardians.ts'
+import type { Viewer } from '../access/actor.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { now } from '../clock.ts'
+import { notFound } from '../errors.ts'
+import type { Tx } from '../dataSource.ts'
+import { childScope, isId, within } from './scope.ts'
+import { count, flag, fromJson, likePattern, selectOne, selectRows, type SqlParameters } from './sql.ts'
+
+export interface LetterRecord {
+  id: string
+  childId: string
+  givenName: string
+  familyName: string
+  preferredName: string | null
+  recordNumber: string
+  birthDate: string
+  kind: LetterKind
+  state: LetterState
+  content: LetterDraft
+  facts: LetterFact[]
+  authorId: string
+  author: string
+  authorNewlyQualified: boolean
+  approver: string | null
+  approvedAt: Date | null
+  overrides: LetterApproval | null
+  approvedVersionId: string | null
+  returnedReason: string | null
+  pdfBytes: number | null
+  pdfSha256: Buffer | null
+  version: number
+}
+
+type RawLetter = Omit<LetterRecord, 'content' | 'facts' | 'overrides' | 'authorNewlyQualified'> & {
+  content: string
+  facts: string
+  overrides: string | null
+  authorNewlyQualified: number
+}
+
+/** One letter of this child, under the viewer's scope. */
+export const findLetter = async (access: ChildAccess, id: string, tx?: Tx): Promise<LetterRecord> => {
+  if (!isId(id)) throw notFound()
+  const scope = within(access, 'l.childId')
+  const row = await selectOne<RawLetter>(
+    `SELECT l.id, l.childId, c.givenName, c.familyName, c.preferredName, c.recordNumber, c.birthDate, l.kind, l.state,
+       l.content, l.facts, l.authorId, a.displayName AS author, a.newlyQualified AS authorNewlyQualified,
+       p.displayName AS approver, v.approvedAt, v.overrides, l.approvedVersionId, l.returnedReason, v.pdfBytes,
+       v.pdfSha256, l.version
+     FROM letters l JOIN children c ON c.id = l.childId JOIN users a ON a.id = l.authorId
+       LEFT JOIN letter_versions v ON v.id = l.approvedVersionId LEFT JOIN users p ON p.id = v.approvedById
+     WHERE l.id = :id AND l.discardedAt IS NULL AND ${scope.sql}`,
+    { id, ...scope.parameters },
+    tx,
+  )
+  if (!row) throw notFound()
+  return {
+    ...row,
+    content: fromJson<LetterDraft>(row.content),
+    facts: fromJson<LetterFact[]>(row.facts),
+    overrides: row.overrides === null ? null : fromJson<LetterApproval>(row.overrides),
+    authorNewlyQualified: flag(row.authorNewlyQualified),
+  }
+}
+
+export interface LetterListRow {
+  id: string
+  childId: string
+  childName: string
+  recordNumber: string
+  kind: LetterKind
+  state: LetterState
+  author: string
+  approver: string | null
+  changedAt: Date
+  sentAt: Date | null
+  delivery: DeliveryState | null
+}
+
+export interface LetterListRequest {
+  state: LetterState | null
+  search: string | null
+  size: number
+  offset: number
+}
+
+const worstDelivery = `(SELECT d.state FROM letter_deliveries d WHERE d.letterId = l.id
+  ORDER BY FIELD(d.state, 'failed', 'cancelled', 'queued', 'sending', 'sent', 'opened') LIMIT 1)`
+
+const listColumns = `l.id, l.childId, CONCAT(COALESCE(c.preferredName, c.givenName), ' ', c.familyName) AS childName,
+  c.recordNumber, l.kind, l.state, a.displayName AS author, p.displayName AS approver, l.changedAt,
+  (SELECT MIN(m.sentAt) FROM letter_deliveries d JOIN outbox_messages m ON m.id = d.outboxMessageId
+    WHERE d.letterId = l.id) AS sentAt, ${worstDelivery} AS delivery`
+
+const listTables = `letters l JOIN children c ON c.id = l.childId JOIN users a ON a.id = l.authorId
+  LEFT JOIN letter_versions v ON v.id = l.approvedVersionId LEFT JOIN users p ON p.id = v.approvedById`
+
+const listLetters = async (
+  condition: string,
+  parameters: SqlParameters,
+  { size, offset }: { size: number; offset: number },
+) => {
+  const rows = await selectRows<LetterListRow>(
+    `SELECT ${listColumns} FROM ${listTables} WHERE ${condition} ORDER BY l.changedAt DESC, l.id LIMIT :size OFFSET :offset`,
+    { ...parameters, size, offset },
+  )
+  const total = await selectOne<{ n: string }>(
+    `SELECT COUNT(*) AS n FROM ${listTables} WHERE ${condition}`,
+    parameters,
+  )
+  return { rows, total: count(total?.n ?? '0') }
+}
+
+/** Letters of one child, newest first. */
+export const listLettersOfChild = (access: ChildAccess, request: { size: number; offset: number }) => {
+  const scope = within(access, 'l.childId')
+  return listLetters(`l.discardedAt IS NULL AND ${scope.sql}`, scope.parameters, request)
+}
+
+/** Letters of every child the viewer holds; a lead sees the clinic's. */
+export const listLettersOfViewer = (viewer: Viewer, { state, search, ...page }: LetterListRequest) => {
+  const relation = viewer.roles.includes('clinicLead') ? 'clinicLead' : 'assignedTherapist'
+  const scope = childScope(viewer, relation, 'l.childId')
+  const conditions = ['l.discardedAt IS NULL', scope.sql]
+  const parameters: SqlParameters = { ...scope.parameters }
+  if (state !== null) {
+    conditions.push('l.state = :state')
+    parameters.state = state
+  }
+  if (search !== null) {
+    conditions.push(
+      "(CONCAT_WS(' ', c.preferredName, c.givenName, c.familyName) LIKE :search OR c.recordNumber LIKE :search)",
+    )
+    parameters.search = likePattern(search)
+  }
+  return listLetters(conditions.join(' AND '), parameters, page)
+}
+
+export interface RecipientRow {
+  guardianId: string
+  name: string
+  relation: GuardianRelation
+  email: string | null
+  restricted: boolean
+  safeToContact: boolean
+  hasAccount: boolean
+  link: boolean
+  attachment: boolean
+}
+
+const emailConsent = (purpose: 'email_link' | 'email_attachment') => `EXISTS (SELECT 1 FROM consents sc
+  WHERE sc.guardianId = g.id AND sc.kind = 'given' AND sc.purpose = '${purpose}' AND sc.at <= :now
+    AND (sc.expiresAt IS NULL OR sc.expiresAt > :now)
+    AND NOT EXISTS (SELECT 1 FROM consents sw WHERE sw.withdrawsId = sc.id AND sw.at <= :now))`
+
+/** Carers of the child with what decides how a letter may reach each of them. */
+export const listRecipients = async (access: ChildAccess, tx?: Tx): Promise<RecipientRow[]> => {
+  const scope = within(access, 'g.childId')
+  const rows = await selectRows<Record<keyof RecipientRow, unknown>>(
+    `SELECT g.id AS guardianId, g.name, g.relation, g.email, g.restricted, g.safeToContact,
+       (u.passwordHash IS NOT NULL AND u.disabledAt IS NULL) AS hasAccount,
+       ${emailConsent('email_link')} AS link, ${emailConsent('email_attachment')} AS attachment
+     FROM guardians g LEFT JOIN users u ON u.id = g.userId
+     WHERE g.endedAt IS NULL AND ${scope.sql} ORDER BY g.createdAt, g.id`,
+    { ...scope.parameters, now: now() },
+    tx,
+  )
+  return rows.map((row) => ({
+    guardianId: row.guardianId as string,
+    name: row.name as string,
+    relation: row.relation as GuardianRelation,
+    email: row.email as string | null,
+    restricted: flag(row.restricted as number),
+    safeToContact: flag(row.safeToContact as number),
+    hasAccount: flag((row.hasAccount ?? 0) as number),
+    link: flag(row.link as number),
+    attachment: flag(row.attachment as number),
+  }))
+}
+
+export interface DeliveryRow {
+  id: string
+  recipient: string
+  channel: 'link' | 'attachment'
+  state: DeliveryState
+  attempts: number
+  lastTriedAt: Date | null
+  nextAttemptAt: Date
+  problem: string | null
+  openedAt: Date | null
+}
+
+export const listDeliveries = (access: ChildAccess, letterId: string): Promise<DeliveryRow[]> => {
+  const scope = within(access, 'l.childId')
+  return selectRows<DeliveryRow>(
+    `SELECT d.id, g.name AS recipient, d.channel, d.state, m.attempts, m.lastTriedAt, m.nextAttemptAt, m.problem, d.openedAt
+     FROM letter_deliveries d JOIN letters l ON l.id = d.letterId JOIN guardians g ON g.id = d.guardianId
+       JOIN outbox_messages m ON m.id = d.outboxMessageId
+     WHERE d.letterId = :letterId AND ${scope.sql} ORDER BY d.createdAt, d.id`,
+    { letterId, ...scope.parameters },
+  )
+}
+
+/**
+ * Given and preferred names of the other children of the viewer's caseload and this child's class: names that would
+ * betray another child if they stood in this letter.
+ */
+export const listOtherNames = async (access: ChildAccess): Promise<string[]> => {
+  const scope = childScope(access.viewer, access.relation, 'o.id')
+  const rows = await selectRows<{ givenName: string; preferredName: string | null; familyName: string }>(
+    `SELECT DISTINCT o.givenName, o.preferredName, o.familyName FROM children o WHERE o.id <> :childId AND ${scope.sql}
+     LIMIT 500`,
+    { childId: access.childId, ...scope.parameters },
+  )
+  return rows.flatMap(({ givenName, preferredName, familyName }) =>
+    [givenName, preferredName, familyName].filter((name): name is string => name !== null && name.length > 2),
+  )
+}
+
+/** The approved PDF with the hash it must have. */
+export const findLetterPdf = async (access: ChildAccess, id: string) => {
+  const scope = within(access, 'l.childId')
+  if (!isId(id)) throw notFound()
+  const row = await selectOne<{ pdf: Buffer; pdfSha256: Buffer }>(
+    `SELECT v.pdf, v.pdfSha256 FROM letters l JOIN letter_versions v ON v.id = l.approvedVersionId
+     WHERE l.id = :id AND l.discardedAt IS NULL AND ${scope.sql}`,
+    { id, ...scope.parameters },
+  )
+  if (!row) throw notFound()
+  return row
+}

@@ -1,0 +1,221 @@
+import { Router, type Request } from 'express'
+import { string } from 'yup'
+import { body } from '../../shared/fields.ts'
+import {
+  letterApprovalSchema,
+  letterDraftSchema,
+  letterKinds,
+  letterReturnSchema,
+  letterSendSchema,
+  letterStates,
+  type LetterDraft,
+} from '../../shared/letters.ts'
+import { conflict, forbidden } from '../errors.ts'
+import { allow } from '../middleware/allow.ts'
+import {
+  bodyOf,
+  idempotencyKeyOf,
+  ifMatchOf,
+  pageOf,
+  queryChoice,
+  queryText,
+} from '../middleware/requestBody.ts'
+import { accessOf, viewerOf } from '../middleware/requestContext.ts'
+import {
+  canApproveLetter,
+  canChangeLetter,
+  canDiscardLetter,
+  canRecallLetter,
+  canReturnLetter,
+  canSendLetter,
+  canSubmitLetter,
+  canTakeBackLetter,
+  letterPolicies,
+  type LetterStanding,
+} from '../policies/letters.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { presentLetter, presentLetterPage } from '../presenters/letters.ts'
+import {
+  findLetter,
+  findLetterPdf,
+  listDeliveries,
+  listLettersOfChild,
+  listLettersOfViewer,
+  listRecipients,
+  type LetterRecord,
+} from '../queries/letters.ts'
+import { recordAudit, recordChildRead } from '../services/audit.ts'
+import { approveLetter, checkLetterText } from '../services/letterApproval.ts'
+import { recallLetter, retryDelivery, sendLetter } from '../services/letterSending.ts'
+import {
+  changeLetter,
+  createProgressLetter,
+  discardLetter,
+  returnLetter,
+  submitLetter,
+  takeBackLetter,
+} from '../services/letters.ts'
+
+const newLetterSchema = body({
+  kind: string()
+    .required()
+    .oneOf([...letterKinds], 'This kind of letter is not known'),
+})
+
+const base = '/children/:childId/letters'
+
+/** The letter of the address; refused with 409 when its state, with 403 when the person, does not allow the act. */
+const letterFor = async (
+  req: Request,
+  may?: (access: ChildAccess, letter: LetterStanding) => boolean,
+): Promise<LetterRecord> => {
+  const access = accessOf(req)
+  const letter = await findLetter(access, String(req.params.letterId))
+  if (may && !may(access, letter)) {
+    if (['draft', 'awaiting_approval', 'approved'].includes(letter.state) && access.relation === 'clinicLead')
+      throw forbidden('This step belongs to the author of the letter.')
+    throw conflict('closed', 'In its present state this letter does not allow that step.', {
+      version: letter.version,
+      state: letter.state,
+    })
+  }
+  return letter
+}
+
+const answerWith = async (req: Request, letterId: string) => {
+  const access = accessOf(req)
+  const letter = await findLetter(access, letterId)
+  const [checks, recipients, deliveries] = await Promise.all([
+    checkLetterText(access, letter, letter.content),
+    listRecipients(access),
+    listDeliveries(access, letter.id),
+  ])
+  return presentLetter(letter, access, { checks, recipients, deliveries })
+}
+
+export const letterRoutes = ({ appUrl }: { appUrl: string }): Router => {
+  const router = Router()
+
+  router.get('/letters', allow(letterPolicies.listAll), async (req, res) => {
+    const request = pageOf(req)
+    const page = await listLettersOfViewer(viewerOf(req), {
+      ...request,
+      state: queryChoice(req, 'state', letterStates),
+      search: queryText(req, 'search'),
+    })
+    await recordAudit(req.actor, { action: 'letters.list', detail: { ids: page.rows.map((row) => row.id) } })
+    res.json(presentLetterPage(page, request))
+  })
+
+  router.get(base, allow(letterPolicies.list), async (req, res) => {
+    const request = pageOf(req)
+    const page = await listLettersOfChild(accessOf(req), request)
+    await recordChildRead(req.actor, accessOf(req), 'letters.listOfChild', {
+      detail: { ids: page.rows.map((row) => row.id) },
+    })
+    res.json(presentLetterPage(page, request))
+  })
+
+  router.post(base, allow(letterPolicies.create), async (req, res) => {
+    await bodyOf(req, newLetterSchema)
+    const id = await createProgressLetter(req.actor, accessOf(req), idempotencyKeyOf(req))
+    res.status(201).json(await answerWith(req, id))
+  })
+
+  router.get(`${base}/:letterId`, allow(letterPolicies.read), async (req, res) => {
+    const view = await answerWith(req, String(req.params.letterId))
+    await recordChildRead(req.actor, accessOf(req), 'letter.read', {
+      objectType: 'letter',
+      objectId: view.id,
+    })
+    res.json(view)
+  })
+
+  router.put(`${base}/:letterId`, allow(letterPolicies.change), async (req, res) => {
+    const version = ifMatchOf(req)
+    const draft = (await bodyOf(req, letterDraftSchema)) as LetterDraft
+    const letter = await letterFor(req, canChangeLetter)
+    await changeLetter(req.actor, accessOf(req), letter, version, draft)
+    res.json(await answerWith(req, letter.id))
+  })
+
+  router.delete(`${base}/:letterId`, allow(letterPolicies.change), async (req, res) => {
+    const version = ifMatchOf(req)
+    const letter = await letterFor(req, canDiscardLetter)
+    await discardLetter(req.actor, accessOf(req), letter, version)
+    res.status(204).end()
+  })
+
+  router.post(`${base}/:letterId/check`, allow(letterPolicies.check), async (req, res) => {
+    const draft = (await bodyOf(req, letterDraftSchema)) as LetterDraft
+    res.json(await checkLetterText(accessOf(req), await letterFor(req), draft))
+  })
+
+  router.post(`${base}/:letterId/submit`, allow(letterPolicies.change), async (req, res) => {
+    const version = ifMatchOf(req)
+    const letter = await letterFor(req, canSubmitLetter)
+    await submitLetter(req.actor, accessOf(req), letter, version)
+    res.json(await answerWith(req, letter.id))
+  })
+
+  router.post(`${base}/:letterId/approve`, allow(letterPolicies.approve), async (req, res) => {
+    const version = ifMatchOf(req)
+    const approval = await bodyOf(req, letterApprovalSchema)
+    const letter = await letterFor(req, canApproveLetter)
+    await approveLetter(req.actor, accessOf(req), letter, version, approval)
+    res.json(await answerWith(req, letter.id))
+  })
+
+  router.post(`${base}/:letterId/return`, allow(letterPolicies.approve), async (req, res) => {
+    const version = ifMatchOf(req)
+    const request = await bodyOf(req, letterReturnSchema)
+    const letter = await letterFor(req, canReturnLetter)
+    await returnLetter(req.actor, accessOf(req), letter, version, request)
+    res.json(await answerWith(req, letter.id))
+  })
+
+  router.post(`${base}/:letterId/take-back`, allow(letterPolicies.change), async (req, res) => {
+    const version = ifMatchOf(req)
+    const letter = await letterFor(req, canTakeBackLetter)
+    await takeBackLetter(req.actor, accessOf(req), letter, version)
+    res.json(await answerWith(req, letter.id))
+  })
+
+  router.post(`${base}/:letterId/send`, allow(letterPolicies.send), async (req, res) => {
+    const version = ifMatchOf(req)
+    const { guardianIds } = await bodyOf(req, letterSendSchema)
+    const letter = await letterFor(req, canSendLetter)
+    await sendLetter(req.actor, accessOf(req), letter, version, guardianIds, appUrl)
+    res.json(await answerWith(req, letter.id))
+  })
+
+  router.post(`${base}/:letterId/recall`, allow(letterPolicies.send), async (req, res) => {
+    const version = ifMatchOf(req)
+    const letter = await letterFor(req, canRecallLetter)
+    await recallLetter(req.actor, accessOf(req), letter, version)
+    res.json(await answerWith(req, letter.id))
+  })
+
+  router.get(`${base}/:letterId/pdf`, allow(letterPolicies.read), async (req, res) => {
+    const letter = await letterFor(req)
+    const { pdf } = await findLetterPdf(accessOf(req), letter.id)
+    await recordChildRead(req.actor, accessOf(req), 'letter.pdf', {
+      objectType: 'letter',
+      objectId: letter.id,
+    })
+    res.type('application/pdf').setHeader('Content-Disposition', 'inline; filename="letter.pdf"')
+    res.send(pdf)
+  })
+
+  router.post(
+    `${base}/:letterId/deliveries/:deliveryId/retry`,
+    allow(letterPolicies.retry),
+    async (req, res) => {
+      const letter = await letterFor(req)
+      await retryDelivery(req.actor, accessOf(req), letter, String(req.params.deliveryId))
+      res.json(await answerWith(req, letter.id))
+    },
+  )
+
+  return router
+}

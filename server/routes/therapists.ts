@@ -1,0 +1,15 @@
+import { Router } from 'express'
+import { allow } from '../middleware/allow.ts'
+import { therapistPolicies } from '../policies/therapists.ts'
+import { presentTherapist } from '../presenters/therapists.ts'
+import { listTherapists } from '../queries/therapists.ts'
+
+export const therapistRoutes = (): Router => {
+  const router = Router()
+
+  router.get('/therapists', allow(therapistPolicies.list), async (_req, res) => {
+    res.json((await listTherapists()).map(presentTherapist))
+  })
+
+  return router
+}

@@ -1,0 +1,215 @@
+import { randomUUID } from 'node:crypto'
+import type { Transporter } from 'nodemailer'
+import { systemActor } from '../access/actor.ts'
+import { now } from '../clock.ts'
+import { database, type Tx } from '../dataSource.ts'
+import { OutboxMessage } from '../entities/OutboxMessage.ts'
+import { Task } from '../entities/Task.ts'
+import { logger } from '../logger.ts'
+import { execute, selectOne } from '../queries/sql.ts'
+import { reasonNotToDeliver, setDeliveryState } from './letterDeliveries.ts'
+import { readSettings, clinicToday } from './settings.ts'
+import { transact } from './transact.ts'
+
+/** Longer than the ten minutes a server may take to answer the final dot (RFC 5321 §4.5.3.2), so no twin starts meanwhile. */
+const leaseMinutes = 11
+const giveUpDays = 5
+const shortestWaitMinutes = 1
+const longestWaitMinutes = 240
+
+/** Minutes until the next try after the n-th one: 1, 4, 16, 64, then every 4 hours. */
+export const retryMinutes = (attempts: number): number =>
+  Math.min(shortestWaitMinutes * 4 ** (attempts - 1), longestWaitMinutes)
+
+type Claimed = Pick<
+  OutboxMessage,
+  'id' | 'kind' | 'recipient' | 'attempts' | 'createdAt' | 'mime' | 'enqueuedById'
+>
+
+/** Takes one message that is due, or whose last sender died; nobody else gets it while the lease runs. */
+const claim = async (owner: string): Promise<Claimed | null> => {
+  const id = await database().transaction(async (tx) => {
+    const due = await selectOne<{ id: string }>(
+      `SELECT id FROM outbox_messages
+       WHERE (state = 'queued' AND nextAttemptAt <= :now) OR (state = 'sending' AND leaseUntil <= :now)
+       ORDER BY nextAttemptAt LIMIT 1 FOR UPDATE SKIP LOCKED`,
+      { now: now() },
+      tx,
+    )
+    if (!due) return null
+    await execute(
+      tx,
+      `UPDATE outbox_messages SET state = 'sending', leaseOwner = :owner, leaseUntil = :until, attempts = attempts + 1,
+         lastTriedAt = :now WHERE id = :id`,
+      { owner, until: new Date(now().getTime() + leaseMinutes * 60_000), now: now(), id: due.id },
+    )
+    return due.id
+  })
+  if (id === null) return null
+  return database().manager.findOneOrFail(OutboxMessage, {
+    where: { id },
+    select: {
+      id: true,
+      kind: true,
+      recipient: true,
+      attempts: true,
+      createdAt: true,
+      mime: true,
+      enqueuedById: true,
+    },
+  })
+}
+
+/** A refusal for good (5xx); anything else may be better later. */
+const isRefusal = (error: unknown) => {
+  const { responseCode } = error as { responseCode?: number }
+  return responseCode !== undefined && responseCode >= 500
+}
+
+/** The server's answer without addresses or names, for people who look after delivery. */
+const problemText = (error: unknown) => {
+  const { responseCode, code } = error as { responseCode?: number; code?: string }
+  if (responseCode !== undefined) return `The mail server answered ${responseCode}`
+  return `The mail server could not be reached or broke off (${code ?? 'no answer'})`
+}
+
+type Outcome =
+  | { state: 'sent' }
+  | { state: 'failed'; problem: string }
+  | { state: 'cancelled'; problem: string }
+  | { state: 'queued'; problem: string; waitMinutes: number }
+
+const outcomeOf = (message: Claimed, error: unknown): Outcome => {
+  const problem = problemText(error)
+  const age = now().getTime() - message.createdAt.getTime()
+  if (isRefusal(error) || age >= giveUpDays * 86_400_000) return { state: 'failed', problem }
+  // Spread a little, so that a queue does not come back all at once.
+  return { state: 'queued', problem, waitMinutes: retryMinutes(message.attempts) * (1 + Math.random() * 0.1) }
+}
+
+const settle = async (message: Claimed, owner: string, outcome: Outcome): Promise<void> => {
+  const settings = await readSettings()
+  await transact(systemActor(`outbox-${message.id}`), async (tx, record) => {
+    const changed = await execute(
+      tx,
+      `UPDATE outbox_messages SET state = :state, leaseOwner = NULL, leaseUntil = NULL, problem = :problem,
+         nextAttemptAt = :next, sentAt = :sentAt WHERE id = :id AND leaseOwner = :owner`,
+      {
+        state: outcome.state,
+        problem: outcome.state === 'sent' ? null : outcome.problem,
+        next: new Date(now().getTime() + (outcome.state === 'queued' ? outcome.waitMinutes * 60_000 : 0)),
+        sentAt: outcome.state === 'sent' ? now() : null,
+        id: message.id,
+        owner,
+      },
+    )
+    record({
+      action: `mail.${outcome.state}`,
+      objectType: 'outboxMessage',
+      objectId: message.id,
+      detail: { attempts: message.attempts },
+    })
+    if (changed === 0 || message.kind !== 'letter') return
+    const delivery = await selectOne<{ id: string; childId: string; authorId: string }>(
+      `SELECT d.id, l.childId, l.authorId FROM letter_deliveries d JOIN letters l ON l.id = d.letterId
+       WHERE d.outboxMessageId = :id`,
+      { id: message.id },
+      tx,
+    )
+    if (!delivery) return
+    await setDeliveryState(tx, delivery.id, outcome.state)
+    if (outcome.state === 'failed')
+      await makeTask(
+        tx,
+        delivery,
+        'letter_failed',
+        'A letter could not be delivered: check the address with the family',
+        clinicToday(settings),
+      )
+    if (outcome.state === 'cancelled')
+      await makeTask(
+        tx,
+        delivery,
+        'letter_cancelled',
+        'A queued letter was not sent: see why on the letter',
+        clinicToday(settings),
+      )
+  })
+}
+
+const makeTask = (
+  tx: Tx,
+  { childId, authorId }: { childId: string; authorId: string },
+  kind: string,
+  text: string,
+  dueOn: string,
+) =>
+  tx.insert(Task, {
+    id: randomUUID(),
+    childId,
+    kind,
+    text,
+    dueOn,
+    assigneeId: authorId,
+    forRole: null,
+    doneAt: null,
+    doneById: null,
+    createdAt: now(),
+  })
+
+/**
+ * Sends what is due, one message after the other, until nothing is; answers how many were tried. At least once: when
+ * the answer to the final dot is lost the same bytes go again under the same Message-ID. One bad message never holds
+ * up the next.
+ */
+export const deliverDue = async (transport: Transporter, mostMessages = 100): Promise<number> => {
+  const owner = randomUUID()
+  for (let tried = 0; tried < mostMessages; tried += 1) {
+    const message = await claim(owner)
+    if (!message) return tried
+    const forbidden = message.kind === 'letter' ? await reasonNotToDeliver(message.id) : null
+    if (forbidden !== null) {
+      await settle(message, owner, { state: 'cancelled', problem: forbidden })
+      continue
+    }
+    const outcome = await transport
+      .sendMail({ envelope: { from: senderOf(message.mime), to: [message.recipient] }, raw: message.mime })
+      .then(
+        (): Outcome => ({ state: 'sent' }),
+        (error: unknown) => outcomeOf(message, error),
+      )
+    await settle(message, owner, outcome)
+  }
+  return mostMessages
+}
+
+const senderOf = (mime: Buffer) => /^From:.*<([^>\r\n]+)>/im.exec(mime.toString('latin1', 0, 4000))?.[1] ?? ''
+
+/** Looks for due mail every few seconds until stopped; waits for the message under way. */
+export const startOutboxWorker = (
+  transport: Transporter,
+  everySeconds = 2,
+): { stop: () => Promise<void> } => {
+  let stopped = false
+  let timer: NodeJS.Timeout | undefined
+  let running: Promise<void> = Promise.resolve()
+  const tick = () => {
+    running = deliverDue(transport)
+      .then(
+        () => undefined,
+        (error: unknown) =>
+          logger.warn({ code: (error as { code?: string }).code }, 'the outbox could not be worked on'),
+      )
+      .then(() => {
+        if (!stopped) timer = setTimeout(tick, everySeconds * 1000)
+      })
+  }
+  tick()
+  return {
+    stop: async () => {
+      stopped = true
+      clearTimeout(timer)
+      await running
+    },
+  }
+}

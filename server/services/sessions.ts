@@ -1,0 +1,73 @@
+import { createHash } from 'node:crypto'
+import { now } from '../clock.ts'
+import { database } from '../dataSource.ts'
+
+const absoluteHours = 12
+const idleMinutes = 30
+const idleMinutesShared = 15
+
+/** What a sign-in carries. The cookie part belongs to the session middleware and is passed through. */
+export interface SessionContent {
+  passport?: { user: string }
+  sharedComputer?: boolean
+}
+
+/** Seconds without activity after which a sign-in ends: 30 minutes, 15 on a shared computer. */
+export const idleSecondsOf = (content: SessionContent): number =>
+  60 * (content.sharedComputer ? idleMinutesShared : idleMinutes)
+
+export const sessionHash = (sid: string): Buffer => createHash('sha256').update(sid).digest()
+
+interface SessionRow {
+  data: string
+  lastSeenAt: Date
+  expiresAt: Date
+  endedAt: Date | null
+}
+
+/** The content of a living session; null when it is unknown, signed out, idle too long or older than 12 hours. */
+export const readSession = async <T extends SessionContent>(sid: string): Promise<T | null> => {
+  const [row] = (await database().query(
+    'SELECT data, lastSeenAt, expiresAt, endedAt FROM user_sessions WHERE idHash = ?',
+    [sessionHash(sid)],
+  )) as SessionRow[]
+  if (!row || row.endedAt) return null
+  const content = JSON.parse(row.data) as T
+  const idleSeconds = (now().getTime() - row.lastSeenAt.getTime()) / 1000
+  return now() >= row.expiresAt || idleSeconds > idleSecondsOf(content) ? null : content
+}
+
+/**
+ * Writes a living session, or begins one that was never seen. A session that was ended keeps its tombstone: a request
+ * still in flight at sign-out cannot bring it back.
+ */
+export const writeSession = async (sid: string, content: SessionContent): Promise<void> => {
+  const idHash = sessionHash(sid)
+  const userId = content.passport?.user ?? null
+  const data = JSON.stringify(content)
+  const updated = (await database().query(
+    'UPDATE user_sessions SET data = ?, userId = ? WHERE idHash = ? AND endedAt IS NULL',
+    [data, userId, idHash],
+  )) as { affectedRows: number }
+  if (updated.affectedRows > 0) return
+  await database().query(
+    `INSERT IGNORE INTO user_sessions (idHash, data, userId, createdAt, lastSeenAt, expiresAt)
+     VALUES (?, ?, ?, ?, ?, ?)`,
+    [idHash, data, userId, now(), now(), new Date(now().getTime() + absoluteHours * 3_600_000)],
+  )
+}
+
+export const endSession = async (sid: string): Promise<void> => {
+  await database().query(
+    "UPDATE user_sessions SET endedAt = ?, data = '{}' WHERE idHash = ? AND endedAt IS NULL",
+    [now(), sessionHash(sid)],
+  )
+}
+
+/** A person did something: the idle time starts again. Written at most every ten seconds. */
+export const markSeen = async (sid: string): Promise<void> => {
+  await database().query(
+    'UPDATE user_sessions SET lastSeenAt = ? WHERE idHash = ? AND endedAt IS NULL AND lastSeenAt < ?',
+    [now(), sessionHash(sid), new Date(now().getTime() - 10_000)],
+  )
+}
