@@ -1,6 +1,6 @@
-import { useForm as useValidatedForm } from 'vee-validate'
-import { computed, onScopeDispose, readonly, ref, shallowRef, watch, type Ref } from 'vue'
-import type { AnyObject, InferType, Schema } from 'yup'
+import { useForm as useValidatedForm, type TypedSchema } from 'vee-validate'
+import { computed, onScopeDispose, reactive, readonly, ref, shallowRef, toRaw, watch, type Ref } from 'vue'
+import { ValidationError, type AnyObject, type InferType, type Schema } from 'yup'
 import type { Problem } from '@shared/problems.ts'
 import { HttpProblem } from '@/api/http.ts'
 import { wasStopped, wordsFor } from '@/composables/problems.ts'
@@ -22,6 +22,20 @@ interface FormOptions<Values extends AnyObject, S extends Schema, Answer> {
   unguarded?: boolean
 }
 
+/** The shared schema as vee-validate takes it, so that what is sent has the same tidied text the server would make. */
+const checkedBy = (schema: Schema): TypedSchema => ({
+  __type: 'VVTypedSchema',
+  async parse(values: AnyObject) {
+    try {
+      return { value: (await schema.validate(values, { abortEarly: false })) as AnyObject, errors: [] }
+    } catch (error) {
+      if (!(error instanceof ValidationError)) throw error
+      const found = error.inner.length > 0 ? error.inner : [error]
+      return { errors: found.map(({ path, errors }) => ({ path: path ?? '', errors })) }
+    }
+  },
+})
+
 /**
  * One form: checks with the shared schema, sends once, puts the server's words beside the fields, and keeps everything
  * that was typed whatever happens. Messages appear on submit and only go away while the person mends them.
@@ -32,10 +46,11 @@ export function useForm<Values extends AnyObject, S extends Schema, Answer = voi
   options: FormOptions<Values, S, Answer>,
 ) {
   const form = useValidatedForm<AnyObject>({
-    validationSchema: options.schema,
+    validationSchema: checkedBy(options.schema),
     initialValues: options.initial(),
   })
-  const values = form.values as Values
+  // vee-validate hands its values out read-only; this is its own reactive object, for v-model to write to.
+  const values = reactive(toRaw(form.values)) as Values
   const fieldErrors: Ref<Record<string, string>> = ref({})
   const busy = ref<boolean>(false)
   const problem = shallowRef<Problem | null>(null)
