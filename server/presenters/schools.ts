@@ -9,9 +9,7 @@ const presentClass = (row: ClassRow): SchoolView['classes'][number] => ({
   schoolYear: row.schoolYear,
   ages: row.ages,
   teacher:
-    row.teacherId === null || row.teacherName === null
-      ? null
-      : { id: row.teacherId, name: row.teacherName },
+    row.teacherId === null || row.teacherName === null ? null : { id: row.teacherId, name: row.teacherName },
   version: row.version,
 })
 

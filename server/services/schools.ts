@@ -20,11 +20,18 @@ import { updateIfCurrent } from './versions.ts'
 /** Answers the new school's id. A name that is taken is a 422. */
 export const createSchool = (actor: Actor, details: SchoolDetails, key: string | null): Promise<string> =>
   transact(actor, (tx, record) =>
-    createOnce(tx, actor, record, { key, request: ['school', details] }, { objectType: 'school' }, async (id) => {
-      await unlessTaken(tx.insert(School, { id, ...details, createdAt: now() }), {
-        name: 'A school of this name is on the list already',
-      })
-    }),
+    createOnce(
+      tx,
+      actor,
+      record,
+      { key, request: ['school', details] },
+      { objectType: 'school' },
+      async (id) => {
+        await unlessTaken(tx.insert(School, { id, ...details, createdAt: now() }), {
+          name: 'A school of this name is on the list already',
+        })
+      },
+    ),
   )
 
 const assertTeacher = async (tx: Tx, teacherId: string | null) => {
