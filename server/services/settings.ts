@@ -54,5 +54,6 @@ export const changeSettings = (actor: Actor, settings: ClinicSettings, version: 
       )) as { affectedRows: number }
       if (changed.affectedRows === 1) return
     }
-    throw stale(await readSettingsRow())
+    const current = await readSettingsRow()
+    throw stale({ ...current.settings, version: current.version })
   })
