@@ -33,7 +33,7 @@ export const sampleDetailsSchema = body({
   smudge: optionalChoice('the smudging', smudgeLevels),
   lineAdherence: optionalCount('Keeping to the line', 5),
   otherChildVisible: boolean()
-    .required()
+    .required('Say whether another child’s name is visible')
     .oneOf([false], 'Another child’s name is visible: cover or crop it, then choose the file again'),
   note: optionalText('The note', { max: 500 }),
 })

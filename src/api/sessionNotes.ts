@@ -1,4 +1,4 @@
-import { http } from '@/api/http.ts'
+import { http, type ReadOptions } from '@/api/http.ts'
 import type {
   Addendum,
   NoteDraft,
@@ -11,8 +11,7 @@ import type {
 const path = (childId: string) => `/children/${childId}/session-notes`
 
 export const sessionNotesApi = {
-  forChild: (childId: string, query: { page?: number; size?: number }) =>
-    http.get<NotePage>(path(childId), { query }),
+  forChild: (childId: string, query: ReadOptions['query']) => http.get<NotePage>(path(childId), { query }),
   start: (childId: string, draft: NoteDraft, idempotencyKey: string) =>
     http.post<NoteView>(path(childId), draft, { idempotencyKey }),
   one: (childId: string, id: string) => http.get<NoteView>(`${path(childId)}/${id}`),
