@@ -18,4 +18,5 @@ export class Assignment {
   @Column('datetime', { precision: 6 }) startedAt!: Date
   @Column('datetime', { precision: 6, nullable: true }) endedAt!: Date | null
   @Column('varchar', { length: 500 }) reason!: string
+  @Column('varchar', { length: 500, nullable: true }) endReason!: string | null
 }

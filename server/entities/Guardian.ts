@@ -21,6 +21,7 @@ export class Guardian {
   @Column('boolean', { default: false }) courtOrder!: boolean
   @Column('boolean', { default: true }) safeToContact!: boolean
   @Column('boolean', { default: false }) restricted!: boolean
+  @Column('varchar', { length: 500, nullable: true }) restrictedReason!: string | null
   @Column('varchar', { length: 254, nullable: true }) email!: string | null
   @Column('varchar', { length: 30, nullable: true }) phone!: string | null
   @Column('varchar', { length: 300, nullable: true }) address!: string | null

@@ -8,7 +8,7 @@ import {
   VersionColumn,
   type Relation,
 } from 'typeorm'
-import type { Priority, ReferralDetails, ReferralStatus } from '../../shared/referrals.ts'
+import type { DeclineReferral, Priority, ReferralDetails, ReferralStatus } from '../../shared/referrals.ts'
 import { Child } from './Child.ts'
 import { SchoolClass } from './SchoolClass.ts'
 import { User } from './User.ts'
@@ -44,6 +44,7 @@ export class Referral {
   decidedBy!: Relation<User | null>
   @Column('datetime', { precision: 6, nullable: true }) decidedAt!: Date | null
   @Column('varchar', { length: 1000, nullable: true }) decisionReason!: string | null
+  @Column('varchar', { length: 20, nullable: true }) outcome!: DeclineReferral['outcome'] | null
   @Column('datetime', { precision: 6 }) createdAt!: Date
   @VersionColumn({ type: 'int' }) version!: number
 }
