@@ -32,14 +32,7 @@ const wallMs = (moment: number, timeZone: string): number => {
       .map((part) => [part.type, Number(part.value)]),
   )
   const part = (type: Intl.DateTimeFormatPartTypes) => parts.get(type) ?? Number.NaN
-  return Date.UTC(
-    part('year'),
-    part('month') - 1,
-    part('day'),
-    part('hour'),
-    part('minute'),
-    part('second'),
-  )
+  return Date.UTC(part('year'), part('month') - 1, part('day'), part('hour'), part('minute'), part('second'))
 }
 
 /**
