@@ -1,7 +1,7 @@
 import type { ErrorRequestHandler } from 'express'
 import { MulterError } from 'multer'
 import { ValidationError } from 'yup'
-import { AppError, invalid, unavailable } from '../errors.ts'
+import { AppError, conflict, invalid, unavailable } from '../errors.ts'
 import { logger } from '../logger.ts'
 import { recordAudit } from '../services/audit.ts'
 
@@ -58,6 +58,9 @@ const toAppError = (error: unknown): AppError | null => {
     return new AppError(415, 'wrong_type', 'This kind of content is not accepted.')
   if (status !== undefined && status >= 400 && status < 500)
     return new AppError(status === 404 ? 404 : 400, 'unreadable', 'This request could not be read.')
+  // A trigger stood in the way of a change to something signed or locked (see migrations/…-CloseWhatIsClosed.ts).
+  if ((code ?? driverError?.code) === 'ER_SIGNAL_EXCEPTION')
+    return conflict('closed', 'This is signed or locked and stays as it is. Nothing was changed.')
   if (databaseTrouble.has(code ?? driverError?.code ?? '')) return unavailable()
   if (/Multipart|Unexpected end of form|Malformed part/i.test((error as Error).message ?? ''))
     return new AppError(400, 'unreadable', 'The upload broke off. Choose the file again.')

@@ -1,0 +1,27 @@
+import type { ChildAccess } from '../access/childAccess.ts'
+import { childPolicy, isRelation } from './policy.ts'
+
+const write = (name: string) => childPolicy(name, ['assignedTherapist'], 'write', ['clinicLead'])
+
+export const questionnairePolicies = {
+  handProfile: childPolicy('handProfile.read', ['assignedTherapist', 'clinicLead'], 'read'),
+  read: childPolicy('questionnaire.read', ['assignedTherapist', 'clinicLead'], 'read'),
+  start: write('questionnaire.start'),
+  change: write('questionnaire.change'),
+  discard: write('questionnaire.discard'),
+  lock: write('questionnaire.lock'),
+}
+
+interface Response {
+  lockedAt: Date | null
+  replacedById: string | null
+}
+
+export const canAddQuestionnaire = (access: ChildAccess, consented: boolean) =>
+  isRelation(access, 'assignedTherapist') && consented
+
+export const canChangeQuestionnaire = (access: ChildAccess, { lockedAt }: Response) =>
+  isRelation(access, 'assignedTherapist') && lockedAt === null
+
+export const canReplaceQuestionnaire = (access: ChildAccess, { lockedAt, replacedById }: Response) =>
+  isRelation(access, 'assignedTherapist') && lockedAt !== null && replacedById === null
