@@ -1,6 +1,6 @@
-import { array, object, type InferType } from 'yup'
-import type { Day } from './days.ts'
-import { body, id, optionalText, text } from './fields.ts'
+import { array, object, string, type InferType } from 'yup'
+import { optionalDayField, type Day } from './days.ts'
+import { body, choice, id, text, tidy } from './fields.ts'
 import type { Page } from './pages.ts'
 
 export const letterKinds = ['progress'] as const
@@ -50,17 +50,19 @@ export interface LetterSection {
 }
 
 const sectionSchema = object({
-  id: id('The section')
-    .matches(/.*/)
-    .oneOf([...letterSectionIds] as string[]),
+  id: choice('a section of the letter', letterSectionIds),
   heading: text('The heading', { max: 120 }),
-  text: optionalText('The section', { max: 4000 }),
+  /** May be empty while a draft: an empty section is left out of the printed letter. */
+  text: string()
+    .transform(tidy)
+    .defined('The section is missing')
+    .max(4000, 'A section can be at most 4000 characters'),
 }).noUnknown()
 
 export const letterDraftSchema = body({
   salutation: text('The greeting', { max: 120 }),
   sections: array(sectionSchema).required().min(1).max(letterSectionIds.length),
-  nextVisitOn: optionalText('The next date', { max: 10 }),
+  nextVisitOn: optionalDayField('The next date'),
 })
 export type LetterDraft = { salutation: string; sections: LetterSection[]; nextVisitOn: Day | null }
 

@@ -62,3 +62,27 @@ export const canRecallLetter = (access: ChildAccess, letter: LetterStanding) =>
 
 export const canDiscardLetter = (access: ChildAccess, letter: LetterStanding) =>
   canChangeLetter(access, letter) && isAuthor(access, letter) && isStaff(access.viewer.roles)
+
+/** What decides whether and how a letter may be e-mailed to one carer. */
+export interface Addressee {
+  email: string | null
+  restricted: boolean
+  safeToContact: boolean
+  hasAccount: boolean
+  /** E-mail consents in force for this carer. */
+  link: boolean
+  attachment: boolean
+}
+
+/** How a letter reaches a carer by e-mail, or why it does not, in words. */
+export const letterChannel = (
+  carer: Addressee,
+): { channel: 'link' | 'attachment' | null; why: string | null } => {
+  if (carer.restricted) return { channel: null, why: 'This carer may not be written to' }
+  if (!carer.safeToContact) return { channel: null, why: 'It is not safe to contact this carer' }
+  if (carer.email === null) return { channel: null, why: 'No e-mail address: print the letter' }
+  if (carer.attachment) return { channel: 'attachment', why: null }
+  if (!carer.link) return { channel: null, why: 'No consent to e-mail: print the letter' }
+  if (!carer.hasAccount) return { channel: null, why: 'No account yet: invite this carer first' }
+  return { channel: 'link', why: null }
+}

@@ -17,9 +17,9 @@ import {
   canSendLetter,
   canSubmitLetter,
   canTakeBackLetter,
+  letterChannel,
 } from '../policies/letters.ts'
 import type { DeliveryRow, LetterListRow, LetterRecord, RecipientRow } from '../queries/letters.ts'
-import { channelOf } from '../services/letterSending.ts'
 
 const presentDelivery = (row: DeliveryRow, mayRetry: boolean): DeliveryView => ({
   id: row.id,
@@ -38,7 +38,7 @@ const presentRecipient = (carer: RecipientRow): LetterRecipient => ({
   guardianId: carer.guardianId,
   name: carer.name,
   relation: guardianRelationLabels[carer.relation],
-  ...channelOf(carer),
+  ...letterChannel(carer),
 })
 
 export const presentLetter = (

@@ -59,7 +59,12 @@ export const approveLetter = async (
   const open = openFindings(checks, approval.overrides)
   if (open.length > 0)
     throw new AppError(422, 'letter_not_ready', 'This letter cannot be approved yet.', {
-      fields: Object.fromEntries(open.map((finding, index) => [`finding${index}`, finding.message])),
+      fields: Object.fromEntries(
+        open.map((finding, index) => [
+          `finding${index}`,
+          finding.phrase === null ? finding.message : `“${finding.phrase}”: ${finding.message}`,
+        ]),
+      ),
     })
   const settings = await readSettings()
   const approvedAt = now()

@@ -6,6 +6,7 @@ import type { Tx } from '../dataSource.ts'
 import { LetterDelivery } from '../entities/LetterDelivery.ts'
 import { conflict, invalid, notFound } from '../errors.ts'
 import { letterAttached, letterNotice } from '../mail/mailTemplates.ts'
+import { letterChannel } from '../policies/letters.ts'
 import { findLetterPdf, listRecipients, type LetterRecord, type RecipientRow } from '../queries/letters.ts'
 import { consentInForce, within } from '../queries/scope.ts'
 import { execute, selectOne } from '../queries/sql.ts'
@@ -17,19 +18,6 @@ import { transact } from './transact.ts'
 
 /** Days for which the link in the e-mail opens the letter; later the letter is still under My child. */
 const linkDays = 14
-
-/** How a letter reaches a carer by e-mail, or why it does not, in words. */
-export const channelOf = (
-  carer: RecipientRow,
-): { channel: 'link' | 'attachment' | null; why: string | null } => {
-  if (carer.restricted) return { channel: null, why: 'This carer may not be written to' }
-  if (!carer.safeToContact) return { channel: null, why: 'It is not safe to contact this carer' }
-  if (carer.email === null) return { channel: null, why: 'No e-mail address: print the letter' }
-  if (carer.attachment) return { channel: 'attachment', why: null }
-  if (!carer.link) return { channel: null, why: 'No consent to e-mail: print the letter' }
-  if (!carer.hasAccount) return { channel: null, why: 'No account yet: invite this carer first' }
-  return { channel: 'link', why: null }
-}
 
 /** Two people at one address would open each other's letters: only one of them may be chosen. */
 const assertOwnAddress = (chosen: RecipientRow[]) => {
@@ -66,7 +54,7 @@ export const sendLetter = async (
     assertOwnAddress(chosen)
     const { pdf } = await findLetterPdf(access, letter.id)
     for (const carer of chosen) {
-      const { channel, why } = channelOf(carer)
+      const { channel, why } = letterChannel(carer)
       if (channel === null || carer.email === null) throw invalid({ guardianIds: `${carer.name}: ${why}` })
       await assertNotUnderWay(tx, letter.id, carer)
       const deliveryId = randomUUID()

@@ -7,12 +7,13 @@ import { ClassTeacher } from '../entities/ClassTeacher.ts'
 import { School } from '../entities/School.ts'
 import { SchoolClass } from '../entities/SchoolClass.ts'
 import { User } from '../entities/User.ts'
-import { invalid, notFound, stale } from '../errors.ts'
+import { invalid, notFound } from '../errors.ts'
 import { presentCurrentClass } from '../presenters/schools.ts'
 import { findClass } from '../queries/schools.ts'
 import { isId } from '../queries/scope.ts'
 import { execute } from '../queries/sql.ts'
 import { createOnce } from './createOnce.ts'
+import { answerStale, StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
 import { unlessTaken } from './uniqueness.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -77,26 +78,33 @@ export const changeClass = (
   version: number,
   details: SchoolClassDetails,
 ): Promise<void> =>
-  transact(actor, async (tx, record) => {
-    const before = isId(id) ? await findClass(id, tx) : null
-    if (!before) throw notFound()
-    const { teacherId, ...columns } = details
-    await assertSchool(tx, details.schoolId)
-    if (teacherId !== before.teacherId) await assertTeacher(tx, teacherId)
-    const changed = await unlessTaken(updateIfCurrent(tx, SchoolClass, id, version, columns), classTaken)
-    if (!changed) throw stale(presentCurrentClass(before))
-    record({ action: 'schoolClass.changed', objectType: 'schoolClass', objectId: id })
-    if (teacherId === before.teacherId) return
-    await execute(
-      tx,
-      'UPDATE class_teachers SET endedAt = :now WHERE schoolClassId = :id AND (endedAt IS NULL OR endedAt > :now)',
-      { id, now: now() },
-    )
-    if (teacherId !== null) await linkTeacher(tx, id, teacherId)
-    record({
-      action: 'schoolClass.teacher_changed',
-      objectType: 'schoolClass',
-      objectId: id,
-      detail: { from: before.teacherId, to: teacherId },
-    })
-  })
+  answerStale(
+    transact(actor, async (tx, record) => {
+      const before = isId(id) ? await findClass(id, tx) : null
+      if (!before) throw notFound()
+      const { teacherId, ...columns } = details
+      await assertSchool(tx, details.schoolId)
+      if (teacherId !== before.teacherId) await assertTeacher(tx, teacherId)
+      const changed = await unlessTaken(updateIfCurrent(tx, SchoolClass, id, version, columns), classTaken)
+      if (!changed) throw new StaleWrite()
+      record({ action: 'schoolClass.changed', objectType: 'schoolClass', objectId: id })
+      if (teacherId === before.teacherId) return
+      await execute(
+        tx,
+        'UPDATE class_teachers SET endedAt = :now WHERE schoolClassId = :id AND (endedAt IS NULL OR endedAt > :now)',
+        { id, now: now() },
+      )
+      if (teacherId !== null) await linkTeacher(tx, id, teacherId)
+      record({
+        action: 'schoolClass.teacher_changed',
+        objectType: 'schoolClass',
+        objectId: id,
+        detail: { from: before.teacherId, to: teacherId },
+      })
+    }),
+    async () => {
+      const current = await findClass(id)
+      if (!current) throw notFound()
+      return presentCurrentClass(current)
+    },
+  )

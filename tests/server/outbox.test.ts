@@ -1,0 +1,199 @@
+import { randomUUID } from 'node:crypto'
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest'
+import { setClock } from '../../server/clock.ts'
+import { database } from '../../server/dataSource.ts'
+import { enqueueMail } from '../../server/services/outbox.ts'
+import { deliverDue } from '../../server/services/outboxWorker.ts'
+import { startApp, stopApp } from '../support/app.ts'
+import { giveConsent } from '../support/factories.ts'
+import { letterScene, queuedLetter } from '../support/letters.ts'
+import { startMail, type Mail } from '../support/mail.ts'
+
+let mail: Mail
+beforeAll(async () => {
+  await startApp()
+  mail = await startMail()
+})
+afterAll(async () => {
+  await mail.stop()
+  await stopApp()
+})
+beforeEach(() => mail.clear())
+afterEach(async () => {
+  setClock(() => new Date())
+  await mail.failNext('refuse', 0)
+})
+
+const minutesLater = (minutes: number) => {
+  const moment = new Date(Date.now() + minutes * 60_000)
+  setClock(() => moment)
+}
+const enqueue = (recipient: string) =>
+  database().transaction((tx) =>
+    enqueueMail(
+      tx,
+      { kind: 'invitation', recipient, subject: 'Hello', text: 'Hello', html: '<p>Hello</p>' },
+      null,
+    ),
+  )
+const stateOf = async (id: string) => {
+  const [row] = await database().query('SELECT state, attempts, problem FROM outbox_messages WHERE id = ?', [
+    id,
+  ])
+  return row as { state: string; attempts: number; problem: string | null }
+}
+const address = () => `carer-${randomUUID().slice(0, 8)}@harrowmere.example`
+
+describe('the outbox', () => {
+  it('delivers a letter’s notice, which says nothing about the child, and then calls the letter sent', async () => {
+    const scene = await letterScene()
+    const letter = await queuedLetter(scene)
+    await mail.deliver()
+    const [message] = await mail.messages(scene.guardianUser.email)
+    expect(message?.text).toContain(`/letter/${letter.deliveries[0]?.id}`)
+    expect(JSON.stringify(message)).not.toContain('Wrenna')
+    const after = await scene.as.get(`${scene.base}/${letter.id}`)
+    expect(after.body).toMatchObject({ state: 'sent', deliveries: [{ state: 'sent' }] })
+  })
+
+  it('leaves nothing when the act is rolled back', async () => {
+    const recipient = address()
+    await expect(
+      database().transaction(async (tx) => {
+        await enqueueMail(
+          tx,
+          { kind: 'invitation', recipient, subject: 'Hello', text: 'Hello', html: '' },
+          null,
+        )
+        throw new Error('the act failed')
+      }),
+    ).rejects.toThrow('the act failed')
+    expect(await database().query('SELECT id FROM outbox_messages WHERE recipient = ?', [recipient])).toEqual(
+      [],
+    )
+  })
+
+  it.each(['refuse', 421, 450, 451, 'cutBeforeDot'] as const)(
+    'tries again after %s and delivers once',
+    async (fault) => {
+      const recipient = address()
+      const id = await enqueue(recipient)
+      await mail.failNext(fault, 1)
+      await mail.deliver()
+      expect(await stateOf(id)).toMatchObject({ state: 'queued', attempts: 1 })
+      await mail.deliver()
+      expect((await stateOf(id)).attempts).toBe(1)
+      minutesLater(2)
+      await mail.deliver()
+      expect(await stateOf(id)).toMatchObject({ state: 'sent', attempts: 2, problem: null })
+      expect(await mail.messages(recipient)).toHaveLength(1)
+    },
+  )
+
+  it('sends the same Message-ID again when the answer to the final dot was lost', async () => {
+    const recipient = address()
+    const id = await enqueue(recipient)
+    await mail.failNext('cutAfterDot', 1)
+    await mail.deliver()
+    minutesLater(2)
+    await mail.deliver()
+    expect((await stateOf(id)).state).toBe('sent')
+    const messages = await mail.messages(recipient)
+    expect(messages.length).toBeGreaterThanOrEqual(1)
+    expect(new Set(messages.map((message) => message.messageId)).size).toBe(1)
+  })
+
+  it('gives up at once on 550, says so on the letter and makes a task for the author', async () => {
+    const scene = await letterScene()
+    const letter = await queuedLetter(scene)
+    await mail.failNext(550, 1, scene.guardianUser.email)
+    await mail.deliver()
+    const after = await scene.as.get(`${scene.base}/${letter.id}`)
+    expect(after.body.deliveries[0]).toMatchObject({ state: 'failed', attempts: 1, can: { retry: true } })
+    const tasks = await database().query('SELECT kind, assigneeId FROM tasks WHERE childId = ?', [
+      scene.child.id,
+    ])
+    expect(tasks).toEqual([{ kind: 'letter_failed', assigneeId: scene.therapist.id }])
+    const retried = await scene.as
+      .post(`${scene.base}/${letter.id}/deliveries/${letter.deliveries[0]?.id}/retry`)
+      .send()
+    expect(retried.status).toBe(200)
+    await mail.deliver()
+    expect(await mail.messages(scene.guardianUser.email)).toHaveLength(1)
+  })
+
+  it('gives up after five days of trouble', async () => {
+    const id = await enqueue(address())
+    await mail.failNext('refuse', 1)
+    minutesLater(5 * 24 * 60 + 1)
+    await mail.deliver()
+    expect((await stateOf(id)).state).toBe('failed')
+  })
+
+  it('is not held up by one bad message', async () => {
+    const [bad, good] = [address(), address()]
+    await enqueue(bad)
+    const id = await enqueue(good)
+    await mail.failNext(451, 1, bad)
+    await mail.deliver()
+    expect((await stateOf(id)).state).toBe('sent')
+  })
+
+  it('never lets two workers send one message', async () => {
+    const recipients = Array.from({ length: 30 }, address)
+    for (const recipient of recipients) await enqueue(recipient)
+    await Promise.all([deliverDue(mail.transport), deliverDue(mail.transport), deliverDue(mail.transport)])
+    for (const recipient of recipients) expect(await mail.messages(recipient)).toHaveLength(1)
+  }, 30_000)
+
+  it('takes over the message of a worker that died, when its lease has run out', async () => {
+    const id = await enqueue(address())
+    await database().query(
+      "UPDATE outbox_messages SET state = 'sending', leaseOwner = 'gone', leaseUntil = ? WHERE id = ?",
+      [new Date(Date.now() + 60_000), id],
+    )
+    await mail.deliver()
+    expect((await stateOf(id)).state).toBe('sending')
+    minutesLater(2)
+    await mail.deliver()
+    expect((await stateOf(id)).state).toBe('sent')
+  })
+})
+
+describe('just before an e-mail leaves', () => {
+  it.each([
+    ['consent to e-mail was withdrawn', 'email_link'],
+    ['consent to therapy was withdrawn', 'assessment_treatment'],
+  ] as const)('it is cancelled when %s', async (_what, purpose) => {
+    const scene = await letterScene()
+    const letter = await queuedLetter(scene)
+    const [given] = await database().query(
+      "SELECT id FROM consents WHERE childId = ? AND purpose = ? AND kind = 'given'",
+      [scene.child.id, purpose],
+    )
+    await giveConsent(scene.child, purpose, scene.therapist, {
+      kind: 'withdrawn',
+      withdrawsId: given.id,
+      guardianId: purpose === 'email_link' ? scene.guardian.id : null,
+    })
+    await mail.deliver()
+    expect(await mail.messages(scene.guardianUser.email)).toEqual([])
+    const after = await scene.as.get(`${scene.base}/${letter.id}`)
+    expect(after.body.deliveries[0].state).toBe('cancelled')
+  })
+
+  it.each([
+    ['restricted', { restricted: 1 }],
+    ['no longer safe to contact', { safeToContact: 0 }],
+    ['at another address', { email: 'moved@harrowmere.example' }],
+  ])('it is cancelled when the carer is %s', async (_what, change) => {
+    const scene = await letterScene()
+    await queuedLetter(scene)
+    await database().query(`UPDATE guardians SET ${Object.keys(change)[0]} = ? WHERE id = ?`, [
+      Object.values(change)[0],
+      scene.guardian.id,
+    ])
+    await mail.deliver()
+    expect(await mail.messages(scene.guardianUser.email)).toEqual([])
+  })
+})
