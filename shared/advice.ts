@@ -1,6 +1,7 @@
 import type { AdviceFacts } from './adviceFacts.ts'
 import type { AdviceAudience, AdviceItem } from './adviceItem.ts'
 import { adviceItems } from './adviceItems.ts'
+import type { ScriptDirection } from './referrals.ts'
 
 export interface AdviceOffer {
   item: AdviceItem
@@ -12,6 +13,13 @@ export interface AdviceOffer {
 
 const leftToRightNote = 'This is for writing that runs left to right only.'
 
+/** What is printed with an item: its own caution, and for a child who writes in both directions which one it is for. */
+export function cautionFor(item: AdviceItem, scriptDirection: ScriptDirection | null): string | null {
+  const forOneDirection = item.leftToRightOnly && scriptDirection === 'both'
+  const words = [item.caution, forOneDirection ? leftToRightNote : null].filter((part) => part !== null)
+  return words.length === 0 ? null : words.join(' ')
+}
+
 function offer(item: AdviceItem, facts: AdviceFacts): AdviceOffer | null {
   if (facts.ageMonths === null) return null
   const age = Math.floor(facts.ageMonths / 12)
@@ -20,11 +28,7 @@ function offer(item: AdviceItem, facts: AdviceFacts): AdviceOffer | null {
   if (item.leftToRightOnly && facts.scriptDirection !== 'ltr' && facts.scriptDirection !== 'both') return null
   const fact = item.offeredFor(facts)
   if (fact === null) return null
-  const bothWays = item.leftToRightOnly && facts.scriptDirection === 'both'
-  const caution = [item.caution, bothWays ? leftToRightNote : null]
-    .filter((words) => words !== null)
-    .join(' ')
-  return { item, triggeredBy: `because ${fact}`, caution: caution === '' ? null : caution }
+  return { item, triggeredBy: `because ${fact}`, caution: cautionFor(item, facts.scriptDirection) }
 }
 
 /**
