@@ -93,6 +93,12 @@ export const guardianConsentSchema = body({
   purpose: choice('a purpose', consentPurposes),
 })
 
+/** Stopping is as easy as agreeing: a carer need not say why. */
+export const guardianWithdrawalSchema = body({
+  reason: optionalText('The reason', { max: 500 }),
+})
+export type GuardianWithdrawal = InferType<typeof guardianWithdrawalSchema>
+
 export const consentWithdrawalSchema = body({
   reason: text('The reason', { min: 2, max: 500 }),
 })
