@@ -19,9 +19,25 @@ export const consentInForce = (column: string, purposes: readonly ConsentPurpose
 const heldByTherapist = (column: string) => `EXISTS (SELECT 1 FROM assignments sa WHERE sa.childId = ${column}
   AND sa.therapistId = :scopeViewer AND sa.startedAt <= :scopeNow AND (sa.endedAt IS NULL OR sa.endedAt > :scopeNow))`
 
-const linkedGuardian = (column: string) => `EXISTS (SELECT 1 FROM guardians sg WHERE sg.childId = ${column}
-  AND sg.userId = :scopeViewer AND sg.restricted = 0 AND sg.verifiedAt <= :scopeNow
-  AND (sg.endedAt IS NULL OR sg.endedAt > :scopeNow))`
+/** Conditions for a row of `guardians` to count as the viewer's own link now; parameters as of `childScope`. */
+export const ownLink = (row: string) => `${row}.userId = :scopeViewer AND ${row}.restricted = 0
+  AND ${row}.verifiedAt <= :scopeNow AND (${row}.endedAt IS NULL OR ${row}.endedAt > :scopeNow)`
+
+/** Years at which a young person's record stops being open to those who cared for them. */
+const comesOfAge = 18
+
+const restrictedFrom = (column: string) => `EXISTS (SELECT 1 FROM guardians sr WHERE sr.childId = ${column}
+  AND sr.userId = :scopeViewer AND sr.restricted = 1)`
+
+// A restriction on one link closes every other link of the same person to the child.
+const linkedGuardian = (column: string) => `(EXISTS (SELECT 1 FROM guardians sg
+    JOIN children sy ON sy.id = sg.childId WHERE sg.childId = ${column} AND ${ownLink('sg')}
+    AND (sg.relation = 'self' OR sy.birthDate > DATE_SUB(DATE(:scopeNow), INTERVAL ${comesOfAge} YEAR)))
+  AND NOT ${restrictedFrom(column)})`
+
+/** People meet their own child as family only, never as the child's teacher. */
+const notFamily = (column: string) => `NOT EXISTS (SELECT 1 FROM guardians so WHERE so.childId = ${column}
+  AND ${ownLink('so')}) AND NOT ${restrictedFrom(column)}`
 
 const taughtNow = (column: string) => `EXISTS (SELECT 1 FROM children st
   JOIN class_teachers sct ON sct.schoolClassId = st.schoolClassId
@@ -56,7 +72,7 @@ export const childScope = (viewer: Viewer, relation: ChildRelation, column: stri
       const consent = consentInForce(column, schoolPurposes)
       return holds('teacher')
         ? {
-            sql: `(${taughtNow(column)} AND ${consent.sql})`,
+            sql: `(${taughtNow(column)} AND ${consent.sql} AND ${notFamily(column)})`,
             parameters: { ...consent.parameters, ...parameters },
           }
         : nobody
