@@ -15,6 +15,9 @@ export const policyOf = (handler: unknown): Policy | null =>
  */
 export const allow = (policy: Policy): RequestHandler => {
   const handler: PolicyHandler = async (req, res, next) => {
+    // A denial is recorded by the error exit, which no longer sees the route.
+    res.locals.policyName = policy.name
+    res.locals.attemptedChildId = policy.kind === 'child' ? String(req.params.childId).slice(0, 64) : null
     if (policy.kind !== 'open') {
       const { viewer } = req.actor
       if (!viewer) throw signedOut()

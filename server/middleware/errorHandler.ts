@@ -73,15 +73,14 @@ export const errorHandler: ErrorRequestHandler = async (error: unknown, req, res
   if (res.headersSent) return next(error)
   let problem = toAppError(error)
   if (problem && [401, 403, 404].includes(problem.status) && req.actor.viewer) {
-    const attempted = req.params?.childId
     problem = await recordAudit(req.actor, {
-      action: `${req.method.toLowerCase()} ${req.route?.path ?? 'unknown'}`.slice(0, 60),
+      action: res.locals.policyName ?? 'unknown.route',
       childId: req.childAccess?.childId ?? null,
       relation: req.childAccess?.relation ?? null,
       result: 'denied',
       detail: {
         status: problem.status,
-        object: typeof attempted === 'string' ? attempted.slice(0, 64) : null,
+        object: res.locals.attemptedChildId ?? null,
       },
     }).then(
       () => problem,

@@ -9,6 +9,10 @@ declare module 'express-serve-static-core' {
     actor: Actor
     childAccess?: ChildAccess
   }
+  interface Locals {
+    policyName?: string
+    attemptedChildId?: string | null
+  }
 }
 
 /** Gives every request an id and an actor; the viewer is filled in once the session is known. */

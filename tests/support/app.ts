@@ -23,6 +23,11 @@ export const startApp = async (): Promise<void> => {
   })
 }
 
+/** For tests that open their own database and app. */
+export const useApp = (other: Express): void => {
+  app = other
+}
+
 export const stopApp = async (): Promise<void> => {
   app = null
   await closeDatabase()

@@ -34,11 +34,12 @@ function removeLeftOvers(folder: string): void {
  */
 export async function startTestMariaDb(
   folder = mkdtempSync(join(roomyFolder(), prefix)),
+  port: number | null = null,
 ): Promise<MariaDb & { folder: string; remove: () => Promise<void> }> {
   removeLeftOvers(roomyFolder())
   const mariadb = await startMariaDb({
     dataDir: folder,
-    port: null,
+    port,
     durability: 'throwaway',
     databases: 'test\\_%',
   })
