@@ -63,7 +63,8 @@ export function useSessionWatch() {
 
   // Timers sleep with the computer and in hidden tabs; a page that is looked at again checks at once.
   const seen = () => {
-    if (document.visibilityState === 'visible') void tick()
+    if (document.visibilityState !== 'visible' || !session.user) return
+    void (performance.now() - asked > lookAgainInMs ? look().then(tick) : tick())
   }
   const heard = () => {
     if (session.user) void look().then(tick)

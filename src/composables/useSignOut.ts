@@ -10,6 +10,9 @@ export const startAfresh = (address: string) => {
   window.location.replace(address)
 }
 
+/** Looks and keys chosen for this device: the server's order to clear storage at sign-out does not mean them. */
+const deviceSettings = () => Object.entries(localStorage).filter(([key]) => key.startsWith('fanflower.'))
+
 /** Signs out: saves or asks about what is unsaved, ends the sign-in on the server, then forgets the page. */
 export function useSignOut() {
   const session = useSessionStore()
@@ -18,8 +21,10 @@ export function useSignOut() {
   async function signOut(): Promise<void> {
     problem.value = null
     if (!(await mayLeave())) return
+    const kept = deviceSettings()
     try {
       await session.signOut()
+      for (const [key, value] of kept) localStorage.setItem(key, String(value))
     } catch (error) {
       if (statusOf(error) !== 401) {
         problem.value = `You are still signed in. ${wordsFor(error)}`
