@@ -147,8 +147,11 @@ export interface ReferralRow {
   source: ReferralSource
   status: ReferralStatus
   priority: Priority | null
-  childName: string
-  birthDate: Day
+  /** Null where the viewer sees the queue without names: a therapist, until the child is theirs. */
+  childName: string | null
+  birthDate: Day | null
+  /** E.g. '6 to 7 years': what the queue shows in place of name and birth date. */
+  ageBand: string
   school: string | null
   concerns: ReferralConcern[]
   missing: string[]
@@ -179,6 +182,8 @@ export interface ReferralView extends ReferralDetails {
   decidedBy: string | null
   decidedAt: string | null
   decisionReason: string | null
+  /** What happened instead, when it was not accepted. */
+  outcome: DeclineReferral['outcome'] | null
   version: number
   can: { change: boolean; accept: boolean; decline: boolean; allocate: boolean }
 }
