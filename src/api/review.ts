@@ -1,8 +1,8 @@
-import type { ReviewFigureId, ReviewListPage, ReviewView } from '@shared/review.ts'
+import type { ReviewListPage, ReviewView } from '@shared/review.ts'
 import { http, type ReadOptions } from '@/api/http.ts'
 
 export const reviewApi = {
   overview: () => http.get<ReviewView>('/review'),
-  list: (figure: ReviewFigureId, query: ReadOptions['query']) =>
+  list: (figure: string, query: ReadOptions['query']) =>
     http.get<ReviewListPage>(`/review/${figure}`, { query }),
 }

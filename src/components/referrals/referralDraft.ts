@@ -88,3 +88,26 @@ export const draftOf = (referral: ReferralDetails): ReferralDraft => ({
     address: carer.address,
   })),
 })
+
+/** Names of the fields where two versions of a referral are compared. */
+export const referralLabels: Partial<Record<keyof ReferralDraft, string>> = {
+  receivedOn: 'Date received',
+  source: 'Who refers',
+  referrerName: 'Referrer’s name',
+  referrerRole: 'Referrer’s role',
+  referrerEmail: 'Referrer’s e-mail address',
+  referrerPhone: 'Referrer’s phone',
+  givenName: 'Given name',
+  familyName: 'Family name',
+  preferredName: 'Preferred name',
+  birthDate: 'Date of birth',
+  classId: 'School class',
+  schoolNote: 'School, in words',
+  homeLanguages: 'Home languages',
+  interpreterLanguage: 'Interpreter needed for',
+  scriptDirection: 'Direction the child writes',
+  lookedAfter: 'Looked after by a local authority',
+  reason: 'Reason',
+  concerns: 'What it is about',
+  carers: 'Parents and carers',
+}
