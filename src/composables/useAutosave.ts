@@ -137,7 +137,7 @@ export function useAutosave<Value, Answer extends { version: number }>(
 
   /**
    * Ends a conflict. `mine` saves this page's text over the other; `theirs` takes the other as the saved one: the
-   * answer is what is stored now, and the caller puts it into the form.
+   * answer is what is stored now; the caller puts it and its version into the page and calls `rebase()`.
    */
   async function resolve(choice: 'mine' | 'theirs'): Promise<Answer | null> {
     const open = conflict.value
