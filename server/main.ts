@@ -6,7 +6,7 @@ import { closeDatabase, openDatabase } from './dataSource.ts'
 import { readEnv, type Env } from './env.ts'
 import { openTransport } from './mail/transport.ts'
 import { seedDemoOnce } from './seeds/demo.ts'
-import { firstAdministratorLink } from './services/firstAdministrator.ts'
+import { firstAdministratorAddress, firstAdministratorLink } from './services/firstAdministrator.ts'
 import { openAuditChain } from './services/audit.ts'
 import { startOutboxWorker } from './services/outboxWorker.ts'
 import { databaseProblems } from './setup/checkDatabase.ts'
@@ -60,6 +60,7 @@ const start = async (shutdown: Shutdown) => {
           '',
           'Nobody has an account yet. The first administrator begins here (works once, for 72 hours):',
           firstLink,
+          `Afterwards sign in as ${firstAdministratorAddress}, and invite yourself and others under People.`,
         ]
       : []),
     '',

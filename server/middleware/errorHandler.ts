@@ -61,6 +61,12 @@ const toAppError = (error: unknown): AppError | null => {
   // A trigger stood in the way of a change to something signed or locked (see migrations/…-CloseWhatIsClosed.ts).
   if ((code ?? driverError?.code) === 'ER_SIGNAL_EXCEPTION')
     return conflict('closed', 'This is signed or locked and stays as it is. Nothing was changed.')
+  // A trigger's refusal: the rules above it should have answered first, but nothing was changed.
+  if ((code ?? driverError?.code) === 'ER_SIGNAL_EXCEPTION')
+    return conflict(
+      'closed',
+      'This is signed, locked or sent and can no longer be changed. Add to it instead.',
+    )
   if (databaseTrouble.has(code ?? driverError?.code ?? '')) return unavailable()
   if (/Multipart|Unexpected end of form|Malformed part/i.test((error as Error).message ?? ''))
     return new AppError(400, 'unreadable', 'The upload broke off. Choose the file again.')

@@ -5,7 +5,7 @@ import { User } from '../entities/User.ts'
 import { issueToken } from './accounts.ts'
 import { transact } from './transact.ts'
 
-const placeholderAddress = 'first.administrator@fanflower.example'
+export const firstAdministratorAddress = 'first.administrator@fanflower.example'
 
 /**
  * While no account can sign in, makes a fresh one-time link for the first administrator; null once somebody can.
@@ -19,12 +19,12 @@ export const firstAdministratorLink = (appUrl: string): Promise<string | null> =
     )) as { usable: string }[]
     if (Number(usable) > 0) return null
     await tx.query('UPDATE user_tokens SET usedAt = ? WHERE usedAt IS NULL', [now()])
-    const known = await tx.findOneBy(User, { email: placeholderAddress })
+    const known = await tx.findOneBy(User, { email: firstAdministratorAddress })
     const id = known?.id ?? randomUUID()
     if (!known)
       await tx.insert(User, {
         id,
-        email: placeholderAddress,
+        email: firstAdministratorAddress,
         displayName: 'First administrator',
         roles: ['administrator'],
         passwordHash: null,
