@@ -9,7 +9,8 @@ const loneSurrogate = /[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\
 export const tidy = (value: unknown) =>
   typeof value === 'string' ? value.replace(/\r\n?/g, '\n').trim() : value
 
-const isClean = (value: string | null | undefined) => {
+/** No control characters and no half characters, which could not be kept as they were typed. */
+export const isClean = (value: string | null | undefined) => {
   if (value === null || value === undefined) return true
   const tidied = String(tidy(value))
   return !forbiddenCharacters.test(tidied) && !loneSurrogate.test(tidied)

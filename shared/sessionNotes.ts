@@ -1,6 +1,6 @@
 import { array, boolean, number, string, type InferType } from 'yup'
 import { dayField, type Day } from './days.ts'
-import { body, choice, id, optionalText, text } from './fields.ts'
+import { body, choice, id, isClean, optionalText, text } from './fields.ts'
 import type { Page } from './pages.ts'
 
 export const sessionTypes = ['assessment', 'session', 'review', 'school_visit', 'phone', 'video'] as const
@@ -24,7 +24,10 @@ export const assentLabels: Record<Assent, string> = {
 }
 
 const noteText = (label: string) =>
-  string().defined(`${label} is missing`).max(20_000, `${label} can be at most 20 000 characters`)
+  string()
+    .defined(`${label} is missing`)
+    .max(20_000, `${label} can be at most 20 000 characters`)
+    .test('clean', `${label} contains characters that cannot be kept`, isClean)
 
 /** The four parts keep the order S, O, A, P of the trade. Drafts may be empty; signing needs O, A and P. */
 export const noteDraftSchema = body({
@@ -58,6 +61,39 @@ export const missingFromNote = (
   if (note.plan.trim() === '') missing.plan = 'Write what happens next'
   return missing
 }
+
+const summaryLength = 160
+
+/** First words of the plan for lists, cut between words. */
+export function noteSummary(plan: string): string {
+  const words = plan.replace(/\s+/g, ' ').trim()
+  if ([...words].length <= summaryLength) return words
+  const start = [...words].slice(0, summaryLength - 1).join('')
+  const lastSpace = start.lastIndexOf(' ')
+  return `${lastSpace > summaryLength / 2 ? start.slice(0, lastSpace) : start}…`
+}
+
+/**
+ * The one text that a signature stands for: which note of which child, then every part in a fixed order. Its SHA-256 is
+ * kept with the signature, so that any later change of a word would show.
+ */
+export const canonicalNote = (noteId: string, childId: string, note: NoteDraft): string =>
+  JSON.stringify([
+    'fanflower-note.v1',
+    noteId,
+    childId,
+    note.heldOn,
+    note.startTime,
+    note.minutes,
+    note.type,
+    note.present,
+    note.assent,
+    note.said,
+    note.observed,
+    note.meaning,
+    note.plan,
+    note.goalIds,
+  ])
 
 export const signNoteSchema = body({
   /** The person confirms that this is their note about this child. */

@@ -2,6 +2,7 @@ import type { Day } from '../../shared/days.ts'
 import { cutOffSetById, defaultCutOffSet, scoreHandUse, type HandUseScore } from '../../shared/handUse.ts'
 import type { HandUseAnswers, Informant } from '../../shared/questionnaires.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
+import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { isId, within } from './scope.ts'
 import { flag, fromJson, selectRows } from './sql.ts'
@@ -50,6 +51,7 @@ const selectResponses = async (
   access: ChildAccess,
   condition: string,
   parameters: Record<string, string> = {},
+  tx?: Tx,
 ) => {
   const scope = within(access, 'q.childId')
   const rows = await selectRows<StoredResponse>(
@@ -61,6 +63,7 @@ const selectResponses = async (
      LEFT JOIN questionnaire_responses n ON n.replacesId = q.id
      WHERE ${scope.sql} AND ${condition} ORDER BY q.answeredOn DESC, q.createdAt DESC, q.id`,
     { ...scope.parameters, ...parameters },
+    tx,
   )
   return rows.map(toRecord)
 }
@@ -69,9 +72,13 @@ const selectResponses = async (
 export const listQuestionnaires = (access: ChildAccess): Promise<QuestionnaireRecord[]> =>
   selectResponses(access, '1 = 1')
 
-export const findQuestionnaire = async (access: ChildAccess, id: string): Promise<QuestionnaireRecord> => {
+export const findQuestionnaire = async (
+  access: ChildAccess,
+  id: string,
+  tx?: Tx,
+): Promise<QuestionnaireRecord> => {
   if (!isId(id)) throw notFound()
-  const [found] = await selectResponses(access, 'q.id = :responseId', { responseId: id })
+  const [found] = await selectResponses(access, 'q.id = :responseId', { responseId: id }, tx)
   if (!found) throw notFound()
   return found
 }

@@ -69,10 +69,10 @@ export const questionnaireRoutes = (): Router => {
     const id = idOf(req)
     const version = ifMatchOf(req)
     const draft: QuestionnaireDraft = await bodyOf(req, questionnaireDraftSchema)
-    await answerStale(saveQuestionnaire(req.actor, accessOf(req), id, version, draft), () =>
+    const saved = await answerStale(saveQuestionnaire(req.actor, accessOf(req), id, version, draft), () =>
       viewForReading(req, id),
     )
-    res.json(await view(req, id))
+    res.json(presentQuestionnaire(saved, accessOf(req)))
   })
 
   router.delete(`${base}/:questionnaireId`, allow(questionnairePolicies.discard), async (req, res) => {

@@ -6,6 +6,7 @@ import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { QuestionnaireResponse } from '../entities/QuestionnaireResponse.ts'
 import { conflict, invalid } from '../errors.ts'
+import { findQuestionnaire, type QuestionnaireRecord } from '../queries/questionnaires.ts'
 import { findForChild } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
@@ -90,21 +91,22 @@ export const startQuestionnaire = async (
   })
 }
 
-/** Saves the answers so far. Throws StaleWrite when somebody saved in between. */
+/** Saves the answers so far and answers them as this save left them. Throws StaleWrite when somebody saved in between. */
 export const saveQuestionnaire = async (
   actor: Actor,
   access: ChildAccess,
   id: string,
   version: number,
   draft: QuestionnaireDraft,
-): Promise<void> => {
+): Promise<QuestionnaireRecord> => {
   await requirePastDay(access, 'answeredOn', 'The date answered', draft.answeredOn)
-  await transact(actor, async (tx, record) => {
+  return transact(actor, async (tx, record) => {
     await openResponse(tx, access, id)
     const { informant, respondentName, answeredOn, answers, cutOffSet, comment } = draft
     const patch = { informant, respondentName, answeredOn, answers, cutOffSet, comment }
     if (!(await updateIfCurrent(tx, QuestionnaireResponse, id, version, patch))) throw new StaleWrite()
     record(fact(access, 'changed', id))
+    return findQuestionnaire(access, id, tx)
   })
 }
 
