@@ -19,7 +19,7 @@ export async function drawSample(drawing: SampleDrawing): Promise<Buffer> {
   return sharp(Buffer.from(sampleSvg(drawing)))
     .flatten({ background: '#FFFFFF' })
     .withMetadata({ density: sampleDpi })
-    .png({ compressionLevel: 9 })
+    .png({ compressionLevel: 6 })
     .toBuffer()
 }
 
