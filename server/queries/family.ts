@@ -101,14 +101,3 @@ export const listGoalWords = async (access: ChildAccess): Promise<string[]> => {
   )
   return rows.map((row) => fromJson<GoalDetails>(row.details).childVoice)
 }
-
-/** Takes the child's row, so that two choices about one consent are made one after the other. */
-export const lockChild = async (access: ChildAccess, tx: Tx): Promise<void> => {
-  const scope = within(access, 'c.id')
-  const row = await selectOne(
-    `SELECT c.id FROM children c WHERE ${scope.sql} FOR UPDATE`,
-    scope.parameters,
-    tx,
-  )
-  if (!row) throw notFound()
-}
