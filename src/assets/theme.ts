@@ -229,8 +229,9 @@ export const theme = definePreset(Aura, {
       colorScheme: { light: buttonScheme, dark: buttonScheme },
     },
     datatable: {
-      headerCell: { padding: '0.5rem 0.75rem', background: 'transparent', color: 'var(--ink-soft)' },
-      bodyCell: { padding: '0.5rem 0.75rem' },
+      headerCell: { padding: '0.5rem', gap: '0.25rem', background: 'transparent', color: 'var(--ink-soft)' },
+      bodyCell: { padding: '0.5rem' },
+      sortIcon: { size: '0.75rem' },
       row: { background: 'transparent' },
       colorScheme: { light: tableScheme, dark: tableScheme },
     },
