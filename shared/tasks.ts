@@ -1,0 +1,22 @@
+import type { Attention } from './attention.ts'
+import { addDays, compareDays, type Day } from './days.ts'
+
+/** How pressing a task is: overdue once its day has passed, due on the day, soon before it or without a day. */
+export function dueLevel(dueOn: Day | null, today: Day): Attention {
+  if (dueOn === null) return 'soon'
+  const order = compareDays(dueOn, today)
+  return order < 0 ? 'overdue' : order === 0 ? 'due' : 'soon'
+}
+
+/** Days before a review in which it is shown as coming (clinic rule). */
+export const reviewNoticeDays = 14
+
+/** Days over a review's date after which the clinic lead is told (clinic rule). */
+export const reviewEscalationDays = 28
+
+/** How pressing a review is; null when none is set or it is further away than the notice. */
+export function reviewLevel(nextReviewOn: Day | null, today: Day): Attention | null {
+  if (nextReviewOn === null) return null
+  if (compareDays(nextReviewOn, addDays(today, reviewNoticeDays)) > 0) return null
+  return dueLevel(nextReviewOn, today)
+}
