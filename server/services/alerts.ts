@@ -1,50 +1,110 @@
 import { randomUUID } from 'node:crypto'
+import type { Attention } from '../../shared/attention.ts'
+import type { AlertAction } from '../../shared/alerts.ts'
 import { addWorkingDays, type Day } from '../../shared/days.ts'
 import type { ReferralFlag } from '../../shared/referralFlags.ts'
+import type { Actor } from '../access/actor.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { Alert } from '../entities/Alert.ts'
+import { conflict } from '../errors.ts'
+import { findForChild } from '../queries/scope.ts'
 import type { AuditFact } from './audit.ts'
 import { addTask } from './tasks.ts'
+import { transact } from './transact.ts'
+import { updateIfCurrent } from './versions.ts'
 
 /** Working days in which a sign that is due, but not overdue from the start, is looked at (clinic rule). */
 const daysToLook = 5
 
+export interface NewAlert {
+  childId: string
+  /** Who holds the child; null gives the task to the lead. */
+  therapistId: string | null
+  today: Day
+  /** Stable word for programs. */
+  flag: string
+  /** What was noticed and what is usually done. */
+  text: string
+  level: Attention
+  /** What somebody must do about it. */
+  task: string
+}
+
+/**
+ * Puts a warning sign on the record, with a task unless it only asks to be kept in mind. A sign is a reason to look;
+ * what it means is for the therapist to decide.
+ */
+export const raiseAlert = async (
+  tx: Tx,
+  record: (fact: AuditFact) => void,
+  { childId, therapistId, today, flag, text, level, task }: NewAlert,
+): Promise<void> => {
+  const id = randomUUID()
+  await tx.insert(Alert, {
+    id,
+    childId,
+    flag,
+    text,
+    level,
+    raisedAt: now(),
+    actedAt: null,
+    actedById: null,
+    action: null,
+  })
+  record({ action: 'alert.raised', objectType: 'alert', objectId: id, childId, detail: { flag } })
+  if (level === 'soon') return
+  await addTask(tx, {
+    childId,
+    kind: 'red_flag',
+    text: task,
+    dueOn: level === 'overdue' ? today : addWorkingDays(today, daysToLook),
+    assigneeId: therapistId,
+    otherwise: 'clinicLead',
+  })
+}
+
 const wordsOf = ({ text, words }: ReferralFlag) =>
   words === null ? text : `${text} Words of the referral: “${words.slice(0, 120)}”.`
 
-/**
- * Puts the warning signs of a referral on the record, with a task for whoever holds the child, or for the lead. A sign
- * is a reason to look; what it means is for the therapist to decide.
- */
+/** The warning signs of a referral, on the record of the child it became. */
 export const raiseReferralFlags = async (
   tx: Tx,
   record: (fact: AuditFact) => void,
-  { childId, therapistId, today }: { childId: string; therapistId: string | null; today: Day },
+  child: Pick<NewAlert, 'childId' | 'therapistId' | 'today'>,
   flags: readonly ReferralFlag[],
 ): Promise<void> => {
-  for (const flag of flags) {
-    const id = randomUUID()
-    await tx.insert(Alert, {
-      id,
-      childId,
+  for (const flag of flags)
+    await raiseAlert(tx, record, {
+      ...child,
       flag: flag.id,
       text: wordsOf(flag),
       level: flag.level,
-      raisedAt: now(),
-      actedAt: null,
-      actedById: null,
-      action: null,
+      task: 'A warning sign stands on the referral: look at it and write down what was done',
     })
-    record({ action: 'alert.raised', objectType: 'alert', objectId: id, childId, detail: { flag: flag.id } })
-    if (flag.level === 'soon') continue
-    await addTask(tx, {
-      childId,
-      kind: 'red_flag',
-      text: 'A warning sign stands on the referral: look at it and write down what was done',
-      dueOn: flag.level === 'overdue' ? today : addWorkingDays(today, daysToLook),
-      assigneeId: therapistId,
-      otherwise: 'clinicLead',
-    })
-  }
 }
+
+/** Writes down what was done about a warning sign. It then leaves the head of the record and stays in the history. */
+export const actOnAlert = (
+  actor: Actor,
+  access: ChildAccess,
+  id: string,
+  { action }: AlertAction,
+): Promise<void> =>
+  transact(actor, async (tx, record) => {
+    const alert = await findForChild(access, Alert, id, tx, { lock: true })
+    if (alert.actedAt) throw conflict('closed', 'Somebody has written down already what was done about this.')
+    await updateIfCurrent(tx, Alert, id, alert.version, {
+      actedAt: now(),
+      actedById: access.viewer.id,
+      action,
+    })
+    record({
+      action: 'alert.acted_on',
+      objectType: 'alert',
+      objectId: id,
+      childId: access.childId,
+      relation: access.relation,
+    })
+  })

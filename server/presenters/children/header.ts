@@ -1,0 +1,77 @@
+import type { ChildHeader, ChildIdentityView, FoundChild, RegisterRow } from '../../../shared/children.ts'
+import { formatAge, type Day } from '../../../shared/days.ts'
+import type { ChildAccess } from '../../access/childAccess.ts'
+import { canChangeIdentity, sectionsFor, seesClinicalFields } from '../../policies/children.ts'
+import type { AlertRow, ChildFactsRow } from '../../queries/children/header.ts'
+import type { IdentityRow } from '../../queries/children/identity.ts'
+import type { FoundChildRow, RegisterListRow } from '../../queries/children/lists.ts'
+
+interface Named {
+  givenName: string
+  familyName: string
+}
+
+export const fullName = ({ givenName, familyName }: Named) => `${givenName} ${familyName}`
+
+export const presentChildHeader = (
+  child: ChildFactsRow,
+  alerts: readonly AlertRow[],
+  access: ChildAccess,
+  today: Day,
+): ChildHeader => {
+  const clinical = seesClinicalFields(access)
+  return {
+    id: child.id,
+    recordNumber: child.recordNumber,
+    name: fullName(child),
+    preferredName: child.preferredName,
+    birthDate: child.birthDate,
+    age: formatAge(child.birthDate, today),
+    relation: access.relation,
+    school: child.schoolName,
+    className: child.className,
+    interpreterLanguage: child.interpreterLanguage,
+    lookedAfter: child.lookedAfter,
+    courtOrder: child.courtOrder,
+    consentsForSelf: child.consentsForSelf,
+    state: clinical ? child.state : null,
+    therapist: child.therapist,
+    alerts: clinical
+      ? alerts.map(({ id, text, level, raisedAt }) => ({ id, text, level, raisedAt: raisedAt.toISOString() }))
+      : [],
+    sections: sectionsFor(access.relation),
+    namesake: child.namesake,
+  }
+}
+
+export const presentIdentity = (row: IdentityRow, access: ChildAccess): ChildIdentityView => ({
+  id: row.id,
+  recordNumber: row.recordNumber,
+  givenName: row.givenName,
+  familyName: row.familyName,
+  preferredName: row.preferredName,
+  birthDate: row.birthDate,
+  homeLanguages: row.homeLanguages,
+  interpreterLanguage: row.interpreterLanguage,
+  scriptDirection: row.scriptDirection,
+  classId: row.classId,
+  lookedAfter: row.lookedAfter,
+  consentsForSelf: row.consentsForSelf,
+  version: row.version,
+  can: { change: canChangeIdentity(access) },
+})
+
+export const presentFoundChild = (row: FoundChildRow): FoundChild => ({
+  id: row.id,
+  recordNumber: row.recordNumber,
+  name: fullName(row),
+  birthDate: row.birthDate,
+  school: row.schoolName,
+})
+
+export const presentRegisterRow = (row: RegisterListRow): RegisterRow => ({
+  ...presentFoundChild(row),
+  className: row.className,
+  therapist: row.therapist,
+  carers: row.carers,
+})

@@ -1,0 +1,116 @@
+import { Router, type Request } from 'express'
+import { alertActionSchema } from '../../shared/alerts.ts'
+import { allocationSchema, careSchema, childIdentitySchema } from '../../shared/children.ts'
+import { stateChangeSchema } from '../../shared/episodes.ts'
+import { allow } from '../middleware/allow.ts'
+import { bodyOf, ifMatchOf, pageOf, queryText } from '../middleware/requestBody.ts'
+import { accessOf, viewerOf } from '../middleware/requestContext.ts'
+import { childPolicies, seesClinicalFields } from '../policies/children.ts'
+import { presentGlance } from '../presenters/children/glance.ts'
+import {
+  presentChildHeader,
+  presentFoundChild,
+  presentIdentity,
+  presentRegisterRow,
+} from '../presenters/children/header.ts'
+import { presentPage } from '../presenters/pages.ts'
+import { findLastOnRecord, listForGlance } from '../queries/children/glance.ts'
+import { findChildHead, listOpenAlerts } from '../queries/children/header.ts'
+import { findIdentity } from '../queries/children/identity.ts'
+import { findChildren, listRegister } from '../queries/children/lists.ts'
+import { listQuestionnaires } from '../queries/questionnaires.ts'
+import { actOnAlert } from '../services/alerts.ts'
+import { recordAudit, recordChildRead } from '../services/audit.ts'
+import { allocate, changeCare, changeIdentity } from '../services/children.ts'
+import { changeState } from '../services/episodes.ts'
+import { clinicToday, readSettings } from '../services/settings.ts'
+
+const leastToSearch = 2
+
+export const childRoutes = (): Router => {
+  const router = Router()
+  const idsOf = (rows: readonly { id: string }[]) => ({ detail: { ids: rows.map((row) => row.id) } })
+
+  router.get('/children', allow(childPolicies.register), async (req, res) => {
+    const page = pageOf(req)
+    const children = await listRegister(viewerOf(req), queryText(req, 'search'), page)
+    await recordAudit(req.actor, { action: 'child.listed', ...idsOf(children.rows) })
+    res.json(presentPage(children, page, presentRegisterRow))
+  })
+
+  router.get('/children/find', allow(childPolicies.find), async (req, res) => {
+    const words = queryText(req, 'q') ?? ''
+    const found = words.length < leastToSearch ? [] : await findChildren(viewerOf(req), words)
+    await recordAudit(req.actor, { action: 'child.looked_for', ...idsOf(found) })
+    res.json(found.map(presentFoundChild))
+  })
+
+  router.get('/children/:childId', allow(childPolicies.header), async (req, res) => {
+    const access = accessOf(req)
+    const [child, alerts, settings] = await Promise.all([
+      findChildHead(access),
+      seesClinicalFields(access) ? listOpenAlerts(access) : [],
+      readSettings(),
+    ])
+    await recordChildRead(req.actor, access, 'child.header_read')
+    res.json(presentChildHeader(child, alerts, access, clinicToday(settings)))
+  })
+
+  router.get('/children/:childId/glance', allow(childPolicies.glance), async (req, res) => {
+    const access = accessOf(req)
+    const [child, last, lists, questionnaires, settings] = await Promise.all([
+      findChildHead(access),
+      findLastOnRecord(access),
+      listForGlance(access),
+      listQuestionnaires(access),
+      readSettings(),
+    ])
+    await recordChildRead(req.actor, access, 'child.glance_read')
+    res.json(presentGlance({ child, last, lists, questionnaires }, access, clinicToday(settings)))
+  })
+
+  const identity = '/children/:childId/identity'
+  const showIdentity = async (req: Request) =>
+    presentIdentity(await findIdentity(accessOf(req)), accessOf(req))
+
+  router.get(identity, allow(childPolicies.identity), async (req, res) => {
+    const view = await showIdentity(req)
+    await recordChildRead(req.actor, accessOf(req), 'child.identity_read')
+    res.json(view)
+  })
+
+  router.put(identity, allow(childPolicies.changeIdentity), async (req, res) => {
+    const version = ifMatchOf(req)
+    await changeIdentity(req.actor, accessOf(req), version, await bodyOf(req, childIdentitySchema))
+    res.json(await showIdentity(req))
+  })
+
+  router.patch('/children/:childId/care', allow(childPolicies.changeCare), async (req, res) => {
+    const version = ifMatchOf(req)
+    await changeCare(req.actor, accessOf(req), version, await bodyOf(req, careSchema))
+    res.status(204).end()
+  })
+
+  router.post('/children/:childId/state', allow(childPolicies.changeState), async (req, res) => {
+    const version = ifMatchOf(req)
+    await changeState(req.actor, accessOf(req), version, await bodyOf(req, stateChangeSchema))
+    res.status(204).end()
+  })
+
+  router.post('/children/:childId/allocation', allow(childPolicies.allocate), async (req, res) => {
+    await allocate(req.actor, accessOf(req), await bodyOf(req, allocationSchema))
+    res.status(204).end()
+  })
+
+  router.post(
+    '/children/:childId/alerts/:alertId/action',
+    allow(childPolicies.actOnAlert),
+    async (req, res) => {
+      const action = await bodyOf(req, alertActionSchema)
+      await actOnAlert(req.actor, accessOf(req), String(req.params.alertId), action)
+      res.status(204).end()
+    },
+  )
+
+  return router
+}
