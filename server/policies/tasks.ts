@@ -1,0 +1,20 @@
+import { staffRoles, type Role } from '../../shared/roles.ts'
+import type { Viewer } from '../access/actor.ts'
+import { rolePolicy } from './policy.ts'
+
+export const taskPolicies = {
+  finish: rolePolicy('tasks.finish', staffRoles, 'write'),
+}
+
+interface HeldTask {
+  assigneeId: string | null
+  forRole: Role | null
+  doneAt: Date | null
+}
+
+/** A task is finished by the person or the role that holds it, or by the lead. */
+export const canFinishTask = (viewer: Viewer, { assigneeId, forRole, doneAt }: HeldTask) =>
+  doneAt === null &&
+  (assigneeId === viewer.id ||
+    (forRole !== null && viewer.roles.includes(forRole)) ||
+    viewer.roles.includes('clinicLead'))

@@ -1,0 +1,16 @@
+import { Router } from 'express'
+import { allow } from '../middleware/allow.ts'
+import { viewerOf } from '../middleware/requestContext.ts'
+import { taskPolicies } from '../policies/tasks.ts'
+import { finishTask } from '../services/tasks.ts'
+
+export const taskRoutes = (): Router => {
+  const router = Router()
+
+  router.post('/tasks/:taskId/finish', allow(taskPolicies.finish), async (req, res) => {
+    await finishTask(req.actor, viewerOf(req), String(req.params.taskId))
+    res.status(204).end()
+  })
+
+  return router
+}
