@@ -33,7 +33,7 @@ export const children16to20: readonly DemoChild[] = [
     consents: usualConsents(-130, {
       withdrawn: {
         day: -9,
-        time: '15:20',
+        time: '15:40',
         reason: 'The family has decided to stop for now. Withdrawn by phone, for all purposes.',
         by: 'rohan',
       },
