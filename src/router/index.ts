@@ -1,4 +1,4 @@
-import { createRouter, createWebHistory, type RouteRecordRaw } from 'vue-router'
+import { createRouter, createWebHistory, type RouteLocationNormalized, type RouteRecordRaw } from 'vue-router'
 import type { Role } from '@shared/roles.ts'
 import { useSessionStore } from '@/stores/session.ts'
 
@@ -311,16 +311,8 @@ export const routes: RouteRecordRaw[] = [
   },
 ]
 
-export const router = createRouter({
-  history: createWebHistory(),
-  routes,
-  scrollBehavior: (to, from, saved) => {
-    if (saved) return saved
-    return to.path === from.path ? undefined : { top: 0 }
-  },
-})
-
-router.beforeEach(async (to) => {
+/** Who may come where. The server decides what each page may hold; this only spares people pages of refusals. */
+export async function guard(to: RouteLocationNormalized) {
   const session = useSessionStore()
   await session.load()
   // Only now is it known where home is: '/' was resolved before the first answer.
@@ -336,4 +328,15 @@ router.beforeEach(async (to) => {
   }
   if (to.meta.roles && !session.can(...to.meta.roles)) return { name: 'forbidden' }
   return true
+}
+
+export const router = createRouter({
+  history: createWebHistory(),
+  routes,
+  scrollBehavior: (to, from, saved) => {
+    if (saved) return saved
+    return to.path === from.path ? undefined : { top: 0 }
+  },
 })
+
+router.beforeEach(guard)
