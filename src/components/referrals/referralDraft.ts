@@ -111,3 +111,12 @@ export const referralLabels: Partial<Record<keyof ReferralDraft, string>> = {
   concerns: 'What it is about',
   carers: 'Parents and carers',
 }
+
+/** Says which carer an error in the summary is about. */
+export const carerErrorLabels = (errors: Record<string, string>): Record<string, string> =>
+  Object.fromEntries(
+    Object.keys(errors).flatMap((path) => {
+      const position = /^carers\[(\d)\]/.exec(path)?.[1]
+      return position === undefined ? [] : [[path, `Carer ${Number(position) + 1}`]]
+    }),
+  )
