@@ -1,7 +1,6 @@
-import '@fontsource/source-sans-3/latin-400.css'
-import '@fontsource/source-sans-3/latin-600.css'
-import '@fontsource/source-sans-3/latin-ext-400.css'
-import '@fontsource/source-sans-3/latin-ext-600.css'
+// Every script a name may be written in; the browser fetches only the parts a page needs (unicode-range).
+import '@fontsource/source-sans-3/400.css'
+import '@fontsource/source-sans-3/600.css'
 import 'primeicons/primeicons.css'
 import '@/assets/base.css'
 import { PiniaColada } from '@pinia/colada'
