@@ -1,6 +1,6 @@
 import { array, string, type InferType } from 'yup'
 import { dayField, type Day } from './days.ts'
-import { body, choice, optionalText, text } from './fields.ts'
+import { body, choice, optionalText, text, tidy } from './fields.ts'
 import type { Hand } from './roles.ts'
 import type { Page } from './pages.ts'
 
@@ -31,11 +31,13 @@ export const adviceReplyLabels: Record<AdviceReply, string> = {
   cannot: 'Cannot do it',
 }
 
+const sayWhy = 'Say why it cannot be done, so that we can find another way'
+
 export const adviceReplySchema = body({
   reply: choice('an answer', adviceReplies),
   reason: optionalText('The reason', { max: 500 }).when('reply', {
     is: 'cannot',
-    then: (schema) => schema.required('Say why it cannot be done, so that we can find another way'),
+    then: (schema) => schema.required(sayWhy).test('filled', sayWhy, (value) => tidy(value) !== ''),
   }),
 })
 export type AdviceReplyGiven = InferType<typeof adviceReplySchema>
