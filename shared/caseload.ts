@@ -54,6 +54,7 @@ export const caseloadSorts = [
 export type CaseloadSort = (typeof caseloadSorts)[number]
 
 export const caseloadFilters = ['open', 'closed', 'all'] as const
+export type CaseloadFilter = (typeof caseloadFilters)[number]
 
 /** Query of `GET /api/caseload`. Everything is optional in the address; defaults are applied on the server. */
 export interface CaseloadQuery {
@@ -63,7 +64,8 @@ export interface CaseloadQuery {
   direction?: 'asc' | 'desc'
   search?: string
   state?: EpisodeState
-  show?: (typeof caseloadFilters)[number]
+  show?: CaseloadFilter
   need?: CaseloadNeedKind
+  /** A therapist's id, or 'none' for children nobody holds. */
   therapistId?: string
 }
