@@ -21,7 +21,7 @@ export interface LastOnRecord {
   letter: { id: string; state: LetterState; changedAt: string } | null
 }
 
-/** The newest note, sample and letter; one query. Another person's draft note is the author's and the lead's only. */
+/** The newest note, sample and letter; one query. */
 export const findLastOnRecord = async (access: ChildAccess): Promise<LastOnRecord> => {
   const noteScope = within(access, 'n.childId')
   const sampleScope = within(access, 's.childId')
@@ -31,7 +31,7 @@ export const findLastOnRecord = async (access: ChildAccess): Promise<LastOnRecor
        (SELECT JSON_OBJECT('id', n.id, 'heldOn', n.heldOn, 'state', n.state, 'plan', JSON_VALUE(v.content, '$.plan'))
          FROM session_notes n JOIN note_revisions v ON v.noteId = n.id AND v.revision =
            (SELECT MAX(m.revision) FROM note_revisions m WHERE m.noteId = n.id)
-         WHERE n.discardedAt IS NULL AND (n.state <> 'draft' OR n.authorId = :viewer OR :isLead) AND ${noteScope.sql}
+         WHERE n.discardedAt IS NULL AND ${noteScope.sql}
          ORDER BY n.heldOn DESC, n.startTime DESC, n.id LIMIT 1) AS note,
        (SELECT JSON_OBJECT('id', s.id, 'takenOn', s.takenOn, 'letters', JSON_EXTRACT(s.details, '$.letters'),
            'legibleLetters', JSON_EXTRACT(s.details, '$.legibleLetters'), 'seconds', JSON_EXTRACT(s.details, '$.seconds'))
@@ -40,11 +40,7 @@ export const findLastOnRecord = async (access: ChildAccess): Promise<LastOnRecor
        (SELECT JSON_OBJECT('id', l.id, 'state', l.state, 'changedAt', DATE_FORMAT(l.changedAt, '%Y-%m-%dT%T.%fZ'))
          FROM letters l WHERE l.discardedAt IS NULL AND ${letterScope.sql}
          ORDER BY l.changedAt DESC, l.id LIMIT 1) AS letter`,
-    {
-      ...noteScope.parameters,
-      viewer: access.viewer.id,
-      isLead: access.relation === 'clinicLead',
-    },
+    noteScope.parameters,
   )
   const parsed = <K extends keyof LastOnRecord>(key: K): LastOnRecord[K] | null =>
     row?.[key] ? fromJson<LastOnRecord[K]>(row[key]) : null

@@ -1,0 +1,64 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
+import { buildBusyCaseload } from '../support/busyCaseload.ts'
+import { buildUser } from '../support/factories.ts'
+import { othersIn, questionsIn, statementsOf } from '../support/queries.ts'
+
+/*
+ * Bars of this product for a list of 30 children of every kind: the statements are counted where they leave for MariaDB.
+ * The session row, the person and the access to the child count; the audit trail, written in groups for all requests
+ * together, does not, and neither does the mark that somebody is active, written at most every ten seconds.
+ */
+const most = { caseload: 4, glance: 8 }
+
+let therapist: Client
+let lead: Client
+let busy: Awaited<ReturnType<typeof buildBusyCaseload>>
+
+beforeAll(async () => {
+  await startApp()
+  const people = { therapist: await buildUser('therapist'), lead: await buildUser('clinicLead') }
+  busy = await buildBusyCaseload(people, 30)
+  therapist = await signedInAs(people.therapist)
+  lead = await signedInAs(people.lead)
+})
+afterAll(stopApp)
+
+const ask = async (who: Client, path: string) => {
+  let rows = 0
+  const statements = await statementsOf(async () => {
+    const response = await who.get(path)
+    expect(response.status).toBe(200)
+    rows = response.body.rows?.length ?? 0
+  })
+  return { questions: questionsIn(statements), others: othersIn(statements), rows }
+}
+
+describe('the number of queries', () => {
+  it('of the caseload stays at four, however many children are shown', async () => {
+    for (const who of [therapist, lead]) {
+      const many = await ask(who, '/api/caseload?size=100')
+      expect(many.rows).toBe(30)
+      expect(many.questions.length, many.questions.join('\n')).toBeLessThanOrEqual(most.caseload)
+      const one = await ask(who, '/api/caseload?size=1')
+      expect(one.rows).toBe(1)
+      expect(one.questions).toHaveLength(many.questions.length)
+    }
+  })
+
+  it('of a child at a glance stays at eight, for an empty and for a full record', async () => {
+    // The tenth kind has notes, a questionnaire, a goal, a sample and a letter; the first has next to nothing.
+    for (const child of [busy[0], busy[9]]) {
+      const { questions } = await ask(therapist, `/api/children/${child?.id}/glance`)
+      expect(questions.length, questions.join('\n')).toBeLessThanOrEqual(most.glance)
+    }
+  })
+
+  it('counts what really ran: each page asks for the session, the person and something of its own', async () => {
+    const { questions, others } = await ask(therapist, '/api/caseload')
+    expect(questions.some((question) => question.includes('FROM user_sessions'))).toBe(true)
+    expect(questions.some((question) => question.includes('`users`'))).toBe(true)
+    expect(questions.some((question) => question.startsWith('WITH page'))).toBe(true)
+    expect(others.filter((statement) => !statement.startsWith('UPDATE user_sessions'))).toEqual([])
+  })
+})
