@@ -235,6 +235,8 @@ export const theme = definePreset(Aura, {
       row: { background: 'transparent' },
       colorScheme: { light: tableScheme, dark: tableScheme },
     },
+    checkbox: { root: { width: '1.5rem', height: '1.5rem' } },
+    radiobutton: { root: { width: '1.5rem', height: '1.5rem' } },
     tag: { root: { borderRadius: 'var(--round-control)', fontWeight: '600' } },
     paginator: { root: { background: 'transparent', padding: '0.5rem 0' } },
   },

@@ -4,7 +4,7 @@ import { childrenApi } from '@/api/children.ts'
 import { wordsFor } from '@/composables/problems.ts'
 
 const typingPauseInMs = 200
-export const shortestSearch = 2
+const shortestSearch = 2
 
 /** Finds children by name or record number while somebody types. Answers arrive in the order of the questions. */
 export function useFindChild() {

@@ -45,7 +45,8 @@ export function useLeaveGuard(dirty: () => boolean, save: (() => Promise<void>) 
   // Absent only where a component stands alone, without the app around it.
   const router = inject(routerKey, null)
   const stop = router?.beforeEach(async (to, from) => {
-    if (to.path === from.path || !guards.has(guard)) return true
+    // One question for the whole page, however many forms it holds.
+    if (to.path === from.path || guards.values().next().value !== guard) return true
     return mayLeave(confirm)
   })
   onScopeDispose(() => {

@@ -1,4 +1,4 @@
-import { readonly, ref, watchEffect } from 'vue'
+import { ref, watchEffect } from 'vue'
 
 const name = ref<string>('')
 const failed = ref<boolean>(false)
@@ -28,5 +28,3 @@ export const arrive = (words: string) => {
 
 /** False on the page the browser opened first. */
 export const arrivedByNavigation = () => pages > 1
-
-export const tabFailed = readonly(failed)

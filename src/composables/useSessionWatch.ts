@@ -3,7 +3,7 @@ import { wordsFor } from '@/composables/problems.ts'
 import { useSessionStore } from '@/stores/session.ts'
 
 /** The warning comes this long before the server ends the sign-in: at least two minutes are needed to react. */
-export const warningSeconds = 180
+const warningSeconds = 180
 const lookAgainInMs = 20_000
 
 const channel = typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel('fanflower-session')

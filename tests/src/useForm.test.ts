@@ -1,7 +1,7 @@
 import { flushPromises } from '@vue/test-utils'
 import { boolean } from 'yup'
 import { describe, expect, it, vi } from 'vitest'
-import { nextTick } from 'vue'
+import { nextTick, watch } from 'vue'
 import { http } from '../../src/api/http.ts'
 import { answerStep, askedStep } from '../../src/composables/useConfirmStep.ts'
 import { useForm } from '../../src/composables/useForm.ts'
@@ -117,6 +117,26 @@ describe('useForm', () => {
 
     await form.submit()
     await router.push('/elsewhere')
+    expect(router.currentRoute.value.path).toBe('/elsewhere')
+  })
+
+  it('asks once for the whole page when two forms on it are changed', async () => {
+    const options = {
+      schema,
+      initial: () => ({ ...filled }),
+      save: (sent: object) => http.post('/things', sent),
+    }
+    const { result: forms, router } = await inPage(() => [useForm(options), useForm(options)] as const)
+    forms[0].values.title = 'Table'
+    forms[1].values.title = 'Chair'
+    let asked = 0
+    const stop = watch(askedStep, (step) => (asked += step ? 1 : 0), { flush: 'sync' })
+    const leaving = router.push('/elsewhere')
+    await flushPromises()
+    answerStep(true)
+    await leaving
+    stop()
+    expect(asked).toBe(1)
     expect(router.currentRoute.value.path).toBe('/elsewhere')
   })
 
