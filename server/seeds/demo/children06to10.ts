@@ -98,13 +98,13 @@ export const children06to10: readonly DemoChild[] = [
       carer('jessicaCoombes', 'mother'),
       carerWithoutAccount('Martin Hale', 'father', { phone: '01632 960 803' }),
     ],
-    consents: [
-      consent('share_doctor', -38, {
+    consents: (['assessment_treatment', 'share_doctor'] as const).map((purpose) =>
+      consent(purpose, -38, {
         method: 'phone_witnessed',
         recordedBy: 'tomasz',
         note: 'Witnessed by Pauline Osterby',
       }),
-    ],
+    ),
     steps: path({ triaged: -38, redirected: -37 }, 'tomasz', {
       triaged: 'Read the same day it was opened. Signs that need a doctor first.',
       redirected:

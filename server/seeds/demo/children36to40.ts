@@ -127,7 +127,7 @@ export const children36to40: readonly DemoChild[] = [
       day: -27,
       source: 'school',
       from: fromSchool('brindlemoor'),
-      concerns: ['hand_preference_unclear', 'other'],
+      concerns: ['handwriting', 'other'],
       reason:
         'Thandeka has always been left-handed. For about a week her left hand has been weak and she has had headaches; she now writes with her right hand. She dropped her tray at lunch twice. We are worried and did not know whom to ask.',
       priorityReason:

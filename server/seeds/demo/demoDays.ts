@@ -26,3 +26,13 @@ export function birthDateFor(demoToday: Day, age: { years: number; months: numbe
   while (!isDay(`${prefix}-${String(date).padStart(2, '0')}`)) date -= 1
   return addDays(`${prefix}-${String(date).padStart(2, '0')}`, -ageDays)
 }
+
+/** The moment at which clocks in a time zone show this day and time ('HH:MM'). */
+export function demoMoment(day: Day, time: string, timeZone: string): Date {
+  const guess = Date.parse(`${day}T${time}:00Z`)
+  // Swedish dates are written the way ISO 8601 writes them.
+  const shown = new Intl.DateTimeFormat('sv-SE', { timeZone, dateStyle: 'short', timeStyle: 'short' }).format(
+    guess,
+  )
+  return new Date(2 * guess - Date.parse(`${shown.replace(' ', 'T')}:00Z`))
+}

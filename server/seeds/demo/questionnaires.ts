@@ -81,7 +81,7 @@ export const questionnaires: readonly DemoQuestionnaire[] = [
   form(16, -118, 'rohan', 'Isla Strathearn', 'SL SL SL SL SL L R L SL L'),
   form(17, -70, 'mairi', 'Wen Tsao', 'SL SL SL SL SL E E SL SL SL'),
   form(18, -66, 'adaeze', 'Folake Bright', 'SL SL L SL SL L E L L L'),
-  form(20, -172, 'tomasz', 'Siobhán Delahunt', 'L R R L L L E E L E', { informant: 'teacher' }),
+  form(20, -172, 'tomasz', 'Siobhán Delahunt', 'L R R L L R L R R E', { informant: 'teacher' }),
   form(20, -170, 'tomasz', 'Hanna Halbersztadt', 'L E L L L R R R E E', {
     comment: 'School and home answer four activities differently. Each is right about what it sees.',
   }),
