@@ -1,0 +1,153 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { routeTable } from '../../server/middleware/checkPolicies.ts'
+import { closeDatabase } from '../../server/dataSource.ts'
+import { allWords, forbiddenWords } from '../support/accessCanaries.ts'
+import { buildScene, type Scene } from '../support/accessScene.ts'
+import {
+  callersOf,
+  checksums,
+  expected,
+  perform,
+  prepareCall,
+  relationOf,
+  routeKey,
+  targetsOf,
+  tracesOf,
+  type Caller,
+  type ReadyCall,
+} from '../support/accessSweep.ts'
+import { openWire, type Answer, type Wire } from '../support/accessWire.ts'
+import { openClinicDatabase } from '../support/clinicDatabase.ts'
+import { accessRows, type AccessRow } from './accessFixture.ts'
+
+/*
+ * Every route of the live table, as everybody the access matrix names, for the own child, another child, an absent id
+ * and the own child with something of another behind it. A holder of an emergency grant joins when grants are built.
+ */
+
+let wire: Wire
+let scene: Scene
+let live: Set<string>
+
+beforeAll(async () => {
+  await openClinicDatabase()
+  wire = await openWire()
+  live = new Set(routeTable(wire.app).map(({ method, path }) => routeKey(`${method} ${path}`)))
+  scene = await buildScene()
+})
+afterAll(async () => {
+  await wire.close()
+  await closeDatabase()
+})
+
+const name = (call: ReadyCall) => `${call.caller}, ${call.target}`
+const text = (answer: Answer) => answer.body.toString('utf8')
+const withoutRequestId = (answer: Answer) => text(answer).replaceAll(answer.requestId, '')
+const wordsIn = (answer: Answer, words: readonly string[]) => {
+  const body = text(answer)
+  return words.filter((word) => word !== '' && body.includes(word))
+}
+const brief = (answer: Answer) => `${answer.status} ${text(answer).slice(0, 160)}`
+
+interface Done {
+  call: ReadyCall
+  answer: Answer
+}
+
+/** Refused calls go out together; no row of the clinic may differ afterwards. */
+const refusedProblems = async (row: AccessRow, list: [Caller, ReadyCall['target']][]) => {
+  const shared = new Map<string, ReadyCall>()
+  const calls: ReadyCall[] = []
+  for (const [caller, target] of list) calls.push(await prepareCall(scene, row, caller, target, shared))
+  const before = await checksums()
+  const done: Done[] = await Promise.all(
+    calls.map(async (call) => ({ call, answer: await perform(wire, scene, call) })),
+  )
+  const problems: string[] = []
+  const after = await checksums()
+  for (const table of Object.keys(before))
+    if (before[table] !== after[table]) problems.push(`a refused call changed ${table}`)
+
+  const traces = await tracesOf(done.map(({ answer }) => answer.requestId))
+  const words = allWords(scene)
+  for (const { call, answer } of done) {
+    const wanted = expected(row, call.caller, call.target)
+    if (answer.status !== wanted) {
+      problems.push(`${name(call)}: expected ${wanted}, got ${brief(answer)}`)
+      continue
+    }
+    const told = wordsIn(answer, words)
+    if (told.length > 0) problems.push(`${name(call)}: the refusal tells ${told.join(', ')}`)
+    const absent = done.find(
+      (other) => other.call.caller === call.caller && other.call.target === 'absent' && wanted !== 401,
+    )
+    if (
+      absent &&
+      absent.answer.status === wanted &&
+      withoutRequestId(absent.answer) !== withoutRequestId(answer)
+    )
+      problems.push(`${name(call)}: differs from the answer to an absent id: ${text(answer)}`)
+    if (wanted === 401) continue
+    const entries = traces.get(answer.requestId) ?? []
+    if (entries.length !== 1 || entries[0]?.result !== 'denied')
+      problems.push(`${name(call)}: ${entries.length} audit entries for a refusal`)
+    else if (entries[0].childId !== call.childId)
+      problems.push(`${name(call)}: the refusal is recorded for child ${entries[0].childId}`)
+  }
+  return problems
+}
+
+const allowedProblems = async (row: AccessRow, caller: Caller, target: ReadyCall['target']) => {
+  const call = await prepareCall(scene, row, caller, target)
+  const answer = await perform(wire, scene, call)
+  await call.after?.()
+  if (answer.status < 200 || answer.status > 299)
+    return [`${name(call)}: expected to be allowed, got ${brief(answer)}`]
+  const problems: string[] = []
+  const words = caller === 'nobody' ? allWords(scene) : forbiddenWords(scene, caller)
+  const told = wordsIn(answer, words)
+  if (told.length > 0) problems.push(`${name(call)}: the answer tells ${told.join(', ')}`)
+  if (row.entries === 0) return problems
+  const entries = (await tracesOf([answer.requestId])).get(answer.requestId) ?? []
+  if (entries.length !== row.entries)
+    problems.push(
+      `${name(call)}: ${entries.length} audit entries: ${entries.map((entry) => entry.action).join(', ')}`,
+    )
+  for (const entry of entries) {
+    if (entry.result !== 'allowed') problems.push(`${name(call)}: recorded as denied`)
+    if (call.childId !== null && entry.childId !== call.childId)
+      problems.push(`${name(call)}: ${entry.action} is recorded for child ${entry.childId}`)
+    const relation = call.standing && relationOf[call.standing]
+    if (call.childId !== null && entry.relation !== relation)
+      problems.push(`${name(call)}: ${entry.action} names the relation ${entry.relation}, not ${relation}`)
+  }
+  return problems
+}
+
+describe('the fixture', () => {
+  it('names every route of the app', () => {
+    const known = new Set(accessRows.map((row) => routeKey(row.route)))
+    expect([...live].filter((route) => !known.has(route))).toEqual([])
+  })
+})
+
+describe('access', () => {
+  it.each(accessRows.map((row) => [row.route, row] as const))(
+    '%s answers everybody as the matrix says',
+    async (_route, row) => {
+      if (!live.has(routeKey(row.route))) return
+      const pairs = callersOf(row).flatMap((caller) =>
+        targetsOf(row).map((target) => [caller, target] as const),
+      )
+      const refused = pairs.filter(([caller, target]) => expected(row, caller, target) !== 'ok')
+      const problems = await refusedProblems(
+        row,
+        refused.map(([caller, target]) => [caller, target]),
+      )
+      for (const [caller, target] of pairs)
+        if (expected(row, caller, target) === 'ok')
+          problems.push(...(await allowedProblems(row, caller, target)))
+      expect(problems).toEqual([])
+    },
+  )
+})
