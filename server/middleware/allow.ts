@@ -17,6 +17,7 @@ export const allow = (policy: Policy): RequestHandler => {
   const handler: PolicyHandler = async (req, res, next) => {
     // A denial is recorded by the error exit, which no longer sees the route.
     res.locals.policyName = policy.name
+    res.locals.attemptedIds = Object.values(req.params).map((id) => String(id).slice(0, 64))
     res.locals.attemptedChildId = policy.kind === 'child' ? String(req.params.childId).slice(0, 64) : null
     if (policy.kind !== 'open') {
       const { viewer } = req.actor

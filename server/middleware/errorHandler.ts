@@ -61,18 +61,16 @@ const toAppError = (error: unknown): AppError | null => {
   // A trigger stood in the way of a change to something signed or locked (see migrations/…-CloseWhatIsClosed.ts).
   if ((code ?? driverError?.code) === 'ER_SIGNAL_EXCEPTION')
     return conflict('closed', 'This is signed or locked and stays as it is. Nothing was changed.')
-  // A trigger's refusal: the rules above it should have answered first, but nothing was changed.
-  if ((code ?? driverError?.code) === 'ER_SIGNAL_EXCEPTION')
-    return conflict(
-      'closed',
-      'This is signed, locked or sent and can no longer be changed. Add to it instead.',
-    )
   if (databaseTrouble.has(code ?? driverError?.code ?? '')) return unavailable()
   if (/Multipart|Unexpected end of form|Malformed part/i.test((error as Error).message ?? ''))
     return new AppError(400, 'unreadable', 'The upload broke off. Choose the file again.')
   if (/Pool is closed|pool is closed|closed state/i.test((error as Error).message ?? '')) return unavailable()
   return null
 }
+
+/** An id that somebody tried stands in the trail of that child, whether they may know of the child or not. */
+const uuidOrNull = (text: string | null | undefined) =>
+  text && /^[0-9a-f]{8}(?:-[0-9a-f]{4}){3}-[0-9a-f]{12}$/i.test(text) ? text.toLowerCase() : null
 
 /** The one exit for errors: refusals are recorded, surprises are logged with the request id and nothing else leaves. */
 export const errorHandler: ErrorRequestHandler = async (error: unknown, req, res, next) => {
@@ -81,12 +79,12 @@ export const errorHandler: ErrorRequestHandler = async (error: unknown, req, res
   if (problem && [401, 403, 404].includes(problem.status) && req.actor.viewer) {
     problem = await recordAudit(req.actor, {
       action: res.locals.policyName ?? 'unknown.route',
-      childId: req.childAccess?.childId ?? null,
+      childId: req.childAccess?.childId ?? uuidOrNull(res.locals.attemptedChildId),
       relation: req.childAccess?.relation ?? null,
       result: 'denied',
       detail: {
         status: problem.status,
-        object: res.locals.attemptedChildId ?? null,
+        ids: res.locals.attemptedIds ?? [],
       },
     }).then(
       () => problem,

@@ -12,6 +12,7 @@ declare module 'express-serve-static-core' {
   interface Locals {
     policyName?: string
     attemptedChildId?: string | null
+    attemptedIds?: string[]
   }
 }
 

@@ -20,10 +20,11 @@ export const childPolicies = {
   changeIdentity: childPolicy('child.changeIdentity', staff, 'write', family),
   changeCare: childPolicy('child.changeCare', clinicians, 'write', notClinicians),
   changeState: childPolicy('child.changeState', clinicians, 'write', notClinicians),
+  /** Staff and family see who the therapist is; who holds a case is nothing of the school's. */
   allocate: childPolicy('child.allocate', ['clinicLead'], 'write', [
     'assignedTherapist',
     'administrator',
-    ...family,
+    'guardian',
   ]),
   actOnAlert: childPolicy('alert.act', clinicians, 'write', notClinicians),
 }

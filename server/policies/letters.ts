@@ -13,8 +13,10 @@ export const letterPolicies = {
   change: childPolicy('letters.change', ['assignedTherapist'], 'write', ['clinicLead']),
   check: childPolicy('letters.check', team, 'none'),
   approve: childPolicy('letters.approve', team, 'write'),
+  return: childPolicy('letters.return', ['clinicLead'], 'write', ['assignedTherapist']),
   send: childPolicy('letters.send', team, 'write'),
-  retry: childPolicy('letters.retry', team, 'write'),
+  /** The therapist sees how a delivery stands; trying a failed one again is not theirs. */
+  retry: childPolicy('letters.retry', ['clinicLead'], 'write', ['assignedTherapist']),
 }
 
 /** What the rules below look at. */
@@ -50,6 +52,8 @@ export const canApproveLetter = (access: ChildAccess, letter: LetterStanding) =>
 
 export const canReturnLetter = (access: ChildAccess, letter: LetterStanding) =>
   isRelation(access, 'clinicLead') && letter.state === 'awaiting_approval'
+
+export const canRetryDelivery = (access: ChildAccess) => isRelation(access, 'clinicLead')
 
 export const canTakeBackLetter = (access: ChildAccess, letter: LetterStanding) =>
   isRelation(access, 'assignedTherapist') && ['awaiting_approval', 'approved'].includes(letter.state)

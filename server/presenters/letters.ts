@@ -13,6 +13,7 @@ import {
   canChangeLetter,
   canDiscardLetter,
   canRecallLetter,
+  canRetryDelivery,
   canReturnLetter,
   canSendLetter,
   canSubmitLetter,
@@ -62,7 +63,7 @@ export const presentLetter = (
   facts: letter.facts,
   checks: related.checks,
   recipients: related.recipients.map(presentRecipient),
-  deliveries: related.deliveries.map((row) => presentDelivery(row, canSendLetter(access, letter))),
+  deliveries: related.deliveries.map((row) => presentDelivery(row, canRetryDelivery(access))),
   pdf:
     letter.pdfBytes === null || letter.pdfSha256 === null
       ? null

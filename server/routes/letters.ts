@@ -166,7 +166,7 @@ export const letterRoutes = ({ appUrl }: { appUrl: string }): Router => {
     res.json(await answerWith(req, letter.id))
   })
 
-  router.post(`${base}/:letterId/return`, allow(letterPolicies.approve), async (req, res) => {
+  router.post(`${base}/:letterId/return`, allow(letterPolicies.return), async (req, res) => {
     const version = ifMatchOf(req)
     const request = await bodyOf(req, letterReturnSchema)
     const letter = await letterFor(req, canReturnLetter)

@@ -4,8 +4,8 @@ import { setClock } from '../../server/clock.ts'
 import { database } from '../../server/dataSource.ts'
 import { enqueueMail } from '../../server/services/outbox.ts'
 import { deliverDue } from '../../server/services/outboxWorker.ts'
-import { startApp, stopApp } from '../support/app.ts'
-import { giveConsent } from '../support/factories.ts'
+import { signedInAs, startApp, stopApp } from '../support/app.ts'
+import { buildUser, giveConsent } from '../support/factories.ts'
 import { letterScene, queuedLetter } from '../support/letters.ts'
 import { startMail, type Mail } from '../support/mail.ts'
 
@@ -103,20 +103,20 @@ describe('the outbox', () => {
     expect(new Set(messages.map((message) => message.messageId)).size).toBe(1)
   })
 
-  it('gives up at once on 550, says so on the letter and makes a task for the author', async () => {
+  it('gives up at once on 550, says so on the letter, makes a task for the author, and lets the lead try again', async () => {
     const scene = await letterScene()
     const letter = await queuedLetter(scene)
     await mail.failNext(550, 1, scene.guardianUser.email)
     await mail.deliver()
     const after = await scene.as.get(`${scene.base}/${letter.id}`)
-    expect(after.body.deliveries[0]).toMatchObject({ state: 'failed', attempts: 1, can: { retry: true } })
+    expect(after.body.deliveries[0]).toMatchObject({ state: 'failed', attempts: 1, can: { retry: false } })
     const tasks = await database().query('SELECT kind, assigneeId FROM tasks WHERE childId = ?', [
       scene.child.id,
     ])
     expect(tasks).toEqual([{ kind: 'letter_failed', assigneeId: scene.therapist.id }])
-    const retried = await scene.as
-      .post(`${scene.base}/${letter.id}/deliveries/${letter.deliveries[0]?.id}/retry`)
-      .send()
+    const retry = `${scene.base}/${letter.id}/deliveries/${letter.deliveries[0]?.id}/retry`
+    expect((await scene.as.post(retry).send()).status).toBe(403)
+    const retried = await (await signedInAs(await buildUser('clinicLead'))).post(retry).send()
     expect(retried.status).toBe(200)
     await mail.deliver()
     expect(await mail.messages(scene.guardianUser.email)).toHaveLength(1)
