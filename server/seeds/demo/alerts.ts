@@ -7,7 +7,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'preference_before_12_months',
     level: 'overdue',
     text: 'Left hand only since about 8 months of age.',
-    raised: { day: -38, time: '09:10' },
+    raised: { day: -38, time: '09:32' },
     acted: {
       day: -37,
       time: '12:40',
@@ -21,7 +21,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'other_hand_little_used',
     level: 'overdue',
     text: 'Right hand often fisted and seldom used to hold things.',
-    raised: { day: -38, time: '09:10' },
+    raised: { day: -38, time: '09:32' },
     acted: {
       day: -37,
       time: '12:40',
@@ -34,7 +34,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'pain',
     level: 'due',
     text: 'Hand hurts after about ten minutes of writing.',
-    raised: { day: -127, time: '09:20' },
+    raised: { day: -127, time: '09:32' },
     acted: {
       day: -98,
       time: '15:10',
@@ -48,7 +48,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'pressure_to_switch',
     level: 'due',
     text: 'Grandmother asks school to give the pencil in the right hand.',
-    raised: { day: -106, time: '09:15' },
+    raised: { day: -106, time: '09:32' },
     acted: {
       day: -80,
       time: '12:00',
@@ -62,7 +62,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'pressure_to_switch',
     level: 'due',
     text: 'Was asked at five to write with the right hand.',
-    raised: { day: -135, time: '09:15' },
+    raised: { day: -135, time: '09:32' },
     acted: {
       day: -104,
       time: '11:00',
@@ -76,7 +76,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'change_of_hand',
     level: 'due',
     text: 'Now writes with the right hand.',
-    raised: { day: -135, time: '09:15' },
+    raised: { day: -135, time: '09:32' },
     acted: {
       day: -104,
       time: '11:00',
@@ -90,7 +90,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'swaps_from_six',
     level: 'soon',
     text: 'Six years old and different hands for different jobs.',
-    raised: { day: -205, time: '09:15' },
+    raised: { day: -205, time: '09:32' },
     acted: {
       day: -170,
       time: '12:10',
@@ -103,7 +103,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'swaps_from_six',
     level: 'soon',
     text: 'Ten years old and uses either hand for most jobs.',
-    raised: { day: -66, time: '09:15' },
+    raised: { day: -66, time: '09:32' },
     acted: {
       day: -30,
       time: '15:30',
@@ -116,7 +116,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'new_weakness',
     level: 'overdue',
     text: 'Weakness of the right side.',
-    raised: { day: -405, time: '09:20' },
+    raised: { day: -405, time: '09:32' },
     acted: {
       day: -405,
       time: '10:05',
@@ -130,7 +130,7 @@ export const alerts: readonly DemoAlert[] = [
     flag: 'pain',
     level: 'due',
     text: 'Hand and forearm sore after ten minutes of writing.',
-    raised: { day: -107, time: '09:25' },
+    raised: { day: -107, time: '09:32' },
     acted: {
       day: -78,
       time: '15:00',

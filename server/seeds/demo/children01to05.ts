@@ -32,7 +32,10 @@ export const children01to05: readonly DemoChild[] = [
       reason:
         'Mateo has plenty to say and reads well. His pages smear as he writes with the left hand, and he and his neighbour bump elbows at the double desk. He writes much less than he can tell us. We would like to know what we should change in class.',
     }),
-    carers: [carer('luciaQuispe', 'mother'), carer('tomArnold', 'father')],
+    carers: [
+      carer('luciaQuispe', 'mother'),
+      carer('tomArnold', 'father', { address: carer('luciaQuispe', 'mother').address }),
+    ],
     consents: [
       ...usualConsents(-128),
       consent('share_school_goals', -128),

@@ -201,6 +201,7 @@ export const letters: readonly DemoLetter[] = [
       },
       sent(-182, 'opened'),
     ],
+    { salutation: 'Dear Conrad' },
   ),
   // Waiting for the lead.
   letter(
