@@ -8,7 +8,11 @@ import { findChildFacts, isConsentGiven } from '../queries/childFacts.ts'
 import { clinicToday, readSettings } from './settings.ts'
 
 /** Refuses (409 `consent_needed`) what may only be added while a consent for the purpose is in force. */
-export const requireConsent = async (tx: Tx, access: ChildAccess, purpose: NeededConsent): Promise<void> => {
+export const requireConsent = async (
+  tx: Tx | undefined,
+  access: ChildAccess,
+  purpose: NeededConsent,
+): Promise<void> => {
   if (!(await isConsentGiven(access, purpose, tx)))
     throw conflict('consent_needed', consentNeededTexts[purpose])
 }
