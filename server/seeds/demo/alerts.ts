@@ -1,10 +1,11 @@
 import type { DemoAlert } from './demoTypes.ts'
 
-/** Red flags and who did what about them. Those raised by a referral stand in the words of the referral. */
+/** Red flags and who did what about them. Those that a referral raises stand in its words (shared/referralFlags.ts). */
 export const alerts: readonly DemoAlert[] = [
   {
     child: 8,
     flag: 'preference_before_12_months',
+    fromReferral: true,
     level: 'overdue',
     text: 'Left hand only since about 8 months of age.',
     raised: { day: -38, time: '09:32' },
@@ -19,6 +20,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 8,
     flag: 'other_hand_little_used',
+    fromReferral: true,
     level: 'overdue',
     text: 'Right hand often fisted and seldom used to hold things.',
     raised: { day: -38, time: '09:32' },
@@ -32,6 +34,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 3,
     flag: 'pain',
+    fromReferral: true,
     level: 'due',
     text: 'Hand hurts after about ten minutes of writing.',
     raised: { day: -127, time: '09:32' },
@@ -46,6 +49,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 13,
     flag: 'pressure_to_switch',
+    fromReferral: true,
     level: 'due',
     text: 'Grandmother asks school to give the pencil in the right hand.',
     raised: { day: -106, time: '09:32' },
@@ -60,6 +64,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 15,
     flag: 'pressure_to_switch',
+    fromReferral: true,
     level: 'due',
     text: 'Was asked at five to write with the right hand.',
     raised: { day: -135, time: '09:32' },
@@ -74,6 +79,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 15,
     flag: 'change_of_hand',
+    fromReferral: true,
     level: 'due',
     text: 'Now writes with the right hand.',
     raised: { day: -135, time: '09:32' },
@@ -88,6 +94,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 20,
     flag: 'swaps_from_six',
+    fromReferral: true,
     level: 'soon',
     text: 'Six years old and different hands for different jobs.',
     raised: { day: -205, time: '09:32' },
@@ -101,6 +108,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 31,
     flag: 'swaps_from_six',
+    fromReferral: true,
     level: 'soon',
     text: 'Ten years old and uses either hand for most jobs.',
     raised: { day: -66, time: '09:32' },
@@ -114,6 +122,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 33,
     flag: 'new_weakness',
+    fromReferral: true,
     level: 'overdue',
     text: 'Weakness of the right side.',
     raised: { day: -405, time: '09:32' },
@@ -128,6 +137,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 37,
     flag: 'pain',
+    fromReferral: true,
     level: 'due',
     text: 'Hand and forearm sore after ten minutes of writing.',
     raised: { day: -107, time: '09:32' },
@@ -142,6 +152,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 27,
     flag: 'change_of_hand',
+    fromReferral: false,
     level: 'due',
     text: 'Left forearm broken and in plaster: writes with the right hand for six weeks.',
     raised: { day: -48, time: '12:35' },
@@ -156,6 +167,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 39,
     flag: 'new_weakness',
+    fromReferral: true,
     level: 'overdue',
     text: 'New weakness of the left hand with headaches for about a week.',
     raised: { day: -27, time: '09:32' },
@@ -170,6 +182,7 @@ export const alerts: readonly DemoAlert[] = [
   {
     child: 39,
     flag: 'change_of_hand',
+    fromReferral: true,
     level: 'due',
     text: 'Has always been left-handed and now writes with the right hand.',
     raised: { day: -27, time: '09:32' },

@@ -181,7 +181,7 @@ export const children16to20: readonly DemoChild[] = [
 
 /** The second letter about Gethin, from his father: it waits to be joined to the first. */
 export const gethinAgain: DemoReferral = referral({
-  day: -16,
+  day: -11,
   source: 'parent',
   from: fromParent('rhodriProsser'),
   concerns: ['handwriting', 'speed'],

@@ -219,6 +219,8 @@ export interface DemoLetter {
 export interface DemoAlert {
   child: number
   flag: ReferralFlagId
+  /** True when accepting the referral raises it; false when it is noticed later. */
+  fromReferral: boolean
   text: string
   level: 'soon' | 'due' | 'overdue'
   raised: { day: Offset; time: TimeOfDay }

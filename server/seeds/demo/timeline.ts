@@ -138,10 +138,10 @@ function sharingOf(child: number): Planned[] {
         }),
       ),
     ]),
-    ...of(alerts, child).flatMap((alert, index) => [
-      at(alert.raised.day, alert.raised.time, { kind: 'alert', alert, index }),
+    ...of(alerts, child).flatMap((alert) => [
+      ...(alert.fromReferral ? [] : [at(alert.raised.day, alert.raised.time, { kind: 'alert', alert })]),
       ...(alert.acted
-        ? [at(alert.acted.day, alert.acted.time, { kind: 'act_on_alert', index, ...alert.acted })]
+        ? [at(alert.acted.day, alert.acted.time, { kind: 'act_on_alert', flag: alert.flag, ...alert.acted })]
         : []),
     ]),
     ...of(tasks, child).flatMap((task, index) => [

@@ -44,8 +44,9 @@ export type DemoHappening =
   | { kind: 'end_advice'; advice: DemoAdvice }
   | { kind: 'letter'; letter: DemoLetter; index: number }
   | { kind: 'letter_act'; index: number; act: DemoLetterAct; author: StaffKey }
-  | { kind: 'alert'; alert: DemoAlert; index: number }
-  | { kind: 'act_on_alert'; index: number; by: StaffKey; action: string }
+  /** Only for those that no referral raises. */
+  | { kind: 'alert'; alert: DemoAlert }
+  | { kind: 'act_on_alert'; flag: DemoAlert['flag']; by: StaffKey; action: string }
   | { kind: 'task'; task: DemoTask; index: number }
   | { kind: 'finish_task'; index: number; by: StaffKey }
 
