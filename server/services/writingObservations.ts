@@ -1,0 +1,46 @@
+import type { WritingObservationDetails } from '../../shared/writingObservations.ts'
+import type { Actor } from '../access/actor.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { now } from '../clock.ts'
+import { WritingObservation } from '../entities/WritingObservation.ts'
+import { invalid } from '../errors.ts'
+import { once } from './once.ts'
+import { requireConsent, requirePastDay } from './recordRules.ts'
+import { transact } from './transact.ts'
+
+const nothingSeen = ({ observedOn: _day, ...seen }: WritingObservationDetails): boolean =>
+  Object.values(seen).every((value) => value === null)
+
+/** Keeps what was seen on one day; it is never changed. Answers its id. */
+export const addObservation = async (
+  actor: Actor,
+  access: ChildAccess,
+  details: WritingObservationDetails,
+  key: string | null,
+): Promise<string> => {
+  await requirePastDay(access, 'observedOn', 'The date', details.observedOn)
+  if (nothingSeen(details))
+    throw invalid({ form: 'Nothing is filled in yet: enter at least one thing you saw.' })
+  return transact(actor, async (tx, record) => {
+    const request = { childId: access.childId, noun: 'writingObservation', ...details }
+    const id = await once(tx, actor, { key, request }, async (observationId) => {
+      await requireConsent(tx, access, 'assessment_treatment')
+      await tx.insert(WritingObservation, {
+        id: observationId,
+        childId: access.childId,
+        observedOn: details.observedOn,
+        details,
+        observedById: access.viewer.id,
+        recordedAt: now(),
+      })
+    })
+    record({
+      action: 'writingObservation.added',
+      objectType: 'writingObservation',
+      objectId: id,
+      childId: access.childId,
+      relation: access.relation,
+    })
+    return id
+  })
+}
