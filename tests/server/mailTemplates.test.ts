@@ -80,6 +80,29 @@ describe.each(toFamilies)('%s', (_name, mail) => {
 })
 
 describe('mail templates', () => {
+  it('print nothing that they are not made to print, even when it is handed to them', () => {
+    const canary = { childName: 'Canary Childname', recordNumber: 'FF-CANARY', reason: 'Canary reason' }
+    const given = {
+      clinic,
+      link,
+      worksFor,
+      name: 'Ada Writer',
+      changedAt: 'today',
+      problem: 'gave_up' as const,
+      ...canary,
+    }
+    const made = [
+      letterNotice(given),
+      letterAttached(given),
+      staffInvitation(given),
+      carerInvitation(given),
+      passwordReset(given),
+      passwordChanged(given),
+      deliveryFailed(given),
+    ]
+    expect(made.filter((mail) => /canary/i.test(JSON.stringify(mail)))).toEqual([])
+  })
+
   it.each([
     ['letterNotice', mails.letterNotice],
     ['staffInvitation', mails.staffInvitation],
