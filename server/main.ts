@@ -36,7 +36,7 @@ const start = async (shutdown: Shutdown) => {
   const env = readEnv(process.env)
   await openClinic(env, shutdown)
   const { smtpUrl, inboxUrl } = await prepareMail(env, shutdown)
-  const demoSignIns = env.demo ? await seedDemoOnce() : []
+  const demoSignIns = env.demo ? await seedDemoOnce(env.appUrl) : []
   const app = createApp({
     appUrl: env.appUrl,
     sessionSecret: loadSessionSecret(env),

@@ -20,9 +20,7 @@ const demoSignIns = (): SessionView['demoSignIns'] => {
   const people = [...staff, ...teachers, ...parents]
   return roles.flatMap((role) => {
     const person = people.find(({ key }) => key === shownFor[role])
-    return person
-      ? [{ role, name: person.displayName, email: person.email, password: person.password }]
-      : []
+    return person ? [{ role, name: person.displayName, email: person.email, password: person.password }] : []
   })
 }
 
@@ -30,10 +28,10 @@ const demoSignIns = (): SessionView['demoSignIns'] => {
  * Fills an empty database with the demo clinic, once, through the same services as real use; answers the sign-ins to
  * show. A database that already holds accounts is left alone.
  */
-export const seedDemoOnce = async (): Promise<SessionView['demoSignIns']> => {
+export const seedDemoOnce = async (appUrl: string): Promise<SessionView['demoSignIns']> => {
   if ((await database().manager.count(User)) === 0) {
     const started = performance.now()
-    await seedClinic()
+    await seedClinic(appUrl)
     logger.info({ ms: Math.round(performance.now() - started) }, 'the demo clinic was made')
   }
   return demoSignIns()

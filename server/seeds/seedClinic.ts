@@ -1,17 +1,20 @@
-import { changeSettings } from '../services/settings.ts'
-import { createClass, createSchool } from '../services/schools.ts'
 import { dayOf } from '../../shared/days.ts'
 import { now, setClock } from '../clock.ts'
+import { changeSettings } from '../services/settings.ts'
+import { createClass, createSchool } from '../services/schools.ts'
 import { clinicSettings } from './demo/clinic.ts'
+import { children } from './demo/children.ts'
 import { parents } from './demo/parents.ts'
 import { staff, teachers } from './demo/people.ts'
 import { schools, schoolYearOf, type ClassKey } from './demo/schools.ts'
+import { demoTimeline } from './demo/timeline.ts'
+import { playEvent } from './playEvent.ts'
+import type { Scene } from './playScene.ts'
 import { actorOf, seedPeople, type People } from './seedPeople.ts'
 
-const seedSchools = async (people: People): Promise<Map<ClassKey, string>> => {
+const seedSchools = async (people: People, schoolYear: number): Promise<Map<ClassKey, string>> => {
   const pauline = actorOf(people, 'pauline')
   const classes = new Map<ClassKey, string>()
-  const schoolYear = schoolYearOf(dayOf(now(), clinicSettings.timeZone))
   for (const school of schools) {
     const schoolId = await createSchool(pauline, { name: school.name, town: school.town }, null)
     const teacherId = actorOf(people, school.teacher).viewer.id
@@ -21,17 +24,35 @@ const seedSchools = async (people: People): Promise<Map<ClassKey, string>> => {
   return classes
 }
 
-/** Days before the demo day on which the clinic's own set-up is dated. */
-const setUpDays = 460
+/** Days before the demo day on which the clinic's own set-up is dated: before the first referral. */
+const setUpDays = 470
 
-/** Makes the whole demo clinic. The clock is moved to each event and put back at the end. */
-export const seedClinic = async (): Promise<void> => {
+/**
+ * Makes the whole demo clinic: the clock is moved to each event of the timeline and put back at the end, so that every
+ * date in the record is as if it had happened.
+ */
+export const seedClinic = async (appUrl: string): Promise<void> => {
   const demoNow = now()
-  setClock(() => new Date(demoNow.getTime() - setUpDays * 86_400_000))
+  const demoToday = dayOf(demoNow, clinicSettings.timeZone)
+  const moveTo = (moment: Date) => setClock(() => moment)
+  moveTo(new Date(demoNow.getTime() - setUpDays * 86_400_000))
   try {
     const people = await seedPeople([...staff, ...teachers, ...parents])
     await changeSettings(actorOf(people, 'ines'), clinicSettings, 0)
-    await seedSchools(people)
+    const scene: Scene = {
+      people,
+      classes: await seedSchools(people, schoolYearOf(demoToday)),
+      children: new Map(children.map((child) => [child.number, child])),
+      stories: new Map(),
+      timeZone: clinicSettings.timeZone,
+      appUrl,
+    }
+    for (const event of demoTimeline(demoToday, clinicSettings.timeZone)) {
+      moveTo(event.at)
+      await playEvent(scene, event, demoToday).catch((error: unknown) => {
+        throw new Error(`The demo broke off at ${event.kind} of child ${event.child}`, { cause: error })
+      })
+    }
   } finally {
     setClock(() => new Date())
   }
