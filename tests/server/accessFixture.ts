@@ -120,17 +120,17 @@ export const accessRows: readonly AccessRow[] = [
   // Audit log by child
   child('GET …/access-history', ['T1', 'L'], ['AD']),
 
-  // Guardians: links and contacts
-  child('GET …/guardians', ['T1', 'L', 'AD']),
-  child('POST …/guardians', ['T1', 'L', 'AD']),
-  child('PUT …/guardians/:id', ['T1', 'L', 'AD']),
-  child('POST …/guardians/:id/invite', ['T1', 'L', 'AD']),
-  child('POST …/guardians/:id/restrict', ['T1', 'L', 'AD']),
+  // Guardians: links and contacts. A carer reads their own row and changes it in their own room.
+  child('GET …/guardians', ['T1', 'L', 'AD', 'G1']),
+  child('POST …/guardians', ['T1', 'L', 'AD'], ['G1']),
+  child('PUT …/guardians/:id', ['T1', 'L', 'AD'], ['G1']),
+  child('POST …/guardians/:id/invite', ['T1', 'L', 'AD'], ['G1']),
+  child('POST …/guardians/:id/restrict', ['T1', 'L', 'AD'], ['G1']),
 
-  // Consents: rows never change, a withdrawal is a new row
-  child('GET …/consents', ['T1', 'L', 'AD']),
-  child('POST …/consents', ['T1', 'L'], ['AD']),
-  child('POST …/consents/:id/withdraw', ['T1', 'L'], ['AD']),
+  // Consents: rows never change, a withdrawal is a new row. A teacher may know yes or no, a carer has a room of their own.
+  child('GET …/consents', ['T1', 'L', 'AD'], ['E1', 'G1']),
+  child('POST …/consents', ['T1', 'L'], ['AD', 'E1', 'G1']),
+  child('POST …/consents/:id/withdraw', ['T1', 'L'], ['AD', 'E1', 'G1']),
 
   // Questionnaire responses
   child('GET …/hand-profile', ['T1', 'L']),

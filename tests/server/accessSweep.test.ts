@@ -97,6 +97,18 @@ const refusedProblems = async (row: AccessRow, list: [Caller, ReadyCall['target'
   return problems
 }
 
+const uuid = /[0-9a-f]{8}(?:-[0-9a-f]{4}){3}-[0-9a-f]{12}/g
+
+/** Rows of a list of which the trail names neither the row nor the child it leads to. */
+const unrecordedRows = (answer: Answer, detail: string): number => {
+  if (!String(answer.headers['content-type']).startsWith('application/json')) return 0
+  const body = JSON.parse(text(answer) || 'null') as unknown
+  const rows = Array.isArray(body) ? body : (body as { rows?: unknown } | null)?.rows
+  if (!Array.isArray(rows)) return 0
+  const named = rows.map((row) => JSON.stringify(row).match(uuid) ?? []).filter((ids) => ids.length > 0)
+  return named.filter((ids) => !ids.some((id) => detail.includes(id))).length
+}
+
 const allowedProblems = async (row: AccessRow, caller: Caller, target: ReadyCall['target']) => {
   const call = await prepareCall(scene, row, caller, target)
   const answer = await perform(wire, scene, call)
@@ -113,9 +125,12 @@ const allowedProblems = async (row: AccessRow, caller: Caller, target: ReadyCall
     problems.push(
       `${name(call)}: ${entries.length} audit entries: ${entries.map((entry) => entry.action).join(', ')}`,
     )
+  const unrecorded = unrecordedRows(answer, entries.map((entry) => entry.detail ?? '').join(' '))
+  if (call.method === 'GET' && unrecorded > 0)
+    problems.push(`${name(call)}: shows ${unrecorded} rows that are not recorded`)
   for (const entry of entries) {
     if (entry.result !== 'allowed') problems.push(`${name(call)}: recorded as denied`)
-    if (call.childId !== null && entry.childId !== call.childId)
+    if (call.about !== null && entry.childId !== call.about)
       problems.push(`${name(call)}: ${entry.action} is recorded for child ${entry.childId}`)
     const relation = call.standing && relationOf[call.standing]
     if (call.childId !== null && entry.relation !== relation)

@@ -75,6 +75,8 @@ export const relationOf: Partial<Record<Standing, ChildRelation>> = {
   AD: 'administrator',
 }
 
+const ofAChild: readonly AccessRow['bound'][] = ['child', 'letter', 'task', 'referral']
+
 export interface ReadyCall extends Call {
   caller: Caller
   target: Target
@@ -82,6 +84,8 @@ export interface ReadyCall extends Call {
   path: string
   /** Null where no child stands in the address. */
   childId: string | null
+  /** The child whose thing is addressed, in whatever way; null for the absent and for what is no child's. */
+  about: string | null
   standing: Standing | null
 }
 
@@ -142,6 +146,7 @@ export const prepareCall = async (
     method,
     path: call.query ? `${path}?${call.query}` : path,
     childId: pattern.includes(':childId') ? childId : null,
+    about: target === 'absent' || !ofAChild.includes(row.bound) ? null : childId,
     standing: stands,
   }
 }
@@ -175,6 +180,7 @@ export interface Trace {
   childId: string | null
   relation: string | null
   result: 'allowed' | 'denied'
+  detail: string | null
 }
 
 /** The audit entries of some requests. */
@@ -183,7 +189,7 @@ export const tracesOf = async (requestIds: readonly string[]): Promise<Map<strin
     requestIds.length === 0
       ? []
       : ((await database().query(
-          'SELECT requestId, actorId, action, childId, relation, result FROM audit_entries WHERE requestId IN (?)',
+          'SELECT requestId, actorId, action, childId, relation, result, detail FROM audit_entries WHERE requestId IN (?)',
           [requestIds],
         )) as Trace[])
   const traces = new Map<string, Trace[]>()

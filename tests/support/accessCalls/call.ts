@@ -1,7 +1,9 @@
+import type { ConsentPurpose } from '../../../shared/consents.ts'
 import { database } from '../../../server/dataSource.ts'
 import type { User } from '../../../server/entities/User.ts'
 import type { Standing } from '../../server/accessFixture.ts'
 import type { Person, Scene, SceneChild } from '../accessScene.ts'
+import { giveConsent } from '../factories.ts'
 
 /** Who is about to call, and about which child. */
 export interface On {
@@ -41,4 +43,15 @@ export const versionOf = async (
     version: number
   }[]
   return row?.version ?? 0
+}
+
+/** A yes can be given again only where none is in force. */
+export const takeBackConsents = async ({ child, therapist }: SceneChild, purpose: ConsentPurpose) => {
+  const given = (await database().query(
+    `SELECT id FROM consents c WHERE childId = ? AND purpose = ? AND kind = 'given'
+       AND NOT EXISTS (SELECT 1 FROM consents w WHERE w.withdrawsId = c.id)`,
+    [child.id, purpose],
+  )) as { id: string }[]
+  for (const { id } of given)
+    await giveConsent(child, purpose, therapist, { kind: 'withdrawn', withdrawsId: id })
 }

@@ -7,7 +7,7 @@ import { dueOn } from '../records.ts'
 import { carerDetails, decision, referralDetails } from '../referrals.ts'
 import { buildTask } from '../tasks.ts'
 import { personOf } from '../accessScene.ts'
-import { versionOf, type Calls, type On } from './call.ts'
+import { takeBackConsents, versionOf, type Calls, type On } from './call.ts'
 
 const nameless = () => ({
   givenName: `Neutral${randomUUID().slice(0, 8)}`,
@@ -146,16 +146,19 @@ export const childCalls: Calls = {
   }),
 
   'GET /api/children/:childId/consents': () => ({}),
-  'POST /api/children/:childId/consents': async (on) => ({
-    body: {
-      purpose: 'video',
-      guardianId: (await contactOnly(on)).id,
-      basis: 'parental_responsibility',
-      method: 'paper',
-      expiresOn: null,
-      note: null,
-    },
-  }),
+  'POST /api/children/:childId/consents': async (on) => {
+    await takeBackConsents(on.child, 'video')
+    return {
+      body: {
+        purpose: 'video',
+        guardianId: (await contactOnly(on)).id,
+        basis: 'parental_responsibility',
+        method: 'paper',
+        expiresOn: null,
+        note: null,
+      },
+    }
+  },
   'POST /api/children/:childId/consents/:id/withdraw': async ({ child }) => ({
     ids: [(await giveConsent(child.child, 'teaching_use', child.therapist)).id],
     body: { reason: 'The family changed its mind' },

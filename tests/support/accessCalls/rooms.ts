@@ -1,22 +1,9 @@
-import type { ConsentPurpose } from '../../../shared/consents.ts'
 import { now } from '../../../server/clock.ts'
 import { database } from '../../../server/dataSource.ts'
-import type { SceneChild } from '../accessScene.ts'
 import { buildAdvice } from '../clinicRows.ts'
 import { giveConsent } from '../factories.ts'
 import { dueOn } from '../records.ts'
-import { versionOf, type Calls } from './call.ts'
-
-/** A yes can be given again only where none is in force. */
-const takeBackConsents = async ({ child, therapist }: SceneChild, purpose: ConsentPurpose) => {
-  const given = (await database().query(
-    `SELECT id FROM consents c WHERE childId = ? AND purpose = ? AND kind = 'given'
-       AND NOT EXISTS (SELECT 1 FROM consents w WHERE w.withdrawsId = c.id)`,
-    [child.id, purpose],
-  )) as { id: string }[]
-  for (const { id } of given)
-    await giveConsent(child, purpose, therapist, { kind: 'withdrawn', withdrawsId: id })
-}
+import { takeBackConsents, versionOf, type Calls } from './call.ts'
 
 /** What leaves for the school, and the rooms of teachers and carers. */
 export const roomCalls: Calls = {
