@@ -4,6 +4,8 @@ import { heightOf, widthOf, type Line, type Piece, type TextStyle } from './lett
 /** A4 in points. The wide margin is on one side, on purpose: it carries the ornament and leaves room for a hand. */
 const page = { width: 595.28, height: 841.89, left: 98, right: 62, top: 58, bottom: 66 }
 const floor = page.height - page.bottom
+/** A list up to this height, in points, stays on one page with the line that opens it. */
+const shortList = 110
 const panel = { padding: 11, radius: 14 }
 
 const petal = '#4A3F8F'
@@ -95,6 +97,19 @@ export function createPages(pdf: PDFKit.PDFDocument): Pages {
 
   const startOf = (piece: Piece) => piece.before + Math.min(piece.lines.length, 2) * piece.style.leading
 
+  /** What must not be torn from the piece at `index`: a heading's text, an opening line's list when it is short. */
+  const heldTogether = (pieces: Piece[], index: number): number => {
+    const piece = pieces[index]
+    const following = pieces[index + 1]
+    if (!piece) return 0
+    if (piece.tag === 'H1' || piece.tag === 'H2') return heightOf(piece) + heldTogether(pieces, index + 1)
+    if (piece.tag !== 'P' || following?.tag !== 'LI') return startOf(piece)
+    const end = pieces.findIndex((other, at) => at > index && other.tag !== 'LI')
+    const items = pieces.slice(index + 1, end === -1 ? undefined : end)
+    const list = items.reduce((height, item) => height + heightOf(item), 0)
+    return heightOf(piece) + (list <= shortList ? list : startOf(following))
+  }
+
   const printItem = (list: PDFKit.PDFStructureElement, piece: Piece) => {
     const item = pdf.struct('LI')
     list.add(item)
@@ -112,9 +127,7 @@ export function createPages(pdf: PDFKit.PDFDocument): Pages {
   const print = (pieces: Piece[]) => {
     let list: PDFKit.PDFStructureElement | null = null
     for (const [index, piece] of pieces.entries()) {
-      const following = pieces[index + 1]
-      const isHeading = piece.tag === 'H1' || piece.tag === 'H2'
-      keepTogether(isHeading && following ? heightOf(piece) + startOf(following) : startOf(piece))
+      keepTogether(heldTogether(pieces, index))
       if (!atTop) y += piece.before
       if (piece.tag !== 'LI') {
         list?.end()
