@@ -93,7 +93,6 @@ describe('LateralLine', () => {
       row({ id: 'b', measure: 'Foot', informant: null, value: 0, cutOffs: null, basis: '9 actions' }),
     ])
     expect(cells(wrapper)).toEqual([
-      ['Foot', '3 Mar 2026', '0.0', 'Neither side', 'None given', '9 actions'],
       [
         'Hand-use questionnaire, Parent or carer',
         '3 Mar 2026',
@@ -102,6 +101,7 @@ describe('LateralLine', () => {
         '−12.0 to +25.4',
         '7 of 10 activities answered. Provisional: fewer than 8 answered',
       ],
+      ['Foot', '3 Mar 2026', '0.0', 'Neither side', 'None given', '9 actions'],
     ])
   })
 

@@ -39,7 +39,7 @@ function form(start: HandUseAnswers, props: { locked?: boolean } = {}) {
 }
 const scoreOf = ({ wrapper }: ReturnType<typeof form>) => ({
   figure: wrapper.get('.figure').text().replace(/\s+/g, ' '),
-  facts: wrapper.findAll('.facts li').map((line) => line.text()),
+  facts: wrapper.findAll('.score .words li').map((line) => line.text()),
 })
 const radios = ({ wrapper }: ReturnType<typeof form>, index: number) =>
   wrapper.findAll('fieldset')[index]?.findAll<HTMLInputElement>('input') ?? []
