@@ -38,6 +38,13 @@ export const guardianSchema = body({
 })
 export type GuardianDetails = InferType<typeof guardianSchema>
 
+/** A restriction ends what the carer sees at once; lifting it needs a reason as well. */
+export const guardianRestrictionSchema = body({
+  restricted: boolean().required(),
+  reason: text('The reason', { min: 2, max: 500 }),
+})
+export type GuardianRestriction = InferType<typeof guardianRestrictionSchema>
+
 export const ownContactSchema = body({
   phone: optionalPhone(),
   address: optionalText('The address', { max: 300 }),

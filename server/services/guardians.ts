@@ -1,17 +1,35 @@
 import { randomUUID } from 'node:crypto'
-import type { GuardianDetails } from '../../shared/guardians.ts'
+import { addWorkingDays } from '../../shared/days.ts'
+import type { GuardianDetails, GuardianRestriction } from '../../shared/guardians.ts'
+import type { Actor } from '../access/actor.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { Guardian } from '../entities/Guardian.ts'
+import { conflict, forbidden, notFound } from '../errors.ts'
+import { canRestrictGuardian } from '../policies/guardians.ts'
+import { presentGuardian } from '../presenters/guardians.ts'
+import { listGuardians } from '../queries/guardians.ts'
+import { findForChild } from '../queries/scope.ts'
+import { currentTherapist } from './assignments.ts'
+import type { AuditFact } from './audit.ts'
+import { createOnce } from './createOnce.ts'
+import { cancelDeliveriesToGuardian } from './letterDeliveries.ts'
+import { clinicToday, readSettings } from './settings.ts'
+import { answerStale, StaleWrite } from './staleWrites.ts'
+import { addTask } from './tasks.ts'
+import { transact } from './transact.ts'
+import { updateIfCurrent } from './versions.ts'
 
 /** Adds a carer to a child, without an account. */
 export const insertGuardian = async (
   tx: Tx,
   childId: string,
   details: GuardianDetails,
+  id: string = randomUUID(),
 ): Promise<Guardian> => {
   const guardian = tx.create(Guardian, {
-    id: randomUUID(),
+    id,
     childId,
     userId: null,
     ...details,
@@ -24,3 +42,96 @@ export const insertGuardian = async (
   await tx.insert(Guardian, guardian)
   return guardian
 }
+
+export const guardianFact = (access: ChildAccess, action: string, id: string): AuditFact => ({
+  action,
+  objectType: 'guardian',
+  objectId: id,
+  childId: access.childId,
+  relation: access.relation,
+})
+
+/** The carer of this child, locked for a change; ended links are as good as absent. */
+export const lockGuardian = async (tx: Tx, access: ChildAccess, id: string): Promise<Guardian> => {
+  const guardian = await findForChild(access, Guardian, id, tx, { lock: true })
+  if (guardian.endedAt !== null && guardian.endedAt <= now()) throw notFound()
+  return guardian
+}
+
+const currentGuardian = (access: ChildAccess, id: string) => async () => {
+  const [row] = await listGuardians(access, id)
+  if (!row) throw notFound()
+  return presentGuardian(row, access)
+}
+
+/** Answers the id of the new carer; the same form sent again answers the first one's. */
+export const addGuardian = (
+  actor: Actor,
+  access: ChildAccess,
+  details: GuardianDetails,
+  key: string | null,
+): Promise<string> =>
+  transact(actor, (tx, record) =>
+    createOnce(
+      tx,
+      actor,
+      record,
+      { key, request: ['guardian', access.childId, details] },
+      { objectType: 'guardian', childId: access.childId, relation: access.relation },
+      async (id) => {
+        await insertGuardian(tx, access.childId, details, id)
+      },
+    ),
+  )
+
+/**
+ * Changes what is known of a carer. Where writing is no longer safe nothing queued leaves; where parental
+ * responsibility has ended the consents that rest on it are looked at by the therapist.
+ */
+export const changeGuardian = async (
+  actor: Actor,
+  access: ChildAccess,
+  id: string,
+  version: number,
+  details: GuardianDetails,
+): Promise<void> => {
+  const today = clinicToday(await readSettings())
+  await answerStale(
+    transact(actor, async (tx, record) => {
+      const before = await lockGuardian(tx, access, id)
+      if (!(await updateIfCurrent(tx, Guardian, id, version, details))) throw new StaleWrite()
+      if (before.safeToContact && !details.safeToContact) await cancelDeliveriesToGuardian(tx, id)
+      if (before.parentalResponsibility === 'yes' && details.parentalResponsibility !== 'yes')
+        await addTask(tx, {
+          childId: access.childId,
+          kind: 'responsibility_changed',
+          text: 'Parental responsibility of a carer changed: see which consents still hold',
+          dueOn: addWorkingDays(today, 1),
+          assigneeId: await currentTherapist(tx, access.childId),
+          otherwise: 'clinicLead',
+        })
+      record(guardianFact(access, 'guardian.changed', id))
+    }),
+    currentGuardian(access, id),
+  )
+}
+
+/** Closes the record to a carer at once and stops what is queued to them, or lifts that again. */
+export const restrictGuardian = (
+  actor: Actor,
+  access: ChildAccess,
+  id: string,
+  { restricted, reason }: GuardianRestriction,
+): Promise<void> =>
+  transact(actor, async (tx, record) => {
+    const guardian = await lockGuardian(tx, access, id)
+    if (guardian.restricted === restricted)
+      throw conflict(
+        'closed',
+        restricted ? 'This carer is restricted already.' : 'No restriction is in place.',
+      )
+    if (!canRestrictGuardian(access, guardian)) throw forbidden('Only the clinic lead lifts a restriction.')
+    await updateIfCurrent(tx, Guardian, id, guardian.version, { restricted, restrictedReason: reason })
+    if (restricted) await cancelDeliveriesToGuardian(tx, id)
+    record(guardianFact(access, restricted ? 'guardian.restricted' : 'guardian.restriction_lifted', id))
+  })

@@ -1,0 +1,57 @@
+import type { GuardianRelation, ParentalResponsibility } from '../../shared/guardians.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { now } from '../clock.ts'
+import { within } from './scope.ts'
+import { flag, selectRows } from './sql.ts'
+
+export interface GuardianRow {
+  id: string
+  name: string
+  relation: GuardianRelation
+  parentalResponsibility: ParentalResponsibility
+  courtOrder: boolean
+  safeToContact: boolean
+  restricted: boolean
+  email: string | null
+  phone: string | null
+  address: string | null
+  account: 'none' | 'invited' | 'active' | 'disabled'
+  emailConsent: 'none' | 'link' | 'attachment'
+  version: number
+}
+
+type Flags = 'courtOrder' | 'safeToContact' | 'restricted'
+
+const inForce = (
+  purpose: string,
+) => `EXISTS (SELECT 1 FROM consents f WHERE f.guardianId = g.id AND f.kind = 'given'
+  AND f.purpose = '${purpose}' AND f.at <= :now AND (f.expiresAt IS NULL OR f.expiresAt > :now)
+  AND NOT EXISTS (SELECT 1 FROM consents w WHERE w.withdrawsId = f.id AND w.at <= :now))`
+
+/** The child's carers; to a carer only their own row, so that nobody learns of another's address or restriction. */
+export const listGuardians = async (
+  access: ChildAccess,
+  onlyId: string | null = null,
+): Promise<GuardianRow[]> => {
+  const scope = within(access, 'g.childId')
+  const own = access.relation === 'guardian'
+  const rows = await selectRows<Omit<GuardianRow, Flags> & Record<Flags, number>>(
+    `SELECT g.id, g.name, g.relation, g.parentalResponsibility, g.courtOrder, g.safeToContact, g.restricted, g.email,
+       g.phone, g.address, g.version,
+       CASE WHEN u.id IS NULL THEN 'none' WHEN u.disabledAt IS NOT NULL THEN 'disabled'
+         WHEN u.passwordHash IS NULL THEN 'invited' ELSE 'active' END AS account,
+       CASE WHEN ${inForce('email_attachment')} THEN 'attachment' WHEN ${inForce('email_link')} THEN 'link'
+         ELSE 'none' END AS emailConsent
+     FROM guardians g LEFT JOIN users u ON u.id = g.userId
+     WHERE g.endedAt IS NULL AND ${scope.sql} ${own ? 'AND g.id = :ownRow' : ''}
+       ${onlyId === null ? '' : 'AND g.id = :onlyId'}
+     ORDER BY g.createdAt, g.id`,
+    { ...scope.parameters, now: now(), ownRow: access.guardianId, onlyId },
+  )
+  return rows.map((row) => ({
+    ...row,
+    courtOrder: flag(row.courtOrder),
+    safeToContact: flag(row.safeToContact),
+    restricted: flag(row.restricted),
+  }))
+}
