@@ -26,16 +26,25 @@ export const goalRatingSchema = body({
 })
 export type GoalRating = InferType<typeof goalRatingSchema>
 
+export const goalOutcomes = ['finished', 'set_aside'] as const
+export type GoalOutcome = (typeof goalOutcomes)[number]
+
 export const goalEndSchema = body({
-  outcome: choice('how it ended', ['finished', 'set_aside'] as const),
+  outcome: choice('how it ended', goalOutcomes),
   reason: text('The reason', { min: 2, max: 300 }),
 })
+export type GoalEnd = InferType<typeof goalEndSchema>
+
+/** A child works towards four goals at most at a time (clinic rule). */
+export const mostOpenGoals = 4
 
 export interface GoalView extends GoalDetails {
   id: string
   ratings: { level: number; ratedOn: Day; by: string; note: string | null }[]
   latestLevel: number | null
   endedOn: Day | null
+  outcome: GoalOutcome | null
+  endReason: string | null
   setOn: Day
   version: number
   can: { change: boolean; rate: boolean }

@@ -1,5 +1,5 @@
 import { Column, Entity, JoinColumn, ManyToOne, PrimaryColumn, VersionColumn, type Relation } from 'typeorm'
-import type { GoalDetails } from '../../shared/goals.ts'
+import type { GoalDetails, GoalOutcome } from '../../shared/goals.ts'
 import { Child } from './Child.ts'
 import { User } from './User.ts'
 
@@ -13,7 +13,8 @@ export class Goal {
   @Column('json') details!: GoalDetails
   @Column('date') setOn!: string
   @Column('date', { nullable: true }) endedOn!: string | null
-  @Column('varchar', { length: 20, nullable: true }) outcome!: string | null
+  @Column('varchar', { length: 20, nullable: true }) outcome!: GoalOutcome | null
+  @Column('varchar', { length: 300, nullable: true }) endReason!: string | null
   @Column('uuid') setById!: string
   @ManyToOne(() => User, { nullable: false, onDelete: 'RESTRICT', onUpdate: 'RESTRICT' })
   @JoinColumn({ name: 'setById' })

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { pastDayProblem } from '../../shared/recordDays.ts'
+import { pastDayProblem, targetDayProblem } from '../../shared/recordDays.ts'
 
 // By definition: nothing is seen before a birth or after today.
 describe('pastDayProblem', () => {
@@ -16,5 +16,15 @@ describe('pastDayProblem', () => {
     ],
   ])('%s', (_what, day, expected) => {
     expect(pastDayProblem('The date', day, life)).toBe(expected)
+  })
+})
+
+describe('targetDayProblem', () => {
+  it.each([
+    ['tomorrow', '2026-12-02', null],
+    ['today', '2026-12-01', 'The target date must come after today (1 Dec 2026)'],
+    ['a year ago', '2025-12-01', 'The target date must come after today (1 Dec 2026)'],
+  ])('%s', (_what, day, expected) => {
+    expect(targetDayProblem('The target date', day, '2026-12-01')).toBe(expected)
   })
 })
