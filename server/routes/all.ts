@@ -2,11 +2,15 @@ import type { Router } from 'express'
 import { caseloadRoutes } from './caseload.ts'
 import { childRoutes } from './children.ts'
 import { classRoutes } from './classes.ts'
+import { consentRoutes } from './consents.ts'
 import { familyRoutes } from './family.ts'
+import { goalRoutes } from './goals.ts'
+import { guardianRoutes } from './guardians.ts'
 import { letterRoutes } from './letters.ts'
 import { questionnaireRoutes } from './questionnaires.ts'
 import { receivedLetterRoutes } from './receivedLetters.ts'
 import { referralRoutes } from './referrals.ts'
+import { reviewRoutes } from './review.ts'
 import { sampleRoutes } from './samples.ts'
 import { schoolAdviceRoutes } from './schoolAdvice.ts'
 import { schoolRoutes } from './schools.ts'
@@ -14,6 +18,9 @@ import { sessionNoteRoutes } from './sessionNotes.ts'
 import { settingsRoutes } from './settings.ts'
 import { taskRoutes } from './tasks.ts'
 import { therapistRoutes } from './therapists.ts'
+import { todayRoutes } from './today.ts'
+import { userRoutes } from './users.ts'
+import { writingObservationRoutes } from './writingObservations.ts'
 
 export interface RouteSettings {
   appUrl: string
@@ -24,11 +31,15 @@ export const nounRoutes = (settings: RouteSettings): Router[] => [
   caseloadRoutes(),
   childRoutes(),
   classRoutes(),
+  consentRoutes(),
   familyRoutes(),
+  goalRoutes(),
+  guardianRoutes(settings),
   letterRoutes(settings),
   questionnaireRoutes(),
   receivedLetterRoutes(),
   referralRoutes(),
+  reviewRoutes(),
   sampleRoutes(),
   schoolAdviceRoutes(),
   schoolRoutes(),
@@ -36,4 +47,7 @@ export const nounRoutes = (settings: RouteSettings): Router[] => [
   settingsRoutes(),
   taskRoutes(),
   therapistRoutes(),
+  todayRoutes(),
+  userRoutes(settings),
+  writingObservationRoutes(),
 ]
