@@ -1,3 +1,11 @@
+import {
+  addDays as addCalendarDays,
+  differenceInCalendarDays,
+  formatISO,
+  getDaysInMonth,
+  isWeekend,
+  parseISO,
+} from 'date-fns'
 import { string, type TestContext } from 'yup'
 
 /**
@@ -6,7 +14,6 @@ import { string, type TestContext } from 'yup'
  */
 export type Day = string
 
-const msPerDay = 86_400_000
 const shortMonths = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
 const longMonths = [
   ...['January', 'February', 'March', 'April', 'May', 'June'],
@@ -19,11 +26,9 @@ interface DayParts {
   date: number
 }
 
-const daysInMonth = (year: number, month: number): number => new Date(Date.UTC(year, month, 0)).getUTCDate()
+const daysInMonth = (year: number, month: number): number => getDaysInMonth(new Date(year, month - 1))
 
 const pad = (value: number, width: number): string => String(value).padStart(width, '0')
-
-const toDay = (serial: number): Day => new Date(serial * msPerDay).toISOString().slice(0, 10)
 
 /** Is this text a real calendar day between 1900 and 2199, written 'YYYY-MM-DD'? */
 export function isDay(value: unknown): value is Day {
@@ -49,20 +54,22 @@ function partsOf(day: Day): DayParts {
   return { year: Number(day.slice(0, 4)), month: Number(day.slice(5, 7)), date: Number(day.slice(8, 10)) }
 }
 
-/** Days since 1 Jan 1970, for arithmetic only. */
-function serialOf(day: Day): number {
-  const { year, month, date } = partsOf(day)
-  return Date.UTC(year, month - 1, date) / msPerDay
+/** Midnight of the day where the program runs. Only ever used to count calendar days, so the zone cancels out. */
+function midnightOf(day: Day): Date {
+  partsOf(day)
+  return parseISO(day)
 }
 
 /** The day `n` days later (earlier when negative). Throws RangeError when `day` is not a real day. */
-export const addDays = (day: Day, n: number): Day => toDay(serialOf(day) + n)
+export const addDays = (day: Day, n: number): Day =>
+  formatISO(addCalendarDays(midnightOf(day), n), { representation: 'date' })
 
 /** The day `n` weeks later. */
 export const addWeeks = (day: Day, n: number): Day => addDays(day, n * 7)
 
 /** Whole days from one day to another; negative when `to` comes first. */
-export const daysBetween = (from: Day, to: Day): number => serialOf(to) - serialOf(from)
+export const daysBetween = (from: Day, to: Day): number =>
+  differenceInCalendarDays(midnightOf(to), midnightOf(from))
 
 /** Weeks from one day to another, not rounded: 137 days are 19.57 weeks. */
 export const weeksBetween = (from: Day, to: Day): number => daysBetween(from, to) / 7
@@ -148,21 +155,19 @@ export function formatAge(birth: Day, on: Day): string {
   return `${age.years} y ${age.months} m`
 }
 
-function isWorkingDay(serial: number, holidays: ReadonlySet<Day>): boolean {
-  const weekday = new Date(serial * msPerDay).getUTCDay()
-  return weekday !== 0 && weekday !== 6 && !holidays.has(toDay(serial))
-}
+const isWorkingDay = (day: Day, holidays: ReadonlySet<Day>): boolean =>
+  !isWeekend(midnightOf(day)) && !holidays.has(day)
 
 /** The nth working day (Monday to Friday, not a holiday) after `day`; `n` of 0 gives the day itself. */
 export function addWorkingDays(day: Day, n: number, holidays: readonly Day[] = []): Day {
   const closed = new Set(holidays)
   const step = Math.sign(n)
-  let serial = serialOf(day)
+  let reached = addDays(day, 0)
   for (let left = Math.abs(n); left > 0;) {
-    serial += step
-    if (isWorkingDay(serial, closed)) left -= 1
+    reached = addDays(reached, step)
+    if (isWorkingDay(reached, closed)) left -= 1
   }
-  return toDay(serial)
+  return reached
 }
 
 /** Working days after `from` up to and including `to`; negative when `to` comes first. */
@@ -170,8 +175,8 @@ export function workingDaysBetween(from: Day, to: Day, holidays: readonly Day[] 
   if (compareDays(to, from) < 0) return 0 - workingDaysBetween(to, from, holidays)
   const closed = new Set(holidays)
   let count = 0
-  for (let serial = serialOf(from) + 1; serial <= serialOf(to); serial += 1) {
-    if (isWorkingDay(serial, closed)) count += 1
+  for (let day = addDays(from, 1); compareDays(day, to) <= 0; day = addDays(day, 1)) {
+    if (isWorkingDay(day, closed)) count += 1
   }
   return count
 }
