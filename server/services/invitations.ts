@@ -13,6 +13,7 @@ import { enqueueMail } from './outbox.ts'
 const worksFor = '72 hours'
 
 export interface NewAccount {
+  id?: string
   email: string
   displayName: string
   roles: Role[]
