@@ -14,6 +14,7 @@ import { notFound } from '../errors.ts'
 import type { Tx } from '../dataSource.ts'
 import { childScope, isId, within } from './scope.ts'
 import { count, flag, fromJson, likePattern, selectOne, selectRows, type SqlParameters } from './sql.ts'
+import { staffScope } from './staffScope.ts'
 
 export interface LetterRecord {
   id: string
@@ -128,8 +129,7 @@ export const listLettersOfChild = (access: ChildAccess, request: { size: number;
 
 /** Letters of every child the viewer holds; a lead sees the clinic's. */
 export const listLettersOfViewer = (viewer: Viewer, { state, search, ...page }: LetterListRequest) => {
-  const relation = viewer.roles.includes('clinicLead') ? 'clinicLead' : 'assignedTherapist'
-  const scope = childScope(viewer, relation, 'l.childId')
+  const scope = staffScope(viewer, 'l.childId', ['assignedTherapist', 'clinicLead'])
   const conditions = ['l.discardedAt IS NULL', scope.sql]
   const parameters: SqlParameters = { ...scope.parameters }
   if (state !== null) {

@@ -62,7 +62,7 @@ export const referralRoutes = (): Router => {
   })
 
   router.get('/referrals/duplicates', allow(referralPolicies.duplicates), async (req, res) => {
-    const rows = await listSameChild(namedChildOf(req), null)
+    const rows = await listSameChild(namedChildOf(req), null, undefined, { reader: viewerOf(req) })
     await recordAudit(req.actor, {
       action: 'referral.duplicates_looked_up',
       detail: { ids: rows.map((row) => row.id) },

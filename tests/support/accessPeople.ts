@@ -50,6 +50,9 @@ export const parts = {
   GX: part(['guardian'], 'first', 'GX', { second: 'G1' }),
   'teacher and carer': part(['teacher', 'guardian'], 'first', 'EX', { first: 'G1' }),
   AD: part(['administrator'], 'first', 'AD'),
+  'lead and carer': part(['clinicLead', 'guardian'], 'first', 'L', { first: 'G1' }),
+  'restricted lead': part(['clinicLead', 'guardian'], 'first', 'L', { first: 'G0' }),
+  'restricted administrator': part(['administrator', 'guardian'], 'first', 'AD', { first: 'G0' }),
   disabled: part(['therapist'], 'first', 'T2', { first: 'T1' }),
 } satisfies Record<string, Part>
 export type PersonKey = keyof typeof parts

@@ -220,6 +220,9 @@ export const buildScene = async (): Promise<Scene> => {
     ['G0 unverified', user('G0 unverified'), { verifiedAt: null }],
     ['G0 ended', user('G0 ended'), { endedAt: now() }],
     ['teacher and carer', user('teacher and carer'), {}],
+    ['lead and carer', user('lead and carer'), {}],
+    ['restricted lead', user('restricted lead'), { restricted: true }],
+    ['restricted administrator', user('restricted administrator'), { restricted: true }],
     ['noAccount', null, {}],
   ])
   const second = await buildSceneChild('second', user('T2'), elsewhere, [

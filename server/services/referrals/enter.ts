@@ -70,7 +70,9 @@ export const enterReferral = (
 /** The referral as this viewer sees it, with who else bears the name. */
 export const viewReferral = async (viewer: Viewer, id: string) => {
   const record = await findReferral(viewer, id)
-  const sameChild = isUndecided(record.status) ? await listSameChild(record.details, id) : []
+  const sameChild = isUndecided(record.status)
+    ? await listSameChild(record.details, id, undefined, { reader: viewer })
+    : []
   return presentReferral(record, sameChild, viewer)
 }
 
