@@ -413,6 +413,71 @@ describe('discarding a draft', () => {
   })
 })
 
+describe('what each state of a note allows', () => {
+  type State = 'draft' | 'awaiting' | 'signed' | 'discarded'
+  const acts = ['save', 'sign', 'countersign', 'add', 'discard'] as const
+  const allowed: Record<State, Record<(typeof acts)[number], number>> = {
+    draft: { save: 200, sign: 200, countersign: 409, add: 409, discard: 204 },
+    awaiting: { save: 409, sign: 409, countersign: 200, add: 201, discard: 409 },
+    signed: { save: 409, sign: 409, countersign: 409, add: 201, discard: 409 },
+    discarded: { save: 409, sign: 409, countersign: 409, add: 409, discard: 409 },
+  }
+  const table = Object.entries(allowed).flatMap(([state, row]) =>
+    acts.map((act) => [state as State, act, row[act]] as const),
+  )
+  let junior: Client
+  let held: Child
+
+  beforeAll(async () => {
+    const user = await buildUser('therapist', { newlyQualified: true })
+    junior = await signedInAs(user)
+    held = await buildChild({ therapist: user })
+  })
+
+  const brought = async (state: State): Promise<NoteView> => {
+    const note = await created({}, junior, held)
+    if (state === 'discarded') await junior.delete(at(`/${note.id}`, held))
+    if (state === 'awaiting' || state === 'signed') await sign(note.id, 1, null, junior, held)
+    if (state === 'signed')
+      await lead
+        .post(at(`/${note.id}/countersign`, held))
+        .set('If-Match', '"2"')
+        .send({})
+    return note
+  }
+  const rowsOf = (id: string) =>
+    Promise.all(
+      [
+        'session_notes WHERE id',
+        'note_revisions WHERE noteId',
+        'note_signatures WHERE noteId',
+        'note_addenda WHERE noteId',
+      ].map((from) => database().query(`SELECT * FROM ${from} = ?`, [id])),
+    )
+
+  it.each(table)('%s, then %s: %i', async (state, act, expected) => {
+    const { id } = await brought(state)
+    const before = JSON.stringify(await rowsOf(id))
+    const version = { draft: 1, discarded: 2, awaiting: 2, signed: 3 }[state]
+    const attempt = {
+      save: () => put(id, version, { plan: 'Another plan' }, junior, held),
+      sign: () => sign(id, version, null, junior, held),
+      countersign: () =>
+        lead
+          .post(at(`/${id}/countersign`, held))
+          .set('If-Match', `"${version}"`)
+          .send({}),
+      add: () => junior.post(at(`/${id}/addenda`, held)).send({ text: 'One thing more' }),
+      discard: () => junior.delete(at(`/${id}`, held)),
+    }[act]
+    const response = await attempt()
+    expect(response.status, response.text).toBe(expected)
+    const after = JSON.stringify(await rowsOf(id))
+    if (expected === 409) expect(after).toBe(before)
+    else expect(after).not.toBe(before)
+  })
+})
+
 describe('who may see and write notes', () => {
   it('lets a therapist who took over go on with a draft and sign it once they wrote in it', async () => {
     const { id } = await created()
