@@ -1,0 +1,54 @@
+import type { ChildRelation } from './roles.ts'
+
+/** How somebody stood to the child when they acted, as the access history says it. */
+export const childRelationLabels: Record<ChildRelation, string> = {
+  guardian: 'Parent or carer',
+  assignedTherapist: 'Therapist of the child',
+  clinicLead: 'Clinic lead',
+  teacher: 'Teacher',
+  administrator: 'Administrator',
+}
+
+const nouns: Record<string, string> = {
+  child: 'Record',
+  children: 'Record',
+  episode: 'Episode',
+  alert: 'Warning sign',
+  consent: 'Consent',
+  guardian: 'Carer',
+  referral: 'Referral',
+  task: 'Task',
+  questionnaire: 'Questionnaire',
+  handProfile: 'Hand profile',
+  sessionNote: 'Session note',
+  writingObservation: 'Writing observation',
+  sample: 'Handwriting sample',
+  goal: 'Goal',
+  letter: 'Letter',
+  schoolAdvice: 'Advice to school',
+  pupil: 'Advice to school',
+  family: 'Family page',
+  accessHistory: 'Access history',
+}
+
+/** `revisionsRead` and `state_changed` as words: 'revisions read', 'state changed'. */
+const spoken = (word: string) =>
+  word
+    .replace(/([a-z])([A-Z])/g, '$1 $2')
+    .replaceAll('_', ' ')
+    .toLowerCase()
+
+/** An entry's action as people read it: 'sessionNote.signed' is 'Session note: signed'. */
+export function accessActionWords(action: string): string {
+  const [noun = '', verb = ''] = action.split('.')
+  const known = nouns[noun] ?? nouns[noun.replace(/s$/, '')]
+  const first = spoken(noun)
+  return `${known ?? first.charAt(0).toUpperCase() + first.slice(1)}: ${spoken(verb)}`
+}
+
+const readingVerbs =
+  /(?:^|[._ ])(?:read|list(?:ed)?|looked|opened|header_read|glance_read|pdf|file|thumbnail|revisions|child|children)/
+
+/** Only whether something was read or written, for those who see no more than that. */
+export const accessKindWords = (action: string): string =>
+  readingVerbs.test(action.split('.')[1] ?? '') ? 'Read' : 'Written'
