@@ -1,4 +1,5 @@
 import type { Router } from 'express'
+import { auditEntryRoutes } from './auditEntries.ts'
 import { caseloadRoutes } from './caseload.ts'
 import { childRoutes } from './children.ts'
 import { classRoutes } from './classes.ts'
@@ -28,6 +29,7 @@ export interface RouteSettings {
 
 /** The routers of all nouns, one line each, mounted under /api. */
 export const nounRoutes = (settings: RouteSettings): Router[] => [
+  auditEntryRoutes(),
   caseloadRoutes(),
   childRoutes(),
   classRoutes(),
