@@ -36,19 +36,25 @@ const toAccount = (row: StoredAccount): AccountRow => ({
   hasPassword: flag(row.hasPassword),
 })
 
+const colleague = `(${[...staffRoles, 'teacher'].map((role) => `JSON_CONTAINS(u.roles, '"${role}"')`).join(' OR ')})`
+
+// One carer never learns another's address, and an administrator with a child here is that child's carer first.
+const otherCarer = `EXISTS (SELECT 1 FROM guardians vg JOIN guardians og ON og.childId = vg.childId
+  WHERE vg.userId = :viewer AND og.userId = u.id AND u.id <> :viewer)`
+
 /** A lead sees colleagues and teachers; that somebody is a carer here is for administrators only. */
-const reach = (viewer: Viewer): string => {
-  if (seesEveryAccount(viewer)) return '1 = 1'
-  const colleagues = [...staffRoles, 'teacher'].map((role) => `JSON_CONTAINS(u.roles, '"${role}"')`)
-  return `(${colleagues.join(' OR ')})`
-}
+const reach = (viewer: Viewer): string =>
+  seesEveryAccount(viewer) ? `(${colleague} OR NOT ${otherCarer})` : colleague
 
 export const listUsers = async (
   viewer: Viewer,
   search: string | null,
   slice: PageSlice,
 ): Promise<PageOf<AccountRow>> => {
-  const parameters: SqlParameters = search === null ? {} : { word: likePattern(search) }
+  const parameters: SqlParameters = {
+    viewer: viewer.id,
+    ...(search !== null && { word: likePattern(search) }),
+  }
   const found = await selectPage<StoredAccount>(
     {
       select: columns,
@@ -66,7 +72,7 @@ export const findUser = async (viewer: Viewer, id: string, tx?: Tx): Promise<Acc
   if (!isId(id)) return null
   const row = await selectOne<StoredAccount>(
     `SELECT ${columns} FROM users u WHERE u.id = :id AND ${reach(viewer)} ${tx ? 'FOR UPDATE' : ''}`,
-    { id },
+    { id, viewer: viewer.id },
     tx,
   )
   return row && toAccount(row)

@@ -117,8 +117,8 @@ export const accessRows: readonly AccessRow[] = [
   child('POST …/alerts/:id/action', ['T1', 'L'], ['E1', 'G1', 'AD']),
   // Caseload assignment: staff who see the child read it, a carer sees the therapist's name, only the lead changes it
   child('POST …/allocation', ['L'], ['T1', 'AD', 'G1']),
-  // Audit log by child
-  child('GET …/access-history', ['T1', 'L'], ['AD']),
+  // Audit log by child; a carer gets role, date and kind of access
+  child('GET …/access-history', ['T1', 'L', 'G1'], ['AD']),
 
   // Guardians: links and contacts. A carer reads their own row and changes it in their own room.
   child('GET …/guardians', ['T1', 'L', 'AD', 'G1']),

@@ -140,9 +140,8 @@ const allowedProblems = async (row: AccessRow, caller: Caller, target: ReadyCall
 }
 
 describe('the fixture', () => {
-  it('names every route of the app', () => {
-    const known = new Set(accessRows.map((row) => routeKey(row.route)))
-    expect([...live].filter((route) => !known.has(route))).toEqual([])
+  it('names every route of the app, and no other', () => {
+    expect(accessRows.map((row) => routeKey(row.route)).sort()).toEqual([...live].sort())
   })
 })
 
@@ -150,7 +149,6 @@ describe('access', () => {
   it.each(accessRows.map((row) => [row.route, row] as const))(
     '%s answers everybody as the matrix says',
     async (_route, row) => {
-      if (!live.has(routeKey(row.route))) return
       const pairs = callersOf(row).flatMap((caller) =>
         targetsOf(row).map((target) => [caller, target] as const),
       )

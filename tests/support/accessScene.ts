@@ -95,7 +95,8 @@ const buildSceneChild = async (
     const number = `01632 96${childKeys.indexOf(key)}${100 + index}`
     const guardian = await buildGuardian(child, user, {
       name: `Wren${key}${index}`,
-      email: user?.email ?? `contact-${key}-${index}@harrowmere.example`,
+      // Who also works here keeps a private address for their child's letters.
+      email: user?.roles.join() === 'guardian' ? user.email : `contact-${key}-${index}@harrowmere.example`,
       phone: number,
       address: `${index} Larkspurlane${key}`,
       ...given,
