@@ -5,28 +5,39 @@ import { createApp } from './app.ts'
 import { closeDatabase, openDatabase } from './dataSource.ts'
 import { readEnv, type Env } from './env.ts'
 import { openTransport } from './mail/transport.ts'
-import { seedDemoOnce } from './seeds/demo.ts'
+import { demoSignIns } from './seeds/demo.ts'
 import { firstAdministratorAddress, firstAdministratorLink } from './services/firstAdministrator.ts'
 import { openAuditChain } from './services/audit.ts'
+import { hasAccounts } from './services/health.ts'
 import { startOutboxWorker } from './services/outboxWorker.ts'
 import { databaseProblems } from './setup/checkDatabase.ts'
+import { clearHalfMadeDemo } from './setup/halfMadeDemo.ts'
 import { migrateDatabase } from './setup/migrateDatabase.ts'
 import { listen, loadSessionSecret, prepareDatabase, prepareMail, printBlock } from './setup/lifecycle.ts'
+import { runSeed } from './setup/seedProcess.ts'
 import { SetUpError } from './setup/setUpError.ts'
 import { createShutdown, type Shutdown } from './setup/shutdown.ts'
 
 const isBundle = import.meta.url.endsWith('.js')
 const clientDir = fileURLToPath(new URL('../dist', import.meta.url))
 
+/** The audit chain of this process; several processes in front of one database are given names of their own. */
+const chain = process.env.INSTANCE ?? hostname().slice(0, 60)
+
 const openClinic = async (env: Env, shutdown: Shutdown) => {
   const addresses = await prepareDatabase(env, shutdown)
+  if (env.demo && env.database === null && addresses.migrate) await clearHalfMadeDemo(addresses.migrate)
   if (addresses.migrate) await migrateDatabase(addresses.migrate, addresses.app)
   const dataSource = await openDatabase(addresses.app)
   shutdown.add('the database connections', closeDatabase)
   const problems = await databaseProblems(dataSource)
   if (problems.length > 0)
     throw new SetUpError(`The database is not as it must be:\n- ${problems.join('\n- ')}`)
-  await openAuditChain(process.env.INSTANCE ?? hostname().slice(0, 60))
+  if (env.demo && !(await hasAccounts())) {
+    console.log('Making the demo clinic (first start only) …')
+    await runSeed({ access: addresses.app, chain, appUrl: env.appUrl })
+  }
+  await openAuditChain(chain)
 }
 
 const signInLines = (signIns: SessionView['demoSignIns']) =>
@@ -36,13 +47,13 @@ const start = async (shutdown: Shutdown) => {
   const env = readEnv(process.env)
   await openClinic(env, shutdown)
   const { smtpUrl, inboxUrl } = await prepareMail(env, shutdown)
-  const demoSignIns = env.demo ? await seedDemoOnce(env.appUrl) : []
+  const signIns = env.demo ? demoSignIns() : []
   const app = createApp({
     appUrl: env.appUrl,
     sessionSecret: loadSessionSecret(env),
     demo: env.demo,
     inboxUrl,
-    demoSignIns,
+    demoSignIns: signIns,
     clientDir: isBundle ? clientDir : null,
   })
   await listen(app, env, shutdown)
@@ -52,8 +63,8 @@ const start = async (shutdown: Shutdown) => {
   printBlock([
     `Fanflower is running at ${env.appUrl}`,
     ...(inboxUrl ? [`E-mails arrive in the inbox at ${inboxUrl}`] : []),
-    ...(demoSignIns.length > 0
-      ? ['', 'Demo clinic with invented people. Sign in as', ...signInLines(demoSignIns)]
+    ...(signIns.length > 0
+      ? ['', 'Demo clinic with invented people. Sign in as', ...signInLines(signIns)]
       : []),
     ...(firstLink
       ? [

@@ -1,5 +1,8 @@
 import { dayOf } from '../../shared/days.ts'
-import { now, setClock } from '../clock.ts'
+import { now, resetClock, setClock } from '../clock.ts'
+import { systemActor } from '../access/actor.ts'
+import { recordAudit } from '../services/audit.ts'
+import { demoBegun, demoMade } from '../setup/halfMadeDemo.ts'
 import { changeSettings } from '../services/settings.ts'
 import { createClass, createSchool } from '../services/schools.ts'
 import { clinicSettings } from './demo/clinic.ts'
@@ -24,6 +27,8 @@ const seedSchools = async (people: People, schoolYear: number): Promise<Map<Clas
   return classes
 }
 
+const mark = (action: string) => recordAudit(systemActor('demo'), { action })
+
 /** Days before the demo day on which the clinic's own set-up is dated: before the first referral. */
 const setUpDays = 470
 
@@ -37,6 +42,7 @@ export const seedClinic = async (appUrl: string): Promise<void> => {
   const moveTo = (moment: Date) => setClock(() => moment)
   moveTo(new Date(demoNow.getTime() - setUpDays * 86_400_000))
   try {
+    await mark(demoBegun)
     const people = await seedPeople([...staff, ...teachers, ...parents])
     await changeSettings(actorOf(people, 'ines'), clinicSettings, 0)
     const scene: Scene = {
@@ -53,7 +59,8 @@ export const seedClinic = async (appUrl: string): Promise<void> => {
         throw new Error(`The demo broke off at ${event.kind} of child ${event.child}`, { cause: error })
       })
     }
+    await mark(demoMade)
   } finally {
-    setClock(() => new Date())
+    resetClock()
   }
 }

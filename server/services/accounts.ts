@@ -5,7 +5,7 @@ import { now } from '../clock.ts'
 import { database, type Tx } from '../dataSource.ts'
 import { User } from '../entities/User.ts'
 import { UserToken } from '../entities/UserToken.ts'
-import { forbidden, gone } from '../errors.ts'
+import { AppError, gone } from '../errors.ts'
 import { passwordChanged, passwordReset } from '../mail/mailTemplates.ts'
 import { formatMoment } from '../../shared/days.ts'
 import { recordAudit } from './audit.ts'
@@ -185,6 +185,11 @@ const setPassword = async (tx: Tx, userId: string, passwordHash: string) => {
   await tx.query('UPDATE user_sessions SET endedAt = ? WHERE userId = ? AND endedAt IS NULL', [now(), userId])
 }
 
+const wrongPassword = () =>
+  new AppError(403, 'wrong_password', 'The current password is not right.', {
+    fields: { currentPassword: 'The current password is not right' },
+  })
+
 /** Changes the own password; every other sign-in ends and a notice goes out. `keep` is the hash of the current session. */
 export const changePassword = async (
   actor: Actor,
@@ -199,8 +204,7 @@ export const changePassword = async (
     .where('u.id = :id', { id: viewer.id })
     .getOneOrFail()
   await countAttempt(`password:${user.id}`)
-  if (!(await verifyPassword(user.passwordHash, current)))
-    throw forbidden('The current password is not right.')
+  if (!(await verifyPassword(user.passwordHash, current))) throw wrongPassword()
   await clearAttempts(`password:${user.id}`)
   const settings = await readSettings()
   assertStrongPassword(next, [user.displayName, user.email, settings.clinicName])

@@ -19,3 +19,9 @@ export const isDatabaseUp = async (): Promise<boolean> => {
     clearTimeout(timer)
   }
 }
+
+/** Whether anybody has an account yet. */
+export const hasAccounts = async (): Promise<boolean> => {
+  const [row] = (await database().query('SELECT id FROM users LIMIT 1')) as { id: string }[]
+  return row !== undefined
+}

@@ -12,16 +12,18 @@ const waiting: (() => void)[] = []
 
 /** Hashing is heavy on purpose: two at a time, the rest queue, and a full queue answers 503. */
 const inTurn = async <T>(work: () => Promise<T>): Promise<T> => {
-  if (running >= atOnce) {
+  if (running < atOnce) running += 1
+  else {
     if (waiting.length >= largestQueue) throw new QueueFull()
+    // The place of the one that ends is handed on, so that nobody slips in between.
     await new Promise<void>((resolve) => waiting.push(resolve))
   }
-  running += 1
   try {
     return await work()
   } finally {
-    running -= 1
-    waiting.shift()?.()
+    const next = waiting.shift()
+    if (next) next()
+    else running -= 1
   }
 }
 

@@ -9,8 +9,12 @@ const out = `${root}dist-server`
 rmSync(out, { recursive: true, force: true })
 await build({
   absWorkingDir: root,
-  // Two programs: the second is started by the first as a process of its own (mailFakeProcess.ts).
-  entryPoints: { main: 'server/main.ts', mailFake: 'fake-services/mail/main.ts' },
+  // Three programs: the first starts the others as processes of their own (mailFakeProcess.ts, seedProcess.ts).
+  entryPoints: {
+    main: 'server/main.ts',
+    mailFake: 'fake-services/mail/main.ts',
+    seed: 'server/seeds/main.ts',
+  },
   outdir: out,
   bundle: true,
   packages: 'external',

@@ -9,5 +9,7 @@ need_node
 need_modules
 need_build || stop 'The build failed; see above.'
 export NODE_ENV=production
+# Pictures are decoded in several threads; without this each keeps memory of its own for good.
+export MALLOC_ARENA_MAX=2
 # exec: signals must reach the server itself, not a shell in front of it.
 exec node --enable-source-maps dist-server/main.js
