@@ -73,7 +73,7 @@ export function useForm<Values extends AnyObject, S extends Schema, Answer = voi
       throw error
     }
     const { fields, code, current } = error.problem
-    if (error.status === 422 && fields && Object.keys(fields).length > 0) {
+    if (fields && Object.keys(fields).length > 0) {
       refuse(Object.fromEntries(Object.entries(fields).map(([path, message]) => [localPath(path), message])))
       return
     }
