@@ -89,10 +89,10 @@ export interface ReadyCall extends Call {
   standing: Standing | null
 }
 
-/** Links and sign-ins are throttled by address, and what one may do there does not depend on who one is. */
+/** Links and sign-ins are throttled by address, passwords cost time, and neither depends on who one is. */
 const wayIn: readonly Caller[] = ['T1', 'G1', 'disabled', 'nobody']
 export const callersOf = (row: AccessRow): readonly Caller[] =>
-  row.area === 'open' && row.route.startsWith('POST') ? wayIn : [...personKeys, 'nobody']
+  row.bound === null && /^POST .*(sign-|password|confirm)/.test(row.route) ? wayIn : [...personKeys, 'nobody']
 
 /** Which targets make sense for a route: nothing is absent where nothing particular is addressed. */
 export const targetsOf = (row: AccessRow): readonly Target[] => {
