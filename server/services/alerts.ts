@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto'
+import { IsNull } from 'typeorm'
 import type { Attention } from '../../shared/attention.ts'
 import type { AlertAction } from '../../shared/alerts.ts'
 import { addWorkingDays, type Day } from '../../shared/days.ts'
@@ -8,10 +9,11 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { Alert } from '../entities/Alert.ts'
+import { Task } from '../entities/Task.ts'
 import { conflict } from '../errors.ts'
 import { findForChild } from '../queries/scope.ts'
 import type { AuditFact } from './audit.ts'
-import { addTask } from './tasks.ts'
+import { addTask, alertTask } from './tasks.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
 
@@ -57,7 +59,7 @@ export const raiseAlert = async (
   if (level === 'soon') return
   await addTask(tx, {
     childId,
-    kind: 'red_flag',
+    kind: alertTask,
     text: task,
     dueOn: level === 'overdue' ? today : addWorkingDays(today, daysToLook),
     assigneeId: therapistId,
@@ -85,6 +87,16 @@ export const raiseReferralFlags = async (
     })
 }
 
+/** The tasks that warning signs gave are done once every sign on the record has its answer. */
+const closeTasks = async (tx: Tx, { childId, viewer }: ChildAccess) => {
+  if (await tx.existsBy(Alert, { childId, actedAt: IsNull() })) return
+  await tx.update(
+    Task,
+    { childId, kind: alertTask, doneAt: IsNull() },
+    { doneAt: now(), doneById: viewer.id },
+  )
+}
+
 /** Writes down what was done about a warning sign. It then leaves the head of the record and stays in the history. */
 export const actOnAlert = (
   actor: Actor,
@@ -100,6 +112,7 @@ export const actOnAlert = (
       actedById: access.viewer.id,
       action,
     })
+    await closeTasks(tx, access)
     record({
       action: 'alert.acted_on',
       objectType: 'alert',

@@ -11,6 +11,9 @@ import { isId } from '../queries/scope.ts'
 import { taskScope } from '../queries/tasks.ts'
 import { transact } from './transact.ts'
 
+/** Kind of the task that a warning sign gives; it is done by answering the sign, not by ticking it off. */
+export const alertTask = 'red_flag'
+
 export interface NewTask {
   childId: string | null
   /** Stable word for programs, e.g. `red_flag`. */
@@ -60,6 +63,11 @@ export const finishTask = (actor: Actor, viewer: Viewer, id: string): Promise<vo
       .getOne()
     if (!task) throw notFound()
     if (task.doneAt) throw conflict('closed', 'This was done already. Nothing was changed.')
+    if (task.kind === alertTask)
+      throw conflict(
+        'answer_needed',
+        'Open the record and write down what was done about the warning sign. This task is then done by itself.',
+      )
     if (!canFinishTask(viewer, task)) throw forbidden('This task is held by somebody else.')
     await tx.update(Task, { id }, { doneAt: now(), doneById: viewer.id })
     record({ action: 'task.finished', objectType: 'task', objectId: id, childId: task.childId })

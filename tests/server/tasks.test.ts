@@ -4,6 +4,7 @@ import { selectOne } from '../../server/queries/sql.ts'
 import type { User } from '../../server/entities/User.ts'
 import { client, signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
 import { buildChild, buildGuardian, buildUser } from '../support/factories.ts'
+import { buildAlert } from '../support/clinicRows.ts'
 import { buildTask } from '../support/tasks.ts'
 
 let holder: User
@@ -35,6 +36,19 @@ describe('finishing a task', () => {
     expect(await doneBy(task.id)).toBe(holder.id)
     const again = await lead.post(`/api/tasks/${task.id}/finish`)
     expect([again.status, again.body.code]).toEqual([409, 'closed'])
+    expect(await doneBy(task.id)).toBe(holder.id)
+  })
+
+  it('of a warning sign is done by writing down what was done, not by ticking it off', async () => {
+    const child = await buildChild({ therapist: holder })
+    const task = await buildTask({ childId: child.id, assigneeId: holder.id, kind: 'red_flag' })
+    const alert = await buildAlert(child, 'Holds the other hand in a fist')
+    const ticked = await therapist.post(`/api/tasks/${task.id}/finish`)
+    expect([ticked.status, ticked.body.code]).toEqual([409, 'answer_needed'])
+    const answered = await therapist
+      .post(`/api/children/${child.id}/alerts/${alert.id}/action`)
+      .send({ action: 'Rang the family; seen the same day.' })
+    expect(answered.status).toBe(204)
     expect(await doneBy(task.id)).toBe(holder.id)
   })
 
