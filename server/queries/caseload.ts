@@ -7,6 +7,7 @@ import { matchesWords } from './children/lists.ts'
 import { needColumns, needConditions, needParameters, type NeedMoment } from './caseloadNeeds.ts'
 import { therapistName } from './currentTherapist.ts'
 import { latestEpisode } from './episodes.ts'
+import { runsAt } from './inForce.ts'
 import type { PageOf, PageSlice } from './pages.ts'
 import { count, flag, fromJson, selectOne, selectRows, type SqlParameters } from './sql.ts'
 import { staffScope } from './staffScope.ts'
@@ -56,7 +57,7 @@ const lastSeen = `(SELECT MAX(ln.heldOn) FROM session_notes ln WHERE ln.childId 
   AND ln.state <> 'draft')`
 
 const heldBy = (condition: string) => `EXISTS (SELECT 1 FROM assignments ha WHERE ha.childId = c.id
-  AND ha.startedAt <= :now AND (ha.endedAt IS NULL OR ha.endedAt > :now)${condition})`
+  AND ${runsAt('ha')}${condition})`
 
 const nullsLast = (column: string, direction: string) => `${column} IS NULL, ${column} ${direction}`
 

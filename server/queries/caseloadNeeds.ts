@@ -7,6 +7,7 @@ import { waitingStates, waitNoticeDays } from '../../shared/waits.ts'
 import type { Viewer } from '../access/actor.ts'
 import { now } from '../clock.ts'
 import { seesWholeClinic } from '../policies/caseload.ts'
+import { consentHolds } from './inForce.ts'
 import type { SqlParameters } from './sql.ts'
 
 const openNotes = (state: string) =>
@@ -19,9 +20,8 @@ const ownDrafts = `${letters('draft')} AND l.authorId = :viewer`
 const toApprove = `${letters('awaiting_approval')} AND :isLead`
 const failed = `FROM letter_deliveries d JOIN letters l ON l.id = d.letterId
   WHERE l.childId = c.id AND l.state <> 'recalled' AND d.state = 'failed'`
-const consent = `FROM consents f WHERE f.childId = c.id AND f.purpose = 'assessment_treatment' AND f.kind = 'given'
-  AND f.at <= :now AND (f.expiresAt IS NULL OR f.expiresAt > :now)
-  AND NOT EXISTS (SELECT 1 FROM consents w WHERE w.withdrawsId = f.id AND w.at <= :now)`
+const consent = `FROM consents f WHERE f.childId = c.id AND f.purpose = 'assessment_treatment'
+  AND ${consentHolds('f')}`
 const ownTasks = `FROM tasks t WHERE t.childId = c.id AND t.doneAt IS NULL
   AND (t.assigneeId = :viewer OR t.forRole IN (:viewerRoles))`
 

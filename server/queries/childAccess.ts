@@ -3,7 +3,8 @@ import { childRelations, type ChildRelation } from '../../shared/roles.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
-import { childScope, isId, schoolPurposes } from './scope.ts'
+import { consentHolds } from './inForce.ts'
+import { childScope, isId, ownLink, restrictedFrom, schoolPurposes } from './scope.ts'
 import { flag, selectOne, type SqlParameters } from './sql.ts'
 
 type RelationRow = Record<ChildRelation, number> & {
@@ -22,18 +23,16 @@ export const findChildAccess = async (viewer: Viewer, childId: string): Promise<
   const scopes = childRelations.map((relation) => ({ relation, ...childScope(viewer, relation, 'c.id') }))
   const parameters: SqlParameters = Object.assign({}, ...scopes.map((scope) => scope.parameters), {
     childId,
-    viewer: viewer.id,
     now: now(),
     purposes: schoolPurposes,
   })
   const row = await selectOne<RelationRow>(
     `SELECT ${scopes.map(({ relation, sql }) => `(${sql}) AS \`${relation}\``).join(', ')},
-       (SELECT g.id FROM guardians g WHERE g.childId = c.id AND g.userId = :viewer AND g.restricted = 0
-         AND g.verifiedAt <= :now AND (g.endedAt IS NULL OR g.endedAt > :now) ORDER BY g.createdAt LIMIT 1) AS guardianId,
-       EXISTS (SELECT 1 FROM guardians g WHERE g.childId = c.id AND g.userId = :viewer AND g.restricted = 1) AS blocked,
-       (SELECT GROUP_CONCAT(DISTINCT sc.purpose) FROM consents sc WHERE sc.childId = c.id AND sc.kind = 'given'
-         AND sc.purpose IN (:purposes) AND sc.at <= :now AND (sc.expiresAt IS NULL OR sc.expiresAt > :now)
-         AND NOT EXISTS (SELECT 1 FROM consents sw WHERE sw.withdrawsId = sc.id AND sw.at <= :now)) AS scopes
+       (SELECT g.id FROM guardians g WHERE g.childId = c.id AND ${ownLink('g')}
+         ORDER BY g.createdAt LIMIT 1) AS guardianId,
+       ${restrictedFrom('c.id')} AS blocked,
+       (SELECT GROUP_CONCAT(DISTINCT f.purpose) FROM consents f WHERE f.childId = c.id
+         AND f.purpose IN (:purposes) AND ${consentHolds('f')}) AS scopes
      FROM children c WHERE c.id = :childId`,
     parameters,
   )

@@ -8,23 +8,22 @@ import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { therapistName } from './currentTherapist.ts'
+import { consentHolds, runsAt } from './inForce.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { adviceColumns, newestAnswer, type AdviceRow } from './schoolAdvice.ts'
-import { childScope, consentInForce, isId, within } from './scope.ts'
+import { childScope, isId, within } from './scope.ts'
 import { count, fromJson, selectOne, selectRows, type Fragment } from './sql.ts'
 
 const displayName = "CONCAT(COALESCE(c.preferredName, c.givenName), ' ', c.familyName)"
 
 /** Is this one school purpose in force? A teacher's scope alone says only that at least one of them is. */
-const shares = (purpose: ConsentPurpose, column: string): Fragment => {
-  const consent = consentInForce(column, [purpose])
-  return {
-    sql: consent.sql.replace(':scopePurposes', ':sharedPurpose'),
-    parameters: { sharedPurpose: [purpose], scopeNow: now() },
-  }
-}
+const shares = (purpose: ConsentPurpose, column: string): Fragment => ({
+  sql: `EXISTS (SELECT 1 FROM consents f WHERE f.childId = ${column} AND f.purpose = :sharedPurpose
+    AND ${consentHolds('f', ':scopeNow')})`,
+  parameters: { sharedPurpose: purpose, scopeNow: now() },
+})
 
-const heldNow = 'tn.startedAt <= :scopeNow AND (tn.endedAt IS NULL OR tn.endedAt > :scopeNow)'
+const heldNow = runsAt('tn', ':scopeNow')
 
 const taughtByViewer = `EXISTS (SELECT 1 FROM class_teachers tn
   WHERE tn.schoolClassId = k.id AND tn.teacherId = :viewer AND ${heldNow})`

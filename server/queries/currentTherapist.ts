@@ -1,10 +1,16 @@
 import { now } from '../clock.ts'
+import { runsAt } from './inForce.ts'
 import type { Fragment } from './sql.ts'
 
-/** Name of the therapist who holds the child of `column` now; null while nobody does. */
-export const therapistName = (column: string): Fragment => ({
-  sql: `(SELECT tu.displayName FROM assignments ta JOIN users tu ON tu.id = ta.therapistId
-    WHERE ta.childId = ${column} AND ta.startedAt <= :therapistNow
-      AND (ta.endedAt IS NULL OR ta.endedAt > :therapistNow) ORDER BY ta.startedAt DESC, ta.id LIMIT 1)`,
+const ofTherapist = (selected: string, column: string): Fragment => ({
+  sql: `(SELECT ${selected} FROM assignments ta JOIN users tu ON tu.id = ta.therapistId
+    WHERE ta.childId = ${column} AND ${runsAt('ta', ':therapistNow')}
+    ORDER BY ta.startedAt DESC, ta.id LIMIT 1)`,
   parameters: { therapistNow: now() },
 })
+
+/** Name of the therapist who holds the child of `column` now; null while nobody does. */
+export const therapistName = (column: string): Fragment => ofTherapist('tu.displayName', column)
+
+/** Id of the therapist who holds the child of `column` now; null while nobody does. */
+export const therapistId = (column: string): Fragment => ofTherapist('tu.id', column)

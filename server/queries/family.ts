@@ -8,6 +8,7 @@ import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { therapistName } from './currentTherapist.ts'
+import { consentHolds } from './inForce.ts'
 import { unreadLetters } from './receivedLetters.ts'
 import { childScope, ownLink, within } from './scope.ts'
 import { count, flag, fromJson, selectOne, selectRows } from './sql.ts'
@@ -80,13 +81,12 @@ export interface ConsentInForceRow {
 
 /** Consents in force that concern this carer: theirs, and those for the child. Another carer's e-mail choice is not read. */
 export const listConsentsInForce = (access: ChildAccess, tx?: Tx): Promise<ConsentInForceRow[]> => {
-  const scope = within(access, 'sc.childId')
+  const scope = within(access, 'f.childId')
   return selectRows<ConsentInForceRow>(
-    `SELECT sc.id, sc.purpose, sc.guardianId, sc.givenByName, sc.at FROM consents sc
-     WHERE ${scope.sql} AND sc.kind = 'given' AND sc.at <= :now AND (sc.expiresAt IS NULL OR sc.expiresAt > :now)
-       AND NOT EXISTS (SELECT 1 FROM consents sw WHERE sw.withdrawsId = sc.id AND sw.at <= :now)
-       AND (sc.purpose NOT IN (:perGuardian) OR sc.guardianId = :ownRow)
-     ORDER BY sc.at DESC, sc.id`,
+    `SELECT f.id, f.purpose, f.guardianId, f.givenByName, f.at FROM consents f
+     WHERE ${scope.sql} AND ${consentHolds('f')}
+       AND (f.purpose NOT IN (:perGuardian) OR f.guardianId = :ownRow)
+     ORDER BY f.at DESC, f.id`,
     { ...scope.parameters, now: now(), perGuardian: perGuardianPurposes, ownRow: access.guardianId },
     tx,
   )

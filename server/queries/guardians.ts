@@ -1,6 +1,7 @@
 import type { GuardianRelation, ParentalResponsibility } from '../../shared/guardians.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
+import { emailConsent } from './inForce.ts'
 import { within } from './scope.ts'
 import { flag, selectRows } from './sql.ts'
 
@@ -22,12 +23,6 @@ export interface GuardianRow {
 
 type Flags = 'courtOrder' | 'safeToContact' | 'restricted'
 
-const inForce = (
-  purpose: string,
-) => `EXISTS (SELECT 1 FROM consents f WHERE f.guardianId = g.id AND f.kind = 'given'
-  AND f.purpose = '${purpose}' AND f.at <= :now AND (f.expiresAt IS NULL OR f.expiresAt > :now)
-  AND NOT EXISTS (SELECT 1 FROM consents w WHERE w.withdrawsId = f.id AND w.at <= :now))`
-
 /** The child's carers; to a carer only their own row, so that nobody learns of another's address or restriction. */
 export const listGuardians = async (
   access: ChildAccess,
@@ -40,7 +35,7 @@ export const listGuardians = async (
        g.phone, g.address, g.version,
        CASE WHEN u.id IS NULL THEN 'none' WHEN u.disabledAt IS NOT NULL THEN 'disabled'
          WHEN u.passwordHash IS NULL THEN 'invited' ELSE 'active' END AS account,
-       CASE WHEN ${inForce('email_attachment')} THEN 'attachment' WHEN ${inForce('email_link')} THEN 'link'
+       CASE WHEN ${emailConsent('email_attachment')} THEN 'attachment' WHEN ${emailConsent('email_link')} THEN 'link'
          ELSE 'none' END AS emailConsent
      FROM guardians g LEFT JOIN users u ON u.id = g.userId
      WHERE g.endedAt IS NULL AND ${scope.sql} ${own ? 'AND g.id = :ownRow' : ''}

@@ -12,6 +12,7 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { notFound } from '../errors.ts'
 import type { Tx } from '../dataSource.ts'
+import { emailConsent } from './inForce.ts'
 import { childScope, isId, within } from './scope.ts'
 import { count, flag, fromJson, likePattern, selectOne, selectRows, type SqlParameters } from './sql.ts'
 import { staffScope } from './staffScope.ts'
@@ -156,11 +157,6 @@ export interface RecipientRow {
   link: boolean
   attachment: boolean
 }
-
-const emailConsent = (purpose: 'email_link' | 'email_attachment') => `EXISTS (SELECT 1 FROM consents sc
-  WHERE sc.guardianId = g.id AND sc.kind = 'given' AND sc.purpose = '${purpose}' AND sc.at <= :now
-    AND (sc.expiresAt IS NULL OR sc.expiresAt > :now)
-    AND NOT EXISTS (SELECT 1 FROM consents sw WHERE sw.withdrawsId = sc.id AND sw.at <= :now))`
 
 /** Carers of the child with what decides how a letter may reach each of them. */
 export const listRecipients = async (access: ChildAccess, tx?: Tx): Promise<RecipientRow[]> => {

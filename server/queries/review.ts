@@ -3,7 +3,9 @@ import type { Day } from '../../shared/days.ts'
 import { waitingStates } from '../../shared/waits.ts'
 import type { Viewer } from '../access/actor.ts'
 import { now } from '../clock.ts'
+import { therapistId } from './currentTherapist.ts'
 import { latestEpisode } from './episodes.ts'
+import { runsAt } from './inForce.ts'
 import { flag, selectRows } from './sql.ts'
 import { staffScope } from './staffScope.ts'
 
@@ -43,16 +45,16 @@ type Flags = 'interpreter' | 'twoHouseholds' | 'safeguarding'
 /** Every open child with who holds it and what makes it more work: the points are counted by a rule, not here. */
 export const listOpenCases = async (viewer: Viewer): Promise<OpenCaseRow[]> => {
   const scope = staffScope(viewer, 'c.id', ['clinicLead'])
+  const therapist = therapistId('c.id')
   const rows = await selectRows<Omit<OpenCaseRow, Flags> & Record<Flags, number>>(
     `SELECT e.state, c.nextReviewOn, c.interpreterLanguage IS NOT NULL AS interpreter,
        (SELECT COUNT(DISTINCT h.address) FROM guardians h WHERE h.childId = c.id AND h.endedAt IS NULL) > 1 AS twoHouseholds,
        EXISTS (SELECT 1 FROM guardians r WHERE r.childId = c.id AND r.endedAt IS NULL
          AND (r.courtOrder = 1 OR r.restricted = 1)) AS safeguarding,
-       (SELECT a.therapistId FROM assignments a WHERE a.childId = c.id AND a.startedAt <= :now
-         AND (a.endedAt IS NULL OR a.endedAt > :now) ORDER BY a.startedAt DESC, a.id LIMIT 1) AS therapistId
+       ${therapist.sql} AS therapistId
      FROM children c JOIN episodes e ON e.id = ${latestEpisode('c.id')}
      WHERE e.state NOT IN (:closed) AND ${scope.sql}`,
-    { ...scope.parameters, closed: closedStates, now: now() },
+    { ...scope.parameters, ...therapist.parameters, closed: closedStates },
   )
   return rows.map((row) => ({
     ...row,
@@ -73,8 +75,7 @@ export const listLoadedTherapists = async (): Promise<LoadedTherapistRow[]> => {
   const rows = await selectRows<Omit<LoadedTherapistRow, 'wte'> & { wte: string | null }>(
     `SELECT u.id, u.displayName, u.wte FROM users u
      WHERE (u.disabledAt IS NULL AND JSON_CONTAINS(u.roles, '"therapist"'))
-       OR EXISTS (SELECT 1 FROM assignments a WHERE a.therapistId = u.id AND a.startedAt <= :now
-         AND (a.endedAt IS NULL OR a.endedAt > :now))
+       OR EXISTS (SELECT 1 FROM assignments a WHERE a.therapistId = u.id AND ${runsAt('a')})
      ORDER BY u.displayName, u.id`,
     { now: now() },
   )

@@ -4,6 +4,7 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
+import { runsAt } from './inForce.ts'
 import { within } from './scope.ts'
 import { selectOne, selectRows } from './sql.ts'
 
@@ -19,8 +20,7 @@ export const findChildSchool = async (access: ChildAccess): Promise<ChildSchoolR
   const row = await selectOne<ChildSchoolRow>(
     `SELECT s.name AS school, k.name AS className,
        (SELECT GROUP_CONCAT(u.displayName ORDER BY ct.startedAt, u.id SEPARATOR ', ') FROM class_teachers ct
-         JOIN users u ON u.id = ct.teacherId WHERE ct.schoolClassId = k.id AND ct.startedAt <= :now
-           AND (ct.endedAt IS NULL OR ct.endedAt > :now)) AS teacher
+         JOIN users u ON u.id = ct.teacherId WHERE ct.schoolClassId = k.id AND ${runsAt('ct')}) AS teacher
      FROM children c LEFT JOIN school_classes k ON k.id = c.schoolClassId LEFT JOIN schools s ON s.id = k.schoolId
      WHERE ${scope.sql}`,
     { ...scope.parameters, now: now() },

@@ -1,5 +1,6 @@
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
+import { runsAt } from './inForce.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { likePattern, selectOne, selectRows } from './sql.ts'
 
@@ -37,7 +38,7 @@ const classColumns = `SELECT k.id, k.schoolId, s.name AS schoolName, k.name, k.s
     t.id AS teacherId, t.displayName AS teacherName
   FROM school_classes k JOIN schools s ON s.id = k.schoolId
     LEFT JOIN users t ON t.id = (SELECT ct.teacherId FROM class_teachers ct WHERE ct.schoolClassId = k.id
-      AND ct.startedAt <= :now AND (ct.endedAt IS NULL OR ct.endedAt > :now)
+      AND ${runsAt('ct')}
       ORDER BY ct.startedAt DESC, ct.id LIMIT 1)`
 
 export const findSchool = (id: string): Promise<SchoolRow | null> =>

@@ -6,18 +6,18 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { database, type Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
+import { consentHolds, runsAt } from './inForce.ts'
 import type { Fragment } from './sql.ts'
 
 /** Consent rows in force at :scopeNow for the child in `column`: given, not expired, not withdrawn (end exclusive). */
 export const consentInForce = (column: string, purposes: readonly ConsentPurpose[]): Fragment => ({
-  sql: `EXISTS (SELECT 1 FROM consents sc WHERE sc.childId = ${column} AND sc.kind = 'given'
-    AND sc.purpose IN (:scopePurposes) AND sc.at <= :scopeNow AND (sc.expiresAt IS NULL OR sc.expiresAt > :scopeNow)
-    AND NOT EXISTS (SELECT 1 FROM consents sw WHERE sw.withdrawsId = sc.id AND sw.at <= :scopeNow))`,
+  sql: `EXISTS (SELECT 1 FROM consents sc WHERE sc.childId = ${column} AND sc.purpose IN (:scopePurposes)
+    AND ${consentHolds('sc', ':scopeNow')})`,
   parameters: { scopePurposes: purposes, scopeNow: now() },
 })
 
 const heldByTherapist = (column: string) => `EXISTS (SELECT 1 FROM assignments sa WHERE sa.childId = ${column}
-  AND sa.therapistId = :scopeViewer AND sa.startedAt <= :scopeNow AND (sa.endedAt IS NULL OR sa.endedAt > :scopeNow))`
+  AND sa.therapistId = :scopeViewer AND ${runsAt('sa', ':scopeNow')})`
 
 /** Conditions for a row of `guardians` to count as the viewer's own link now; parameters as of `childScope`. */
 export const ownLink = (row: string) => `${row}.userId = :scopeViewer AND ${row}.restricted = 0
@@ -26,8 +26,10 @@ export const ownLink = (row: string) => `${row}.userId = :scopeViewer AND ${row}
 /** Years at which a young person's record stops being open to those who cared for them. */
 const comesOfAge = 18
 
-const restrictedFrom = (column: string) => `EXISTS (SELECT 1 FROM guardians sr WHERE sr.childId = ${column}
-  AND sr.userId = :scopeViewer AND sr.restricted = 1)`
+/** Is the viewer a carer of this child to whom its record was closed? */
+export const restrictedFrom = (column: string): string =>
+  `EXISTS (SELECT 1 FROM guardians sr WHERE sr.childId = ${column}
+    AND sr.userId = :scopeViewer AND sr.restricted = 1)`
 
 // A restriction on one link closes every other link of the same person to the child.
 const linkedGuardian = (column: string) => `(EXISTS (SELECT 1 FROM guardians sg
@@ -41,8 +43,7 @@ const notFamily = (column: string) => `NOT EXISTS (SELECT 1 FROM guardians so WH
 
 const taughtNow = (column: string) => `EXISTS (SELECT 1 FROM children st
   JOIN class_teachers sct ON sct.schoolClassId = st.schoolClassId
-  WHERE st.id = ${column} AND sct.teacherId = :scopeViewer AND sct.startedAt <= :scopeNow
-  AND (sct.endedAt IS NULL OR sct.endedAt > :scopeNow))`
+  WHERE st.id = ${column} AND sct.teacherId = :scopeViewer AND ${runsAt('sct', ':scopeNow')})`
 
 /** School purposes that make a child known to the teacher at all. */
 export const schoolPurposes: readonly ConsentPurpose[] = [

@@ -1,5 +1,5 @@
 import type { Viewer } from '../access/actor.ts'
-import { childScope } from './scope.ts'
+import { childScope, restrictedFrom } from './scope.ts'
 import type { Fragment } from './sql.ts'
 
 export type StaffRelation = 'assignedTherapist' | 'clinicLead' | 'administrator'
@@ -14,8 +14,7 @@ export const staffScope = (viewer: Viewer, column: string, relations: readonly S
   const asFamily = childScope(viewer, 'guardian', column)
   return {
     sql: `((${scopes.map((scope) => scope.sql).join(' OR ')}) AND NOT ${asFamily.sql}
-      AND NOT EXISTS (SELECT 1 FROM guardians xg WHERE xg.childId = ${column} AND xg.userId = :scopeViewer
-        AND xg.restricted = 1))`,
+      AND NOT ${restrictedFrom(column)})`,
     parameters: Object.assign({}, ...scopes.map((scope) => scope.parameters), asFamily.parameters),
   }
 }

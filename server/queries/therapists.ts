@@ -1,6 +1,7 @@
 import { closedStates } from '../../shared/episodes.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
+import { runsAt } from './inForce.ts'
 import { count, flag, selectOne, selectRows } from './sql.ts'
 
 export interface TherapistRow {
@@ -14,7 +15,7 @@ export const listTherapists = async (): Promise<TherapistRow[]> => {
   const rows = await selectRows<{ id: string; displayName: string; openCases: string }>(
     `SELECT u.id, u.displayName,
        (SELECT COUNT(DISTINCT a.childId) FROM assignments a JOIN episodes e ON e.childId = a.childId
-         WHERE a.therapistId = u.id AND a.startedAt <= :now AND (a.endedAt IS NULL OR a.endedAt > :now)
+         WHERE a.therapistId = u.id AND ${runsAt('a')}
            AND e.state NOT IN (:closed)) AS openCases
      FROM users u WHERE u.disabledAt IS NULL AND JSON_CONTAINS(u.roles, '"therapist"')
      ORDER BY u.displayName, u.id`,

@@ -7,8 +7,10 @@ import { reviewEscalationDays, reviewNoticeDays } from '../../shared/tasks.ts'
 import { waitingStates } from '../../shared/waits.ts'
 import type { Viewer } from '../access/actor.ts'
 import { now } from '../clock.ts'
+import { seesEveryReferral } from '../policies/referrals.ts'
 import { therapistName } from './currentTherapist.ts'
 import { latestEpisode } from './episodes.ts'
+import { consentHolds } from './inForce.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { referralScope } from './referrals.ts'
 import { count, selectOne, type Fragment, type SqlParameters } from './sql.ts'
@@ -117,8 +119,7 @@ const byReferral = (condition: string): WorkSql => ({
 })
 
 const noConsent = `NOT EXISTS (SELECT 1 FROM consents f WHERE f.childId = c.id AND f.purpose = 'assessment_treatment'
-  AND f.kind = 'given' AND f.at <= :now AND (f.expiresAt IS NULL OR f.expiresAt > :now)
-  AND NOT EXISTS (SELECT 1 FROM consents w WHERE w.withdrawsId = f.id AND w.at <= :now))`
+  AND ${consentHolds('f')})`
 
 const lists: Record<WorkListId, WorkSql> = {
   waiting: byEpisode('e.state IN (:waiting)', 'e.receivedOn'),
@@ -209,7 +210,7 @@ const parametersOf = ({ viewer }: Reach, { today, settings }: WorkMoment): SqlPa
   viewer: viewer.id,
   viewerRoles: [...viewer.roles],
   newlyQualified: viewer.newlyQualified,
-  namesReferrals: viewer.roles.some((role) => role === 'clinicLead' || role === 'administrator'),
+  namesReferrals: seesEveryReferral(viewer),
   closed: closedStates,
   waiting: waitingStates,
   targetDay: addDays(today, -settings.waitTargetWeeks * 7),

@@ -4,6 +4,7 @@ import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { Assignment } from '../entities/Assignment.ts'
 import { invalid } from '../errors.ts'
+import { runsAt } from '../queries/inForce.ts'
 import { execute, selectOne } from '../queries/sql.ts'
 import { isActiveTherapist } from '../queries/therapists.ts'
 import type { AuditFact } from './audit.ts'
@@ -11,8 +12,8 @@ import type { AuditFact } from './audit.ts'
 /** Who holds the child now; the row stays locked until the transaction ends. */
 export const currentTherapist = async (tx: Tx, childId: string): Promise<string | null> => {
   const row = await selectOne<{ therapistId: string }>(
-    `SELECT a.therapistId FROM assignments a WHERE a.childId = :childId AND a.startedAt <= :now
-       AND (a.endedAt IS NULL OR a.endedAt > :now) ORDER BY a.startedAt DESC, a.id LIMIT 1 FOR UPDATE`,
+    `SELECT a.therapistId FROM assignments a WHERE a.childId = :childId AND ${runsAt('a')}
+     ORDER BY a.startedAt DESC, a.id LIMIT 1 FOR UPDATE`,
     { childId, now: now() },
     tx,
   )

@@ -19,6 +19,7 @@ import { Child } from '../entities/Child.ts'
 import { Consent } from '../entities/Consent.ts'
 import { Guardian } from '../entities/Guardian.ts'
 import { conflict, invalid } from '../errors.ts'
+import { consentHolds } from '../queries/inForce.ts'
 import { lockChild } from '../queries/lockChild.ts'
 import { findForChild } from '../queries/scope.ts'
 import { selectOne, selectRows } from '../queries/sql.ts'
@@ -74,9 +75,6 @@ export const insertConsent = async (
   return id
 }
 
-const inForce = `f.kind = 'given' AND f.at <= :now AND (f.expiresAt IS NULL OR f.expiresAt > :now)
-  AND NOT EXISTS (SELECT 1 FROM consents w WHERE w.withdrawsId = f.id AND w.at <= :now)`
-
 /** E-mail consent is one carer's; of every other purpose the child has one, whoever gave it. */
 const boundTo = ({ purpose, guardianId }: Pick<NewConsent, 'purpose' | 'guardianId'>) =>
   perGuardianPurposes.includes(purpose) ? guardianId : null
@@ -89,7 +87,7 @@ const endEarlier = async (
   const earlier = await selectRows<Pick<Consent, 'id' | 'guardianId' | 'basis' | 'method' | 'givenByName'>>(
     `SELECT f.id, f.guardianId, f.basis, f.method, f.givenByName FROM consents f
      WHERE f.childId = :childId AND f.purpose = :purpose AND f.id <> :newId
-       AND (:bound IS NULL OR f.guardianId = :bound) AND ${inForce}`,
+       AND (:bound IS NULL OR f.guardianId = :bound) AND ${consentHolds('f')}`,
     { childId, purpose, newId, bound: boundTo({ purpose, guardianId }), now: now() },
     tx,
   )
@@ -124,7 +122,7 @@ const carerOf = async (
 const holdsWithoutEnd = async (tx: Tx, childId: string, given: Pick<NewConsent, 'purpose' | 'guardianId'>) =>
   (await selectOne(
     `SELECT f.id FROM consents f WHERE f.childId = :childId AND f.purpose = :purpose AND f.expiresAt IS NULL
-       AND (:bound IS NULL OR f.guardianId = :bound) AND ${inForce} LIMIT 1`,
+       AND (:bound IS NULL OR f.guardianId = :bound) AND ${consentHolds('f')} LIMIT 1`,
     { childId, purpose: given.purpose, bound: boundTo(given), now: now() },
     tx,
   )) !== null

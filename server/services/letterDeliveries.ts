@@ -1,7 +1,9 @@
 import type { ConsentPurpose } from '../../shared/consents.ts'
 import type { DeliveryState } from '../../shared/letters.ts'
+import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { LetterDelivery } from '../entities/LetterDelivery.ts'
+import { emailConsent } from '../queries/inForce.ts'
 import { consentInForce } from '../queries/scope.ts'
 import { execute, selectOne, selectRows } from '../queries/sql.ts'
 
@@ -75,7 +77,6 @@ export const setDeliveryState = async (tx: Tx, deliveryId: string, state: Delive
  * consent, restriction, safety of contact and the address may have changed since it was queued.
  */
 export const reasonNotToDeliver = async (outboxMessageId: string): Promise<string | null> => {
-  const allowed = consentInForce('g.childId', ['email_link', 'email_attachment'])
   const treatment = consentInForce('g.childId', ['assessment_treatment'])
   const row = await selectOne<{
     state: string
@@ -87,12 +88,12 @@ export const reasonNotToDeliver = async (outboxMessageId: string): Promise<strin
     treatment: number
   }>(
     `SELECT l.state, g.restricted, g.safeToContact, g.endedAt IS NOT NULL AS ended, g.email = m.recipient AS sameAddress,
-       ${allowed.sql.replace('sc.purpose IN (:scopePurposes)', "sc.purpose = IF(d.channel = 'link', 'email_link', 'email_attachment') AND sc.guardianId = g.id")} AS consent,
-       ${treatment.sql.replace(':scopePurposes', ':treatment')} AS treatment
+       IF(d.channel = 'link', ${emailConsent('email_link')}, ${emailConsent('email_attachment')}) AS consent,
+       ${treatment.sql} AS treatment
      FROM letter_deliveries d JOIN letters l ON l.id = d.letterId JOIN guardians g ON g.id = d.guardianId
        JOIN outbox_messages m ON m.id = d.outboxMessageId
      WHERE d.outboxMessageId = :outboxMessageId`,
-    { ...allowed.parameters, treatment: ['assessment_treatment'], outboxMessageId },
+    { ...treatment.parameters, now: now(), outboxMessageId },
   )
   if (!row) return 'The letter is not known any more'
   if (row.state === 'recalled') return 'The letter was recalled'

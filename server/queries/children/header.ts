@@ -9,6 +9,7 @@ import { now } from '../../clock.ts'
 import { notFound } from '../../errors.ts'
 import { therapistName } from '../currentTherapist.ts'
 import { latestEpisode } from '../episodes.ts'
+import { consentHolds } from '../inForce.ts'
 import { within } from '../scope.ts'
 import { flag, fromJson, selectOne, selectRows } from '../sql.ts'
 
@@ -59,9 +60,8 @@ export const findChildHead = async (access: ChildAccess): Promise<ChildFactsRow>
          AND o.givenName = c.givenName) AS namesake,
        e.id AS episodeId, e.version AS episodeVersion, e.state, e.receivedOn,
        JSON_VALUE(r.details, '$.reason') AS reason, JSON_QUERY(r.details, '$.concerns') AS concerns,
-       (SELECT GROUP_CONCAT(DISTINCT f.purpose) FROM consents f WHERE f.childId = c.id AND f.kind = 'given'
-         AND f.at <= :now AND (f.expiresAt IS NULL OR f.expiresAt > :now) AND NOT EXISTS
-           (SELECT 1 FROM consents w WHERE w.withdrawsId = f.id AND w.at <= :now)) AS consentsInForce
+       (SELECT GROUP_CONCAT(DISTINCT f.purpose) FROM consents f WHERE f.childId = c.id
+         AND ${consentHolds('f')}) AS consentsInForce
      FROM children c LEFT JOIN school_classes k ON k.id = c.schoolClassId LEFT JOIN schools s ON s.id = k.schoolId
        LEFT JOIN episodes e ON e.id = ${latestEpisode('c.id')} LEFT JOIN referrals r ON r.id = e.referralId
      WHERE ${scope.sql}`,
