@@ -118,3 +118,6 @@ export const choices = <T extends string>(label: string, values: readonly T[]) =
 /** A request body: known keys only. Servers validate it with `strict`, then `cast` to tidy the text. */
 export const body = <S extends ObjectShape>(shape: S) =>
   object<AnyObject, S>(shape).noUnknown('This form sent a field that is not known: ${unknown}')
+
+/** The body of a request that asks for an act and says no more. */
+export const emptySchema = body({})

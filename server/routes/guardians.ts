@@ -1,4 +1,5 @@
 import { Router, type Request } from 'express'
+import { emptySchema } from '../../shared/fields.ts'
 import { guardianRestrictionSchema, guardianSchema } from '../../shared/guardians.ts'
 import { notFound } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
@@ -47,6 +48,7 @@ export const guardianRoutes = ({ appUrl }: RouteSettings): Router => {
   })
 
   router.post(`${base}/:guardianId/invite`, allow(guardianPolicies.invite), async (req, res) => {
+    await bodyOf(req, emptySchema)
     await inviteGuardian(req.actor, accessOf(req), idOf(req), appUrl)
     res.status(204).end()
   })

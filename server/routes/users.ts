@@ -1,4 +1,5 @@
 import { Router, type Request } from 'express'
+import { emptySchema } from '../../shared/fields.ts'
 import { staffInvitationSchema, userChangeSchema } from '../../shared/users.ts'
 import { notFound } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
@@ -48,11 +49,13 @@ export const userRoutes = ({ appUrl }: RouteSettings): Router => {
   })
 
   router.post('/users/:userId/disable', allow(userPolicies.disable), async (req, res) => {
+    await bodyOf(req, emptySchema)
     await disableUser(req.actor, viewerOf(req), idOf(req))
     res.status(204).end()
   })
 
   router.post('/users/:userId/enable', allow(userPolicies.enable), async (req, res) => {
+    await bodyOf(req, emptySchema)
     await enableUser(req.actor, viewerOf(req), idOf(req))
     res.status(204).end()
   })
