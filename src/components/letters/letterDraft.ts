@@ -36,9 +36,12 @@ export function replacePhrase(text: string, phrase: string, instead: string): st
   return text.slice(0, at) + words + text.slice(at + phrase.length)
 }
 
-/** May this wording be put in with one touch? An example with a figure in it would put an invented fact into a letter. */
+/**
+ * May this wording be put in with one touch? Only a few words that say nothing new: an example with a figure, a gap or
+ * a whole statement in it would put an invented fact into a letter.
+ */
 export const canBePutIn = (instead: string): boolean =>
-  !/\d/.test(instead) && instead.split(/\s+/).length <= 8
+  !/[\d…]/.test(instead) && instead.trim().split(/\s+/).length <= 5
 
 /** Discouraged words, each once: each needs a reason before a letter is approved. */
 export function phrasesToExplain({ findings }: LetterChecks): string[] {
