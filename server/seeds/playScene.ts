@@ -1,7 +1,7 @@
 import type { Actor, Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { findChildAccess } from '../queries/childAccess.ts'
-import type { ActorKey, DemoChild } from './demo/demoTypes.ts'
+import type { ActorKey, DemoChild, DemoSample } from './demo/demoTypes.ts'
 import type { ClassKey } from './demo/schools.ts'
 import { actorOf, type People } from './seedPeople.ts'
 
@@ -23,6 +23,8 @@ export interface Scene {
   classes: Map<ClassKey, string>
   children: Map<number, DemoChild>
   stories: Map<number, Story>
+  /** Drawn ahead, one after the other, while the story is played. */
+  drawings: Map<DemoSample, Promise<Buffer>>
   timeZone: string
   /** Address that the letters' links lead to. */
   appUrl: string

@@ -11,6 +11,8 @@ import { parents } from './demo/parents.ts'
 import { staff, teachers } from './demo/people.ts'
 import { schools, schoolYearOf, type ClassKey } from './demo/schools.ts'
 import { demoTimeline } from './demo/timeline.ts'
+import type { DemoEvent } from './demo/timelineTypes.ts'
+import { drawSample } from './drawSample.ts'
 import { playEvent } from './playEvent.ts'
 import type { Scene } from './playScene.ts'
 import { actorOf, seedPeople, type People } from './seedPeople.ts'
@@ -25,6 +27,19 @@ const seedSchools = async (people: People, schoolYear: number): Promise<Map<Clas
       classes.set(key, await createClass(pauline, { schoolId, name, schoolYear, ages, teacherId }, null))
   }
   return classes
+}
+
+/** Drawing works in threads of its own, so it goes on while the story waits for the database. */
+const drawAhead = (events: readonly DemoEvent[]): Scene['drawings'] => {
+  const drawings: Scene['drawings'] = new Map()
+  let last: Promise<unknown> = Promise.resolve()
+  for (const event of events) {
+    if (event.kind !== 'sample') continue
+    const drawing = last.then(() => drawSample(event.sample.drawing))
+    drawings.set(event.sample, drawing)
+    last = drawing.catch(() => undefined)
+  }
+  return drawings
 }
 
 const mark = (action: string) => recordAudit(systemActor('demo'), { action })
@@ -45,7 +60,9 @@ export const seedClinic = async (appUrl: string): Promise<void> => {
     await mark(demoBegun)
     const people = await seedPeople([...staff, ...teachers, ...parents])
     await changeSettings(actorOf(people, 'ines'), clinicSettings, 0)
+    const events = demoTimeline(demoToday, clinicSettings.timeZone)
     const scene: Scene = {
+      drawings: drawAhead(events),
       people,
       classes: await seedSchools(people, schoolYearOf(demoToday)),
       children: new Map(children.map((child) => [child.number, child])),
@@ -53,7 +70,7 @@ export const seedClinic = async (appUrl: string): Promise<void> => {
       timeZone: clinicSettings.timeZone,
       appUrl,
     }
-    for (const event of demoTimeline(demoToday, clinicSettings.timeZone)) {
+    for (const event of events) {
       moveTo(event.at)
       await playEvent(scene, event, demoToday).catch((error: unknown) => {
         throw new Error(`The demo broke off at ${event.kind} of child ${event.child}`, { cause: error })
