@@ -1,4 +1,5 @@
 import { attentionLevels } from '../../shared/attention.ts'
+import { alertTask } from '../../shared/tasks.ts'
 import type { TodayItem, TodayView } from '../../shared/today.ts'
 import type { TodayGroupRows } from '../queries/today.ts'
 import { presentWorkItem, type WorkClock } from './workItems.ts'
@@ -23,7 +24,14 @@ const presentGroup = ({ id, label, list, rows, total }: TodayGroupRows, clock: W
   items: rows
     .map((row): TodayItem => {
       const { id: itemId, title, detail, level, to } = presentWorkItem(list, row, clock)
-      return { id: itemId, title, detail, level, to, taskId: list === 'tasks' ? row.id : null }
+      return {
+        id: itemId,
+        title,
+        detail,
+        level,
+        to,
+        taskId: list === 'tasks' && row.kind !== alertTask ? row.id : null,
+      }
     })
     .toSorted((a, b) => attentionLevels.indexOf(b.level) - attentionLevels.indexOf(a.level)),
 })

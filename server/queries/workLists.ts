@@ -40,6 +40,8 @@ export interface WorkRow {
   /** Words of the record itself, or a state. */
   words: string | null
   level: Attention | null
+  /** Of a task; null for everything else. */
+  kind: string | null
 }
 
 interface WorkSql {
@@ -52,6 +54,7 @@ interface WorkSql {
   sinceAt: string
   words: string
   level: string
+  kind: string
   from: string
   orderBy: string
 }
@@ -64,6 +67,7 @@ const ofChild = {
   sinceAt: 'NULL',
   words: 'NULL',
   level: 'NULL',
+  kind: 'NULL',
 }
 
 /** Whose children, and what `{scope}` stands for, is filled in below; every list keeps to it. */
@@ -114,6 +118,7 @@ const byReferral = (condition: string): WorkSql => ({
   sinceAt: 'NULL',
   words: 'r.status',
   level: 'NULL',
+  kind: 'NULL',
   from: `FROM referrals r WHERE {referrals} AND r.status IN ('new', 'incomplete') AND ${condition}`,
   orderBy: 'r.receivedOn, r.id',
 })
@@ -167,6 +172,7 @@ const lists: Record<WorkListId, WorkSql> = {
     sinceAt: 't.createdAt',
     words: 't.text',
     level: 'NULL',
+    kind: 't.kind',
     from: `FROM tasks t LEFT JOIN children c ON c.id = t.childId
       WHERE {tasks} AND t.doneAt IS NULL AND (t.assigneeId = :viewer OR t.forRole IN (:viewerRoles))`,
     orderBy: 't.dueOn IS NULL, t.dueOn, t.createdAt, t.id',

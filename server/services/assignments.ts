@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto'
 import type { ChildRelation } from '../../shared/roles.ts'
+import { alertTask } from '../../shared/tasks.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { Assignment } from '../entities/Assignment.ts'
@@ -34,7 +35,7 @@ export const assertCanHold = async (tx: Tx, childId: string | null, therapistId:
 }
 
 /** Tasks that the lead keeps only while a child has no therapist. */
-const goWithTherapist = ['red_flag', 'consent_withdrawn']
+const goWithTherapist = [alertTask, 'consent_withdrawn']
 
 export interface NewAssignment {
   childId: string

@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import type { Day } from '../../shared/days.ts'
 import type { Role } from '../../shared/roles.ts'
+import { alertTask } from '../../shared/tasks.ts'
 import { now } from '../clock.ts'
 import type { Actor, Viewer } from '../access/actor.ts'
 import type { Tx } from '../dataSource.ts'
@@ -10,9 +11,6 @@ import { canFinishTask } from '../policies/tasks.ts'
 import { isId } from '../queries/scope.ts'
 import { taskScope } from '../queries/tasks.ts'
 import { transact } from './transact.ts'
-
-/** Kind of the task that a warning sign gives; it is done by answering the sign, not by ticking it off. */
-export const alertTask = 'red_flag'
 
 export interface NewTask {
   childId: string | null

@@ -45,6 +45,8 @@ describe('what the therapist keeps', () => {
     const glance = (await therapist.get(`/api/children/${child.id}/glance`)).body
     expect(glance.strengths).toBe('Draws comics\nKind to others')
     expect(glance.child.alerts[0].text).toContain('Writing hand recorded as right')
+    // Done by writing down what was done about the sign, so there is nothing to tick.
+    expect(glance.tasks[0]).toMatchObject({ can: { finish: false } })
     expect(glance.tasks[0].text).toContain('writing hand changed')
   })
 

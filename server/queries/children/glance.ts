@@ -49,6 +49,7 @@ export const findLastOnRecord = async (access: ChildAccess): Promise<LastOnRecor
 
 export interface TaskRow {
   id: string
+  kind: string
   text: string
   dueOn: Day | null
   assigneeId: string | null
@@ -82,6 +83,7 @@ interface GlanceLine {
   text: string
   one: string | null
   two: string | null
+  three: string | null
   day: Day | null
   at: Date | null
 }
@@ -90,14 +92,14 @@ interface GlanceLine {
 export const listForGlance = async (access: ChildAccess): Promise<GlanceLists> => {
   const scope = (column: string) => within(access, column).sql
   const lines = await selectRows<GlanceLine>(
-    `SELECT 'alerts' AS kind, CAST(a.id AS CHAR) AS id, a.text, a.level AS one, NULL AS two, CAST(NULL AS DATE) AS day, a.raisedAt AS at
+    `SELECT 'alerts' AS kind, CAST(a.id AS CHAR) AS id, a.text, a.level AS one, NULL AS two, NULL AS three, CAST(NULL AS DATE) AS day, a.raisedAt AS at
        FROM alerts a WHERE a.actedAt IS NULL AND ${scope('a.childId')}
-     UNION ALL SELECT 'tasks', CAST(t.id AS CHAR), t.text, CAST(t.assigneeId AS CHAR), t.forRole, t.dueOn, t.createdAt
+     UNION ALL SELECT 'tasks', CAST(t.id AS CHAR), t.text, CAST(t.assigneeId AS CHAR), t.forRole, t.kind, t.dueOn, t.createdAt
        FROM tasks t WHERE t.doneAt IS NULL AND ${scope('t.childId')}
      UNION ALL SELECT 'goals', CAST(g.id AS CHAR), JSON_VALUE(g.details, '$.activity'), (SELECT CAST(q.level AS CHAR) FROM goal_ratings q
-         WHERE q.goalId = g.id ORDER BY q.ratedOn DESC, q.createdAt DESC, q.id LIMIT 1), NULL, g.setOn, g.createdAt
+         WHERE q.goalId = g.id ORDER BY q.ratedOn DESC, q.createdAt DESC, q.id LIMIT 1), NULL, NULL, g.setOn, g.createdAt
        FROM goals g WHERE g.endedOn IS NULL AND ${scope('g.childId')}
-     UNION ALL SELECT 'changes', u.displayName, x.reason, x.fromState, x.toState, NULL, x.at
+     UNION ALL SELECT 'changes', u.displayName, x.reason, x.fromState, x.toState, NULL, NULL, x.at
        FROM episode_changes x JOIN episodes e ON e.id = x.episodeId JOIN users u ON u.id = x.byId
        WHERE ${scope('e.childId')}
      ORDER BY at, day, id`,
@@ -108,13 +110,11 @@ export const listForGlance = async (access: ChildAccess): Promise<GlanceLists> =
     alerts: of('alerts').flatMap(({ id, text, one, at }) =>
       at === null ? [] : [{ id, text, level: one as Attention, raisedAt: at }],
     ),
-    tasks: of('tasks').map(({ id, text, one, two, day }) => ({
-      id,
-      text,
-      dueOn: day,
-      assigneeId: one,
-      forRole: two as Role | null,
-    })),
+    tasks: of('tasks').flatMap(({ id, text, one, two, three, day }) =>
+      three === null
+        ? []
+        : [{ id, kind: three, text, dueOn: day, assigneeId: one, forRole: two as Role | null }],
+    ),
     goals: of('goals').map(({ id, text, one }) => ({
       id,
       activity: text,
