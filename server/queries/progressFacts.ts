@@ -1,5 +1,5 @@
 import { adviceItemById } from '../../shared/adviceItems.ts'
-import { formatDay } from '../../shared/days.ts'
+import { dayOf, formatDay } from '../../shared/days.ts'
 import type { GoalDetails } from '../../shared/goals.ts'
 import { lettersPerMinute } from '../../shared/handwriting.ts'
 import type { GoalFacts, ProgressFacts, SampleFacts } from '../../shared/letterFacts.ts'
@@ -80,7 +80,7 @@ const sampleFacts = async (access: ChildAccess): Promise<SampleFacts[]> => {
   })
 }
 
-const publishedAdvice = async (access: ChildAccess) => {
+const publishedAdvice = async (access: ChildAccess, timeZone: string) => {
   const scope = within(access, 'a.childId')
   const rows = await selectRows<{ itemId: string; publishedAt: Date; reply: AdviceReply | null }>(
     `SELECT a.itemId, a.publishedAt, (SELECT r.reply FROM advice_answers r WHERE r.adviceId = a.id
@@ -90,7 +90,7 @@ const publishedAdvice = async (access: ChildAccess) => {
   )
   return rows.flatMap((row) => {
     const item = adviceItemById(row.itemId)
-    const source = `Advice ${row.itemId} given on ${formatDay(row.publishedAt.toISOString().slice(0, 10))}`
+    const source = `Advice ${row.itemId} given on ${formatDay(dayOf(row.publishedAt, timeZone))}`
     return item ? [{ item, reply: row.reply, source }] : []
   })
 }
@@ -121,7 +121,7 @@ export const readProgressFacts = async (
   const [goals, samples, advice] = await Promise.all([
     goalFacts(access, notes),
     sampleFacts(access),
-    publishedAdvice(access),
+    publishedAdvice(access, settings.timeZone),
   ])
   const [lastRow] = rows
   const [lastNote] = notes

@@ -8,15 +8,18 @@ import { UserToken } from '../entities/UserToken.ts'
 import { AppError, gone } from '../errors.ts'
 import { passwordChanged, passwordReset } from '../mail/mailTemplates.ts'
 import { formatMoment } from '../../shared/days.ts'
+import { execute } from '../queries/sql.ts'
 import { recordAudit } from './audit.ts'
 import { enqueueMail } from './outbox.ts'
 import { assertStrongPassword, hashPassword, needsRehash, verifyPassword } from './passwords.ts'
+import { endSessionsOf } from './sessions.ts'
 import { readSettings } from './settings.ts'
 import { clearAttempts, countAttempt, countHit, forgiveHit } from './throttles.ts'
 import { transact } from './transact.ts'
 
 const resetMinutes = 30
-const invitationHours = 72
+/** How long the link of an invitation works. */
+export const invitationHours = 72
 
 export const hashToken = (token: string) => createHash('sha256').update(token).digest()
 export const newToken = () => randomBytes(32).toString('base64url')
@@ -98,7 +101,8 @@ export const noteSignIn = async (user: User, requestId: string, device: string):
     },
   }
   await transact(actor, async (tx, record) => {
-    await tx.update(User, { id: user.id }, { lastSignInAt: now() })
+    // Past TypeORM, which would raise the version: a sign-in must not make an open form about the person stale.
+    await execute(tx, 'UPDATE users SET lastSignInAt = :now WHERE id = :id', { now: now(), id: user.id })
     await tx.query(
       `INSERT INTO known_devices (id, tokenHash, userId, createdAt, lastUsedAt) VALUES (?, ?, ?, ?, ?)
        ON DUPLICATE KEY UPDATE lastUsedAt = VALUES(lastUsedAt)`,
@@ -122,6 +126,20 @@ export const issueToken = async (tx: Tx, userId: string, purpose: TokenPurpose):
     usedAt: null,
   })
   return token
+}
+
+/** Links sent earlier stop working; all of them, or those for one purpose. */
+export const spendTokens = async (
+  tx: Tx,
+  userId: string,
+  purpose: TokenPurpose | null = null,
+): Promise<void> => {
+  await execute(
+    tx,
+    `UPDATE user_tokens SET usedAt = :now
+     WHERE userId = :userId AND usedAt IS NULL AND (:purpose IS NULL OR purpose = :purpose)`,
+    { now: now(), userId, purpose },
+  )
 }
 
 /** Sends a reset link when the address has an active account; says the same either way. */
@@ -181,8 +199,8 @@ export const useToken = async (
 
 const setPassword = async (tx: Tx, userId: string, passwordHash: string) => {
   await tx.update(User, { id: userId }, { passwordHash })
-  await tx.query('UPDATE user_tokens SET usedAt = ? WHERE userId = ? AND usedAt IS NULL', [now(), userId])
-  await tx.query('UPDATE user_sessions SET endedAt = ? WHERE userId = ? AND endedAt IS NULL', [now(), userId])
+  await spendTokens(tx, userId)
+  await endSessionsOf(tx, userId)
 }
 
 const wrongPassword = () =>
@@ -211,10 +229,7 @@ export const changePassword = async (
   const passwordHash = await hashPassword(next)
   await transact(actor, async (tx, record) => {
     await tx.update(User, { id: user.id }, { passwordHash })
-    await tx.query(
-      'UPDATE user_sessions SET endedAt = ? WHERE userId = ? AND idHash <> ? AND endedAt IS NULL',
-      [now(), user.id, keep],
-    )
+    await endSessionsOf(tx, user.id, keep)
     const notice = passwordChanged({
       clinic: settings,
       changedAt: formatMoment(now().toISOString(), settings.timeZone),

@@ -1,8 +1,8 @@
-import { randomUUID } from 'node:crypto'
 import { systemActor } from '../access/actor.ts'
 import { now } from '../clock.ts'
 import { User } from '../entities/User.ts'
 import { issueToken } from './accounts.ts'
+import { insertAccount } from './invitations.ts'
 import { transact } from './transact.ts'
 
 export const firstAdministratorAddress = 'first.administrator@fanflower.example'
@@ -20,19 +20,13 @@ export const firstAdministratorLink = (appUrl: string): Promise<string | null> =
     if (Number(usable) > 0) return null
     await tx.query('UPDATE user_tokens SET usedAt = ? WHERE usedAt IS NULL', [now()])
     const known = await tx.findOneBy(User, { email: firstAdministratorAddress })
-    const id = known?.id ?? randomUUID()
-    if (!known)
-      await tx.insert(User, {
-        id,
+    const user =
+      known ??
+      (await insertAccount(tx, {
         email: firstAdministratorAddress,
         displayName: 'First administrator',
         roles: ['administrator'],
-        passwordHash: null,
         newlyQualified: false,
-        wte: null,
-        disabledAt: null,
-        lastSignInAt: null,
-        createdAt: now(),
-      })
-    return `${appUrl}/invitation#${await issueToken(tx, id, 'invitation')}`
+      }))
+    return `${appUrl}/invitation#${await issueToken(tx, user.id, 'invitation')}`
   })

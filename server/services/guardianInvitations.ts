@@ -8,13 +8,10 @@ import { conflict, invalid } from '../errors.ts'
 import { findForChild } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import { guardianFact, lockGuardian } from './guardians.ts'
-import { insertAccount, sendInvitation } from './invitations.ts'
+import { countInvitation, insertAccount, sendInvitation } from './invitations.ts'
 import { readSettings } from './settings.ts'
-import { countHit } from './throttles.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
-
-const invitationsAnHour = 3
 
 /**
  * Gives a carer an account and sends the link to choose a password. Inviting states that staff have confirmed who this
@@ -28,7 +25,7 @@ export const inviteGuardian = async (
 ): Promise<void> => {
   const { email } = await findForChild(access, Guardian, id)
   if (email === null) throw invalid({ email: 'Enter an e-mail address for this carer first' })
-  await countHit(`invite:${email.toLowerCase()}`, invitationsAnHour, 3600)
+  await countInvitation(email)
   const settings = await readSettings()
   await transact(actor, async (tx, record) => {
     const guardian = await lockGuardian(tx, access, id)

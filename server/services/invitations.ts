@@ -5,12 +5,16 @@ import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { User } from '../entities/User.ts'
 import { carerInvitation, staffInvitation } from '../mail/mailTemplates.ts'
-import { execute } from '../queries/sql.ts'
-import { issueToken } from './accounts.ts'
+import { invitationHours, issueToken, spendTokens } from './accounts.ts'
 import { enqueueMail } from './outbox.ts'
+import { countHit } from './throttles.ts'
 
-/** How long the link works, in words; services/accounts.ts holds the figure. */
-const worksFor = '72 hours'
+const worksFor = `${invitationHours} hours`
+const invitationsAnHour = 3
+
+/** Counts an invitation to this address; too many in an hour are refused (429). */
+export const countInvitation = (email: string): Promise<void> =>
+  countHit(`invite:${email.toLowerCase()}`, invitationsAnHour, 3600)
 
 export interface NewAccount {
   id?: string
@@ -50,11 +54,7 @@ export const sendInvitation = async (
   tx: Tx,
   { user, to, settings, appUrl, invitedById }: Invitation,
 ): Promise<void> => {
-  await execute(
-    tx,
-    "UPDATE user_tokens SET usedAt = :now WHERE userId = :userId AND purpose = 'invitation' AND usedAt IS NULL",
-    { now: now(), userId: user.id },
-  )
+  await spendTokens(tx, user.id, 'invitation')
   const link = `${appUrl}/invitation#${await issueToken(tx, user.id, 'invitation')}`
   const mail =
     to === 'carer'

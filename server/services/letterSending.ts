@@ -7,8 +7,8 @@ import { LetterDelivery } from '../entities/LetterDelivery.ts'
 import { conflict, invalid, notFound } from '../errors.ts'
 import { letterAttached, letterNotice } from '../mail/mailTemplates.ts'
 import { letterChannel } from '../policies/letters.ts'
+import { isConsentGiven } from '../queries/childFacts.ts'
 import { findLetterPdf, listRecipients, type LetterRecord, type RecipientRow } from '../queries/letters.ts'
-import { consentInForce, within } from '../queries/scope.ts'
 import { execute, selectOne } from '../queries/sql.ts'
 import { cancelDeliveriesOfLetter, setDeliveryState } from './letterDeliveries.ts'
 import { letterFact, patchLetter } from './letters.ts'
@@ -52,6 +52,8 @@ export const sendLetter = async (
       return carer
     })
     assertOwnAddress(chosen)
+    const { approvedVersionId } = letter
+    if (approvedVersionId === null) throw conflict('closed', 'Only an approved letter can be sent.')
     const { pdf } = await findLetterPdf(access, letter.id)
     for (const carer of chosen) {
       const { channel, why } = letterChannel(carer)
@@ -81,7 +83,7 @@ export const sendLetter = async (
       await tx.insert(LetterDelivery, {
         id: deliveryId,
         letterId: letter.id,
-        letterVersionId: letter.approvedVersionId ?? '',
+        letterVersionId: approvedVersionId,
         guardianId: carer.guardianId,
         channel,
         outboxMessageId,
@@ -96,14 +98,7 @@ export const sendLetter = async (
 }
 
 const assertTreatmentConsent = async (tx: Tx, access: ChildAccess) => {
-  const consent = consentInForce('c.id', ['assessment_treatment'])
-  const scope = within(access, 'c.id')
-  const row = await selectOne(
-    `SELECT c.id FROM children c WHERE ${scope.sql} AND ${consent.sql}`,
-    { ...scope.parameters, ...consent.parameters },
-    tx,
-  )
-  if (!row)
+  if (!(await isConsentGiven(access, 'assessment_treatment', tx)))
     throw conflict(
       'consent_needed',
       'Consent to assessment and therapy is not in force, so no letter may leave.',

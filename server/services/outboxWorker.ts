@@ -2,13 +2,13 @@ import { randomUUID } from 'node:crypto'
 import type { Transporter } from 'nodemailer'
 import { systemActor } from '../access/actor.ts'
 import { now } from '../clock.ts'
-import { database, type Tx } from '../dataSource.ts'
+import { database } from '../dataSource.ts'
 import { OutboxMessage } from '../entities/OutboxMessage.ts'
-import { Task } from '../entities/Task.ts'
 import { logger } from '../logger.ts'
 import { execute, selectOne } from '../queries/sql.ts'
 import { reasonNotToDeliver, setDeliveryState } from './letterDeliveries.ts'
-import { readSettings, clinicToday } from './settings.ts'
+import { clinicToday, readSettings } from './settings.ts'
+import { addTask, type NewTask } from './tasks.ts'
 import { transact } from './transact.ts'
 
 /** Longer than the ten minutes a server may take to answer the final dot (RFC 5321 §4.5.3.2), so no twin starts meanwhile. */
@@ -87,6 +87,15 @@ const outcomeOf = (message: Claimed, error: unknown): Outcome => {
   return { state: 'queued', problem, waitMinutes: retryMinutes(message.attempts) * (1 + Math.random() * 0.1) }
 }
 
+/** What the author of a letter must do once its e-mail did not leave. */
+const taskAfter: Partial<Record<Outcome['state'], Pick<NewTask, 'kind' | 'text'>>> = {
+  failed: {
+    kind: 'letter_failed',
+    text: 'A letter could not be delivered: check the address with the family',
+  },
+  cancelled: { kind: 'letter_cancelled', text: 'A queued letter was not sent: see why on the letter' },
+}
+
 const settle = async (message: Claimed, owner: string, outcome: Outcome): Promise<void> => {
   const settings = await readSettings()
   await transact(systemActor(`outbox-${message.id}`), async (tx, record) => {
@@ -118,44 +127,17 @@ const settle = async (message: Claimed, owner: string, outcome: Outcome): Promis
     )
     if (!delivery) return
     await setDeliveryState(tx, delivery.id, outcome.state)
-    if (outcome.state === 'failed')
-      await makeTask(
-        tx,
-        delivery,
-        'letter_failed',
-        'A letter could not be delivered: check the address with the family',
-        clinicToday(settings),
-      )
-    if (outcome.state === 'cancelled')
-      await makeTask(
-        tx,
-        delivery,
-        'letter_cancelled',
-        'A queued letter was not sent: see why on the letter',
-        clinicToday(settings),
-      )
+    const task = taskAfter[outcome.state]
+    if (task)
+      await addTask(tx, {
+        ...task,
+        childId: delivery.childId,
+        dueOn: clinicToday(settings),
+        assigneeId: delivery.authorId,
+        otherwise: 'clinicLead',
+      })
   })
 }
-
-const makeTask = (
-  tx: Tx,
-  { childId, authorId }: { childId: string; authorId: string },
-  kind: string,
-  text: string,
-  dueOn: string,
-) =>
-  tx.insert(Task, {
-    id: randomUUID(),
-    childId,
-    kind,
-    text,
-    dueOn,
-    assigneeId: authorId,
-    forRole: null,
-    doneAt: null,
-    doneById: null,
-    createdAt: now(),
-  })
 
 /**
  * Sends what is due, one message after the other, until nothing is; answers how many were tried. At least once: when

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto'
 import { now } from '../clock.ts'
-import { database } from '../dataSource.ts'
+import { database, type Tx } from '../dataSource.ts'
+import { execute } from '../queries/sql.ts'
 
 const absoluteHours = 12
 const idleMinutes = 30
@@ -61,6 +62,16 @@ export const endSession = async (sid: string): Promise<void> => {
   await database().query(
     "UPDATE user_sessions SET endedAt = ?, data = '{}' WHERE idHash = ? AND endedAt IS NULL",
     [now(), sessionHash(sid)],
+  )
+}
+
+/** Ends every sign-in of a person with their next request; `keep` is the hash of the one that goes on. */
+export const endSessionsOf = async (tx: Tx, userId: string, keep: Buffer | null = null): Promise<void> => {
+  await execute(
+    tx,
+    `UPDATE user_sessions SET endedAt = :now
+     WHERE userId = :userId AND endedAt IS NULL AND (:keep IS NULL OR idHash <> :keep)`,
+    { now: now(), userId, keep },
   )
 }
 
