@@ -6,7 +6,7 @@ import { AdviceAnswer } from '../entities/AdviceAnswer.ts'
 import { conflict } from '../errors.ts'
 import { canReplyToAdvice } from '../policies/schoolAdvice.ts'
 import { findPupilAdvice } from '../queries/classes.ts'
-import { createOnce } from './createOnce.ts'
+import { createOnce } from './once.ts'
 import { transact } from './transact.ts'
 
 /** Adds a teacher's answer to an item in force. Earlier answers stay: the newest one counts. */
@@ -26,7 +26,13 @@ export const replyToAdvice = (
       actor,
       record,
       { key, request: ['adviceAnswer', adviceId, reply, reason] },
-      { objectType: 'adviceAnswer', childId: access.childId, relation: access.relation },
+      (id) => ({
+        action: 'adviceAnswer.created',
+        objectType: 'adviceAnswer',
+        objectId: id,
+        childId: access.childId,
+        relation: access.relation,
+      }),
       async (id) => {
         await tx.insert(AdviceAnswer, {
           id,

@@ -34,7 +34,8 @@ export const changeOwnContact = (
   { phone, address }: OwnContact,
 ): Promise<void> =>
   transact(actor, async (tx, record) => {
-    const own = await findForChild(access, Guardian, access.guardianId ?? '', tx, { lock: true })
+    if (access.guardianId === null) throw notFound()
+    const own = await findForChild(access, Guardian, access.guardianId, tx, { lock: true })
     if (!(await updateIfCurrent(tx, Guardian, own.id, version, { phone, address }))) throw new StaleWrite()
     record(fact(access, 'guardian.contact_changed', 'guardian', own.id))
   })
@@ -52,10 +53,8 @@ export const giveOwnConsent = async (
     const own = await findOwnChild(access, tx)
     if (!mayGiveConsent(own))
       throw forbidden('Only a person who may decide for this child can agree to this.')
-    const request = { noun: 'consent', childId: access.childId, purpose }
-    let again = true
-    await once(tx, actor, { key, request }, async () => {
-      again = false
+    const request = ['consent', access.childId, purpose]
+    const { again } = await once(tx, actor, { key, request }, async () => {
       const inForce = await listConsentsInForce(access, tx)
       if (inForce.some((consent) => consent.purpose === purpose))
         throw conflict('duplicate', 'This has been agreed to already. Nothing had to be changed.')

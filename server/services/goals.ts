@@ -11,10 +11,11 @@ import { Goal } from '../entities/Goal.ts'
 import { GoalRating as GoalRatingRow } from '../entities/GoalRating.ts'
 import { conflict, invalid } from '../errors.ts'
 import { findChildFacts } from '../queries/childFacts.ts'
+import { lockChild } from '../queries/lockChild.ts'
 import { findForChild } from '../queries/scope.ts'
 import { count, selectOne } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
-import { once } from './once.ts'
+import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { StaleWrite } from './staleWrites.ts'
@@ -44,7 +45,7 @@ const checkGoal = async (access: ChildAccess, goal: GoalDetails): Promise<void> 
 
 /** Holds the child's row until the transaction ends, so that two goals set at once cannot both be the fourth. */
 const checkRoom = async (tx: Tx, access: ChildAccess): Promise<void> => {
-  await tx.query('SELECT id FROM children WHERE id = ? FOR UPDATE', [access.childId])
+  await lockChild(access, tx)
   const open = await selectOne<{ open: string }>(
     'SELECT COUNT(*) AS open FROM goals g WHERE g.childId = :childId AND g.endedOn IS NULL LOCK IN SHARE MODE',
     { childId: access.childId },
@@ -69,9 +70,10 @@ export const createGoal = async (
 ): Promise<string> => {
   await checkGoal(access, details)
   const setOn = clinicToday(await readSettings())
-  return transact(actor, async (tx, record) => {
-    const request = { childId: access.childId, noun: 'goal', ...details }
-    const id = await once(tx, actor, { key, request }, async (goalId) => {
+  return transact(actor, (tx, record) => {
+    const request = ['goal', access.childId, details]
+    const factOf = (id: string) => fact(access, 'created', id)
+    return createOnce(tx, actor, record, { key, request }, factOf, async (goalId) => {
       await requireConsent(tx, access, 'assessment_treatment')
       await checkRoom(tx, access)
       await tx.insert(Goal, {
@@ -86,8 +88,6 @@ export const createGoal = async (
         createdAt: now(),
       })
     })
-    record(fact(access, 'created', id))
-    return id
   })
 }
 
@@ -112,8 +112,9 @@ export const rateGoal = async (
     const goal = await openGoal(tx, access, goalId)
     if (compareDays(rating.ratedOn, goal.setOn) < 0)
       throw invalid({ ratedOn: `The date cannot be before the goal was set (${formatDay(goal.setOn)})` })
-    const request = { goalId, noun: 'goalRating', ...rating }
-    await once(tx, actor, { key, request }, async () => {
+    const request = ['goalRating', goalId, rating]
+    const factOf = () => fact(access, 'rated', goalId)
+    await createOnce(tx, actor, record, { key, request }, factOf, async () => {
       await tx.insert(GoalRatingRow, {
         id: randomUUID(),
         goalId,
@@ -124,7 +125,6 @@ export const rateGoal = async (
         createdAt: now(),
       })
     })
-    record(fact(access, 'rated', goalId))
   })
 }
 

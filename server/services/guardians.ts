@@ -13,7 +13,7 @@ import { listGuardians } from '../queries/guardians.ts'
 import { findForChild } from '../queries/scope.ts'
 import { currentTherapist } from './assignments.ts'
 import type { AuditFact } from './audit.ts'
-import { createOnce } from './createOnce.ts'
+import { createOnce } from './once.ts'
 import { cancelDeliveriesToGuardian } from './letterDeliveries.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { answerStale, StaleWrite } from './staleWrites.ts'
@@ -77,7 +77,7 @@ export const addGuardian = (
       actor,
       record,
       { key, request: ['guardian', access.childId, details] },
-      { objectType: 'guardian', childId: access.childId, relation: access.relation },
+      (id) => guardianFact(access, 'guardian.created', id),
       async (id) => {
         await insertGuardian(tx, access.childId, details, id)
       },

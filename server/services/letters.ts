@@ -9,7 +9,7 @@ import { conflict, stale } from '../errors.ts'
 import { findLetter, type LetterRecord } from '../queries/letters.ts'
 import { readProgressFacts } from '../queries/progressFacts.ts'
 import type { AuditFact } from './audit.ts'
-import { once } from './once.ts'
+import { createOnce } from './once.ts'
 import { readSettings } from './settings.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -31,11 +31,13 @@ export const createProgressLetter = async (
   const settings = await readSettings()
   const facts = await readProgressFacts(access, settings)
   const assembled = draftProgressLetter(facts)
-  return transact(actor, async (tx, record) => {
-    const id = await once(
+  return transact(actor, (tx, record) =>
+    createOnce(
       tx,
       actor,
-      { key, request: { childId: access.childId, kind: 'progress' } },
+      record,
+      { key, request: ['letter', access.childId, 'progress'] },
+      (id) => letterFact(access, 'letter.created', id),
       async (letterId) => {
         await tx.insert(Letter, {
           id: letterId,
@@ -57,10 +59,8 @@ export const createProgressLetter = async (
           changedAt: now(),
         })
       },
-    )
-    record(letterFact(access, 'letter.created', id))
-    return id
-  })
+    ),
+  )
 }
 
 /** Applies a change to a letter that must still have the version the person saw; otherwise 409 with what is stored. */

@@ -4,16 +4,17 @@ import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { IdempotencyKey } from '../entities/IdempotencyKey.ts'
 import { invalid } from '../errors.ts'
+import type { AuditFact } from './audit.ts'
 
 export interface OnceKey {
   /** The Idempotency-Key header; null when the client sent none. */
   key: string | null
-  /** What was asked for; the same key with another request is refused. */
-  request: unknown
+  /** What was asked for, its noun first; the same key with another request is refused. */
+  request: readonly unknown[]
 }
 
 /**
- * Makes a create idempotent: the same key again answers the row made the first time. Call it first in the
+ * Makes a create idempotent: the same key again answers the id made the first time, and `again`. Call it first in the
  * transaction: the unique key makes a parallel twin wait for this one and then find its row.
  */
 export const once = async (
@@ -21,11 +22,11 @@ export const once = async (
   actor: Actor,
   { key, request }: OnceKey,
   create: (id: string) => Promise<void>,
-): Promise<string> => {
+): Promise<{ id: string; again: boolean }> => {
   const id = randomUUID()
   if (key === null || actor.viewer === null) {
     await create(id)
-    return id
+    return { id, again: false }
   }
   const digest = createHash('sha256').update(JSON.stringify(request)).digest()
   await tx.query(
@@ -35,6 +36,26 @@ export const once = async (
   const kept = await tx.findOneByOrFail(IdempotencyKey, { userId: actor.viewer.id, keyValue: key })
   if (!kept.digest.equals(digest))
     throw invalid({ form: 'This form was sent before with other content. Reload the page.' })
-  if (kept.resultId === id) await create(id)
-  return kept.resultId
+  const again = kept.resultId !== id
+  if (!again) await create(id)
+  return { id: kept.resultId, again }
+}
+
+const askedAgain = (fact: AuditFact): AuditFact => ({
+  ...fact,
+  action: `${fact.action.split('.')[0]}.asked_again`,
+})
+
+/** `once` for one row with its audit entry; a repeat is recorded as asked for again, not as done. Answers the row's id. */
+export const createOnce = async (
+  tx: Tx,
+  actor: Actor,
+  record: (fact: AuditFact) => void,
+  key: OnceKey,
+  factOf: (id: string) => AuditFact,
+  create: (id: string) => Promise<void>,
+): Promise<string> => {
+  const { id, again } = await once(tx, actor, key, create)
+  record(again ? askedAgain(factOf(id)) : factOf(id))
+  return id
 }

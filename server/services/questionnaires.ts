@@ -10,7 +10,7 @@ import { findQuestionnaire, type QuestionnaireRecord } from '../queries/question
 import { findForChild } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
-import { once } from './once.ts'
+import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { readSettings } from './settings.ts'
 import { StaleWrite } from './staleWrites.ts'
@@ -63,9 +63,10 @@ export const startQuestionnaire = async (
 ): Promise<string> => {
   await requirePastDay(access, 'answeredOn', 'The date answered', start.answeredOn)
   const { cutOffSet } = await readSettings()
-  return transact(actor, async (tx, record) => {
-    const request = { childId: access.childId, noun: 'questionnaire', ...start }
-    const id = await once(tx, actor, { key, request }, async (newId) => {
+  return transact(actor, (tx, record) => {
+    const request = ['questionnaire', access.childId, start]
+    const factOf = (id: string) => fact(access, 'started', id)
+    return createOnce(tx, actor, record, { key, request }, factOf, async (newId) => {
       await requireConsent(tx, access, 'assessment_treatment')
       if (start.replacesId !== null) await checkReplaced(tx, access, start.replacesId)
       await tx.insert(QuestionnaireResponse, {
@@ -86,8 +87,6 @@ export const startQuestionnaire = async (
         createdAt: now(),
       })
     })
-    record(fact(access, 'started', id))
-    return id
   })
 }
 

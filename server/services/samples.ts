@@ -10,7 +10,7 @@ import { findForChild } from '../queries/scope.ts'
 import { checkFile } from '../uploads/checkedFile.ts'
 import type { ReceivedFile } from '../uploads/receiveUpload.ts'
 import { recordChildRead, type AuditFact } from './audit.ts'
-import { once } from './once.ts'
+import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { transact } from './transact.ts'
 
@@ -50,9 +50,10 @@ export const addSample = async (
   await checkRoom(access, received.buffer.length)
   const file = await checkFile(received)
   const originalHash = file.originalSha256.toString('hex')
-  return transact(actor, async (tx, record) => {
-    const request = { childId: access.childId, noun: 'sample', originalHash, ...details }
-    const id = await once(tx, actor, { key, request }, async (sampleId) => {
+  return transact(actor, (tx, record) => {
+    const request = ['sample', access.childId, originalHash, details]
+    const factOf = (id: string) => ({ ...fact(access, 'added', id), detail: { originalHash } })
+    return createOnce(tx, actor, record, { key, request }, factOf, async (sampleId) => {
       // Once more: consent may have been withdrawn while the file was being opened.
       await requireConsent(tx, access, 'store_work_samples')
       await tx.insert(Sample, {
@@ -75,8 +76,6 @@ export const addSample = async (
         removedById: null,
       })
     })
-    record({ ...fact(access, 'added', id), detail: { originalHash } })
-    return id
   })
 }
 

@@ -73,10 +73,8 @@ export const publishAdvice = async (
         'The family does not share seating and classroom advice with the school, so nothing can be given to it. ' +
           'Ask a person with parental responsibility and record the answer under Family and consent.',
       )
-    let again = true
-    const request = { noun: 'schoolAdvice', childId: access.childId, ...advice }
-    const id = await once(tx, actor, { key, request }, async () => {
-      again = false
+    const request = ['schoolAdvice', access.childId, advice]
+    const { id, again } = await once(tx, actor, { key, request }, async () => {
       const live = await listLiveItemIds(access, tx)
       const doubled = advice.items.findIndex((item) => live.includes(item.itemId))
       if (doubled >= 0) throw invalid({ [`items[${doubled}].itemId`]: 'The teacher has this item already' })

@@ -12,7 +12,7 @@ import { presentCurrentClass } from '../presenters/schools.ts'
 import { findClass } from '../queries/schools.ts'
 import { isId } from '../queries/scope.ts'
 import { execute } from '../queries/sql.ts'
-import { createOnce } from './createOnce.ts'
+import { createOnce } from './once.ts'
 import { answerStale, StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
 import { unlessTaken } from './uniqueness.ts'
@@ -26,7 +26,7 @@ export const createSchool = (actor: Actor, details: SchoolDetails, key: string |
       actor,
       record,
       { key, request: ['school', details] },
-      { objectType: 'school' },
+      (id) => ({ action: 'school.created', objectType: 'school', objectId: id }),
       async (id) => {
         await unlessTaken(tx.insert(School, { id, ...details, createdAt: now() }), {
           name: 'A school of this name is on the list already',
@@ -57,7 +57,7 @@ export const createClass = (actor: Actor, details: SchoolClassDetails, key: stri
       actor,
       record,
       { key, request: ['class', details] },
-      { objectType: 'schoolClass' },
+      (id) => ({ action: 'schoolClass.created', objectType: 'schoolClass', objectId: id }),
       async (id) => {
         const { teacherId, ...columns } = details
         await assertSchool(tx, details.schoolId)

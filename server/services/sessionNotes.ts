@@ -14,7 +14,7 @@ import { findForChild, within } from '../queries/scope.ts'
 import { findNote, type NoteRecord } from '../queries/sessionNotes.ts'
 import { selectRows } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
-import { once } from './once.ts'
+import { createOnce } from './once.ts'
 import { requirePastDay } from './recordRules.ts'
 import { readSettings } from './settings.ts'
 import { StaleWrite } from './staleWrites.ts'
@@ -80,9 +80,10 @@ export const createNote = async (
 ): Promise<string> => {
   await checkDraft(access, draft)
   const { timeZone } = await readSettings()
-  return transact(actor, async (tx, record) => {
-    const request = { childId: access.childId, noun: 'sessionNote', ...draft }
-    const id = await once(tx, actor, { key, request }, async (noteId) => {
+  return transact(actor, (tx, record) => {
+    const request = ['sessionNote', access.childId, draft]
+    const factOf = (id: string) => noteFact(access, 'created', id)
+    return createOnce(tx, actor, record, { key, request }, factOf, async (noteId) => {
       await tx.insert(SessionNote, {
         id: noteId,
         childId: access.childId,
@@ -94,8 +95,6 @@ export const createNote = async (
       })
       await keepRevision(tx, access, noteId, 1, draft)
     })
-    record(noteFact(access, 'created', id))
-    return id
   })
 }
 
@@ -144,9 +143,12 @@ export const addAddendum = (
     const note = await findForChild(access, SessionNote, noteId, tx, { lock: true })
     if (note.state === 'draft')
       throw conflict('not_signed', 'This note is not signed yet: write into the note itself.')
-    const request = { noteId, noun: 'addendum', text }
-    const id = await once(tx, actor, { key, request }, async (addendumId) => {
+    const request = ['noteAddendum', noteId, text]
+    const factOf = (addendum: string) => ({
+      ...noteFact(access, 'addendum_added', noteId),
+      detail: { addendum },
+    })
+    await createOnce(tx, actor, record, { key, request }, factOf, async (addendumId) => {
       await tx.insert(NoteAddendum, { id: addendumId, noteId, text, byId: access.viewer.id, at: now() })
     })
-    record({ ...noteFact(access, 'addendumAdded', noteId), detail: { addendum: id } })
   })

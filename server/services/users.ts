@@ -7,19 +7,17 @@ import { User } from '../entities/User.ts'
 import { conflict, forbidden, invalid, notFound } from '../errors.ts'
 import { canChangeUser, canDisableUser, canEnableUser, invitableRoles } from '../policies/users.ts'
 import { presentUser } from '../presenters/users.ts'
-import { execute } from '../queries/sql.ts'
 import { countOpenCases, findUser, type AccountRow } from '../queries/users.ts'
-import { createOnce } from './createOnce.ts'
-import { insertAccount, sendInvitation } from './invitations.ts'
+import { spendTokens } from './accounts.ts'
+import { createOnce } from './once.ts'
+import { countInvitation, insertAccount, sendInvitation } from './invitations.ts'
+import { endSessionsOf } from './sessions.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { answerStale, StaleWrite } from './staleWrites.ts'
 import { addTask } from './tasks.ts'
-import { countHit } from './throttles.ts'
 import { transact } from './transact.ts'
 import { unlessTaken } from './uniqueness.ts'
 import { updateIfCurrent } from './versions.ts'
-
-const invitationsAnHour = 3
 
 /** Makes an account for a colleague or teacher and sends the link to choose a password. Answers the account's id. */
 export const inviteUser = async (
@@ -34,7 +32,7 @@ export const inviteUser = async (
       roles: 'A carer is invited from the child’s family page, so that the two belong together',
     })
   if (refused) throw invalid({ roles: 'Only an administrator can invite a teacher' })
-  await countHit(`invite:${email.toLowerCase()}`, invitationsAnHour, 3600)
+  await countInvitation(email)
   const settings = await readSettings()
   return transact(actor, (tx, record) =>
     createOnce(
@@ -42,7 +40,7 @@ export const inviteUser = async (
       actor,
       record,
       { key, request: ['user', displayName, email, roles, newlyQualified] },
-      { objectType: 'user' },
+      (id) => ({ action: 'user.created', objectType: 'user', objectId: id }),
       async (id) => {
         const account = { id, email, displayName, roles: [...new Set(roles)], newlyQualified }
         const user = await unlessTaken(insertAccount(tx, account), {
@@ -54,12 +52,6 @@ export const inviteUser = async (
     ),
   )
 }
-
-const endSessions = (tx: Tx, userId: string) =>
-  execute(tx, 'UPDATE user_sessions SET endedAt = :now WHERE userId = :userId AND endedAt IS NULL', {
-    now: now(),
-    userId,
-  })
 
 const findOr404 = async (viewer: Viewer, id: string, tx?: Tx): Promise<AccountRow> => {
   const account = await findUser(viewer, id, tx)
@@ -93,7 +85,7 @@ export const changeUser = (
       }
       const roles = [...new Set(change.roles)]
       await updateIfCurrent(tx, User, id, version, { roles, newlyQualified: change.newlyQualified })
-      if (roles.toSorted().join() !== account.roles.toSorted().join()) await endSessions(tx, id)
+      if (roles.toSorted().join() !== account.roles.toSorted().join()) await endSessionsOf(tx, id)
       record({
         action: 'user.roles_changed',
         objectType: 'user',
@@ -112,11 +104,8 @@ export const disableUser = async (actor: Actor, viewer: Viewer, id: string): Pro
     if (account.disabledAt) throw conflict('closed', 'This account is closed already.')
     if (!canDisableUser(viewer, account)) throw forbidden('You cannot close this account.')
     await tx.update(User, { id }, { disabledAt: now() })
-    await endSessions(tx, id)
-    await execute(tx, 'UPDATE user_tokens SET usedAt = :now WHERE userId = :id AND usedAt IS NULL', {
-      now: now(),
-      id,
-    })
+    await endSessionsOf(tx, id)
+    await spendTokens(tx, id)
     if ((await countOpenCases(tx, id)) > 0)
       await addTask(tx, {
         childId: null,

@@ -4,7 +4,7 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { WritingObservation } from '../entities/WritingObservation.ts'
 import { invalid } from '../errors.ts'
-import { once } from './once.ts'
+import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { transact } from './transact.ts'
 
@@ -21,9 +21,16 @@ export const addObservation = async (
   await requirePastDay(access, 'observedOn', 'The date', details.observedOn)
   if (nothingSeen(details))
     throw invalid({ form: 'Nothing is filled in yet: enter at least one thing you saw.' })
-  return transact(actor, async (tx, record) => {
-    const request = { childId: access.childId, noun: 'writingObservation', ...details }
-    const id = await once(tx, actor, { key, request }, async (observationId) => {
+  return transact(actor, (tx, record) => {
+    const request = ['writingObservation', access.childId, details]
+    const factOf = (id: string) => ({
+      action: 'writingObservation.added',
+      objectType: 'writingObservation',
+      objectId: id,
+      childId: access.childId,
+      relation: access.relation,
+    })
+    return createOnce(tx, actor, record, { key, request }, factOf, async (observationId) => {
       await requireConsent(tx, access, 'assessment_treatment')
       await tx.insert(WritingObservation, {
         id: observationId,
@@ -34,13 +41,5 @@ export const addObservation = async (
         recordedAt: now(),
       })
     })
-    record({
-      action: 'writingObservation.added',
-      objectType: 'writingObservation',
-      objectId: id,
-      childId: access.childId,
-      relation: access.relation,
-    })
-    return id
   })
 }

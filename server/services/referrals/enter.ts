@@ -11,7 +11,7 @@ import { presentReferral } from '../../presenters/referrals.ts'
 import { findReferral, referralScope } from '../../queries/referrals.ts'
 import { listSameChild } from '../../queries/sameChild.ts'
 import { isId } from '../../queries/scope.ts'
-import { createOnce } from '../createOnce.ts'
+import { createOnce } from '../once.ts'
 import { clinicToday, readSettings } from '../settings.ts'
 import { answerStale, StaleWrite } from '../staleWrites.ts'
 import { transact } from '../transact.ts'
@@ -48,7 +48,7 @@ export const enterReferral = (
       actor,
       record,
       { key, request: ['referral', details] },
-      { objectType: 'referral' },
+      (id) => ({ action: 'referral.created', objectType: 'referral', objectId: id }),
       async (id) => {
         await assertDetails(tx, details)
         await tx.insert(Referral, {
