@@ -1,6 +1,20 @@
 import type { Day } from '@shared/days.ts'
-import type { GuardianDetails, GuardianRelation, ParentalResponsibility } from '@shared/guardians.ts'
-import type { ReferralDetails, ReferralSource, ScriptDirection } from '@shared/referrals.ts'
+import {
+  guardianRelationLabels,
+  guardianRelations,
+  type GuardianDetails,
+  type GuardianRelation,
+  type ParentalResponsibility,
+} from '@shared/guardians.ts'
+import {
+  referralConcernLabels,
+  referralSourceLabels,
+  scriptDirectionLabels,
+  type ReferralDetails,
+  type ReferralSource,
+  type ScriptDirection,
+} from '@shared/referrals.ts'
+import type { ClassChoice } from '@shared/schools.ts'
 
 /** A carer while the form is being filled: a choice not yet made is null, never a guess. */
 export type CarerDraft = Omit<GuardianDetails, 'relation' | 'parentalResponsibility'> & {
@@ -120,3 +134,22 @@ export const carerErrorLabels = (errors: Record<string, string>): Record<string,
       return position === undefined ? [] : [[path, `Carer ${Number(position) + 1}`]]
     }),
   )
+
+const codes: Record<string, string> = {
+  ...referralSourceLabels,
+  ...referralConcernLabels,
+  ...scriptDirectionLabels,
+}
+
+const labelOfRelation = (value: unknown): string | undefined =>
+  guardianRelations.flatMap((relation) => (relation === value ? [guardianRelationLabels[relation]] : []))[0]
+
+/** The words for what is stored as a code, where two versions of a referral are compared. */
+export const sayReferral =
+  (classes: readonly ClassChoice[]) =>
+  (name: keyof ReferralDraft, value: unknown): string | undefined => {
+    if (name === 'classId') return classes.find(({ id }) => id === value)?.label
+    if (name === 'carers') return value === 'unknown' ? 'not known' : labelOfRelation(value)
+    const coded = name === 'source' || name === 'concerns' || name === 'scriptDirection'
+    return coded && typeof value === 'string' ? codes[value] : undefined
+  }

@@ -23,6 +23,12 @@ const mostTicks = 7
 /** Weeks with one decimal, as the wait is shown everywhere on the page: 137 days are 19.6. */
 export const weeksOf = (days: number): string => (days / daysPerWeek).toFixed(1)
 
+/** How a wait stands against its target. */
+export const targetWords = ({ days, targetDays }: WaitingBar): string =>
+  days > targetDays
+    ? `${weeksOf(days - targetDays)} weeks over the target`
+    : `${weeksOf(targetDays - days)} weeks left before the target`
+
 /** Longest wait first; the same wait in order of name, so that the picture does not shift between two looks. */
 export const longestFirst = (bars: readonly WaitingBar[]): WaitingBar[] =>
   [...bars].sort((a, b) => b.days - a.days || a.name.localeCompare(b.name))
