@@ -107,5 +107,4 @@ export interface PupilView {
   advice: PublishedAdvice[]
   /** Shared goals in the child's words, where the family agreed. */
   goals: string[]
-  therapist: string | null
 }

@@ -93,5 +93,12 @@ export interface UserRow {
 export interface TherapistChoice {
   id: string
   displayName: string
-  openCases: number
+  /** Null for a therapist: how many children a colleague holds is for lead and administrator. */
+  openCases: number | null
 }
+
+/** 'Anna Able (2 open cases)'; the name alone where the number may not be known. */
+export const therapistChoiceLabel = ({ displayName, openCases }: TherapistChoice): string =>
+  openCases === null
+    ? displayName
+    : `${displayName} (${openCases} open ${openCases === 1 ? 'case' : 'cases'})`

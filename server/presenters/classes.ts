@@ -35,5 +35,4 @@ export const presentPupil = (
   writingHand: pupil.writingHand,
   advice: presentAdvice(related.advice, access, pupil.scriptDirection, timeZone),
   goals: related.goals,
-  therapist: pupil.therapist,
 })

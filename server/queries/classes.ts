@@ -7,7 +7,6 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
-import { therapistName } from './currentTherapist.ts'
 import { consentHolds, runsAt } from './inForce.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { adviceColumns, newestAnswer, type AdviceRow } from './schoolAdvice.ts'
@@ -116,17 +115,14 @@ export interface PupilRecord {
   writingHand: WritingHand | null
   /** Decides which caution is printed; not shown. */
   scriptDirection: ScriptDirection
-  therapist: string | null
 }
 
 export const findPupil = async (access: ChildAccess): Promise<PupilRecord> => {
   const scope = within(access, 'c.id')
-  const therapist = therapistName('c.id')
   const row = await selectOne<PupilRecord>(
-    `SELECT c.id, ${displayName} AS name, k.name AS className, c.writingHand, c.scriptDirection,
-       ${therapist.sql} AS therapist
+    `SELECT c.id, ${displayName} AS name, k.name AS className, c.writingHand, c.scriptDirection
      FROM children c JOIN school_classes k ON k.id = c.schoolClassId WHERE ${scope.sql}`,
-    { ...scope.parameters, ...therapist.parameters },
+    scope.parameters,
   )
   if (!row) throw notFound()
   return row

@@ -170,7 +170,6 @@ describe('what a teacher sees of a pupil', () => {
         'goals',
         'id',
         'name',
-        'therapist',
         'writingHand',
       ])
       const view: PupilView = response.body
@@ -179,7 +178,6 @@ describe('what a teacher sees of a pupil', () => {
         name: 'Aiko Tanaka',
         className: 'Heron',
         writingHand: 'left',
-        therapist: 'Adaeze Nwosu-Reid',
       })
       const seating = purposes.includes('share_school_seating')
       expect(view.advice.map((advice) => advice.itemId)).toEqual(seating ? ['S01'] : [])

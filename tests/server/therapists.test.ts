@@ -27,6 +27,12 @@ describe('the list of therapists', () => {
     ])
   })
 
+  it('tells a therapist no colleague’s number of cases', async () => {
+    const therapist = await signedInAs(await buildUser('therapist'))
+    const listed = (await therapist.get('/api/therapists')).body as { openCases: number | null }[]
+    expect(new Set(listed.map(({ openCases }) => openCases))).toEqual(new Set([null]))
+  })
+
   it('is for staff only', async () => {
     const teacher = await signedInAs(await buildUser('teacher'))
     expect((await teacher.get('/api/therapists')).status).toBe(403)
