@@ -68,7 +68,7 @@ const staffRoutes: RouteRecordRaw[] = [
     name: 'referral-new',
     path: '/referrals/new',
     component: () => import('@/views/referrals/ReferralNewView.vue'),
-    meta: { roles: staff, title: 'New referral' },
+    meta: { roles: ['administrator', 'clinicLead'], title: 'New referral' },
   },
   {
     name: 'referral',
