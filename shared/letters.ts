@@ -59,6 +59,9 @@ const sectionSchema = object({
     .max(4000, 'A section can be at most 4000 characters'),
 }).noUnknown()
 
+/** Asks for a letter; its text is assembled from the record. */
+export const newLetterSchema = body({ kind: choice('the kind of letter', letterKinds) })
+
 export const letterDraftSchema = body({
   salutation: text('The greeting', { max: 120 }),
   sections: array(sectionSchema).required().min(1).max(letterSectionIds.length),

@@ -2,28 +2,34 @@ import { Router, type Request } from 'express'
 import { alertActionSchema } from '../../shared/alerts.ts'
 import { allocationSchema, careSchema, childIdentitySchema } from '../../shared/children.ts'
 import { stateChangeSchema } from '../../shared/episodes.ts'
+import { notFound } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
 import { bodyOf, ifMatchOf, pageOf, queryText } from '../middleware/requestBody.ts'
 import { accessOf, viewerOf } from '../middleware/requestContext.ts'
 import { childPolicies, seesClinicalFields } from '../policies/children.ts'
 import { presentGlance } from '../presenters/children/glance.ts'
 import {
+  presentCare,
   presentChildHeader,
+  presentEpisodeState,
   presentFoundChild,
   presentIdentity,
   presentRegisterRow,
 } from '../presenters/children/header.ts'
 import { presentPage } from '../presenters/pages.ts'
+import { findCare } from '../queries/children/care.ts'
 import { findLastOnRecord, listForGlance } from '../queries/children/glance.ts'
 import { findChildHead, listOpenAlerts } from '../queries/children/header.ts'
 import { findIdentity } from '../queries/children/identity.ts'
 import { findChildren, listRegister } from '../queries/children/lists.ts'
+import { findEpisode } from '../queries/episodes.ts'
 import { listQuestionnaires } from '../queries/questionnaires.ts'
 import { actOnAlert } from '../services/alerts.ts'
 import { recordAudit, recordChildRead } from '../services/audit.ts'
 import { allocate, changeCare, changeIdentity } from '../services/children.ts'
 import { changeState } from '../services/episodes.ts'
 import { clinicToday, readSettings } from '../services/settings.ts'
+import { answerStale } from '../services/versions.ts'
 
 const leastToSearch = 2
 
@@ -73,27 +79,48 @@ export const childRoutes = (): Router => {
   const showIdentity = async (req: Request) =>
     presentIdentity(await findIdentity(accessOf(req)), accessOf(req))
 
-  router.get(identity, allow(childPolicies.identity), async (req, res) => {
+  const readIdentity = async (req: Request) => {
     const view = await showIdentity(req)
     await recordChildRead(req.actor, accessOf(req), 'child.identity_read')
-    res.json(view)
+    return view
+  }
+
+  router.get(identity, allow(childPolicies.identity), async (req, res) => {
+    res.json(await readIdentity(req))
   })
 
   router.put(identity, allow(childPolicies.changeIdentity), async (req, res) => {
     const version = ifMatchOf(req)
-    await changeIdentity(req.actor, accessOf(req), version, await bodyOf(req, childIdentitySchema))
+    const details = await bodyOf(req, childIdentitySchema)
+    await answerStale(changeIdentity(req.actor, accessOf(req), version, details), () => readIdentity(req))
     res.json(await showIdentity(req))
   })
 
   router.patch('/children/:childId/care', allow(childPolicies.changeCare), async (req, res) => {
     const version = ifMatchOf(req)
-    await changeCare(req.actor, accessOf(req), version, await bodyOf(req, careSchema))
+    const access = accessOf(req)
+    const care = await bodyOf(req, careSchema)
+    await answerStale(changeCare(req.actor, access, version, care), async () => {
+      const current = await findCare(access)
+      await recordChildRead(req.actor, access, 'child.care_read')
+      return presentCare(current)
+    })
     res.status(204).end()
   })
 
   router.post('/children/:childId/state', allow(childPolicies.changeState), async (req, res) => {
     const version = ifMatchOf(req)
-    await changeState(req.actor, accessOf(req), version, await bodyOf(req, stateChangeSchema))
+    const access = accessOf(req)
+    const change = await bodyOf(req, stateChangeSchema)
+    await answerStale(changeState(req.actor, access, version, change), async () => {
+      const current = await findEpisode(access)
+      if (!current) throw notFound()
+      await recordChildRead(req.actor, access, 'episode.read', {
+        objectType: 'episode',
+        objectId: current.id,
+      })
+      return presentEpisodeState(current)
+    })
     res.status(204).end()
   })
 

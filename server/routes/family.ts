@@ -11,7 +11,7 @@ import { listReceivedLetters } from '../queries/receivedLetters.ts'
 import { recordAudit, recordChildRead } from '../services/audit.ts'
 import { changeOwnContact, giveOwnConsent, withdrawOwnConsent } from '../services/family.ts'
 import { readSettings } from '../services/settings.ts'
-import { answerStale } from '../services/staleWrites.ts'
+import { answerStale } from '../services/versions.ts'
 
 const base = '/my/children/:childId'
 
@@ -51,9 +51,11 @@ export const familyRoutes = (): Router => {
     const access = accessOf(req)
     const version = ifMatchOf(req)
     const contact = await bodyOf(req, ownContactSchema)
-    await answerStale(changeOwnContact(req.actor, access, version, contact), async () =>
-      presentOwnContact(await findOwnChild(access)),
-    )
+    await answerStale(changeOwnContact(req.actor, access, version, contact), async () => {
+      const child = await findOwnChild(access)
+      await recordChildRead(req.actor, access, 'family.child')
+      return presentOwnContact(child)
+    })
     res.json(await ownChild(req))
   })
 

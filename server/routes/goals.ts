@@ -8,7 +8,7 @@ import { presentGoal, presentGoals } from '../presenters/goals.ts'
 import { findGoal, listGoals } from '../queries/goals.ts'
 import { recordChildRead } from '../services/audit.ts'
 import { createGoal, endGoal, rateGoal } from '../services/goals.ts'
-import { answerStale } from '../services/staleWrites.ts'
+import { answerStale } from '../services/versions.ts'
 
 const base = '/children/:childId/goals'
 
@@ -43,9 +43,11 @@ export const goalRoutes = (): Router => {
   router.post(`${base}/:goalId/end`, allow(goalPolicies.end), async (req, res) => {
     const version = req.get('If-Match') === undefined ? null : ifMatchOf(req)
     const ending = await bodyOf(req, goalEndSchema)
-    await answerStale(endGoal(req.actor, accessOf(req), idOf(req), version, ending), () =>
-      view(req, idOf(req)),
-    )
+    await answerStale(endGoal(req.actor, accessOf(req), idOf(req), version, ending), async () => {
+      const goal = await view(req, idOf(req))
+      await recordChildRead(req.actor, accessOf(req), 'goal.read', { objectType: 'goal', objectId: goal.id })
+      return goal
+    })
     res.status(204).end()
   })
 

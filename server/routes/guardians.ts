@@ -11,6 +11,7 @@ import { listGuardians } from '../queries/guardians.ts'
 import { recordChildRead } from '../services/audit.ts'
 import { inviteGuardian } from '../services/guardianInvitations.ts'
 import { addGuardian, changeGuardian, restrictGuardian } from '../services/guardians.ts'
+import { answerStale } from '../services/versions.ts'
 import type { RouteSettings } from './all.ts'
 
 const base = '/children/:childId/guardians'
@@ -43,7 +44,15 @@ export const guardianRoutes = ({ appUrl }: RouteSettings): Router => {
 
   router.put(`${base}/:guardianId`, allow(guardianPolicies.change), async (req, res) => {
     const version = ifMatchOf(req)
-    await changeGuardian(req.actor, accessOf(req), idOf(req), version, await bodyOf(req, guardianSchema))
+    const details = await bodyOf(req, guardianSchema)
+    await answerStale(changeGuardian(req.actor, accessOf(req), idOf(req), version, details), async () => {
+      const guardian = await show(req, idOf(req))
+      await recordChildRead(req.actor, accessOf(req), 'guardian.read', {
+        objectType: 'guardian',
+        objectId: guardian.id,
+      })
+      return guardian
+    })
     res.json(await show(req, idOf(req)))
   })
 

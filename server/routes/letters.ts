@@ -1,15 +1,14 @@
 import { Router, type Request } from 'express'
-import { string } from 'yup'
-import { body } from '../../shared/fields.ts'
 import {
   letterApprovalSchema,
   letterDraftSchema,
-  letterKinds,
   letterReturnSchema,
   letterSendSchema,
   letterStates,
+  newLetterSchema,
   type LetterDraft,
 } from '../../shared/letters.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
 import { conflict, forbidden } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
 import {
@@ -33,7 +32,6 @@ import {
   letterPolicies,
   type LetterStanding,
 } from '../policies/letters.ts'
-import type { ChildAccess } from '../access/childAccess.ts'
 import { presentLetter, presentLetterPage } from '../presenters/letters.ts'
 import {
   findLetter,
@@ -55,12 +53,7 @@ import {
   submitLetter,
   takeBackLetter,
 } from '../services/letters.ts'
-
-const newLetterSchema = body({
-  kind: string()
-    .required()
-    .oneOf([...letterKinds], 'This kind of letter is not known'),
-})
+import { answerStale } from '../services/versions.ts'
 
 const base = '/children/:childId/letters'
 
@@ -93,6 +86,18 @@ const answerWith = async (req: Request, letterId: string) => {
   return presentLetter(letter, access, { checks, recipients, deliveries })
 }
 
+const readLetter = async (req: Request) => {
+  const view = await answerWith(req, String(req.params.letterId))
+  await recordChildRead(req.actor, accessOf(req), 'letter.read', { objectType: 'letter', objectId: view.id })
+  return view
+}
+
+/** Waits for an act on the letter of the address and shows what it is now. */
+const answerAct = async (req: Request, act: Promise<unknown>) => {
+  await answerStale(act, () => readLetter(req))
+  return answerWith(req, String(req.params.letterId))
+}
+
 export const letterRoutes = ({ appUrl }: { appUrl: string }): Router => {
   const router = Router()
 
@@ -123,26 +128,20 @@ export const letterRoutes = ({ appUrl }: { appUrl: string }): Router => {
   })
 
   router.get(`${base}/:letterId`, allow(letterPolicies.read), async (req, res) => {
-    const view = await answerWith(req, String(req.params.letterId))
-    await recordChildRead(req.actor, accessOf(req), 'letter.read', {
-      objectType: 'letter',
-      objectId: view.id,
-    })
-    res.json(view)
+    res.json(await readLetter(req))
   })
 
   router.put(`${base}/:letterId`, allow(letterPolicies.change), async (req, res) => {
     const version = ifMatchOf(req)
     const draft = (await bodyOf(req, letterDraftSchema)) as LetterDraft
     const letter = await letterFor(req, canChangeLetter)
-    await changeLetter(req.actor, accessOf(req), letter, version, draft)
-    res.json(await answerWith(req, letter.id))
+    res.json(await answerAct(req, changeLetter(req.actor, accessOf(req), letter, version, draft)))
   })
 
   router.delete(`${base}/:letterId`, allow(letterPolicies.change), async (req, res) => {
     const version = ifMatchOf(req)
     const letter = await letterFor(req, canDiscardLetter)
-    await discardLetter(req.actor, accessOf(req), letter, version)
+    await answerStale(discardLetter(req.actor, accessOf(req), letter, version), () => readLetter(req))
     res.status(204).end()
   })
 
@@ -154,46 +153,40 @@ export const letterRoutes = ({ appUrl }: { appUrl: string }): Router => {
   router.post(`${base}/:letterId/submit`, allow(letterPolicies.change), async (req, res) => {
     const version = ifMatchOf(req)
     const letter = await letterFor(req, canSubmitLetter)
-    await submitLetter(req.actor, accessOf(req), letter, version)
-    res.json(await answerWith(req, letter.id))
+    res.json(await answerAct(req, submitLetter(req.actor, accessOf(req), letter, version)))
   })
 
   router.post(`${base}/:letterId/approve`, allow(letterPolicies.approve), async (req, res) => {
     const version = ifMatchOf(req)
     const approval = await bodyOf(req, letterApprovalSchema)
     const letter = await letterFor(req, canApproveLetter)
-    await approveLetter(req.actor, accessOf(req), letter, version, approval)
-    res.json(await answerWith(req, letter.id))
+    res.json(await answerAct(req, approveLetter(req.actor, accessOf(req), letter, version, approval)))
   })
 
   router.post(`${base}/:letterId/return`, allow(letterPolicies.return), async (req, res) => {
     const version = ifMatchOf(req)
     const request = await bodyOf(req, letterReturnSchema)
     const letter = await letterFor(req, canReturnLetter)
-    await returnLetter(req.actor, accessOf(req), letter, version, request)
-    res.json(await answerWith(req, letter.id))
+    res.json(await answerAct(req, returnLetter(req.actor, accessOf(req), letter, version, request)))
   })
 
   router.post(`${base}/:letterId/take-back`, allow(letterPolicies.change), async (req, res) => {
     const version = ifMatchOf(req)
     const letter = await letterFor(req, canTakeBackLetter)
-    await takeBackLetter(req.actor, accessOf(req), letter, version)
-    res.json(await answerWith(req, letter.id))
+    res.json(await answerAct(req, takeBackLetter(req.actor, accessOf(req), letter, version)))
   })
 
   router.post(`${base}/:letterId/send`, allow(letterPolicies.send), async (req, res) => {
     const version = ifMatchOf(req)
     const { guardianIds } = await bodyOf(req, letterSendSchema)
     const letter = await letterFor(req, canSendLetter)
-    await sendLetter(req.actor, accessOf(req), letter, version, guardianIds, appUrl)
-    res.json(await answerWith(req, letter.id))
+    res.json(await answerAct(req, sendLetter(req.actor, accessOf(req), letter, version, guardianIds, appUrl)))
   })
 
   router.post(`${base}/:letterId/recall`, allow(letterPolicies.send), async (req, res) => {
     const version = ifMatchOf(req)
     const letter = await letterFor(req, canRecallLetter)
-    await recallLetter(req.actor, accessOf(req), letter, version)
-    res.json(await answerWith(req, letter.id))
+    res.json(await answerAct(req, recallLetter(req.actor, accessOf(req), letter, version)))
   })
 
   router.get(`${base}/:letterId/pdf`, allow(letterPolicies.read), async (req, res) => {

@@ -19,7 +19,7 @@ import {
   saveQuestionnaire,
   startQuestionnaire,
 } from '../services/questionnaires.ts'
-import { answerStale } from '../services/staleWrites.ts'
+import { answerStale } from '../services/versions.ts'
 
 const base = '/children/:childId/questionnaires'
 const nothing = body({})

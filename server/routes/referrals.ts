@@ -6,7 +6,7 @@ import {
   referralSchema,
   referralStatuses,
 } from '../../shared/referrals.ts'
-import { invalid } from '../errors.ts'
+import { conflict, invalid } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
 import {
   bodyOf,
@@ -17,15 +17,17 @@ import {
   queryText,
 } from '../middleware/requestBody.ts'
 import { viewerOf } from '../middleware/requestContext.ts'
-import { referralPolicies } from '../policies/referrals.ts'
+import { isUndecided, referralPolicies } from '../policies/referrals.ts'
 import { presentPage } from '../presenters/pages.ts'
-import { presentDuplicate, presentReferralRow } from '../presenters/referrals.ts'
-import { listReferrals, referralSorts } from '../queries/referrals.ts'
+import { presentDuplicate, presentReferral, presentReferralRow } from '../presenters/referrals.ts'
+import { findReferral, listReferrals, referralSorts } from '../queries/referrals.ts'
 import { listSameChild, type NamedChild } from '../queries/sameChild.ts'
 import { recordAudit } from '../services/audit.ts'
 import { acceptReferral } from '../services/referrals/accept.ts'
-import { changeReferral, declineReferral, enterReferral, viewReferral } from '../services/referrals/enter.ts'
+import { SameChildKnown } from '../services/referrals/child.ts'
+import { changeReferral, declineReferral, enterReferral } from '../services/referrals/enter.ts'
 import { clinicToday, readSettings } from '../services/settings.ts'
+import { answerStale } from '../services/versions.ts'
 
 const namedChildOf = (req: Request): NamedChild => {
   const [givenName, familyName, birthDate] = ['givenName', 'familyName', 'birthDate'].map((name) =>
@@ -39,9 +41,39 @@ const namedChildOf = (req: Request): NamedChild => {
   return { givenName, familyName, birthDate }
 }
 
+const refuseSecondRecord = (error: unknown): never => {
+  if (!(error instanceof SameChildKnown)) throw error
+  throw conflict(
+    'duplicate',
+    'A child of this name and birth date is on the register. Say whether this is the same child.',
+    error.known.map(presentDuplicate),
+  )
+}
+
 export const referralRoutes = (): Router => {
   const router = Router()
   const idOf = (req: Request) => String(req.params.referralId)
+
+  /** The referral as this viewer sees it, with who else bears the name. */
+  const view = async (req: Request, id: string) => {
+    const viewer = viewerOf(req)
+    const record = await findReferral(viewer, id)
+    const sameChild = isUndecided(record.status)
+      ? await listSameChild(record.details, id, undefined, { reader: viewer })
+      : []
+    return presentReferral(record, sameChild, viewer)
+  }
+
+  const viewForReading = async (req: Request) => {
+    const referral = await view(req, idOf(req))
+    await recordAudit(req.actor, {
+      action: 'referral.read',
+      objectType: 'referral',
+      objectId: referral.id,
+      childId: referral.childId,
+    })
+    return referral
+  }
 
   router.get('/referrals', allow(referralPolicies.list), async (req, res) => {
     const page = pageOf(req)
@@ -74,37 +106,36 @@ export const referralRoutes = (): Router => {
     const viewer = viewerOf(req)
     const details = await bodyOf(req, referralSchema)
     const id = await enterReferral(req.actor, viewer, details, idempotencyKeyOf(req))
-    res.status(201).json(await viewReferral(viewer, id))
+    res.status(201).json(await view(req, id))
   })
 
   router.get('/referrals/:referralId', allow(referralPolicies.read), async (req, res) => {
-    const referral = await viewReferral(viewerOf(req), idOf(req))
-    await recordAudit(req.actor, {
-      action: 'referral.read',
-      objectType: 'referral',
-      objectId: referral.id,
-      childId: referral.childId,
-    })
-    res.json(referral)
+    res.json(await viewForReading(req))
   })
 
   router.put('/referrals/:referralId', allow(referralPolicies.change), async (req, res) => {
-    const viewer = viewerOf(req)
-    await changeReferral(req.actor, viewer, idOf(req), ifMatchOf(req), await bodyOf(req, referralSchema))
-    res.json(await viewReferral(viewer, idOf(req)))
+    const version = ifMatchOf(req)
+    const details = await bodyOf(req, referralSchema)
+    await answerStale(changeReferral(req.actor, viewerOf(req), idOf(req), version, details), () =>
+      viewForReading(req),
+    )
+    res.json(await view(req, idOf(req)))
   })
 
   router.post('/referrals/:referralId/accept', allow(referralPolicies.accept), async (req, res) => {
+    const version = ifMatchOf(req)
     const decision = await bodyOf(req, acceptReferralSchema)
-    const childId = await acceptReferral(req.actor, viewerOf(req), idOf(req), ifMatchOf(req), decision)
-    res.json({ childId })
+    const accepting = acceptReferral(req.actor, viewerOf(req), idOf(req), version, decision)
+    res.json({ childId: await answerStale(accepting.catch(refuseSecondRecord), () => viewForReading(req)) })
   })
 
   router.post('/referrals/:referralId/decline', allow(referralPolicies.decline), async (req, res) => {
-    const viewer = viewerOf(req)
+    const version = ifMatchOf(req)
     const decision = await bodyOf(req, declineReferralSchema)
-    await declineReferral(req.actor, viewer, idOf(req), ifMatchOf(req), decision)
-    res.json(await viewReferral(viewer, idOf(req)))
+    await answerStale(declineReferral(req.actor, viewerOf(req), idOf(req), version, decision), () =>
+      viewForReading(req),
+    )
+    res.json(await view(req, idOf(req)))
   })
 
   return router

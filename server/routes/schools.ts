@@ -6,9 +6,10 @@ import { viewerOf } from '../middleware/requestContext.ts'
 import { notFound } from '../errors.ts'
 import { schoolPolicies } from '../policies/schools.ts'
 import { presentPage } from '../presenters/pages.ts'
-import { presentClassChoice, presentSchool } from '../presenters/schools.ts'
-import { findSchool, listClassChoices, listClassesOf, listSchools } from '../queries/schools.ts'
+import { presentClassChoice, presentCurrentClass, presentSchool } from '../presenters/schools.ts'
+import { findClass, findSchool, listClassChoices, listClassesOf, listSchools } from '../queries/schools.ts'
 import { changeClass, createClass, createSchool } from '../services/schools.ts'
+import { answerStale } from '../services/versions.ts'
 
 export const schoolRoutes = (): Router => {
   const router = Router()
@@ -39,7 +40,13 @@ export const schoolRoutes = (): Router => {
 
   router.put('/classes/:classId', allow(schoolPolicies.changeClass), async (req, res) => {
     const id = String(req.params.classId)
-    await changeClass(req.actor, id, ifMatchOf(req), await bodyOf(req, schoolClassSchema))
+    const version = ifMatchOf(req)
+    const details = await bodyOf(req, schoolClassSchema)
+    await answerStale(changeClass(req.actor, id, version, details), async () => {
+      const current = await findClass(id)
+      if (!current) throw notFound()
+      return presentCurrentClass(current)
+    })
     res.json({ id })
   })
 

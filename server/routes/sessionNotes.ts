@@ -11,7 +11,7 @@ import { findNote, listNotes, listRevisions } from '../queries/sessionNotes.ts'
 import { recordChildRead } from '../services/audit.ts'
 import { countersignNote, signNote } from '../services/noteSigning.ts'
 import { addAddendum, createNote, discardNote, saveNote } from '../services/sessionNotes.ts'
-import { answerStale } from '../services/staleWrites.ts'
+import { answerStale } from '../services/versions.ts'
 
 const base = '/children/:childId/session-notes'
 const nothing = body({})

@@ -6,6 +6,7 @@ import { viewerOf } from '../middleware/requestContext.ts'
 import { settingsPolicies } from '../policies/settings.ts'
 import { presentSettings } from '../presenters/settings.ts'
 import { changeSettings, readSettingsRow } from '../services/settings.ts'
+import { answerStale } from '../services/versions.ts'
 
 export const settingsRoutes = (): Router => {
   const router = Router()
@@ -15,8 +16,9 @@ export const settingsRoutes = (): Router => {
   })
 
   router.put('/settings', allow(settingsPolicies.change), async (req, res) => {
-    await changeSettings(req.actor, await bodyOf(req, settingsSchema), ifMatchOf(req))
-    res.json(presentSettings(await readSettingsRow(), viewerOf(req)))
+    const show = async () => presentSettings(await readSettingsRow(), viewerOf(req))
+    await answerStale(changeSettings(req.actor, await bodyOf(req, settingsSchema), ifMatchOf(req)), show)
+    res.json(await show())
   })
 
   return router

@@ -11,6 +11,7 @@ import { presentUser } from '../presenters/users.ts'
 import { findUser, listUsers } from '../queries/users.ts'
 import { recordAudit } from '../services/audit.ts'
 import { changeUser, disableUser, enableUser, inviteUser } from '../services/users.ts'
+import { answerStale } from '../services/versions.ts'
 import type { RouteSettings } from './all.ts'
 
 export const userRoutes = ({ appUrl }: RouteSettings): Router => {
@@ -44,7 +45,12 @@ export const userRoutes = ({ appUrl }: RouteSettings): Router => {
 
   router.patch('/users/:userId', allow(userPolicies.change), async (req, res) => {
     const version = ifMatchOf(req)
-    await changeUser(req.actor, viewerOf(req), idOf(req), version, await bodyOf(req, userChangeSchema))
+    const change = await bodyOf(req, userChangeSchema)
+    await answerStale(changeUser(req.actor, viewerOf(req), idOf(req), version, change), async () => {
+      const user = await show(req, idOf(req))
+      await recordAudit(req.actor, { action: 'user.read', objectType: 'user', objectId: user.id })
+      return user
+    })
     res.json(await show(req, idOf(req)))
   })
 

@@ -12,19 +12,16 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import type { Tx } from '../dataSource.ts'
 import { Child } from '../entities/Child.ts'
 import { SchoolClass } from '../entities/SchoolClass.ts'
-import { conflict, invalid, notFound } from '../errors.ts'
+import { conflict, invalid } from '../errors.ts'
 import { canJudgeCompetence } from '../policies/children.ts'
-import { presentIdentity } from '../presenters/children/header.ts'
 import { findIdentity } from '../queries/children/identity.ts'
 import { lockChild } from '../queries/lockChild.ts'
-import { within } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import { raiseAlert } from './alerts.ts'
 import { assign, currentTherapist } from './assignments.ts'
 import type { AuditFact } from './audit.ts'
 import { lockOpenEpisode } from './episodes.ts'
 import { clinicToday, readSettings } from './settings.ts'
-import { answerStale, StaleWrite } from './staleWrites.ts'
 import { addTask } from './tasks.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -37,10 +34,7 @@ const fact = (access: ChildAccess, action: string): AuditFact => ({
   relation: access.relation,
 })
 
-const currentIdentity = (access: ChildAccess) => async () =>
-  presentIdentity(await findIdentity(access), access)
-
-/** Changes identity and contact facts. A change of class makes the therapist look at what the school was told. */
+/** Changes identity and contact facts. A change of class makes the therapist look at what the school was told. Throws StaleWrite. */
 export const changeIdentity = async (
   actor: Actor,
   access: ChildAccess,
@@ -50,24 +44,20 @@ export const changeIdentity = async (
   const today = clinicToday(await readSettings())
   const problem = birthDateProblem(identity.birthDate, today)
   if (problem !== null) throw invalid({ birthDate: problem })
-  await answerStale(
-    transact(actor, async (tx, record) => {
-      await lockChild(access, tx)
-      const before = await findIdentity(access, tx)
-      if (identity.consentsForSelf !== before.consentsForSelf && !canJudgeCompetence(access))
-        throw invalid({ consentsForSelf: 'Whether a young person decides alone is for the therapist to say' })
-      if (classId !== null && !(await tx.existsBy(SchoolClass, { id: classId })))
-        throw invalid({ classId: 'This class is not on the list' })
-      const changed = await updateIfCurrent(tx, Child, access.childId, version, {
-        ...identity,
-        schoolClassId: classId,
-      })
-      if (!changed) throw new StaleWrite()
-      if (classId !== before.classId) await askAboutSchool(tx, access, today)
-      record(fact(access, 'child.identity_changed'))
-    }),
-    currentIdentity(access),
-  )
+  await transact(actor, async (tx, record) => {
+    await lockChild(access, tx)
+    const before = await findIdentity(access, tx)
+    if (identity.consentsForSelf !== before.consentsForSelf && !canJudgeCompetence(access))
+      throw invalid({ consentsForSelf: 'Whether a young person decides alone is for the therapist to say' })
+    if (classId !== null && !(await tx.existsBy(SchoolClass, { id: classId })))
+      throw invalid({ classId: 'This class is not on the list' })
+    await updateIfCurrent(tx, Child, access.childId, version, {
+      ...identity,
+      schoolClassId: classId,
+    })
+    if (classId !== before.classId) await askAboutSchool(tx, access, today)
+    record(fact(access, 'child.identity_changed'))
+  })
 }
 
 const askAboutSchool = async (tx: Tx, { childId }: ChildAccess, today: Day) => {
@@ -87,7 +77,7 @@ const askAboutSchool = async (tx: Tx, { childId }: ChildAccess, today: Day) => {
   })
 }
 
-/** Keeps strengths, writing hand and next review. A hand that changed is looked at by a person, never explained here. */
+/** Keeps strengths, writing hand and next review. A hand that changed is looked at by a person. Throws StaleWrite. */
 export const changeCare = async (
   actor: Actor,
   access: ChildAccess,
@@ -95,34 +85,17 @@ export const changeCare = async (
   care: CareDetails,
 ): Promise<void> => {
   const today = clinicToday(await readSettings())
-  await answerStale(
-    transact(actor, async (tx, record) => {
-      await lockChild(access, tx)
-      const before = await tx.findOneByOrFail(Child, { id: access.childId })
-      const { nextReviewOn } = care
-      if (
-        nextReviewOn !== null &&
-        nextReviewOn !== before.nextReviewOn &&
-        compareDays(nextReviewOn, today) < 0
-      )
-        throw invalid({ nextReviewOn: 'The next review cannot be in the past' })
-      if (!(await updateIfCurrent(tx, Child, access.childId, version, care))) throw new StaleWrite()
-      record(fact(access, 'child.care_changed'))
-      if (before.writingHand !== null && care.writingHand !== null && before.writingHand !== care.writingHand)
-        await noteChangeOfHand(tx, record, access, before.writingHand, care.writingHand, today)
-    }),
-    () => currentCare(access),
-  )
-}
-
-const currentCare = async (access: ChildAccess) => {
-  const scope = within(access, 'c.id')
-  const row = await selectOne<CareDetails & { version: number }>(
-    `SELECT c.writingHand, c.nextReviewOn, c.strengths, c.version FROM children c WHERE ${scope.sql}`,
-    scope.parameters,
-  )
-  if (!row) throw notFound()
-  return row
+  await transact(actor, async (tx, record) => {
+    await lockChild(access, tx)
+    const before = await tx.findOneByOrFail(Child, { id: access.childId })
+    const { nextReviewOn } = care
+    if (nextReviewOn !== null && nextReviewOn !== before.nextReviewOn && compareDays(nextReviewOn, today) < 0)
+      throw invalid({ nextReviewOn: 'The next review cannot be in the past' })
+    await updateIfCurrent(tx, Child, access.childId, version, care)
+    record(fact(access, 'child.care_changed'))
+    if (before.writingHand !== null && care.writingHand !== null && before.writingHand !== care.writingHand)
+      await noteChangeOfHand(tx, record, access, before.writingHand, care.writingHand, today)
+  })
 }
 
 const noteChangeOfHand = async (

@@ -16,17 +16,15 @@ import type { Tx } from '../dataSource.ts'
 import { Child } from '../entities/Child.ts'
 import { Episode } from '../entities/Episode.ts'
 import { EpisodeChange } from '../entities/EpisodeChange.ts'
-import { conflict, invalid, notFound } from '../errors.ts'
+import { conflict, invalid } from '../errors.ts'
 import { stateChoices } from '../policies/children.ts'
-import { latestEpisode } from '../queries/episodes.ts'
+import { findEpisode } from '../queries/episodes.ts'
 import { lockChild } from '../queries/lockChild.ts'
-import { within } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import { requireConsent } from './recordRules.ts'
 import { clinicToday, readSettings } from './settings.ts'
-import { answerStale, StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
-import { updateIfCurrent } from './versions.ts'
+import { StaleWrite, updateIfCurrent } from './versions.ts'
 
 export interface NewEpisode {
   childId: string
@@ -82,24 +80,13 @@ export const lockOpenEpisode = (
     tx,
   )
 
-type CurrentEpisode = Pick<Episode, 'id' | 'state' | 'firstSeenOn' | 'version'>
-
-const findEpisode = (access: ChildAccess, tx?: Tx): Promise<CurrentEpisode | null> => {
-  const scope = within(access, 'e.childId')
-  return selectOne<CurrentEpisode>(
-    `SELECT e.id, e.state, e.firstSeenOn, e.version FROM episodes e
-     WHERE e.id = ${latestEpisode('e.childId')} AND ${scope.sql} ${tx ? 'FOR UPDATE' : ''}`,
-    scope.parameters,
-    tx,
-  )
-}
-
 /** States in which the clinic works with the child; each needs consent to assessment and therapy. */
 const statesWithChild: readonly EpisodeState[] = ['consented', 'assessing', 'formulated', 'active', 'review']
 
 /**
  * Moves the child's episode on and keeps who, when and why. The wait ends when the assessment begins; the next review
- * follows the clinic's interval. 409 `closed` for a closed episode, 409 `consent_needed` without consent.
+ * follows the clinic's interval. 409 `closed` for a closed episode, 409 `consent_needed` without consent;
+ * throws StaleWrite when somebody moved it in between.
  */
 export const changeState = async (
   actor: Actor,
@@ -109,48 +96,41 @@ export const changeState = async (
 ): Promise<void> => {
   const settings = await readSettings()
   const today = clinicToday(settings)
-  await answerStale(
-    transact(actor, async (tx, record) => {
-      await lockChild(access, tx)
-      const episode = await findEpisode(access, tx)
-      if (!episode || !isOpen(episode.state))
-        throw conflict('closed', 'This episode is closed. A new referral opens a new one.')
-      if (episode.version !== version) throw new StaleWrite()
-      if (!stateChoices(access, episode.state).includes(to))
-        throw invalid({
-          to: `“${episodeStateLabels[to]}” cannot follow “${episodeStateLabels[episode.state]}” here`,
-        })
-      if (statesWithChild.includes(to)) await requireConsent(tx, access, 'assessment_treatment')
-      await updateIfCurrent(tx, Episode, episode.id, version, {
-        state: to,
-        firstSeenOn: to === 'assessing' ? (episode.firstSeenOn ?? today) : episode.firstSeenOn,
-        closedOn: isOpen(to) ? null : today,
+  await transact(actor, async (tx, record) => {
+    await lockChild(access, tx)
+    const episode = await findEpisode(access, tx)
+    if (!episode || !isOpen(episode.state))
+      throw conflict('closed', 'This episode is closed. A new referral opens a new one.')
+    if (episode.version !== version) throw new StaleWrite()
+    if (!stateChoices(access, episode.state).includes(to))
+      throw invalid({
+        to: `“${episodeStateLabels[to]}” cannot follow “${episodeStateLabels[episode.state]}” here`,
       })
-      await tx.insert(EpisodeChange, {
-        id: randomUUID(),
-        episodeId: episode.id,
-        fromState: episode.state,
-        toState: to,
-        reason,
-        byId: access.viewer.id,
-        at: now(),
-      })
-      await moveReview(tx, access, { from: episode.state, to, today, reviewWeeks: settings.reviewWeeks })
-      record({
-        action: 'episode.state_changed',
-        objectType: 'episode',
-        objectId: episode.id,
-        childId: access.childId,
-        relation: access.relation,
-        detail: { from: episode.state, to },
-      })
-    }),
-    async () => {
-      const current = await findEpisode(access)
-      if (!current) throw notFound()
-      return { state: current.state, episodeVersion: current.version }
-    },
-  )
+    if (statesWithChild.includes(to)) await requireConsent(tx, access, 'assessment_treatment')
+    await updateIfCurrent(tx, Episode, episode.id, version, {
+      state: to,
+      firstSeenOn: to === 'assessing' ? (episode.firstSeenOn ?? today) : episode.firstSeenOn,
+      closedOn: isOpen(to) ? null : today,
+    })
+    await tx.insert(EpisodeChange, {
+      id: randomUUID(),
+      episodeId: episode.id,
+      fromState: episode.state,
+      toState: to,
+      reason,
+      byId: access.viewer.id,
+      at: now(),
+    })
+    await moveReview(tx, access, { from: episode.state, to, today, reviewWeeks: settings.reviewWeeks })
+    record({
+      action: 'episode.state_changed',
+      objectType: 'episode',
+      objectId: episode.id,
+      childId: access.childId,
+      relation: access.relation,
+      detail: { from: episode.state, to },
+    })
+  })
 }
 
 const moveReview = async (

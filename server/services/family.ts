@@ -14,7 +14,6 @@ import { withdrawConsent } from './consentWithdrawal.ts'
 import { insertConsent } from './consents.ts'
 import { once } from './once.ts'
 import { clinicToday, readSettings } from './settings.ts'
-import { StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
 
@@ -36,7 +35,7 @@ export const changeOwnContact = (
   transact(actor, async (tx, record) => {
     if (access.guardianId === null) throw notFound()
     const own = await findForChild(access, Guardian, access.guardianId, tx, { lock: true })
-    if (!(await updateIfCurrent(tx, Guardian, own.id, version, { phone, address }))) throw new StaleWrite()
+    await updateIfCurrent(tx, Guardian, own.id, version, { phone, address })
     record(fact(access, 'guardian.contact_changed', 'guardian', own.id))
   })
 

@@ -18,7 +18,6 @@ import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { clinicToday, readSettings } from './settings.ts'
-import { StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
 
@@ -140,7 +139,7 @@ export const endGoal = async (
   await transact(actor, async (tx, record) => {
     const goal = await openGoal(tx, access, goalId)
     const patch = { endedOn, outcome, endReason: reason }
-    if (!(await updateIfCurrent(tx, Goal, goalId, version ?? goal.version, patch))) throw new StaleWrite()
+    await updateIfCurrent(tx, Goal, goalId, version ?? goal.version, patch)
     record({ ...fact(access, 'ended', goalId), detail: { outcome } })
   })
 }

@@ -8,15 +8,12 @@ import type { Tx } from '../dataSource.ts'
 import { Guardian } from '../entities/Guardian.ts'
 import { conflict, forbidden, notFound } from '../errors.ts'
 import { canRestrictGuardian } from '../policies/guardians.ts'
-import { presentGuardian } from '../presenters/guardians.ts'
-import { listGuardians } from '../queries/guardians.ts'
 import { findForChild } from '../queries/scope.ts'
 import { currentTherapist } from './assignments.ts'
 import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
 import { cancelDeliveriesToGuardian } from './letterDeliveries.ts'
 import { clinicToday, readSettings } from './settings.ts'
-import { answerStale, StaleWrite } from './staleWrites.ts'
 import { addTask } from './tasks.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -58,12 +55,6 @@ export const lockGuardian = async (tx: Tx, access: ChildAccess, id: string): Pro
   return guardian
 }
 
-const currentGuardian = (access: ChildAccess, id: string) => async () => {
-  const [row] = await listGuardians(access, id)
-  if (!row) throw notFound()
-  return presentGuardian(row, access)
-}
-
 /** Answers the id of the new carer; the same form sent again answers the first one's. */
 export const addGuardian = (
   actor: Actor,
@@ -86,7 +77,7 @@ export const addGuardian = (
 
 /**
  * Changes what is known of a carer. Where writing is no longer safe nothing queued leaves; where parental
- * responsibility has ended the consents that rest on it are looked at by the therapist.
+ * responsibility has ended the consents that rest on it are looked at by the therapist. Throws StaleWrite.
  */
 export const changeGuardian = async (
   actor: Actor,
@@ -96,24 +87,21 @@ export const changeGuardian = async (
   details: GuardianDetails,
 ): Promise<void> => {
   const today = clinicToday(await readSettings())
-  await answerStale(
-    transact(actor, async (tx, record) => {
-      const before = await lockGuardian(tx, access, id)
-      if (!(await updateIfCurrent(tx, Guardian, id, version, details))) throw new StaleWrite()
-      if (before.safeToContact && !details.safeToContact) await cancelDeliveriesToGuardian(tx, id)
-      if (before.parentalResponsibility === 'yes' && details.parentalResponsibility !== 'yes')
-        await addTask(tx, {
-          childId: access.childId,
-          kind: 'responsibility_changed',
-          text: 'Parental responsibility of a carer changed: see which consents still hold',
-          dueOn: addWorkingDays(today, 1),
-          assigneeId: await currentTherapist(tx, access.childId),
-          otherwise: 'clinicLead',
-        })
-      record(guardianFact(access, 'guardian.changed', id))
-    }),
-    currentGuardian(access, id),
-  )
+  await transact(actor, async (tx, record) => {
+    const before = await lockGuardian(tx, access, id)
+    await updateIfCurrent(tx, Guardian, id, version, details)
+    if (before.safeToContact && !details.safeToContact) await cancelDeliveriesToGuardian(tx, id)
+    if (before.parentalResponsibility === 'yes' && details.parentalResponsibility !== 'yes')
+      await addTask(tx, {
+        childId: access.childId,
+        kind: 'responsibility_changed',
+        text: 'Parental responsibility of a carer changed: see which consents still hold',
+        dueOn: addWorkingDays(today, 1),
+        assigneeId: await currentTherapist(tx, access.childId),
+        otherwise: 'clinicLead',
+      })
+    record(guardianFact(access, 'guardian.changed', id))
+  })
 }
 
 /** Closes the record to a carer at once and stops what is queued to them, or lifts that again. */

@@ -95,7 +95,7 @@ export const approveLetter = async (
       approvedById: access.viewer.id,
       approvedAt,
     })
-    await patchLetter(tx, access, letter, version, {
+    await patchLetter(tx, letter, version, {
       state: 'approved',
       approvedVersionId: versionId,
       returnedReason: null,

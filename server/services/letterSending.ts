@@ -43,7 +43,7 @@ export const sendLetter = async (
 ): Promise<void> => {
   const settings = await readSettings()
   await transact(actor, async (tx, record) => {
-    await patchLetter(tx, access, letter, version, { state: 'queued' })
+    await patchLetter(tx, letter, version, { state: 'queued' })
     await assertTreatmentConsent(tx, access)
     const carers = await listRecipients(access, tx)
     const chosen = [...new Set(guardianIds)].map((id) => {
@@ -118,7 +118,7 @@ const assertNotUnderWay = async (tx: Tx, letterId: string, carer: RecipientRow) 
 /** Stops what has not left yet. What was sent stays sent. */
 export const recallLetter = (actor: Actor, access: ChildAccess, letter: LetterRecord, version: number) =>
   transact(actor, async (tx, record) => {
-    await patchLetter(tx, access, letter, version, { state: 'recalled' })
+    await patchLetter(tx, letter, version, { state: 'recalled' })
     await cancelDeliveriesOfLetter(tx, letter.id)
     record(letterFact(access, 'letter.recalled', letter.id))
   })

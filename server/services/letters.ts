@@ -5,8 +5,8 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { Letter } from '../entities/Letter.ts'
-import { conflict, stale } from '../errors.ts'
-import { findLetter, type LetterRecord } from '../queries/letters.ts'
+import { conflict } from '../errors.ts'
+import type { LetterRecord } from '../queries/letters.ts'
 import { readProgressFacts } from '../queries/progressFacts.ts'
 import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
@@ -63,22 +63,13 @@ export const createProgressLetter = async (
   )
 }
 
-/** Applies a change to a letter that must still have the version the person saw; otherwise 409 with what is stored. */
-export const patchLetter = async (
+/** Applies a change to a letter that must still have the version the person saw; throws StaleWrite otherwise. */
+export const patchLetter = (
   tx: Tx,
-  access: ChildAccess,
   letter: LetterRecord,
   version: number,
   patch: Parameters<typeof updateIfCurrent<Letter>>[4],
-): Promise<void> => {
-  const changed = await updateIfCurrent<Letter>(tx, Letter, letter.id, version, {
-    ...patch,
-    changedAt: now(),
-  })
-  if (changed) return
-  const current = await findLetter(access, letter.id, tx)
-  throw stale({ version: current.version, state: current.state, ...current.content })
-}
+): Promise<void> => updateIfCurrent<Letter>(tx, Letter, letter.id, version, { ...patch, changedAt: now() })
 
 /** Saves the text of a draft. */
 export const changeLetter = (
@@ -89,14 +80,14 @@ export const changeLetter = (
   content: LetterDraft,
 ) =>
   transact(actor, async (tx, record) => {
-    await patchLetter(tx, access, letter, version, { content })
+    await patchLetter(tx, letter, version, { content })
     record(letterFact(access, 'letter.changed', letter.id))
   })
 
 /** A newly qualified author hands the letter to the lead. */
 export const submitLetter = (actor: Actor, access: ChildAccess, letter: LetterRecord, version: number) =>
   transact(actor, async (tx, record) => {
-    await patchLetter(tx, access, letter, version, { state: 'awaiting_approval', returnedReason: null })
+    await patchLetter(tx, letter, version, { state: 'awaiting_approval', returnedReason: null })
     record(letterFact(access, 'letter.submitted', letter.id))
   })
 
@@ -109,20 +100,20 @@ export const returnLetter = (
   { reason }: LetterReturn,
 ) =>
   transact(actor, async (tx, record) => {
-    await patchLetter(tx, access, letter, version, { state: 'draft', returnedReason: reason })
+    await patchLetter(tx, letter, version, { state: 'draft', returnedReason: reason })
     record(letterFact(access, 'letter.returned', letter.id))
   })
 
 /** Opens a submitted or approved, unsent letter for changes: it must be approved again afterwards. */
 export const takeBackLetter = (actor: Actor, access: ChildAccess, letter: LetterRecord, version: number) =>
   transact(actor, async (tx, record) => {
-    await patchLetter(tx, access, letter, version, { state: 'draft', approvedVersionId: null })
+    await patchLetter(tx, letter, version, { state: 'draft', approvedVersionId: null })
     record(letterFact(access, 'letter.reopened', letter.id))
   })
 
 export const discardLetter = (actor: Actor, access: ChildAccess, letter: LetterRecord, version: number) =>
   transact(actor, async (tx, record) => {
     if (letter.state !== 'draft') throw conflict('closed', 'Only a draft can be discarded.')
-    await patchLetter(tx, access, letter, version, { discardedAt: now() })
+    await patchLetter(tx, letter, version, { discardedAt: now() })
     record(letterFact(access, 'letter.discarded', letter.id))
   })

@@ -13,9 +13,8 @@ import { canSignNote, mayCountersign } from '../policies/sessionNotes.ts'
 import { findForChild } from '../queries/scope.ts'
 import { noteFact, openDraft } from './sessionNotes.ts'
 import { readSettings } from './settings.ts'
-import { StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
-import { updateIfCurrent } from './versions.ts'
+import { StaleWrite, updateIfCurrent } from './versions.ts'
 
 const hashOf = (noteId: string, childId: string, content: NoteDraft): Buffer =>
   createHash('sha256')
@@ -69,7 +68,7 @@ export const signNote = async (
 
     const state = viewer.newlyQualified ? 'awaiting_countersignature' : 'signed'
     const textHash = hashOf(id, access.childId, content)
-    if (!(await updateIfCurrent(tx, SessionNote, id, version, { state }))) throw new StaleWrite()
+    await updateIfCurrent(tx, SessionNote, id, version, { state })
     await tx.insert(NoteSignature, {
       id: randomUUID(),
       noteId: id,
@@ -109,7 +108,7 @@ export const countersignNote = async (
         'The stored text is not the one that was signed. Tell the clinic lead at once.',
       )
 
-    if (!(await updateIfCurrent(tx, SessionNote, id, version, { state: 'signed' }))) throw new StaleWrite()
+    await updateIfCurrent(tx, SessionNote, id, version, { state: 'signed' })
     await tx.insert(NoteSignature, {
       id: randomUUID(),
       noteId: id,

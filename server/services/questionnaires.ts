@@ -13,7 +13,6 @@ import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { readSettings } from './settings.ts'
-import { StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
 
@@ -103,7 +102,7 @@ export const saveQuestionnaire = async (
     await openResponse(tx, access, id)
     const { informant, respondentName, answeredOn, answers, cutOffSet, comment } = draft
     const patch = { informant, respondentName, answeredOn, answers, cutOffSet, comment }
-    if (!(await updateIfCurrent(tx, QuestionnaireResponse, id, version, patch))) throw new StaleWrite()
+    await updateIfCurrent(tx, QuestionnaireResponse, id, version, patch)
     record(fact(access, 'changed', id))
     return findQuestionnaire(access, id, tx)
   })
@@ -111,7 +110,7 @@ export const saveQuestionnaire = async (
 
 /**
  * Locks a response and stores its score, computed here from the stored answers and the named cut-offs: no figure of the
- * browser is used. Unanswered activities are allowed and counted; a form without any answer is not.
+ * browser is used. Unanswered activities are allowed and counted; a form without any answer is not. Throws StaleWrite.
  */
 export const lockQuestionnaire = (
   actor: Actor,
@@ -131,7 +130,7 @@ export const lockQuestionnaire = (
       lockedAt: now(),
       lockedById: access.viewer.id,
     }
-    if (!(await updateIfCurrent(tx, QuestionnaireResponse, id, version, patch))) throw new StaleWrite()
+    await updateIfCurrent(tx, QuestionnaireResponse, id, version, patch)
     record(fact(access, 'locked', id))
   })
 

@@ -8,12 +8,10 @@ import { School } from '../entities/School.ts'
 import { SchoolClass } from '../entities/SchoolClass.ts'
 import { User } from '../entities/User.ts'
 import { invalid, notFound } from '../errors.ts'
-import { presentCurrentClass } from '../presenters/schools.ts'
 import { findClass } from '../queries/schools.ts'
 import { isId } from '../queries/scope.ts'
 import { execute } from '../queries/sql.ts'
 import { createOnce } from './once.ts'
-import { answerStale, StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
 import { unlessTaken } from './uniqueness.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -71,40 +69,32 @@ export const createClass = (actor: Actor, details: SchoolClassDetails, key: stri
 const linkTeacher = (tx: Tx, schoolClassId: string, teacherId: string) =>
   tx.insert(ClassTeacher, { id: randomUUID(), schoolClassId, teacherId, startedAt: now(), endedAt: null })
 
-/** Changes a class and who teaches it. The earlier teacher's link ends at once, and with it what they saw. */
+/** Changes a class and who teaches it; throws StaleWrite when somebody saved in between. The earlier teacher's link ends at once, and with it what they saw. */
 export const changeClass = (
   actor: Actor,
   id: string,
   version: number,
   details: SchoolClassDetails,
 ): Promise<void> =>
-  answerStale(
-    transact(actor, async (tx, record) => {
-      const before = isId(id) ? await findClass(id, tx) : null
-      if (!before) throw notFound()
-      const { teacherId, ...columns } = details
-      await assertSchool(tx, details.schoolId)
-      if (teacherId !== before.teacherId) await assertTeacher(tx, teacherId)
-      const changed = await unlessTaken(updateIfCurrent(tx, SchoolClass, id, version, columns), classTaken)
-      if (!changed) throw new StaleWrite()
-      record({ action: 'schoolClass.changed', objectType: 'schoolClass', objectId: id })
-      if (teacherId === before.teacherId) return
-      await execute(
-        tx,
-        'UPDATE class_teachers SET endedAt = :now WHERE schoolClassId = :id AND (endedAt IS NULL OR endedAt > :now)',
-        { id, now: now() },
-      )
-      if (teacherId !== null) await linkTeacher(tx, id, teacherId)
-      record({
-        action: 'schoolClass.teacher_changed',
-        objectType: 'schoolClass',
-        objectId: id,
-        detail: { from: before.teacherId, to: teacherId },
-      })
-    }),
-    async () => {
-      const current = await findClass(id)
-      if (!current) throw notFound()
-      return presentCurrentClass(current)
-    },
-  )
+  transact(actor, async (tx, record) => {
+    const before = isId(id) ? await findClass(id, tx) : null
+    if (!before) throw notFound()
+    const { teacherId, ...columns } = details
+    await assertSchool(tx, details.schoolId)
+    if (teacherId !== before.teacherId) await assertTeacher(tx, teacherId)
+    await unlessTaken(updateIfCurrent(tx, SchoolClass, id, version, columns), classTaken)
+    record({ action: 'schoolClass.changed', objectType: 'schoolClass', objectId: id })
+    if (teacherId === before.teacherId) return
+    await execute(
+      tx,
+      'UPDATE class_teachers SET endedAt = :now WHERE schoolClassId = :id AND (endedAt IS NULL OR endedAt > :now)',
+      { id, now: now() },
+    )
+    if (teacherId !== null) await linkTeacher(tx, id, teacherId)
+    record({
+      action: 'schoolClass.teacher_changed',
+      objectType: 'schoolClass',
+      objectId: id,
+      detail: { from: before.teacherId, to: teacherId },
+    })
+  })

@@ -17,7 +17,6 @@ import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
 import { requirePastDay } from './recordRules.ts'
 import { readSettings } from './settings.ts'
-import { StaleWrite } from './staleWrites.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
 
@@ -114,8 +113,7 @@ export const saveNote = async (
   const { timeZone } = await readSettings()
   return transact(actor, async (tx, record) => {
     await openDraft(tx, access, id)
-    if (!(await updateIfCurrent(tx, SessionNote, id, version, headOf(draft, timeZone))))
-      throw new StaleWrite()
+    await updateIfCurrent(tx, SessionNote, id, version, headOf(draft, timeZone))
     await keepRevision(tx, access, id, version + 1, draft)
     record(noteFact(access, 'changed', id))
     return findNote(access, id, tx)

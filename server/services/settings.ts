@@ -4,8 +4,8 @@ import { dayOf, type Day } from '../../shared/days.ts'
 import { now } from '../clock.ts'
 import { database } from '../dataSource.ts'
 import { ClinicSetting } from '../entities/ClinicSetting.ts'
-import { stale } from '../errors.ts'
 import { transact } from './transact.ts'
+import { StaleWrite } from './versions.ts'
 
 /** What a new installation starts with; the clinic changes every value under Settings. */
 export const firstSettings: ClinicSettings = {
@@ -37,7 +37,7 @@ export const readSettings = async (): Promise<ClinicSettings> => (await readSett
 export const clinicToday = (settings: Pick<ClinicSettings, 'timeZone'>): Day =>
   dayOf(now(), settings.timeZone)
 
-/** Stores the settings; version 0 means none were stored yet. Scores and letters already signed keep their own values. */
+/** Stores the settings; version 0 means none were stored yet. Scores and letters already signed keep their own values. Throws StaleWrite. */
 export const changeSettings = (actor: Actor, settings: ClinicSettings, version: number): Promise<void> =>
   transact(actor, async (tx, record) => {
     record({ action: 'settings.changed', objectType: 'settings', objectId: '1' })
@@ -54,6 +54,5 @@ export const changeSettings = (actor: Actor, settings: ClinicSettings, version: 
       )) as { affectedRows: number }
       if (changed.affectedRows === 1) return
     }
-    const current = await readSettingsRow()
-    throw stale({ ...current.settings, version: current.version })
+    throw new StaleWrite()
   })

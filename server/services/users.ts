@@ -6,18 +6,16 @@ import type { Tx } from '../dataSource.ts'
 import { User } from '../entities/User.ts'
 import { conflict, forbidden, invalid, notFound } from '../errors.ts'
 import { canChangeUser, canDisableUser, canEnableUser, invitableRoles } from '../policies/users.ts'
-import { presentUser } from '../presenters/users.ts'
 import { countOpenCases, findUser, type AccountRow } from '../queries/users.ts'
 import { spendTokens } from './accounts.ts'
 import { createOnce } from './once.ts'
 import { countInvitation, insertAccount, sendInvitation } from './invitations.ts'
 import { endSessionsOf } from './sessions.ts'
 import { clinicToday, readSettings } from './settings.ts'
-import { answerStale, StaleWrite } from './staleWrites.ts'
 import { addTask } from './tasks.ts'
 import { transact } from './transact.ts'
 import { unlessTaken } from './uniqueness.ts'
-import { updateIfCurrent } from './versions.ts'
+import { StaleWrite, updateIfCurrent } from './versions.ts'
 
 /** Makes an account for a colleague or teacher and sends the link to choose a password. Answers the account's id. */
 export const inviteUser = async (
@@ -61,7 +59,7 @@ const findOr404 = async (viewer: Viewer, id: string, tx?: Tx): Promise<AccountRo
 
 const has = (account: { roles: readonly Role[] }, role: Role) => account.roles.includes(role)
 
-/** Changes what a person may do; they sign in anew. Nobody changes their own roles. */
+/** Changes what a person may do; they sign in anew. Nobody changes their own roles. Throws StaleWrite. */
 export const changeUser = (
   actor: Actor,
   viewer: Viewer,
@@ -69,32 +67,29 @@ export const changeUser = (
   version: number,
   change: UserChange,
 ): Promise<void> =>
-  answerStale(
-    transact(actor, async (tx, record) => {
-      const account = await findOr404(viewer, id, tx)
-      if (!canChangeUser(viewer, account)) throw forbidden('Nobody changes their own roles.')
-      if (account.version !== version) throw new StaleWrite()
-      if (has(change, 'guardian') !== has(account, 'guardian'))
-        throw invalid({ roles: 'Whether somebody is a carer is decided on the child’s family page' })
-      if (has(account, 'therapist') && !has(change, 'therapist')) {
-        const cases = await countOpenCases(tx, id)
-        if (cases > 0)
-          throw invalid({
-            roles: `This person holds ${cases === 1 ? 'an open case' : `${cases} open cases`}: allocate to a colleague first`,
-          })
-      }
-      const roles = [...new Set(change.roles)]
-      await updateIfCurrent(tx, User, id, version, { roles, newlyQualified: change.newlyQualified })
-      if (roles.toSorted().join() !== account.roles.toSorted().join()) await endSessionsOf(tx, id)
-      record({
-        action: 'user.roles_changed',
-        objectType: 'user',
-        objectId: id,
-        detail: { from: account.roles, to: roles },
-      })
-    }),
-    async () => presentUser(await findOr404(viewer, id), viewer),
-  )
+  transact(actor, async (tx, record) => {
+    const account = await findOr404(viewer, id, tx)
+    if (!canChangeUser(viewer, account)) throw forbidden('Nobody changes their own roles.')
+    if (account.version !== version) throw new StaleWrite()
+    if (has(change, 'guardian') !== has(account, 'guardian'))
+      throw invalid({ roles: 'Whether somebody is a carer is decided on the child’s family page' })
+    if (has(account, 'therapist') && !has(change, 'therapist')) {
+      const cases = await countOpenCases(tx, id)
+      if (cases > 0)
+        throw invalid({
+          roles: `This person holds ${cases === 1 ? 'an open case' : `${cases} open cases`}: allocate to a colleague first`,
+        })
+    }
+    const roles = [...new Set(change.roles)]
+    await updateIfCurrent(tx, User, id, version, { roles, newlyQualified: change.newlyQualified })
+    if (roles.toSorted().join() !== account.roles.toSorted().join()) await endSessionsOf(tx, id)
+    record({
+      action: 'user.roles_changed',
+      objectType: 'user',
+      objectId: id,
+      detail: { from: account.roles, to: roles },
+    })
+  })
 
 /** Closes an account: sign-ins end with the next request, links stop working, and the lead hears of open cases. */
 export const disableUser = async (actor: Actor, viewer: Viewer, id: string): Promise<void> => {

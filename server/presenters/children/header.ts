@@ -1,10 +1,18 @@
-import type { ChildHeader, ChildIdentityView, FoundChild, RegisterRow } from '../../../shared/children.ts'
+import type {
+  CareDetails,
+  ChildHeader,
+  ChildIdentityView,
+  FoundChild,
+  RegisterRow,
+} from '../../../shared/children.ts'
 import { formatAge, type Day } from '../../../shared/days.ts'
 import type { ChildAccess } from '../../access/childAccess.ts'
 import { canChangeIdentity, sectionsFor, seesClinicalFields } from '../../policies/children.ts'
+import type { CareRow } from '../../queries/children/care.ts'
 import type { AlertRow, ChildFactsRow } from '../../queries/children/header.ts'
 import type { IdentityRow } from '../../queries/children/identity.ts'
 import type { FoundChildRow, RegisterListRow } from '../../queries/children/lists.ts'
+import type { EpisodeRow } from '../../queries/episodes.ts'
 
 interface Named {
   givenName: string
@@ -60,6 +68,17 @@ export const presentIdentity = (row: IdentityRow, access: ChildAccess): ChildIde
   version: row.version,
   can: { change: canChangeIdentity(access) },
 })
+
+/** What a stale save of the care details is answered with. */
+export const presentCare = (row: CareRow): CareDetails & { version: number } => ({
+  writingHand: row.writingHand,
+  nextReviewOn: row.nextReviewOn,
+  strengths: row.strengths,
+  version: row.version,
+})
+
+/** What a stale change of state is answered with. */
+export const presentEpisodeState = ({ state, version }: EpisodeRow) => ({ state, episodeVersion: version })
 
 export const presentFoundChild = (row: FoundChildRow): FoundChild => ({
   id: row.id,

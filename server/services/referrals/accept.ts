@@ -15,18 +15,17 @@ import type { AuditFact } from '../audit.ts'
 import { insertConsent } from '../consents.ts'
 import { lockOpenEpisode, openEpisode } from '../episodes.ts'
 import { clinicToday, readSettings } from '../settings.ts'
-import { answerStale } from '../staleWrites.ts'
 import { transact } from '../transact.ts'
 import { updateIfCurrent } from '../versions.ts'
 import { createChild, joinChild } from './child.ts'
-import { lockUndecided, viewReferral } from './enter.ts'
+import { lockUndecided } from './enter.ts'
 
 type Record = (fact: AuditFact) => void
 
 /**
  * Accepts a referral in one transaction: the child's record with its number, carers, episode of care, consents, warning
  * signs and, when chosen, the therapist. With `existingChildId` the referral joins that child instead; a child whose
- * episode is still open keeps it. Answers the child's id.
+ * episode is still open keeps it. Answers the child's id. Throws StaleWrite, and SameChildKnown before a second record.
  */
 export const acceptReferral = async (
   actor: Actor,
@@ -37,52 +36,48 @@ export const acceptReferral = async (
 ): Promise<string> => {
   const settings = await readSettings()
   const today = clinicToday(settings)
-  return answerStale(
-    transact(actor, async (tx, record) => {
-      const referral = await lockUndecided(tx, viewer, id, version)
-      const flags = referralFlagsOf(referral.details)
-      assertDecision(viewer, decision, flags)
-      if (decision.therapistId !== null)
-        await assertCanHold(tx, decision.existingChildId, decision.therapistId)
-      const { childId, guardians } =
-        decision.existingChildId === null
-          ? await createChild(tx, record, referral, decision)
-          : await joinChild(tx, record, viewer, referral, decision.existingChildId)
-      const open = await lockOpenEpisode(tx, childId)
-      await giveConsents(tx, record, viewer, {
+  return transact(actor, async (tx, record) => {
+    const referral = await lockUndecided(tx, viewer, id, version)
+    const flags = referralFlagsOf(referral.details)
+    assertDecision(viewer, decision, flags)
+    if (decision.therapistId !== null) await assertCanHold(tx, decision.existingChildId, decision.therapistId)
+    const { childId, guardians } =
+      decision.existingChildId === null
+        ? await createChild(tx, record, referral, decision)
+        : await joinChild(tx, record, viewer, referral, decision.existingChildId)
+    const open = await lockOpenEpisode(tx, childId)
+    await giveConsents(tx, record, viewer, {
+      childId,
+      guardians,
+      decision,
+      today,
+      timeZone: settings.timeZone,
+    })
+    await allocate(tx, record, viewer, childId, decision)
+    const therapistId = await currentTherapist(tx, childId)
+    if (!open)
+      await openEpisode(tx, {
         childId,
-        guardians,
-        decision,
-        today,
-        timeZone: settings.timeZone,
-      })
-      await allocate(tx, record, viewer, childId, decision)
-      const therapistId = await currentTherapist(tx, childId)
-      if (!open)
-        await openEpisode(tx, {
-          childId,
-          referralId: id,
-          receivedOn: referral.receivedOn,
-          priority: decision.priority,
-          path: ['referred', 'triaged', startOf(decision, therapistId)],
-          reason: decision.priorityReason ?? 'Referral accepted',
-          byId: viewer.id,
-        })
-      await raiseReferralFlags(tx, record, { childId, therapistId, today }, flags)
-      const status = open ? 'merged' : 'accepted'
-      await updateIfCurrent(tx, Referral, id, version, {
-        status,
+        referralId: id,
+        receivedOn: referral.receivedOn,
         priority: decision.priority,
-        childId,
-        decidedById: viewer.id,
-        decidedAt: now(),
-        decisionReason: decision.priorityReason,
+        path: ['referred', 'triaged', startOf(decision, therapistId)],
+        reason: decision.priorityReason ?? 'Referral accepted',
+        byId: viewer.id,
       })
-      record({ action: `referral.${status}`, objectType: 'referral', objectId: id, childId })
-      return childId
-    }),
-    () => viewReferral(viewer, id),
-  )
+    await raiseReferralFlags(tx, record, { childId, therapistId, today }, flags)
+    const status = open ? 'merged' : 'accepted'
+    await updateIfCurrent(tx, Referral, id, version, {
+      status,
+      priority: decision.priority,
+      childId,
+      decidedById: viewer.id,
+      decidedAt: now(),
+      decisionReason: decision.priorityReason,
+    })
+    record({ action: `referral.${status}`, objectType: 'referral', objectId: id, childId })
+    return childId
+  })
 }
 
 /** With a therapist and consent the assessment can begin; otherwise the child waits. */

@@ -7,14 +7,23 @@ import type { Tx } from '../../dataSource.ts'
 import { Child } from '../../entities/Child.ts'
 import { Guardian } from '../../entities/Guardian.ts'
 import type { Referral } from '../../entities/Referral.ts'
-import { conflict, invalid } from '../../errors.ts'
-import { presentDuplicate } from '../../presenters/referrals.ts'
-import { listSameChild } from '../../queries/sameChild.ts'
+import { invalid } from '../../errors.ts'
+import { listSameChild, type SameChildRow } from '../../queries/sameChild.ts'
 import { selectOne } from '../../queries/sql.ts'
 import { staffScope } from '../../queries/staffScope.ts'
 import type { AuditFact } from '../audit.ts'
 import { insertGuardian } from '../guardians.ts'
 import { nextRecordNumber } from '../recordNumbers.ts'
+
+/** Thrown before a second record is made of a child who may be on the register; says who is known. */
+export class SameChildKnown extends Error {
+  readonly known: readonly SameChildRow[]
+
+  constructor(known: readonly SameChildRow[]) {
+    super('A child of this name and birth date is known')
+    this.known = known
+  }
+}
 
 export interface ChildOfReferral {
   childId: string
@@ -24,7 +33,7 @@ export interface ChildOfReferral {
 
 /**
  * A new record from a complete referral. When a child of this name and birth date is known the person must have said
- * that this is another one; otherwise 409 `duplicate` with who is known.
+ * that this is another one; throws SameChildKnown otherwise.
  */
 export const createChild = async (
   tx: Tx,
@@ -38,12 +47,7 @@ export const createChild = async (
   // Taking the number first makes two referrals of one child that are accepted at once wait for each other.
   const recordNumber = await nextRecordNumber(tx, Number(receivedOn.slice(0, 4)))
   const known = await listSameChild(details, null, tx, { lock: true })
-  if (known.length > 0 && !decision.differentChild)
-    throw conflict(
-      'duplicate',
-      'A child of this name and birth date is on the register. Say whether this is the same child.',
-      known.map(presentDuplicate),
-    )
+  if (known.length > 0 && !decision.differentChild) throw new SameChildKnown(known)
   const childId = randomUUID()
   await tx.insert(Child, {
     id: childId,

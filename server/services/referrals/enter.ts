@@ -7,15 +7,12 @@ import { Referral } from '../../entities/Referral.ts'
 import { SchoolClass } from '../../entities/SchoolClass.ts'
 import { conflict, invalid, notFound } from '../../errors.ts'
 import { isUndecided } from '../../policies/referrals.ts'
-import { presentReferral } from '../../presenters/referrals.ts'
-import { findReferral, referralScope } from '../../queries/referrals.ts'
-import { listSameChild } from '../../queries/sameChild.ts'
+import { referralScope } from '../../queries/referrals.ts'
 import { isId } from '../../queries/scope.ts'
 import { createOnce } from '../once.ts'
 import { clinicToday, readSettings } from '../settings.ts'
-import { answerStale, StaleWrite } from '../staleWrites.ts'
 import { transact } from '../transact.ts'
-import { updateIfCurrent } from '../versions.ts'
+import { StaleWrite, updateIfCurrent } from '../versions.ts'
 
 const assertDetails = async (tx: Tx, details: ReferralDetails) => {
   const problems = referralDayProblems(details, clinicToday(await readSettings()))
@@ -67,15 +64,6 @@ export const enterReferral = (
     ),
   )
 
-/** The referral as this viewer sees it, with who else bears the name. */
-export const viewReferral = async (viewer: Viewer, id: string) => {
-  const record = await findReferral(viewer, id)
-  const sameChild = isUndecided(record.status)
-    ? await listSameChild(record.details, id, undefined, { reader: viewer })
-    : []
-  return presentReferral(record, sameChild, viewer)
-}
-
 /**
  * Locks a referral for a decision. Absent or not the viewer's to see: 404. Decided meanwhile: 409. Throws StaleWrite
  * when it is not the version the person saw.
@@ -105,7 +93,7 @@ export const lockUndecided = async (
   return referral
 }
 
-/** Corrects or completes a referral that is not decided yet. */
+/** Corrects or completes a referral that is not decided yet. Throws StaleWrite. */
 export const changeReferral = (
   actor: Actor,
   viewer: Viewer,
@@ -113,17 +101,14 @@ export const changeReferral = (
   version: number,
   details: ReferralDetails,
 ): Promise<void> =>
-  answerStale(
-    transact(actor, async (tx, record) => {
-      await lockUndecided(tx, viewer, id, version)
-      await assertDetails(tx, details)
-      await updateIfCurrent(tx, Referral, id, version, columnsOf(details))
-      record({ action: 'referral.changed', objectType: 'referral', objectId: id })
-    }),
-    () => viewReferral(viewer, id),
-  )
+  transact(actor, async (tx, record) => {
+    await lockUndecided(tx, viewer, id, version)
+    await assertDetails(tx, details)
+    await updateIfCurrent(tx, Referral, id, version, columnsOf(details))
+    record({ action: 'referral.changed', objectType: 'referral', objectId: id })
+  })
 
-/** Closes a referral without a record: advice, another service, or not accepted; always with the reason. */
+/** Closes a referral without a record: advice, another service, or not accepted; always with the reason. Throws StaleWrite. */
 export const declineReferral = (
   actor: Actor,
   viewer: Viewer,
@@ -131,17 +116,14 @@ export const declineReferral = (
   version: number,
   { outcome, reason }: DeclineReferral,
 ): Promise<void> =>
-  answerStale(
-    transact(actor, async (tx, record) => {
-      await lockUndecided(tx, viewer, id, version)
-      await updateIfCurrent(tx, Referral, id, version, {
-        status: 'declined',
-        outcome,
-        decisionReason: reason,
-        decidedById: viewer.id,
-        decidedAt: now(),
-      })
-      record({ action: 'referral.declined', objectType: 'referral', objectId: id, detail: { outcome } })
-    }),
-    () => viewReferral(viewer, id),
-  )
+  transact(actor, async (tx, record) => {
+    await lockUndecided(tx, viewer, id, version)
+    await updateIfCurrent(tx, Referral, id, version, {
+      status: 'declined',
+      outcome,
+      decisionReason: reason,
+      decidedById: viewer.id,
+      decidedAt: now(),
+    })
+    record({ action: 'referral.declined', objectType: 'referral', objectId: id, detail: { outcome } })
+  })
