@@ -33,7 +33,7 @@ const smudges = ({ smudge }: AdviceFacts): string | null =>
 export const toolItems: readonly AdviceItem[] = [
   {
     id: 'T01',
-    text: 'Give real left-handed scissors, with the blades the other way round. "Either-hand" scissors do not exist.',
+    text: 'Give real left-handed scissors, with the blades the other way round. “Either-hand” scissors do not exist.',
     because: 'With the blades reversed a left hand sees the line and presses the blades together.',
     audiences: ['teacher', 'parent'],
     ageFrom: 3,

@@ -65,7 +65,7 @@ describe('addresses', () => {
     ['/review', ['clinicLead']],
     ['/settings', ['clinicLead', 'administrator']],
     ['/people', ['clinicLead', 'administrator']],
-    ['/referrals/new', ['administrator', 'clinicLead']],
+    ['/referrals/new', ['clinicLead', 'administrator']],
     ['/children/c1/glance', ['therapist', 'clinicLead', 'administrator']],
     ['/my-child/c1', ['guardian']],
     ['/letter/d1', ['guardian']],
