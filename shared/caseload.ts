@@ -55,17 +55,3 @@ export type CaseloadSort = (typeof caseloadSorts)[number]
 
 export const caseloadFilters = ['open', 'closed', 'all'] as const
 export type CaseloadFilter = (typeof caseloadFilters)[number]
-
-/** Query of `GET /api/caseload`. Everything is optional in the address; defaults are applied on the server. */
-export interface CaseloadQuery {
-  page?: number
-  size?: number
-  sort?: CaseloadSort
-  direction?: 'asc' | 'desc'
-  search?: string
-  state?: EpisodeState
-  show?: CaseloadFilter
-  need?: CaseloadNeedKind
-  /** A therapist's id, or 'none' for children nobody holds. */
-  therapistId?: string
-}

@@ -90,7 +90,6 @@ export interface TaskView {
   level: Attention
   childId: string | null
   childName: string | null
-  doneAt: string | null
   can: { finish: boolean }
 }
 
@@ -117,7 +116,6 @@ export interface GlanceView {
   lastLetter: { id: string; state: string; at: string } | null
   consentMissing: string[]
   history: StateChangeView[]
-  episodeId: string | null
   episodeVersion: number | null
   version: number
   nextStates: EpisodeState[]

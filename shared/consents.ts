@@ -97,7 +97,6 @@ export const guardianConsentSchema = body({
 export const guardianWithdrawalSchema = body({
   reason: optionalText('The reason', { max: 500 }),
 })
-export type GuardianWithdrawal = InferType<typeof guardianWithdrawalSchema>
 
 export const consentWithdrawalSchema = body({
   reason: text('The reason', { min: 2, max: 500 }),

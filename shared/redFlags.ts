@@ -7,13 +7,6 @@ import type { RedFlagHistory } from './redFlagHistory.ts'
 
 export const redFlagUrgencies = ['same_day', 'priority', 'medical_review', 'safeguarding', 'ask'] as const
 export type RedFlagUrgency = (typeof redFlagUrgencies)[number]
-export const redFlagUrgencyLabels: Record<RedFlagUrgency, string> = {
-  same_day: 'Same day: medical or emergency',
-  priority: 'Priority: suggest a medical referral',
-  medical_review: 'Medical review before a routine block',
-  safeguarding: 'Think about safeguarding',
-  ask: 'Ask and look more closely',
-}
 
 export interface RedFlag {
   id: string

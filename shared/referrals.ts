@@ -169,7 +169,7 @@ export interface PossibleDuplicate {
   status: string
 }
 
-/** Red flags that the referral itself raises, with the usual wording (shared/redFlags.ts). */
+/** A referral whole. Its warning signs are read from it on the page and on acceptance (shared/referralFlags.ts). */
 export interface ReferralView extends ReferralDetails {
   id: string
   status: ReferralStatus

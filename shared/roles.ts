@@ -26,4 +26,3 @@ export type ChildRelation = (typeof childRelations)[number]
 
 export const hands = ['left', 'right'] as const
 export type Hand = (typeof hands)[number]
-export const handLabels: Record<Hand, string> = { left: 'Left', right: 'Right' }

@@ -1,5 +1,5 @@
 import { array, boolean, string, type InferType } from 'yup'
-import { body, choice, email, id, text } from './fields.ts'
+import { body, choice, email, text } from './fields.ts'
 import { newPasswordField } from './passwordRules.ts'
 import { hands, roles, type Hand, type Role } from './roles.ts'
 
@@ -72,9 +72,6 @@ export const userChangeSchema = body({
   newlyQualified: boolean().required(),
 })
 export type UserChange = InferType<typeof userChangeSchema>
-
-export const guardianInvitationSchema = body({ guardianId: id('The carer') })
-export type GuardianInvitation = InferType<typeof guardianInvitationSchema>
 
 /** A person in the list of people (administrators and leads). */
 export interface UserRow {

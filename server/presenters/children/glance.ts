@@ -28,7 +28,6 @@ const presentTask = (row: TaskRow, child: ChildFactsRow, { viewer }: ChildAccess
   level: dueLevel(row.dueOn, today),
   childId: child.id,
   childName: fullName(child),
-  doneAt: null,
   can: { finish: canFinishTask(viewer, { ...row, doneAt: null }) },
 })
 
@@ -87,7 +86,6 @@ export const presentGlance = (facts: GlanceFacts, access: ChildAccess, today: Da
       by,
       at: at.toISOString(),
     })),
-    episodeId: child.episodeId,
     episodeVersion: child.episodeVersion,
     version: child.version,
     nextStates: choices,
