@@ -43,19 +43,19 @@ export const optionalText = (label: string, limits: TextLimits) =>
     .nullable()
     .defined()
 
+const idPattern = /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/
+
+/** Is this text an id as the database makes them? */
+export const isId = (value: string): boolean => idPattern.test(value)
+
 export const id = (label = 'This') =>
-  string()
-    .required(`${label} is missing`)
-    .matches(
-      /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/,
-      `${label} is not a valid reference`,
-    )
+  string().required(`${label} is missing`).matches(idPattern, `${label} is not a valid reference`)
 
 export const optionalId = (label = 'This') =>
   string()
     .nullable()
     .defined()
-    .matches(/^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/, {
+    .matches(idPattern, {
       message: `${label} is not a valid reference`,
       excludeEmptyString: false,
     })

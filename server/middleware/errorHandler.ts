@@ -1,6 +1,7 @@
 import type { ErrorRequestHandler } from 'express'
 import { MulterError } from 'multer'
 import { ValidationError } from 'yup'
+import { isId } from '../../shared/fields.ts'
 import { AppError, conflict, invalid, unavailable } from '../errors.ts'
 import { logger } from '../logger.ts'
 import { recordAudit } from '../services/audit.ts'
@@ -69,8 +70,8 @@ const toAppError = (error: unknown): AppError | null => {
 }
 
 /** An id that somebody tried stands in the trail of that child, whether they may know of the child or not. */
-const uuidOrNull = (text: string | null | undefined) =>
-  text && /^[0-9a-f]{8}(?:-[0-9a-f]{4}){3}-[0-9a-f]{12}$/i.test(text) ? text.toLowerCase() : null
+const idOrNull = (text: string | null | undefined) =>
+  text && isId(text.toLowerCase()) ? text.toLowerCase() : null
 
 /** The one exit for errors: refusals are recorded, surprises are logged with the request id and nothing else leaves. */
 export const errorHandler: ErrorRequestHandler = async (error: unknown, req, res, next) => {
@@ -79,7 +80,7 @@ export const errorHandler: ErrorRequestHandler = async (error: unknown, req, res
   if (problem && [401, 403, 404].includes(problem.status) && req.actor.viewer) {
     problem = await recordAudit(req.actor, {
       action: res.locals.policyName ?? 'unknown.route',
-      childId: req.childAccess?.childId ?? uuidOrNull(res.locals.attemptedChildId),
+      childId: req.childAccess?.childId ?? idOrNull(res.locals.attemptedChildId),
       relation: req.childAccess?.relation ?? null,
       result: 'denied',
       detail: {

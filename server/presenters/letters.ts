@@ -2,7 +2,6 @@ import { guardianRelationLabels } from '../../shared/guardians.ts'
 import type {
   DeliveryView,
   LetterChecks,
-  LetterPage,
   LetterRecipient,
   LetterRow,
   LetterView,
@@ -81,7 +80,7 @@ export const presentLetter = (
   },
 })
 
-const presentLetterRow = (row: LetterListRow): LetterRow => ({
+export const presentLetterRow = (row: LetterListRow): LetterRow => ({
   id: row.id,
   childId: row.childId,
   childName: row.childName,
@@ -94,8 +93,3 @@ const presentLetterRow = (row: LetterListRow): LetterRow => ({
   sentAt: row.sentAt?.toISOString() ?? null,
   delivery: row.delivery,
 })
-
-export const presentLetterPage = (
-  { rows, total }: { rows: LetterListRow[]; total: number },
-  { page, size }: { page: number; size: number },
-): LetterPage => ({ rows: rows.map(presentLetterRow), total, page, size })

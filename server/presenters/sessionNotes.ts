@@ -1,4 +1,4 @@
-import type { NotePage, NoteRevisionView, NoteRow, NoteView } from '../../shared/sessionNotes.ts'
+import type { NoteRevisionView, NoteRow, NoteView } from '../../shared/sessionNotes.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import {
   canAddAddendum,
@@ -9,7 +9,7 @@ import {
 } from '../policies/sessionNotes.ts'
 import type { NoteListRow, NoteRecord, RevisionRow } from '../queries/sessionNotes.ts'
 
-const presentNoteRow = (row: NoteListRow): NoteRow => ({
+export const presentNoteRow = (row: NoteListRow): NoteRow => ({
   id: row.id,
   heldOn: row.heldOn,
   type: row.type,
@@ -20,11 +20,6 @@ const presentNoteRow = (row: NoteListRow): NoteRow => ({
   addenda: row.addenda,
   summary: row.summary,
 })
-
-export const presentNotePage = (
-  { rows, total }: { rows: NoteListRow[]; total: number },
-  { page, size }: { page: number; size: number },
-): NotePage => ({ rows: rows.map(presentNoteRow), total, page, size })
 
 export const presentNote = (note: NoteRecord, access: ChildAccess): NoteView => ({
   id: note.id,

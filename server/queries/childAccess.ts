@@ -1,10 +1,11 @@
 import type { ConsentPurpose } from '../../shared/consents.ts'
 import { childRelations, type ChildRelation } from '../../shared/roles.ts'
+import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { consentHolds } from './inForce.ts'
-import { childScope, isId, ownLink, restrictedFrom, schoolPurposes } from './scope.ts'
+import { childScope, ownLink, restrictedFrom, schoolPurposes } from './scope.ts'
 import { flag, selectOne, type SqlParameters } from './sql.ts'
 
 type RelationRow = Record<ChildRelation, number> & {

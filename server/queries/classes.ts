@@ -2,18 +2,18 @@ import type { WritingHand } from '../../shared/children.ts'
 import type { GoalDetails } from '../../shared/goals.ts'
 import type { ConsentPurpose } from '../../shared/consents.ts'
 import type { ScriptDirection } from '../../shared/referrals.ts'
+import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { consentHolds, runsAt } from './inForce.ts'
+import { calledName } from './names.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { adviceColumns, newestAnswer, type AdviceRow } from './schoolAdvice.ts'
-import { childScope, isId, within } from './scope.ts'
+import { childScope, within } from './scope.ts'
 import { count, fromJson, selectOne, selectRows, type Fragment } from './sql.ts'
-
-const displayName = "CONCAT(COALESCE(c.preferredName, c.givenName), ' ', c.familyName)"
 
 /** Is this one school purpose in force? A teacher's scope alone says only that at least one of them is. */
 const shares = (purpose: ConsentPurpose, column: string): Fragment => ({
@@ -94,7 +94,7 @@ export const listPupils = async (
     Omit<PupilListRow, 'advice' | 'unanswered'> & { advice: string; unanswered: string }
   >(
     {
-      select: `c.id, ${displayName} AS name, c.writingHand, (SELECT COUNT(*) ${live}) AS advice,
+      select: `c.id, ${calledName('c')} AS name, c.writingHand, (SELECT COUNT(*) ${live}) AS advice,
         (SELECT COUNT(*) ${live} AND r.id IS NULL) AS unanswered, (SELECT MAX(a.publishedAt) ${live}) AS changedAt`,
       from: `FROM children c WHERE c.schoolClassId = :classId AND ${scope.sql}`,
       orderBy: 'COALESCE(c.preferredName, c.givenName), c.familyName, c.id',
@@ -120,7 +120,7 @@ export interface PupilRecord {
 export const findPupil = async (access: ChildAccess): Promise<PupilRecord> => {
   const scope = within(access, 'c.id')
   const row = await selectOne<PupilRecord>(
-    `SELECT c.id, ${displayName} AS name, k.name AS className, c.writingHand, c.scriptDirection
+    `SELECT c.id, ${calledName('c')} AS name, k.name AS className, c.writingHand, c.scriptDirection
      FROM children c JOIN school_classes k ON k.id = c.schoolClassId WHERE ${scope.sql}`,
     scope.parameters,
   )

@@ -9,11 +9,10 @@ import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { therapistName } from './currentTherapist.ts'
 import { consentHolds } from './inForce.ts'
+import { calledName } from './names.ts'
 import { unreadLetters } from './receivedLetters.ts'
 import { childScope, ownLink, within } from './scope.ts'
 import { count, flag, fromJson, selectOne, selectRows } from './sql.ts'
-
-const displayName = "CONCAT(COALESCE(c.preferredName, c.givenName), ' ', c.familyName)"
 
 export interface OwnChildRow {
   id: string
@@ -27,7 +26,7 @@ export const listOwnChildren = async (viewer: Viewer): Promise<OwnChildRow[]> =>
   const scope = childScope(viewer, 'guardian', 'c.id')
   const therapist = therapistName('c.id')
   const rows = await selectRows<Omit<OwnChildRow, 'unreadLetters'> & { unreadLetters: string }>(
-    `SELECT c.id, ${displayName} AS name, ${therapist.sql} AS therapist, ${unreadLetters('c.id')} AS unreadLetters
+    `SELECT c.id, ${calledName('c')} AS name, ${therapist.sql} AS therapist, ${unreadLetters('c.id')} AS unreadLetters
      FROM children c WHERE ${scope.sql} ORDER BY name, c.id`,
     { ...scope.parameters, ...therapist.parameters },
   )
@@ -58,7 +57,7 @@ export const findOwnChild = async (access: ChildAccess, tx?: Tx): Promise<OwnChi
   const scope = within(access, 'c.id')
   const therapist = therapistName('c.id')
   const row = await selectOne<Omit<OwnChildRecord, 'consentsForSelf'> & { consentsForSelf: number }>(
-    `SELECT c.id, ${displayName} AS name, c.birthDate, s.name AS school, ${therapist.sql} AS therapist,
+    `SELECT c.id, ${calledName('c')} AS name, c.birthDate, s.name AS school, ${therapist.sql} AS therapist,
        c.consentsForSelf, g.id AS guardianId, g.name AS guardianName, g.relation, g.parentalResponsibility, g.email,
        g.phone, g.address, g.version
      FROM children c JOIN guardians g ON g.childId = c.id AND g.id = :ownRow AND ${ownLink('g')}

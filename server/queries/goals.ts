@@ -1,8 +1,9 @@
 import type { Day } from '../../shared/days.ts'
 import type { GoalDetails, GoalOutcome } from '../../shared/goals.ts'
+import { isId } from '../../shared/fields.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { notFound } from '../errors.ts'
-import { isId, within } from './scope.ts'
+import { within } from './scope.ts'
 import { fromJson, selectRows } from './sql.ts'
 
 interface StoredGoal {

@@ -7,14 +7,18 @@ import type {
   LetterState,
 } from '../../shared/letters.ts'
 import type { GuardianRelation } from '../../shared/guardians.ts'
+import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { notFound } from '../errors.ts'
 import type { Tx } from '../dataSource.ts'
+import { matchesWords } from './children/lists.ts'
 import { emailConsent } from './inForce.ts'
-import { childScope, isId, within } from './scope.ts'
-import { count, flag, fromJson, likePattern, selectOne, selectRows, type SqlParameters } from './sql.ts'
+import { calledName } from './names.ts'
+import { selectPage, type PageOf, type PageSlice } from './pages.ts'
+import { childScope, within } from './scope.ts'
+import { flag, fromJson, selectOne, selectRows, type SqlParameters } from './sql.ts'
 import { staffScope } from './staffScope.ts'
 
 export interface LetterRecord {
@@ -88,62 +92,60 @@ export interface LetterListRow {
   delivery: DeliveryState | null
 }
 
-export interface LetterListRequest {
+export interface LetterListRequest extends PageSlice {
   state: LetterState | null
   search: string | null
-  size: number
-  offset: number
 }
 
 const worstDelivery = `(SELECT d.state FROM letter_deliveries d WHERE d.letterId = l.id
   ORDER BY FIELD(d.state, 'failed', 'cancelled', 'queued', 'sending', 'sent', 'opened') LIMIT 1)`
 
-const listColumns = `l.id, l.childId, CONCAT(COALESCE(c.preferredName, c.givenName), ' ', c.familyName) AS childName,
+const listColumns = `l.id, l.childId, ${calledName('c')} AS childName,
   c.recordNumber, l.kind, l.state, a.displayName AS author, p.displayName AS approver, l.changedAt,
   (SELECT MIN(m.sentAt) FROM letter_deliveries d JOIN outbox_messages m ON m.id = d.outboxMessageId
     WHERE d.letterId = l.id) AS sentAt, ${worstDelivery} AS delivery`
 
-const listTables = `letters l JOIN children c ON c.id = l.childId JOIN users a ON a.id = l.authorId
-  LEFT JOIN letter_versions v ON v.id = l.approvedVersionId LEFT JOIN users p ON p.id = v.approvedById`
-
-const listLetters = async (
+const listLetters = (
   condition: string,
   parameters: SqlParameters,
-  { size, offset }: { size: number; offset: number },
-) => {
-  const rows = await selectRows<LetterListRow>(
-    `SELECT ${listColumns} FROM ${listTables} WHERE ${condition} ORDER BY l.changedAt DESC, l.id LIMIT :size OFFSET :offset`,
-    { ...parameters, size, offset },
+  slice: PageSlice,
+): Promise<PageOf<LetterListRow>> =>
+  selectPage<LetterListRow>(
+    {
+      select: listColumns,
+      from: `FROM letters l JOIN children c ON c.id = l.childId JOIN users a ON a.id = l.authorId
+        LEFT JOIN letter_versions v ON v.id = l.approvedVersionId LEFT JOIN users p ON p.id = v.approvedById
+        WHERE l.discardedAt IS NULL AND ${condition}`,
+      orderBy: 'l.changedAt DESC, l.id',
+      parameters,
+    },
+    slice,
   )
-  const total = await selectOne<{ n: string }>(
-    `SELECT COUNT(*) AS n FROM ${listTables} WHERE ${condition}`,
-    parameters,
-  )
-  return { rows, total: count(total?.n ?? '0') }
-}
 
 /** Letters of one child, newest first. */
-export const listLettersOfChild = (access: ChildAccess, request: { size: number; offset: number }) => {
+export const listLettersOfChild = (access: ChildAccess, slice: PageSlice): Promise<PageOf<LetterListRow>> => {
   const scope = within(access, 'l.childId')
-  return listLetters(`l.discardedAt IS NULL AND ${scope.sql}`, scope.parameters, request)
+  return listLetters(scope.sql, scope.parameters, slice)
 }
 
 /** Letters of every child the viewer holds; a lead sees the clinic's. */
-export const listLettersOfViewer = (viewer: Viewer, { state, search, ...page }: LetterListRequest) => {
+export const listLettersOfViewer = (
+  viewer: Viewer,
+  { state, search, ...slice }: LetterListRequest,
+): Promise<PageOf<LetterListRow>> => {
   const scope = staffScope(viewer, 'l.childId', ['assignedTherapist', 'clinicLead'])
-  const conditions = ['l.discardedAt IS NULL', scope.sql]
+  const conditions = [scope.sql]
   const parameters: SqlParameters = { ...scope.parameters }
   if (state !== null) {
     conditions.push('l.state = :state')
     parameters.state = state
   }
   if (search !== null) {
-    conditions.push(
-      "(CONCAT_WS(' ', c.preferredName, c.givenName, c.familyName) LIKE :search OR c.recordNumber LIKE :search)",
-    )
-    parameters.search = likePattern(search)
+    const words = matchesWords(search)
+    conditions.push(words.sql)
+    Object.assign(parameters, words.parameters)
   }
-  return listLetters(conditions.join(' AND '), parameters, page)
+  return listLetters(conditions.join(' AND '), parameters, slice)
 }
 
 export interface RecipientRow {

@@ -1,10 +1,11 @@
 import type { Day } from '../../shared/days.ts'
 import { cutOffSetById, defaultCutOffSet, scoreHandUse, type HandUseScore } from '../../shared/handUse.ts'
 import type { HandUseAnswers, Informant } from '../../shared/questionnaires.ts'
+import { isId } from '../../shared/fields.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
-import { isId, within } from './scope.ts'
+import { within } from './scope.ts'
 import { flag, fromJson, selectRows } from './sql.ts'
 
 interface StoredResponse {

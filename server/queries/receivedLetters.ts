@@ -1,8 +1,10 @@
 import type { LetterDraft, LetterKind, LetterState, DeliveryState } from '../../shared/letters.ts'
+import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { notFound } from '../errors.ts'
-import { childScope, isId, ownLink, within } from './scope.ts'
+import { calledName } from './names.ts'
+import { childScope, ownLink, within } from './scope.ts'
 import { fromJson, selectOne, selectRows } from './sql.ts'
 
 export interface ReceivedLetterListRow {
@@ -47,7 +49,7 @@ export const findReceivedLetter = async (viewer: Viewer, letterId: string): Prom
   if (!isId(letterId)) throw notFound()
   const scope = childScope(viewer, 'guardian', 'l.childId')
   const row = await selectOne<Omit<ReceivedLetterRecord, 'content'> & { content: string }>(
-    `SELECT l.id, l.childId, CONCAT(COALESCE(c.preferredName, c.givenName), ' ', c.familyName) AS childName, l.kind,
+    `SELECT l.id, l.childId, ${calledName('c')} AS childName, l.kind,
        m.sentAt, d.openedAt, d.id AS deliveryId, a.displayName AS author, v.content
      FROM ${received} JOIN letter_versions v ON v.id = d.letterVersionId
        JOIN children c ON c.id = l.childId JOIN users a ON a.id = l.authorId

@@ -8,12 +8,12 @@ import type {
   ReferralStatus,
 } from '../../shared/referrals.ts'
 import type { ParentalResponsibility } from '../../shared/guardians.ts'
+import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { seesEveryReferral } from '../policies/referrals.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
-import { isId } from './scope.ts'
 import { flag, fromJson, likePattern, selectOne, type Fragment, type SqlParameters } from './sql.ts'
 import { staffScope } from './staffScope.ts'
 

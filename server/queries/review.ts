@@ -6,6 +6,7 @@ import { now } from '../clock.ts'
 import { therapistId } from './currentTherapist.ts'
 import { latestEpisode } from './episodes.ts'
 import { runsAt } from './inForce.ts'
+import { recordName } from './names.ts'
 import { flag, selectRows } from './sql.ts'
 import { staffScope } from './staffScope.ts'
 
@@ -23,7 +24,7 @@ const mostBars = 200
 export const listWaiting = async (viewer: Viewer): Promise<WaitingRow[]> => {
   const scope = staffScope(viewer, 'c.id', ['clinicLead'])
   const rows = await selectRows<Omit<WaitingRow, 'priority'> & { priority: number }>(
-    `SELECT c.id AS childId, CONCAT(c.givenName, ' ', c.familyName) AS name, e.receivedOn, e.priority = 'priority' AS priority
+    `SELECT c.id AS childId, ${recordName('c')} AS name, e.receivedOn, e.priority = 'priority' AS priority
      FROM children c JOIN episodes e ON e.id = ${latestEpisode('c.id')}
      WHERE e.state IN (:waiting) AND ${scope.sql} ORDER BY e.receivedOn, c.id LIMIT :most`,
     { ...scope.parameters, waiting: waitingStates, most: mostBars },

@@ -1,9 +1,10 @@
 import type { Day } from '../../shared/days.ts'
 import type { SampleDetails, SampleType } from '../../shared/samples.ts'
+import { isId } from '../../shared/fields.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import type { Viewer } from '../access/actor.ts'
 import { notFound } from '../errors.ts'
-import { isId, within } from './scope.ts'
+import { within } from './scope.ts'
 import { count, fromJson, selectOne, selectRows } from './sql.ts'
 
 interface StoredSample {

@@ -1,5 +1,6 @@
 import type { EntityTarget, ObjectLiteral } from 'typeorm'
 import type { ConsentPurpose } from '../../shared/consents.ts'
+import { isId } from '../../shared/fields.ts'
 import type { ChildRelation } from '../../shared/roles.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
@@ -115,6 +116,3 @@ export const findForChild = async <E extends ObjectLiteral>(
   if (!found) throw notFound()
   return found
 }
-
-export const isId = (value: string): boolean =>
-  /^[0-9a-f]{8}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{4}-[0-9a-f]{12}$/.test(value)

@@ -1,9 +1,11 @@
 import type { Day } from '../../shared/days.ts'
 import type { NoteDraft, NoteState, SessionType } from '../../shared/sessionNotes.ts'
+import { isId } from '../../shared/fields.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
-import { isId, within } from './scope.ts'
+import { selectPage, type PageOf, type PageSlice } from './pages.ts'
+import { within } from './scope.ts'
 import { count, flag, fromJson, selectOne, selectRows } from './sql.ts'
 
 export interface NoteListRow {
@@ -19,29 +21,21 @@ export interface NoteListRow {
 }
 
 /** One page of a child's notes, the latest session first; discarded drafts are left out. */
-export const listNotes = async (
-  access: ChildAccess,
-  { size, offset }: { size: number; offset: number },
-): Promise<{ rows: NoteListRow[]; total: number }> => {
+export const listNotes = async (access: ChildAccess, slice: PageSlice): Promise<PageOf<NoteListRow>> => {
   const scope = within(access, 'n.childId')
-  const counted = await selectOne<{ total: string }>(
-    `SELECT COUNT(*) AS total FROM session_notes n WHERE n.discardedAt IS NULL AND ${scope.sql}`,
-    scope.parameters,
+  const found = await selectPage<Omit<NoteListRow, 'addenda'> & { addenda: string }>(
+    {
+      select: `n.id, n.heldOn, n.type, n.minutes, u.displayName AS author, n.state, s.lateReason, n.summary,
+        (SELECT COUNT(*) FROM note_addenda d WHERE d.noteId = n.id) AS addenda`,
+      from: `FROM session_notes n JOIN users u ON u.id = n.authorId
+        LEFT JOIN note_signatures s ON s.noteId = n.id AND s.kind = 'author'
+        WHERE n.discardedAt IS NULL AND ${scope.sql}`,
+      orderBy: 'n.heldOn DESC, n.startTime DESC, n.createdAt DESC, n.id',
+      parameters: scope.parameters,
+    },
+    slice,
   )
-  const rows = await selectRows<Omit<NoteListRow, 'addenda'> & { addenda: string }>(
-    `SELECT n.id, n.heldOn, n.type, n.minutes, u.displayName AS author, n.state, s.lateReason, n.summary,
-       (SELECT COUNT(*) FROM note_addenda d WHERE d.noteId = n.id) AS addenda
-     FROM session_notes n
-     JOIN users u ON u.id = n.authorId
-     LEFT JOIN note_signatures s ON s.noteId = n.id AND s.kind = 'author'
-     WHERE n.discardedAt IS NULL AND ${scope.sql}
-     ORDER BY n.heldOn DESC, n.startTime DESC, n.createdAt DESC, n.id LIMIT :size OFFSET :offset`,
-    { ...scope.parameters, size, offset },
-  )
-  return {
-    rows: rows.map((row) => ({ ...row, addenda: count(row.addenda) })),
-    total: counted ? count(counted.total) : 0,
-  }
+  return { total: found.total, rows: found.rows.map((row) => ({ ...row, addenda: count(row.addenda) })) }
 }
 
 interface StoredNote {

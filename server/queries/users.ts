@@ -1,11 +1,11 @@
 import { staffRoles, type Role } from '../../shared/roles.ts'
 import { closedStates } from '../../shared/episodes.ts'
+import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { seesEveryAccount } from '../policies/users.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
-import { isId } from './scope.ts'
 import { count, flag, fromJson, likePattern, selectOne, type SqlParameters } from './sql.ts'
 
 export interface AccountRow {

@@ -11,6 +11,7 @@ import { seesEveryReferral } from '../policies/referrals.ts'
 import { therapistName } from './currentTherapist.ts'
 import { latestEpisode } from './episodes.ts'
 import { consentHolds } from './inForce.ts'
+import { recordName } from './names.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { referralScope } from './referrals.ts'
 import { count, selectOne, type Fragment, type SqlParameters } from './sql.ts'
@@ -61,7 +62,7 @@ interface WorkSql {
 
 const ofChild = {
   childId: 'c.id',
-  name: "CONCAT(c.givenName, ' ', c.familyName)",
+  name: recordName('c'),
   recordNumber: 'c.recordNumber',
   sinceDay: 'NULL',
   sinceAt: 'NULL',
@@ -111,7 +112,7 @@ const byLetter = (condition: string): WorkSql => ({
 const byReferral = (condition: string): WorkSql => ({
   id: 'r.id',
   childId: 'NULL',
-  name: "IF(:namesReferrals, CONCAT(r.givenName, ' ', r.familyName), NULL)",
+  name: `IF(:namesReferrals, ${recordName('r')}, NULL)`,
   recordNumber: 'NULL',
   person: 'NULL',
   sinceDay: 'r.receivedOn',
@@ -165,7 +166,7 @@ const lists: Record<WorkListId, WorkSql> = {
   tasks: {
     id: 't.id',
     childId: 't.childId',
-    name: "CONCAT(c.givenName, ' ', c.familyName)",
+    name: recordName('c'),
     recordNumber: 'c.recordNumber',
     person: 'NULL',
     sinceDay: 't.dueOn',

@@ -1,7 +1,8 @@
 import type { WritingObservationDetails } from '../../shared/writingObservations.ts'
+import { isId } from '../../shared/fields.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { notFound } from '../errors.ts'
-import { isId, within } from './scope.ts'
+import { within } from './scope.ts'
 import { fromJson, selectRows } from './sql.ts'
 
 interface StoredObservation {

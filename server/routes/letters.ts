@@ -32,7 +32,8 @@ import {
   letterPolicies,
   type LetterStanding,
 } from '../policies/letters.ts'
-import { presentLetter, presentLetterPage } from '../presenters/letters.ts'
+import { presentLetter, presentLetterRow } from '../presenters/letters.ts'
+import { presentPage } from '../presenters/pages.ts'
 import {
   findLetter,
   findLetterPdf,
@@ -109,7 +110,7 @@ export const letterRoutes = ({ appUrl }: { appUrl: string }): Router => {
       search: queryText(req, 'search'),
     })
     await recordAudit(req.actor, { action: 'letters.list', detail: { ids: page.rows.map((row) => row.id) } })
-    res.json(presentLetterPage(page, request))
+    res.json(presentPage(page, request, presentLetterRow))
   })
 
   router.get(base, allow(letterPolicies.list), async (req, res) => {
@@ -118,7 +119,7 @@ export const letterRoutes = ({ appUrl }: { appUrl: string }): Router => {
     await recordChildRead(req.actor, accessOf(req), 'letters.listOfChild', {
       detail: { ids: page.rows.map((row) => row.id) },
     })
-    res.json(presentLetterPage(page, request))
+    res.json(presentPage(page, request, presentLetterRow))
   })
 
   router.post(base, allow(letterPolicies.create), async (req, res) => {

@@ -6,7 +6,8 @@ import { allow } from '../middleware/allow.ts'
 import { bodyOf, idempotencyKeyOf, ifMatchOf, pageOf, queryText } from '../middleware/requestBody.ts'
 import { accessOf } from '../middleware/requestContext.ts'
 import { sessionNotePolicies } from '../policies/sessionNotes.ts'
-import { presentNote, presentNotePage, presentRevision } from '../presenters/sessionNotes.ts'
+import { presentPage } from '../presenters/pages.ts'
+import { presentNote, presentNoteRow, presentRevision } from '../presenters/sessionNotes.ts'
 import { findNote, listNotes, listRevisions } from '../queries/sessionNotes.ts'
 import { recordChildRead } from '../services/audit.ts'
 import { countersignNote, signNote } from '../services/noteSigning.ts'
@@ -45,7 +46,7 @@ export const sessionNoteRoutes = (): Router => {
     await recordChildRead(req.actor, accessOf(req), 'sessionNotes.list', {
       detail: { ids: notes.rows.map((row) => row.id) },
     })
-    res.json(presentNotePage(notes, request))
+    res.json(presentPage(notes, request, presentNoteRow))
   })
 
   router.post(base, allow(sessionNotePolicies.create), async (req, res) => {

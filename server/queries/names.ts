@@ -1,0 +1,6 @@
+/** The name on the record, as staff tell children apart; `row` is the alias of a child or referral. */
+export const recordName = (row: string): string => `CONCAT(${row}.givenName, ' ', ${row}.familyName)`
+
+/** The name a child goes by, in front of the family name: for letters, families and teachers. */
+export const calledName = (row: string): string =>
+  `CONCAT(COALESCE(${row}.preferredName, ${row}.givenName), ' ', ${row}.familyName)`
