@@ -5,7 +5,8 @@ const path = (childId: string) => `/children/${childId}/guardians`
 
 export const guardiansApi = {
   forChild: (childId: string) => http.get<GuardianView[]>(path(childId)),
-  add: (childId: string, details: GuardianDetails) => http.post<GuardianView>(path(childId), details),
+  add: (childId: string, details: GuardianDetails, idempotencyKey: string) =>
+    http.post<GuardianView>(path(childId), details, { idempotencyKey }),
   change: (childId: string, id: string, details: GuardianDetails, version: number) =>
     http.put<GuardianView>(`${path(childId)}/${id}`, details, { ifMatch: version }),
   invite: (childId: string, id: string) => http.post<void>(`${path(childId)}/${id}/invite`),

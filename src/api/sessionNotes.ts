@@ -24,6 +24,6 @@ export const sessionNotesApi = {
     http.post<NoteView>(`${path(childId)}/${id}/sign`, signature, { ifMatch: version }),
   countersign: (childId: string, id: string, version: number) =>
     http.post<NoteView>(`${path(childId)}/${id}/countersign`, {}, { ifMatch: version }),
-  addAddendum: (childId: string, id: string, addendum: Addendum) =>
-    http.post<NoteView>(`${path(childId)}/${id}/addenda`, addendum),
+  addAddendum: (childId: string, id: string, addendum: Addendum, idempotencyKey: string) =>
+    http.post<NoteView>(`${path(childId)}/${id}/addenda`, addendum, { idempotencyKey }),
 }
