@@ -83,9 +83,9 @@ export const homeItems: readonly AdviceItem[] = [
     audiences: ['teacher', 'parent'],
     ageFrom: 5,
     ageTo: 14,
-    caution: 'Left-handed students lost nothing with the mouse on the right: it is a choice, not a rule.',
+    caution: 'It is a choice, not a rule.',
     grade: 'professional_consensus',
-    source: `${sattler}; a student experiment of 1997 (abstract)`,
+    source: `${sattler}; a student experiment of 1997 (abstract). Left-handed students lost nothing with the mouse on the right`,
     needsLeftWriter: true,
     leftToRightOnly: false,
     offeredFor: ({ usesMouse, goalTopics }) =>

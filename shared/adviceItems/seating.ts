@@ -20,9 +20,9 @@ export const seatingItems: readonly AdviceItem[] = [
     audiences: ['teacher'],
     ageFrom: 4,
     ageTo: 14,
-    caution: 'Left as the child facing the board sees it; one published sheet prints it the other way round.',
+    caution: 'Left as the child facing the board sees it.',
     grade: 'professional_consensus',
-    source: `${sattler}; ${teachers}`,
+    source: `${sattler}; ${teachers}. One published sheet prints it the other way round`,
     needsLeftWriter: true,
     leftToRightOnly: false,
     offeredFor: ({ elbowClash, deskType, seatSide }) => {
@@ -37,9 +37,9 @@ export const seatingItems: readonly AdviceItem[] = [
     audiences: ['teacher'],
     ageFrom: 4,
     ageTo: 14,
-    caution: `The ${leftSpaceCm} cm are this clinic’s figure.`,
+    caution: null,
     grade: 'professional_consensus',
-    source: `${teachers}; ${therapySheets}`,
+    source: `${teachers}; ${therapySheets}. The centimetres are this clinic’s figure`,
     needsLeftWriter: true,
     leftToRightOnly: false,
     offeredFor: ({ leftClearanceCm }) =>

@@ -29,9 +29,10 @@ export const writingLessonItems: readonly AdviceItem[] = [
     audiences: ['teacher', 'parent'],
     ageFrom: 4,
     ageTo: 7,
-    caution: 'If they are still frequent after 7½, tell the therapist (age from trade knowledge).',
+    caution: 'If they are still frequent after 7½, tell the therapist.',
     grade: 'peer_reviewed',
-    source: 'Study of mirror writing at 5 to 6, Laterality 2015 (author’s summary)',
+    source:
+      'Study of mirror writing at 5 to 6, Laterality 2015 (author’s summary). The age is from trade knowledge',
     needsLeftWriter: false,
     leftToRightOnly: false,
     offeredFor: ({ reversals }) => {
@@ -48,10 +49,9 @@ export const writingLessonItems: readonly AdviceItem[] = [
     audiences: ['teacher', 'child'],
     ageFrom: 4,
     ageTo: 8,
-    caution:
-      'E, F and L usually run left to right so that letters join. Studies of drawn lines do not all agree.',
+    caution: 'E, F and L usually run left to right so that letters join.',
     grade: 'professional_consensus',
-    source: `${districtTherapists}; Vaid et al. 2002 and a children’s line-drawing study, 2000 (abstracts)`,
+    source: `${districtTherapists}; Vaid et al. 2002 and a children’s line-drawing study, 2000 (abstracts). Studies of drawn lines do not all agree`,
     needsLeftWriter: true,
     leftToRightOnly: true,
     offeredFor: ({ crossStrokeTrouble }) => whenTrue(crossStrokeTrouble, 'cross-strokes take effort'),
@@ -121,9 +121,9 @@ export const writingLessonItems: readonly AdviceItem[] = [
     audiences: ['teacher', 'parent', 'therapist'],
     ageFrom: 6,
     ageTo: 12,
-    caution: 'Keep a log of the sessions. A review of 2011 was found; its conclusion has not been read.',
+    caution: 'Keep a log of the sessions.',
     grade: 'professional_consensus',
-    source: tradeKnowledge,
+    source: `${tradeKnowledge}. A review of 2011 was found; its conclusion has not been read`,
     needsLeftWriter: false,
     leftToRightOnly: false,
     // From a pain of 4 a therapist looks first: see W21.

@@ -133,9 +133,10 @@ export const writingPostureItems: readonly AdviceItem[] = [
     audiences: ['teacher', 'parent', 'therapist'],
     ageFrom: 8,
     ageTo: 14,
-    caution: 'Look again if pain comes. The ages of the writers studied are not given in the abstracts read.',
+    caution: 'Look again if pain comes.',
     grade: 'peer_reviewed',
-    source: 'Bryson & MacDonald 1984; Szeligo et al. 2003 (abstracts)',
+    source:
+      'Bryson & MacDonald 1984; Szeligo et al. 2003 (abstracts). The ages of the writers studied are not given in the abstracts read',
     needsLeftWriter: true,
     leftToRightOnly: true,
     offeredFor: (facts) =>
