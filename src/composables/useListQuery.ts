@@ -97,7 +97,14 @@ export function useListQuery<F extends Filters = Record<never, never>>(options: 
     (values) => names.forEach((name, index) => (held[name] = values[index] ?? null)),
   )
 
-  onScopeDispose(() => clearTimeout(pause))
+  // Somebody who types and then at once opens a row is on the way there: a new search would call them back.
+  const leaving = router.beforeEach((to) => {
+    if (to.path !== home) clearTimeout(pause)
+  })
+  onScopeDispose(() => {
+    leaving()
+    clearTimeout(pause)
+  })
 
   const size = options.size ?? defaultPageSize
   const query = computed(() => ({

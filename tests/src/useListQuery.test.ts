@@ -116,4 +116,15 @@ describe('useListQuery', () => {
     await router.push('/elsewhere')
     expect(list.query.value.page).toBe(3)
   })
+
+  it('lets somebody go who types and opens a row at once, also when that page takes a while to load', async () => {
+    const { result: list, router } = await openList()
+    router.beforeEach((to) => (to.path === '/elsewhere' ? new Promise((go) => setTimeout(go, 1000)) : true))
+    list.search.value = 'hale'
+    await flushPromises()
+    const gone = router.push('/elsewhere')
+    await vi.advanceTimersByTimeAsync(1000)
+    await gone
+    expect(router.currentRoute.value.fullPath).toBe('/elsewhere')
+  })
 })
