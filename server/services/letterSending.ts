@@ -43,7 +43,8 @@ export const sendLetter = async (
 ): Promise<void> => {
   const settings = await readSettings()
   await transact(actor, async (tx, record) => {
-    await patchLetter(tx, letter, version, { state: 'queued' })
+    // What has reached one carer stays sent while it goes to another.
+    await patchLetter(tx, letter, version, { state: letter.state === 'sent' ? 'sent' : 'queued' })
     await assertTreatmentConsent(tx, access)
     const carers = await listRecipients(access, tx)
     const chosen = [...new Set(guardianIds)].map((id) => {

@@ -5,7 +5,7 @@ import { database } from '../../server/dataSource.ts'
 import { enqueueMail } from '../../server/services/outbox.ts'
 import { deliverDue } from '../../server/services/outboxWorker.ts'
 import { signedInAs, startApp, stopApp } from '../support/app.ts'
-import { buildUser, giveConsent } from '../support/factories.ts'
+import { buildGuardian, buildUser, giveConsent } from '../support/factories.ts'
 import { letterScene, queuedLetter } from '../support/letters.ts'
 import { startMail, type Mail } from '../support/mail.ts'
 
@@ -101,6 +101,23 @@ describe('the outbox', () => {
     const messages = await mail.messages(recipient)
     expect(messages.length).toBeGreaterThanOrEqual(1)
     expect(new Set(messages.map((message) => message.messageId)).size).toBe(1)
+  })
+
+  it('goes to a second carer after the first has it, and the letter stays sent', async () => {
+    const scene = await letterScene()
+    const letter = await queuedLetter(scene)
+    await mail.deliver()
+    const second = await buildGuardian(scene.child, await buildUser('guardian'))
+    await giveConsent(scene.child, 'email_link', scene.therapist, { guardianId: second.id })
+    const { body: sent } = await scene.as.get(`${scene.base}/${letter.id}`)
+    const again = await scene.as
+      .post(`${scene.base}/${letter.id}/send`)
+      .set('If-Match', `"${sent.version}"`)
+      .send({ guardianIds: [second.id] })
+    expect([sent.state, again.status, again.body.state]).toEqual(['sent', 200, 'sent'])
+    await mail.deliver()
+    expect(await mail.messages(second.email ?? '')).toHaveLength(1)
+    expect(await mail.messages(scene.guardianUser.email)).toHaveLength(1)
   })
 
   it('gives up at once on 550, says so on the letter, makes a task for the author, and lets the lead try again', async () => {
