@@ -78,17 +78,17 @@ describe('WaitingRibbon', () => {
   it('draws one bar for each open referral, longest first, when some wait', async () => {
     const wrapper = await ribbon(waiting)
     expect(spokenBars(wrapper)).toEqual([
-      'Dilan 19.6 weeks over since 3 Mar 2026, 1.6 weeks over the target',
-      'Jakub 8.7 weeks since 3 Mar 2026, 9.3 weeks left before the target',
-      'Tui priority 4.3 weeks since 3 Mar 2026, 13.7 weeks left before the target',
-      'Gethin 2.6 weeks since 3 Mar 2026, 15.4 weeks left before the target',
+      'Dilan 19.6 weeks, over target, since 3 Mar 2026, 1.6 weeks over the target',
+      'Jakub 8.7 weeks, since 3 Mar 2026, 9.3 weeks left before the target',
+      'Tui priority 4.3 weeks, since 3 Mar 2026, 13.7 weeks left before the target',
+      'Gethin 2.6 weeks, since 3 Mar 2026, 15.4 weeks left before the target',
     ])
   })
 
   it('says in words who waits too long, not in colour alone', async () => {
     const wrapper = await ribbon(waiting)
     expect(wrapper.get('figcaption').text()).toMatch(/^1 of 4 waits longer than the target\./)
-    expect(wrapper.get('svg').text()).toContain('19.6 weeks over')
+    expect(wrapper.get('svg').text()).toContain('19.6 weeks, over target')
   })
 
   it('says that nobody waits too long when all are within the target', async () => {
