@@ -82,7 +82,7 @@ describe('QuestionnaireForm', () => {
 
   it('gives strength as the share of "always", apart from the quotient', () => {
     expect(scoreOf(form(given('SL,SL,L,L,L,L,L,L,L,L'))).facts[2]).toBe(
-      '20 % of the answers that name a side are “always”',
+      '20% of the answers that name a side are “always”',
     )
   })
 
