@@ -31,6 +31,21 @@ const nouns: Record<string, string> = {
   accessHistory: 'Access history',
 }
 
+/** What was read, where the stored word is not one people use. */
+const readings: Record<string, string> = {
+  header_read: 'name and details read',
+  glance_read: 'at a glance read',
+  list: 'list read',
+  listed: 'list read',
+  listOfChild: 'list read',
+  file: 'picture read',
+  thumbnail: 'small picture read',
+  pdf: 'PDF read',
+  revisions: 'earlier texts read',
+  child: 'read',
+  children: 'list read',
+}
+
 /** `revisionsRead` and `state_changed` as words: 'revisions read', 'state changed'. */
 const spoken = (word: string) =>
   word
@@ -43,7 +58,7 @@ export function accessActionWords(action: string): string {
   const [noun = '', verb = ''] = action.split('.')
   const known = nouns[noun] ?? nouns[noun.replace(/s$/, '')]
   const first = spoken(noun)
-  return `${known ?? first.charAt(0).toUpperCase() + first.slice(1)}: ${spoken(verb)}`
+  return `${known ?? first.charAt(0).toUpperCase() + first.slice(1)}: ${readings[verb] ?? spoken(verb)}`
 }
 
 const readingVerbs =

@@ -52,7 +52,7 @@ describe('the access history', () => {
     const lines = rows.map((row) => [row.who, row.relation, row.action, row.result].join(' · '))
     expect(lines).toEqual(
       expect.arrayContaining([
-        'Hedda Holder · Therapist of the child · Record: glance read · allowed',
+        'Hedda Holder · Therapist of the child · Record: at a glance read · allowed',
         'Olga Office · Administrator · Record: glance · denied',
         'Otto Other · Nobody to this child · Record: header · denied',
         'Lida Lead · Clinic lead · Episode: state changed · allowed',

@@ -3,14 +3,14 @@ import { accessActionWords, accessKindWords } from '../../shared/accessWords.ts'
 
 describe('an entry of the access history', () => {
   it.each([
-    ['child.glance_read', 'Record: glance read', 'Read'],
-    ['child.header_read', 'Record: header read', 'Read'],
+    ['child.glance_read', 'Record: at a glance read', 'Read'],
+    ['child.header_read', 'Record: name and details read', 'Read'],
     ['sessionNote.signed', 'Session note: signed', 'Written'],
-    ['sessionNote.revisions', 'Session note: revisions', 'Read'],
-    ['sessionNotes.list', 'Session note: list', 'Read'],
-    ['letters.listOfChild', 'Letter: list of child', 'Read'],
-    ['letter.pdf', 'Letter: pdf', 'Read'],
-    ['sample.thumbnail', 'Handwriting sample: thumbnail', 'Read'],
+    ['sessionNote.revisions', 'Session note: earlier texts read', 'Read'],
+    ['sessionNotes.list', 'Session note: list read', 'Read'],
+    ['letters.listOfChild', 'Letter: list read', 'Read'],
+    ['letter.pdf', 'Letter: PDF read', 'Read'],
+    ['sample.thumbnail', 'Handwriting sample: small picture read', 'Read'],
     ['episode.state_changed', 'Episode: state changed', 'Written'],
     ['consent.withdrawn', 'Consent: withdrawn', 'Written'],
     ['guardian.contact_changed', 'Carer: contact changed', 'Written'],
