@@ -130,7 +130,7 @@ function printHead(pdf: PDFKit.PDFDocument, pages: Pages, letter: LetterForPrint
       styles.body,
       4,
     ),
-    piece(pdf, pages, 'P', [letter.salutation], styles.body, 18),
+    piece(pdf, pages, 'P', [`${letter.salutation},`], styles.body, 18),
   ])
 }
 

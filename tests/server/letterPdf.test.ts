@@ -58,7 +58,7 @@ describe('renderLetterPdf', () => {
       words(
         [
           'Example Children’s Clinic 3 Example Lane, Exampletown Phone 01632 960 000 Progress letter',
-          'About Mara Example. Our reference: FF-2026-0001 20 Nov 2026 Dear Sam Example',
+          'About Mara Example. Our reference: FF-2026-0001 20 Nov 2026 Dear Sam Example,',
           'When we met First paragraph. Second paragraph: one two What Mara does well',
           'Mara draws maps. Mara helps others. Next Our next visit is on 14 Dec 2026.',
           'With kind regards, Ada Writer Occupational therapist, Example Children’s Clinic',
