@@ -1,5 +1,6 @@
 import { resolve } from 'node:path'
 import { mixed, object, string, ValidationError, type AnyObject, type TestContext } from 'yup'
+import { isOneMailbox } from '../shared/fields.ts'
 import { isLoopbackHost, isPort, parseDatabaseUrl, type DatabaseAccess } from './setup/databaseAccess.ts'
 import { SetUpError } from './setup/setUpError.ts'
 
@@ -20,6 +21,8 @@ export type Env = {
   databaseMigrate: DatabaseAccess | null
   /** Outgoing mail; null starts the mail fake (loopback only). */
   smtpUrl: string | null
+  /** The address e-mails come from. */
+  mailFrom: string
   /** Null: one is drawn and kept in dataDir (loopback only). */
   sessionSecret: string | null
   /** Whether the demo clinic is seeded and its accounts let in. */
@@ -102,6 +105,17 @@ const schema = object({
       '',
       neededWhenRemote('is needed when APP_URL is not this machine: where mail is handed in'),
     ),
+  MAIL_FROM: text()
+    .test(
+      'mailbox',
+      '${path} must be one e-mail address, like no-reply@clinic.example.org',
+      (value) => value === undefined || isOneMailbox(value),
+    )
+    .test(
+      'remote',
+      '',
+      neededWhenRemote('is needed when APP_URL is not this machine: the address e-mails come from'),
+    ),
   SESSION_SECRET: text()
     .min(32, '${path} must have at least 32 characters')
     .test(
@@ -145,6 +159,7 @@ export function readEnv(source: Record<string, string | undefined>): Env {
     database: accessOrNull('DATABASE_URL', settings.DATABASE_URL),
     databaseMigrate: accessOrNull('DATABASE_MIGRATE_URL', settings.DATABASE_MIGRATE_URL),
     smtpUrl: settings.SMTP_URL ?? null,
+    mailFrom: settings.MAIL_FROM ?? 'no-reply@fanflower.example',
     sessionSecret: settings.SESSION_SECRET ?? null,
     demo: settings.DEMO === undefined ? loopback && ownParts : settings.DEMO === '1',
     inboxPort,

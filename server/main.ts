@@ -9,6 +9,7 @@ import { demoSignIns } from './seeds/demo.ts'
 import { firstAdministratorAddress, firstAdministratorLink } from './services/firstAdministrator.ts'
 import { openAuditChain } from './services/audit.ts'
 import { hasAccounts } from './services/health.ts'
+import { setMailSender } from './services/outbox.ts'
 import { startOutboxWorker } from './services/outboxWorker.ts'
 import { databaseProblems } from './setup/checkDatabase.ts'
 import { clearHalfMadeDemo } from './setup/halfMadeDemo.ts'
@@ -57,6 +58,7 @@ const start = async (shutdown: Shutdown) => {
     clientDir: isBundle ? clientDir : null,
   })
   await listen(app, env, shutdown)
+  setMailSender({ name: 'Fanflower', address: env.mailFrom })
   const worker = startOutboxWorker(openTransport(smtpUrl))
   shutdown.add('the outbox', worker.stop)
   const firstLink = env.demo ? null : await firstAdministratorLink(env.appUrl)

@@ -7,6 +7,7 @@ const remote = {
   ...production,
   APP_URL: 'https://clinic.example.org',
   SMTP_URL: 'smtps://mailer:pw@mail.example.org:465',
+  MAIL_FROM: 'no-reply@clinic.example.org',
   SESSION_SECRET: 'x'.repeat(32),
 }
 
@@ -50,10 +51,7 @@ describe('settings of a plain start on this machine', () => {
   it.each([
     ['a database of its own', { DATABASE_URL: 'mysql://app:pw@127.0.0.1/clinic' }],
     ['a mail server', { SMTP_URL: 'smtp://127.0.0.1:2525' }],
-    [
-      'another address',
-      { APP_URL: remote.APP_URL, SMTP_URL: remote.SMTP_URL, SESSION_SECRET: remote.SESSION_SECRET },
-    ],
+    ['another address', remote],
   ])('leaves the demo out when %s is configured', (_, settings) => {
     expect(readEnv({ ...production, ...settings }).demo).toBe(false)
   })
@@ -108,6 +106,8 @@ describe('settings that are wrong', () => {
     ['APP_URL', { ...remote, APP_URL: 'http://clinic.example.org' }],
     ['SMTP_URL', { ...production, SMTP_URL: 'mail.example.org' }],
     ['SMTP_URL', { ...remote, SMTP_URL: undefined }],
+    ['MAIL_FROM', { ...production, MAIL_FROM: 'Clinic <no-reply@clinic.example.org>' }],
+    ['MAIL_FROM', { ...remote, MAIL_FROM: undefined }],
     ['SESSION_SECRET', { ...production, SESSION_SECRET: 'x'.repeat(31) }],
     ['SESSION_SECRET', { ...remote, SESSION_SECRET: undefined }],
     ['DEMO', { ...production, DEMO: 'yes' }],
