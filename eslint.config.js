@@ -27,9 +27,10 @@ const noEntities = path(
   'Entities are for services/ and queries/; elsewhere at most their types.',
 )
 const noDataSource = path('/dataSource\\.ts$', 'The data source belongs to queries/ and services/.')
-const noQueries = path(
-  room('queries'),
-  'A policy decides from what it is given; it does not ask the database.',
+const noQueries = path(room('queries'), 'This room works on what it is given; it does not ask the database.')
+const noPresenters = path(
+  room('presenters'),
+  'Only routes/ turns rows into JSON: throw what happened and present it there.',
 )
 const noServices = path(room('services'), 'This room does not call services/.')
 const noRoutes = path(
@@ -149,15 +150,28 @@ export default tseslint.config(
   forbid(['server/**/*.ts'], [noClient]),
   forbid(['server/routes/**/*.ts'], [noClient, asType(noEntities), noTypeorm, noDataSource]),
   forbid(['server/middleware/**/*.ts'], [noClient, asType(noEntities), noTypeorm, noDataSource]),
-  forbid(['server/services/**/*.ts'], [noClient, noExpress, noRoutes]),
-  forbid(['server/queries/**/*.ts'], [noClient, noExpress, noRoutes, noServices]),
+  forbid(['server/services/**/*.ts'], [noClient, noExpress, noRoutes, noPresenters]),
+  forbid(['server/queries/**/*.ts'], [noClient, noExpress, noRoutes, noPresenters, noServices]),
   forbid(
     ['server/policies/**/*.ts'],
     [noClient, noExpress, noRoutes, noTypeorm, noDataSource, noQueries, noServices, asType(noEntities)],
   ),
   forbid(
     ['server/presenters/**/*.ts'],
-    [noClient, noExpress, noRoutes, noTypeorm, noDataSource, noServices, asType(noEntities)],
+    [
+      noClient,
+      noExpress,
+      noRoutes,
+      noTypeorm,
+      noDataSource,
+      noServices,
+      asType(noQueries),
+      asType(noEntities),
+    ],
+  ),
+  forbid(
+    ['server/{access,mail,pdf,uploads}/**/*.ts'],
+    [noClient, noRoutes, noTypeorm, noDataSource, noQueries, noServices, noPresenters, noEntities],
   ),
   forbid(['server/entities/**/*.ts'], [noClient, noExpress, noRoutes, noServices, noDataSource]),
   forbid(['shared/**/*.ts'], [onlyPure, onlyInside]),
