@@ -17,6 +17,15 @@ describe('replacePhrase', () => {
   it('leaves a text without the phrase as it is', () => {
     expect(replacePhrase('She draws birds.', 'wrong hand', 'left hand')).toBe('She draws birds.')
   })
+
+  it.each([
+    ['She cut with the wrong hand.', 'wrong hand', 'the left hand', 'She cut with the left hand.'],
+    ['Her wrong hand rested.', 'wrong hand', 'the left hand', 'Her left hand rested.'],
+    ['Not a southpaw.', 'southpaw', 'a left-handed child', 'Not a left-handed child.'],
+    ['They bathe wrong hands.', 'wrong hands', 'the other hand', 'They bathe the other hand.'],
+  ])('says whose or which only once: “%s” without “%s”', (text, phrase, instead, expected) => {
+    expect(replacePhrase(text, phrase, instead)).toBe(expected)
+  })
 })
 
 describe('canBePutIn', () => {

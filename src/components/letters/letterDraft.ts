@@ -26,14 +26,21 @@ export function differingSections(mine: LetterDraft, theirs: LetterDraft) {
   return parts.filter((part) => part.mine !== part.theirs)
 }
 
-/** Replaces the first place where the phrase stands, whatever its capitals; a text without it stays as it is. */
+const determiner = /\b(?:the|a|an|his|her|their|its|my|your|our)\s+$/i
+
+/**
+ * Replaces the first place where the phrase stands, whatever its capitals; a text without it stays as it is. Where the
+ * words before already say whose or which ('her wrong hand'), the other words come without their article.
+ */
 export function replacePhrase(text: string, phrase: string, instead: string): string {
   const at = text.toLowerCase().indexOf(phrase.toLowerCase())
   if (at < 0) return text
+  const before = text.slice(0, at)
+  const other = determiner.test(before) ? instead.replace(/^(?:the|an?)\s+/i, '') : instead
   const first = text.charAt(at)
   const starts = first !== first.toLowerCase()
-  const words = starts ? instead.charAt(0).toUpperCase() + instead.slice(1) : instead
-  return text.slice(0, at) + words + text.slice(at + phrase.length)
+  const words = starts ? other.charAt(0).toUpperCase() + other.slice(1) : other
+  return before + words + text.slice(at + phrase.length)
 }
 
 /**
