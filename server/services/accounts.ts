@@ -76,8 +76,12 @@ export const checkSignIn = async ({
   }
   await clearAttempts(key)
   await forgiveHit(`address:${address}`)
+  // In plain SQL, here and below: TypeORM would raise the version, as if somebody had changed the account.
   if (user.passwordHash && needsRehash(user.passwordHash))
-    await database().manager.update(User, { id: user.id }, { passwordHash: await hashPassword(password) })
+    await database().query('UPDATE users SET passwordHash = ? WHERE id = ?', [
+      await hashPassword(password),
+      user.id,
+    ])
   return user
 }
 
@@ -89,7 +93,7 @@ const isKnownDevice = async (userId: string, device: string): Promise<boolean> =
   return row !== undefined
 }
 
-/** Notes the sign-in and makes this browser a known one. */
+/** Notes the sign-in and makes this browser a known one. The account's version stays: nobody's open form gets stale. */
 export const noteSignIn = async (user: User, requestId: string, device: string): Promise<void> => {
   const actor: Actor = {
     ...systemActor(requestId),
@@ -101,7 +105,6 @@ export const noteSignIn = async (user: User, requestId: string, device: string):
     },
   }
   await transact(actor, async (tx, record) => {
-    // Past TypeORM, which would raise the version: a sign-in must not make an open form about the person stale.
     await execute(tx, 'UPDATE users SET lastSignInAt = :now WHERE id = :id', { now: now(), id: user.id })
     await tx.query(
       `INSERT INTO known_devices (id, tokenHash, userId, createdAt, lastUsedAt) VALUES (?, ?, ?, ?, ?)
