@@ -14,5 +14,5 @@ export const clinicSettings: ClinicSettings = {
   unsignedOverdueHours: 48,
   cutOffSet: 'clinic-40',
   emergencyText:
-    'If a child is suddenly weak on one side, has a drooping face, a seizure or a sudden severe headache, call the emergency number at once. Do not wait for us.',
+    'If a child is suddenly weak on one side, has a drooping face, a seizure or a sudden severe headache, call 999 at once. Do not wait for us.',
 }
