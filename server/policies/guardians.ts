@@ -6,8 +6,8 @@ const staff: readonly ChildRelation[] = ['assignedTherapist', 'clinicLead', 'adm
 const write = (name: string) => childPolicy(name, staff, 'write', ['guardian'])
 
 export const guardianPolicies = {
-  /** A carer gets their own row and no other. */
-  list: childPolicy('guardians.list', [...staff, 'guardian'], 'read'),
+  /** For the clinic. A carer meets their own contact on their own page, without what the clinic notes about them. */
+  list: childPolicy('guardians.list', staff, 'read', ['guardian']),
   add: write('guardian.add'),
   change: write('guardian.change'),
   invite: write('guardian.invite'),

@@ -23,13 +23,12 @@ export interface GuardianRow {
 
 type Flags = 'courtOrder' | 'safeToContact' | 'restricted'
 
-/** The child's carers; to a carer only their own row, so that nobody learns of another's address or restriction. */
+/** The child's carers, for the clinic's staff. */
 export const listGuardians = async (
   access: ChildAccess,
   onlyId: string | null = null,
 ): Promise<GuardianRow[]> => {
   const scope = within(access, 'g.childId')
-  const own = access.relation === 'guardian'
   const rows = await selectRows<Omit<GuardianRow, Flags> & Record<Flags, number>>(
     `SELECT g.id, g.name, g.relation, g.parentalResponsibility, g.courtOrder, g.safeToContact, g.restricted, g.email,
        g.phone, g.address, g.version,
@@ -38,10 +37,10 @@ export const listGuardians = async (
        CASE WHEN ${emailConsent('email_attachment')} THEN 'attachment' WHEN ${emailConsent('email_link')} THEN 'link'
          ELSE 'none' END AS emailConsent
      FROM guardians g LEFT JOIN users u ON u.id = g.userId
-     WHERE g.endedAt IS NULL AND ${scope.sql} ${own ? 'AND g.id = :ownRow' : ''}
+     WHERE g.endedAt IS NULL AND ${scope.sql}
        ${onlyId === null ? '' : 'AND g.id = :onlyId'}
      ORDER BY g.createdAt, g.id`,
-    { ...scope.parameters, now: now(), ownRow: access.guardianId, onlyId },
+    { ...scope.parameters, now: now(), onlyId },
   )
   return rows.map((row) => ({
     ...row,

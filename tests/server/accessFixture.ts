@@ -120,8 +120,9 @@ export const accessRows: readonly AccessRow[] = [
   // Audit log by child; a carer gets role, date and kind of access
   child('GET …/access-history', ['T1', 'L', 'G1'], ['AD']),
 
-  // Guardians: links and contacts. A carer reads their own row and changes it in their own room.
-  child('GET …/guardians', ['T1', 'L', 'AD', 'G1']),
+  // Guardians: links and contacts. A carer reads and changes their own contact in their own room, which leaves out
+  // whether the clinic holds them safe to contact.
+  child('GET …/guardians', ['T1', 'L', 'AD'], ['G1']),
   child('POST …/guardians', ['T1', 'L', 'AD'], ['G1']),
   child('PUT …/guardians/:id', ['T1', 'L', 'AD'], ['G1']),
   child('POST …/guardians/:id/invite', ['T1', 'L', 'AD'], ['G1']),

@@ -57,7 +57,7 @@ describe('the access history', () => {
         'Otto Other · Nobody to this child · Record: header · denied',
         'Lida Lead · Clinic lead · Episode: state changed · allowed',
         'Hedda Holder · Therapist of the child · Carer: restricted · allowed',
-        'Falk Father · Parent or carer · Family page: child · allowed',
+        'Falk Father · Parent or carer · Family page: read · allowed',
       ]),
     )
     const moments = rows.map((row) => row.at)
