@@ -5,6 +5,7 @@ import type { Viewer } from '../access/actor.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { seesEveryAccount } from '../policies/users.ts'
+import { runsAt } from './inForce.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { count, flag, fromJson, likePattern, selectOne, type SqlParameters } from './sql.ts'
 
@@ -82,7 +83,7 @@ export const findUser = async (viewer: Viewer, id: string, tx?: Tx): Promise<Acc
 export const countOpenCases = async (tx: Tx, userId: string): Promise<number> => {
   const row = await selectOne<{ cases: string }>(
     `SELECT COUNT(DISTINCT a.childId) AS cases FROM assignments a JOIN episodes e ON e.childId = a.childId
-     WHERE a.therapistId = :userId AND a.startedAt <= :now AND (a.endedAt IS NULL OR a.endedAt > :now)
+     WHERE a.therapistId = :userId AND ${runsAt('a')}
        AND e.state NOT IN (:closed)`,
     { userId, now: now(), closed: closedStates },
     tx,

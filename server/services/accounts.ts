@@ -1,6 +1,6 @@
 import { createHash, randomBytes, randomUUID } from 'node:crypto'
 import type { TokenPurpose } from '../../shared/users.ts'
-import { systemActor, type Actor, type Viewer } from '../access/actor.ts'
+import { actorFor, systemActor, type Actor, type Viewer } from '../access/actor.ts'
 import { now } from '../clock.ts'
 import { database, type Tx } from '../dataSource.ts'
 import { User } from '../entities/User.ts'
@@ -24,17 +24,17 @@ export const invitationHours = 72
 export const hashToken = (token: string) => createHash('sha256').update(token).digest()
 export const newToken = () => randomBytes(32).toString('base64url')
 
+const viewerOf = ({ id, displayName, roles, newlyQualified }: User): Viewer => ({
+  id,
+  displayName,
+  roles,
+  newlyQualified,
+})
+
 /** The person as requests know them; null for an unknown or disabled account. */
 export const findViewer = async (userId: string): Promise<(Viewer & { user: User }) | null> => {
   const user = await database().manager.findOneBy(User, { id: userId })
-  if (!user || user.disabledAt) return null
-  return {
-    id: user.id,
-    displayName: user.displayName,
-    roles: user.roles,
-    newlyQualified: user.newlyQualified,
-    user,
-  }
+  return !user || user.disabledAt ? null : { ...viewerOf(user), user }
 }
 
 export interface SignInAttempt {
@@ -95,16 +95,7 @@ const isKnownDevice = async (userId: string, device: string): Promise<boolean> =
 
 /** Notes the sign-in and makes this browser a known one. The account's version stays: nobody's open form gets stale. */
 export const noteSignIn = async (user: User, requestId: string, device: string): Promise<void> => {
-  const actor: Actor = {
-    ...systemActor(requestId),
-    viewer: {
-      id: user.id,
-      displayName: user.displayName,
-      roles: user.roles,
-      newlyQualified: user.newlyQualified,
-    },
-  }
-  await transact(actor, async (tx, record) => {
+  await transact(actorFor(viewerOf(user), requestId), async (tx, record) => {
     await execute(tx, 'UPDATE users SET lastSignInAt = :now WHERE id = :id', { now: now(), id: user.id })
     await tx.query(
       `INSERT INTO known_devices (id, tokenHash, userId, createdAt, lastUsedAt) VALUES (?, ?, ?, ?, ?)
