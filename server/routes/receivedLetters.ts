@@ -26,7 +26,7 @@ export const receivedLetterRoutes = (): Router => {
     const letter = await findReceivedLetter(viewer, String(req.params.letterId))
     const pdf = await findReceivedPdf(viewer, letter.deliveryId)
     await recordLetterRead(req.actor, letter, 'pdf')
-    res.type('application/pdf').setHeader('Content-Disposition', 'inline; filename="letter.pdf"')
+    res.type('application/pdf').setHeader('Content-Disposition', 'attachment; filename="letter.pdf"')
     res.send(pdf)
   })
 
