@@ -61,8 +61,9 @@ export function accessActionWords(action: string): string {
   return `${known ?? first.charAt(0).toUpperCase() + first.slice(1)}: ${readings[verb] ?? spoken(verb)}`
 }
 
+// A create asked for a second time writes nothing, and a file found damaged was only looked at.
 const readingVerbs =
-  /(?:^|[._ ])(?:read|list(?:ed)?|looked|opened|header_read|glance_read|pdf|file|thumbnail|revisions|child|children)/
+  /(?:^|_)(?:read|list|looked|opened|followed|pdf|file|thumbnail|damaged|revisions|child|asked_again)/
 
 /** Only whether something was read or written, for those who see no more than that. */
 export const accessKindWords = (action: string): string =>

@@ -12,6 +12,8 @@ describe('an entry of the access history', () => {
     ['letter.pdf', 'Letter: PDF read', 'Read'],
     ['sample.thumbnail', 'Handwriting sample: small picture read', 'Read'],
     ['episode.state_changed', 'Episode: state changed', 'Written'],
+    ['letter.link_followed', 'Letter: link followed', 'Read'],
+    ['goal.asked_again', 'Goal: asked again', 'Read'],
     ['consent.withdrawn', 'Consent: withdrawn', 'Written'],
     ['guardian.contact_changed', 'Carer: contact changed', 'Written'],
     ['child.changeState', 'Record: change state', 'Written'],
