@@ -166,7 +166,7 @@ describe('a letter that arrived', () => {
     const letter = await sentLetter()
     const pdf = await pdfFrom(carer, letter.id)
     expect(pdf.headers['content-type']).toBe('application/pdf')
-    expect(pdf.headers['content-disposition']).toBe('inline; filename="letter.pdf"')
+    expect(pdf.headers['content-disposition']).toBe('attachment; filename="letter.pdf"')
     expect(
       createHash('sha256')
         .update(pdf.body as Buffer)
