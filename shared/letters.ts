@@ -123,6 +123,7 @@ export interface LetterRecipient {
 
 export interface DeliveryView {
   id: string
+  guardianId: string
   recipient: string
   channel: 'link' | 'attachment'
   state: DeliveryState
@@ -133,6 +134,23 @@ export interface DeliveryView {
   openedAt: string | null
   can: { retry: boolean }
 }
+
+/** A copy that has reached this carer, or will without anybody doing anything. */
+export const isArriving = ({ state }: Pick<DeliveryView, 'state'>): boolean =>
+  ['queued', 'sending', 'sent', 'opened'].includes(state)
+
+/** Carers who can be written to by e-mail now and for whom no copy is on its way or there. */
+export const recipientsStillWithout = ({
+  recipients,
+  deliveries,
+}: {
+  recipients: readonly LetterRecipient[]
+  deliveries: readonly Pick<DeliveryView, 'guardianId' | 'state'>[]
+}): LetterRecipient[] =>
+  recipients.filter(
+    ({ guardianId, channel }) =>
+      channel !== null && !deliveries.some((copy) => copy.guardianId === guardianId && isArriving(copy)),
+  )
 
 export interface LetterRow {
   id: string

@@ -23,6 +23,7 @@ import type { DeliveryRow, LetterListRow, LetterRecord, RecipientRow } from '../
 
 const presentDelivery = (row: DeliveryRow, mayRetry: boolean): DeliveryView => ({
   id: row.id,
+  guardianId: row.guardianId,
   recipient: row.recipient,
   channel: row.channel,
   state: row.state,

@@ -14,10 +14,10 @@ import { now } from '../clock.ts'
 import { notFound } from '../errors.ts'
 import type { Tx } from '../dataSource.ts'
 import { matchesWords } from './children/lists.ts'
-import { emailConsent } from './inForce.ts'
-import { calledName } from './names.ts'
+import { emailConsent, runsAt } from './inForce.ts'
+import { calledName, wholeNames } from './names.ts'
 import { selectPage, type PageOf, type PageSlice } from './pages.ts'
-import { childScope, within } from './scope.ts'
+import { within } from './scope.ts'
 import { flag, fromJson, selectOne, selectRows, type SqlParameters } from './sql.ts'
 import { staffScope } from './staffScope.ts'
 
@@ -187,6 +187,7 @@ export const listRecipients = async (access: ChildAccess, tx?: Tx): Promise<Reci
 
 export interface DeliveryRow {
   id: string
+  guardianId: string
   recipient: string
   channel: 'link' | 'attachment'
   state: DeliveryState
@@ -200,7 +201,7 @@ export interface DeliveryRow {
 export const listDeliveries = (access: ChildAccess, letterId: string): Promise<DeliveryRow[]> => {
   const scope = within(access, 'l.childId')
   return selectRows<DeliveryRow>(
-    `SELECT d.id, g.name AS recipient, d.channel, d.state, m.attempts, m.lastTriedAt, m.nextAttemptAt, m.problem, d.openedAt
+    `SELECT d.id, d.guardianId, g.name AS recipient, d.channel, d.state, m.attempts, m.lastTriedAt, m.nextAttemptAt, m.problem, d.openedAt
      FROM letter_deliveries d JOIN letters l ON l.id = d.letterId JOIN guardians g ON g.id = d.guardianId
        JOIN outbox_messages m ON m.id = d.outboxMessageId
      WHERE d.letterId = :letterId AND ${scope.sql} ORDER BY d.createdAt, d.id`,
@@ -209,19 +210,29 @@ export const listDeliveries = (access: ChildAccess, letterId: string): Promise<D
 }
 
 /**
- * Given and preferred names of the other children of the viewer's caseload and this child's class: names that would
- * betray another child if they stood in this letter.
+ * Names that would betray another child if they stood in this letter: of the child's class, of the caseload of the
+ * child's therapist, and of brothers and sisters (children of one carer's account). Whole names first, then each part
+ * of three letters or more. The viewer need not hold those children: a name is only compared with what they wrote.
  */
 export const listOtherNames = async (access: ChildAccess): Promise<string[]> => {
-  const scope = childScope(access.viewer, access.relation, 'o.id')
+  const scope = within(access, 'c.id')
   const rows = await selectRows<{ givenName: string; preferredName: string | null; familyName: string }>(
-    `SELECT DISTINCT o.givenName, o.preferredName, o.familyName FROM children o WHERE o.id <> :childId AND ${scope.sql}
-     LIMIT 500`,
-    { childId: access.childId, ...scope.parameters },
+    `WITH near AS (
+       SELECT m.id FROM children c JOIN children m ON m.schoolClassId = c.schoolClassId WHERE ${scope.sql}
+       UNION SELECT h.childId FROM children c JOIN assignments t ON t.childId = c.id AND ${runsAt('t')}
+         JOIN assignments h ON h.therapistId = t.therapistId AND ${runsAt('h')} WHERE ${scope.sql}
+       UNION SELECT s.childId FROM children c JOIN guardians g ON g.childId = c.id
+         JOIN guardians s ON s.userId = g.userId WHERE ${scope.sql})
+     SELECT DISTINCT o.givenName, o.preferredName, o.familyName FROM near JOIN children o ON o.id = near.id
+     WHERE o.id <> :childId`,
+    { childId: access.childId, now: now(), ...scope.parameters },
   )
-  return rows.flatMap(({ givenName, preferredName, familyName }) =>
-    [givenName, preferredName, familyName].filter((name): name is string => name !== null && name.length > 2),
-  )
+  return rows.flatMap((row) => [
+    ...wholeNames(row),
+    ...[row.givenName, row.preferredName, row.familyName].filter(
+      (name): name is string => name !== null && [...name].length > 2,
+    ),
+  ])
 }
 
 /** The approved PDF with the hash it must have. */
