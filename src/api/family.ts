@@ -12,7 +12,7 @@ export const familyApi = {
     http.put<MyChildView>(`/my/children/${childId}/contact`, contact, { ifMatch: version }),
   giveConsent: (childId: string, purpose: ConsentPurpose) =>
     http.post<void>(`/my/children/${childId}/consents`, { purpose }),
-  withdrawConsent: (childId: string, consentId: string, reason: string) =>
+  withdrawConsent: (childId: string, consentId: string, reason: string | null) =>
     http.post<void>(`/my/children/${childId}/consents/${consentId}/withdraw`, { reason }),
   letter: (letterId: string) => http.get<ReceivedLetter>(`/my/letters/${letterId}`),
   letterPdfUrl: (letterId: string) => `/api/my/letters/${letterId}/pdf`,

@@ -7,9 +7,6 @@ import { wordsFor } from '@/composables/problems.ts'
 
 type ConsentChange = { consent: MyConsent; reason: string | null }
 
-/** What the record says when a family stops something and does not say why: they need not. */
-const noReason = 'No reason given'
-
 /** A parent's page of one child: what is there, and the two things they change themselves. */
 export function useMyChild(childId: MaybeRefOrGetter<string>) {
   const child = useQuery({
@@ -19,7 +16,7 @@ export function useMyChild(childId: MaybeRefOrGetter<string>) {
   const consent = useMutation({
     mutation: ({ consent: chosen, reason }: ConsentChange) =>
       chosen.consentId !== null && chosen.inForce
-        ? familyApi.withdrawConsent(toValue(childId), chosen.consentId, reason ?? noReason)
+        ? familyApi.withdrawConsent(toValue(childId), chosen.consentId, reason)
         : familyApi.giveConsent(toValue(childId), chosen.purpose),
     onSettled: () => child.refetch(),
   })
@@ -29,7 +26,7 @@ export function useMyChild(childId: MaybeRefOrGetter<string>) {
       familyApi.updateContact(toValue(childId), contact, version),
     give: (chosen: MyConsent) => consent.mutate({ consent: chosen, reason: null }),
     withdraw: (chosen: MyConsent, reason: string) =>
-      consent.mutate({ consent: chosen, reason: reason.trim().length < 2 ? null : reason.trim() }),
+      consent.mutate({ consent: chosen, reason: reason.trim() === '' ? null : reason.trim() }),
     changing: computed(() =>
       consent.isLoading.value ? (consent.variables.value?.consent.purpose ?? null) : null,
     ),
