@@ -17,6 +17,10 @@ const isAdministrator = (viewer: Viewer) => viewer.roles.includes('administrator
 /** An administrator sees every account; a lead sees colleagues, without their sign-ins. */
 export const seesEveryAccount = isAdministrator
 
+/** Roles this viewer may look for in the list; who is a carer here is nothing a lead may find out. */
+export const searchableRoles = (viewer: Viewer): readonly Role[] =>
+  seesEveryAccount(viewer) ? roles : roles.filter((role) => role !== 'guardian')
+
 /** Roles this viewer may give by invitation. A carer's account begins with their child, never here. */
 export const invitableRoles = (viewer: Viewer): readonly Role[] =>
   isAdministrator(viewer) ? roles.filter((role) => role !== 'guardian') : staffRoles

@@ -49,17 +49,22 @@ const reach = (viewer: Viewer): string =>
 
 export const listUsers = async (
   viewer: Viewer,
-  search: string | null,
+  { search, role }: { search: string | null; role: Role | null },
   slice: PageSlice,
 ): Promise<PageOf<AccountRow>> => {
   const parameters: SqlParameters = {
     viewer: viewer.id,
     ...(search !== null && { word: likePattern(search) }),
+    ...(role !== null && { role: JSON.stringify(role) }),
   }
+  const narrowed = [
+    ...(search === null ? [] : ['(u.displayName LIKE :word OR u.email LIKE :word)']),
+    ...(role === null ? [] : ['JSON_CONTAINS(u.roles, :role)']),
+  ]
   const found = await selectPage<StoredAccount>(
     {
       select: columns,
-      from: `FROM users u WHERE ${reach(viewer)} ${search === null ? '' : 'AND (u.displayName LIKE :word OR u.email LIKE :word)'}`,
+      from: `FROM users u WHERE ${[reach(viewer), ...narrowed].join(' AND ')}`,
       orderBy: 'u.disabledAt IS NOT NULL, u.displayName, u.id',
       parameters,
     },

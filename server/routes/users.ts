@@ -3,9 +3,16 @@ import { emptySchema } from '../../shared/fields.ts'
 import { staffInvitationSchema, userChangeSchema } from '../../shared/users.ts'
 import { notFound } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
-import { bodyOf, idempotencyKeyOf, ifMatchOf, pageOf, queryText } from '../middleware/requestBody.ts'
+import {
+  bodyOf,
+  idempotencyKeyOf,
+  ifMatchOf,
+  pageOf,
+  queryChoice,
+  queryText,
+} from '../middleware/requestBody.ts'
 import { viewerOf } from '../middleware/requestContext.ts'
-import { userPolicies } from '../policies/users.ts'
+import { searchableRoles, userPolicies } from '../policies/users.ts'
 import { presentPage } from '../presenters/pages.ts'
 import { presentUser } from '../presenters/users.ts'
 import { findUser, listUsers } from '../queries/users.ts'
@@ -28,7 +35,8 @@ export const userRoutes = ({ appUrl }: RouteSettings): Router => {
   router.get('/users', allow(userPolicies.list), async (req, res) => {
     const viewer = viewerOf(req)
     const page = pageOf(req)
-    const users = await listUsers(viewer, queryText(req, 'search'), page)
+    const role = queryChoice(req, 'role', searchableRoles(viewer))
+    const users = await listUsers(viewer, { search: queryText(req, 'search'), role }, page)
     await recordAudit(req.actor, {
       action: 'user.listed',
       objectType: 'user',

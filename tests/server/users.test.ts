@@ -137,6 +137,29 @@ describe('the list of people', () => {
     expect(await list(administrator, '?search=%25')).toEqual([])
   })
 
+  it('narrows to one role, and tells a lead nothing about who is a carer', async () => {
+    const teacher = await buildUser('teacher', { displayName: 'Thea Classroom' })
+    const both = await buildUser('teacher', {
+      displayName: 'Tobias Twohats',
+      roles: ['teacher', 'guardian'],
+    })
+    for (const who of [administrator, lead]) {
+      const teachers = await list(who, '?role=teacher&size=100')
+      expect(teachers.map(({ id }) => id)).toEqual(expect.arrayContaining([teacher.id, both.id]))
+      expect(teachers.every(({ roles }) => roles.includes('teacher'))).toBe(true)
+    }
+    const found = await administrator.get('/api/users?role=teacher&search=classroom&size=1')
+    expect(found.body).toMatchObject({ total: 1, rows: [{ id: teacher.id }] })
+    expect((await list(administrator, '?role=guardian&size=100')).map(({ id }) => id)).toContain(both.id)
+    for (const [who, role] of [
+      [lead, 'guardian'],
+      [administrator, 'owner'],
+    ] as const) {
+      const refused = await who.get(`/api/users?role=${role}`)
+      expect([refused.status, Object.keys(refused.body.fields)]).toEqual([422, ['role']])
+    }
+  })
+
   it('is closed to therapists, teachers and parents', async () => {
     for (const role of ['therapist', 'teacher', 'guardian'] as const)
       expect((await (await signedInAs(await buildUser(role))).get('/api/users')).status).toBe(403)
