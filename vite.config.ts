@@ -134,7 +134,11 @@ export default defineConfig({
           name: 'e2e',
           include: ['tests/e2e/**/*.spec.ts'],
           environment: 'node',
-          testTimeout: 180_000,
+          globalSetup: ['tests/e2e/support/clinicSetup.ts'],
+          // After the others and one file at a time: browser, server and database share the machine already.
+          sequence: { groupOrder: 1 },
+          maxWorkers: 1,
+          testTimeout: 600_000,
           hookTimeout: 120_000,
         },
       },

@@ -1,11 +1,11 @@
-import { mkdirSync } from 'node:fs'
+import { mkdirSync, readFileSync } from 'node:fs'
 import { createRequire } from 'node:module'
 import { join } from 'node:path'
 import { chromium, type Browser, type Page } from 'playwright-core'
 import { expect } from 'vitest'
-import type { SignIn } from './clinic.ts'
+import type { SignIn } from './people.ts'
 
-const axeSource = createRequire(import.meta.url).resolve('axe-core/axe.min.js')
+const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
 
 export const openBrowser = (): Promise<Browser> =>
   chromium.launch({
@@ -23,12 +23,28 @@ export const openBrowser = (): Promise<Browser> =>
 
 export interface Person {
   page: Page
+  /** Where the clinic is. */
+  url: string
   /** Console errors, policy violations and requests to other hosts seen so far. */
   faults: string[]
   close: () => Promise<void>
 }
 
-/** A browser context of one person's own, watched for faults. */
+const watch = (page: Page, url: string, faults: string[]) => {
+  page.on('console', (message) => {
+    // The browser itself reports each refused request; refusals are judged by what the page shows.
+    if (message.type() === 'error' && !message.text().includes('Failed to load resource'))
+      faults.push(message.text())
+  })
+  page.on('pageerror', (error) => faults.push(error.message))
+  page.on('request', (request) => {
+    const target = request.url()
+    if (!target.startsWith(`${url}/`) && !/^(data|blob|about):/.test(target))
+      faults.push(`request to ${new URL(target).host}`)
+  })
+}
+
+/** A browser context of one person's own, watched for faults in every tab. */
 export const openPerson = async (
   browser: Browser,
   url: string,
@@ -41,57 +57,93 @@ export const openPerson = async (
     timezoneId: 'Europe/London',
     bypassCSP: false,
   })
-  const page = await context.newPage()
-  page.setDefaultTimeout(15_000)
+  context.setDefaultTimeout(30_000)
   const faults: string[] = []
-  page.on('console', (message) => {
-    // The browser itself reports each refused request; refusals are judged by what the page shows.
-    if (message.type() === 'error' && !message.text().includes('Failed to load resource'))
-      faults.push(message.text())
-  })
-  page.on('pageerror', (error) => faults.push(error.message))
-  page.on('request', (request) => {
-    const target = request.url()
-    if (!target.startsWith(url) && !/^(data|blob|about):/.test(target))
-      faults.push(`request to ${new URL(target).host}`)
-  })
-  return { page, faults, close: () => context.close() }
+  context.on('page', (page) => watch(page, url, faults))
+  const page = await context.newPage()
+  return { page, url, faults, close: () => context.close() }
 }
 
-export const signIn = async ({ page }: Person, url: string, { email, password }: SignIn): Promise<void> => {
-  await page.goto(`${url}/sign-in`)
+/** Fills in the sign-in page that is open. */
+export const signInHere = async ({ page }: Person, { email, password }: SignIn): Promise<void> => {
   await page.getByLabel('E-mail address').fill(email)
   await page.getByLabel('Password', { exact: true }).fill(password)
   await page.getByRole('button', { name: 'Sign in', exact: true }).click()
   await page.waitForURL((address) => !address.pathname.startsWith('/sign-in'))
 }
 
-interface AxeResult {
-  violations: { id: string; nodes: { target: string[]; failureSummary?: string }[] }[]
+export const signIn = async (person: Person, how: SignIn): Promise<void> => {
+  await person.page.goto(`${person.url}/sign-in`)
+  await signInHere(person, how)
 }
+
+/** Signs out as people do; the sign-in page follows. */
+export const signOut = async ({ page }: Person): Promise<void> => {
+  const menu = page.getByRole('button', { name: 'Menu', exact: true })
+  if (await menu.isVisible()) await menu.click()
+  await page.getByRole('button', { name: 'Sign out' }).locator('visible=true').last().click()
+  await page.waitForURL(/\/sign-in$/)
+}
+
+/** Another tab of the same browser: same sign-in, its own page. */
+export const openTab = async ({ page, url, faults, close }: Person): Promise<Person> => ({
+  page: await page.context().newPage(),
+  url,
+  faults,
+  close,
+})
 
 /** Waits until nothing on the page says it is loading. */
 export const settled = async (page: Page): Promise<void> => {
   await page.waitForLoadState('networkidle')
-  await page.waitForFunction(() => document.querySelector('[aria-busy="true"], .p-skeleton') === null)
+  await page.waitForFunction(
+    () => document.querySelector('[aria-busy="true"], .load-line, .p-button-loading') === null,
+  )
 }
 
-/** No axe-core violation (WCAG 2.0–2.2 A and AA, and best practice) on the page as it stands. */
+interface AxeResult {
+  violations: { id: string; nodes: { target: string[]; failureSummary?: string }[] }[]
+}
+
+/** No axe-core violation (WCAG 2.0 to 2.2, A and AA, and best practice) on the page as it stands. */
 export const expectAccessible = async (page: Page, where: string): Promise<void> => {
-  await settled(page)
-  await page.addScriptTag({ path: axeSource }).catch(() => undefined)
-  // A page whose policy refuses the tag gets the engine through the debugger instead.
-  const present = await page.evaluate(() => 'axe' in window)
-  if (!present) await page.evaluate((await import('node:fs')).readFileSync(axeSource, 'utf8'))
+  // Through the debugger: the page's own policy refuses scripts from elsewhere, and must go on doing so.
+  if (!(await page.evaluate(() => 'axe' in window))) await page.evaluate(axeSource)
   const { violations } = await page.evaluate(() =>
     (window as unknown as { axe: { run: (options: object) => Promise<AxeResult> } }).axe.run({
       runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'],
+      resultTypes: ['violations'],
     }),
   )
   const found = violations.map(
-    ({ id, nodes }) => `${id}: ${nodes.map((node) => node.target.join(' ')).join(' | ')}`,
+    ({ id, nodes }) =>
+      `${id}: ${nodes.map(({ target, failureSummary }) => `${target.join(' ')} ${failureSummary ?? ''}`).join(' | ')}`,
   )
   expect(found, `accessibility of ${where}`).toEqual([])
+}
+
+const deviceSetting = /^fanflower\.(findKey=off|look=(left|right) (light|dark|system))$/
+
+/** Nothing but looks chosen for this device is kept in the browser: no clinical text outlives the page. */
+export const expectNothingKept = async (page: Page, where: string): Promise<void> => {
+  const kept = await page.evaluate(async () => ({
+    local: Object.entries(localStorage).map(([key, value]) => `${key}=${String(value)}`),
+    session: Object.keys(sessionStorage),
+    databases: (await indexedDB.databases()).map(({ name }) => name),
+    caches: await caches.keys(),
+    workers: (await navigator.serviceWorker.getRegistrations()).length,
+  }))
+  expect(
+    kept.local.filter((entry) => !deviceSetting.test(entry)),
+    `local storage on ${where}`,
+  ).toEqual([])
+  expect({ ...kept, local: [] }, `what the browser keeps of ${where}`).toEqual({
+    local: [],
+    session: [],
+    databases: [],
+    caches: [],
+    workers: 0,
+  })
 }
 
 /** Saves a picture when SHOTS names a folder; otherwise does nothing. */
@@ -100,4 +152,12 @@ export const shoot = async (page: Page, name: string): Promise<void> => {
   if (!folder) return
   mkdirSync(folder, { recursive: true })
   await page.screenshot({ path: join(folder, `${name}.png`), fullPage: true })
+}
+
+/** The page has settled, axe finds nothing, the browser keeps nothing; a picture of it is taken when wanted. */
+export const inspect = async ({ page }: Person, where: string): Promise<void> => {
+  await settled(page)
+  await shoot(page, where)
+  await expectAccessible(page, where)
+  await expectNothingKept(page, where)
 }

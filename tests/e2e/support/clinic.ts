@@ -3,26 +3,27 @@ import { mkdtempSync, readFileSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { setTimeout as pause } from 'node:timers/promises'
-import type { Role } from '../../../shared/roles.ts'
-import type { SessionView } from '../../../shared/users.ts'
 import { findFreePort } from '../../../server/setup/processes.ts'
 
-export type SignIn = SessionView['demoSignIns'][number]
-
-export interface Clinic {
+/** Where a running clinic is reached. */
+export interface ClinicAddress {
   url: string
   inboxUrl: string
-  signIns: Record<Role, SignIn>
-  /** Resident memory of the server process in MB. */
-  memory: () => number
+  /** Process id of the server; null for a clinic that somebody else started. */
+  pid: number | null
+}
+
+export interface Clinic extends ClinicAddress {
   stop: () => Promise<void>
 }
+
+// Seeding takes some 20 s on a quiet machine, several times that on a busy one.
+const patienceInMs = 240_000
 
 /** Starts the built product the way `npm start` does, with a data folder and ports of its own and the demo clinic. */
 export const startClinic = async (): Promise<Clinic> => {
   const dataDir = mkdtempSync(join(tmpdir(), 'fanflower-e2e-'))
   const [port, inboxPort, databasePort] = [await findFreePort(), await findFreePort(), await findFreePort()]
-  const url = `http://localhost:${port}`
   const server = spawn(process.execPath, ['--enable-source-maps', 'dist-server/main.js'], {
     env: {
       ...process.env,
@@ -44,20 +45,22 @@ export const startClinic = async (): Promise<Clinic> => {
     await ended
     rmSync(dataDir, { recursive: true, force: true })
   }
-  const until = Date.now() + 90_000
+  const until = Date.now() + patienceInMs
   while (!output.includes('Fanflower is running')) {
-    if (server.exitCode !== null || Date.now() > until)
+    if (server.exitCode !== null || Date.now() > until) {
+      await stop()
       throw new Error(`The clinic did not start:\n${output}`)
+    }
     await pause(100)
   }
-  const session = (await (await fetch(`${url}/api/session`)).json()) as SessionView
-  const signIns = Object.fromEntries(session.demoSignIns.map((signIn) => [signIn.role, signIn])) as Record<
-    Role,
-    SignIn
-  >
-  const memory = () => residentMegabytes(server.pid ?? 0)
-  return { url, inboxUrl: session.clinic.inboxUrl ?? '', signIns, memory, stop }
+  return {
+    url: `http://localhost:${port}`,
+    inboxUrl: `http://localhost:${inboxPort}`,
+    pid: server.pid ?? null,
+    stop,
+  }
 }
 
-const residentMegabytes = (pid: number) =>
+/** Resident memory of a process in MB. */
+export const residentMegabytes = (pid: number): number =>
   Number(/VmRSS:\s+(\d+) kB/.exec(readFileSync(`/proc/${pid}/status`, 'utf8'))?.[1] ?? Number.NaN) / 1024
