@@ -223,7 +223,7 @@ export const listOtherNames = async (access: ChildAccess): Promise<string[]> => 
          JOIN assignments h ON h.therapistId = t.therapistId AND ${runsAt('h')} WHERE ${scope.sql}
        UNION SELECT s.childId FROM children c JOIN guardians g ON g.childId = c.id
          JOIN guardians s ON s.userId = g.userId WHERE ${scope.sql})
-     SELECT DISTINCT o.givenName, o.preferredName, o.familyName FROM near JOIN children o ON o.id = near.id
+     SELECT o.givenName, o.preferredName, o.familyName FROM near JOIN children o ON o.id = near.id
      WHERE o.id <> :childId`,
     { childId: access.childId, now: now(), ...scope.parameters },
   )

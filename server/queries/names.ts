@@ -4,3 +4,13 @@ export const recordName = (row: string): string => `CONCAT(${row}.givenName, ' '
 /** The name a child goes by, in front of the family name: for letters, families and teachers. */
 export const calledName = (row: string): string =>
   `CONCAT(COALESCE(${row}.preferredName, ${row}.givenName), ' ', ${row}.familyName)`
+
+interface ChildNames {
+  givenName: string
+  preferredName: string | null
+  familyName: string
+}
+
+/** Every way to write a child's whole name: the name on the record and the one they go by. */
+export const wholeNames = ({ givenName, preferredName, familyName }: ChildNames): string[] =>
+  [givenName, preferredName].flatMap((name) => (name === null ? [] : [`${name} ${familyName}`]))

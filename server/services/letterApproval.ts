@@ -9,6 +9,7 @@ import { AppError } from '../errors.ts'
 import { UnprintableTextError } from '../pdf/letterFonts.ts'
 import { renderLetterPdf } from '../pdf/letterPdf.ts'
 import { listOtherNames, listRecipients, type LetterRecord } from '../queries/letters.ts'
+import { wholeNames } from '../queries/names.ts'
 import { letterFact, patchLetter } from './letters.ts'
 import { readSettings } from './settings.ts'
 import { transact } from './transact.ts'
@@ -24,6 +25,8 @@ export const checkLetterText = async (
     letter.givenName,
     letter.familyName,
     letter.preferredName ?? '',
+    // A child elsewhere may be called exactly the same.
+    ...wholeNames(letter),
     letter.author,
     access.viewer.displayName,
   ]
