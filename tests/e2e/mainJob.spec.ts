@@ -1,6 +1,13 @@
 import { randomInt } from 'node:crypto'
 import { it } from 'vitest'
 import { addDays, dayOf } from '../../shared/days.ts'
+import {
+  approveLetter,
+  askForApproval,
+  giveBack,
+  openFromCaseload,
+  writeWholeLetter,
+} from './steps/colleague.ts'
 import { acceptInvitation, inviteCarer } from './steps/invitation.ts'
 import { readLetter, seeLetterRead, sendLetter, writeLetter } from './steps/letter.ts'
 import { fillQuestionnaire } from './steps/questionnaire.ts'
@@ -16,7 +23,8 @@ import { acceptReferral, enterReferral, type NewChild } from './steps/referral.t
 import { openEveryFigure } from './steps/review.ts'
 import { addSamples } from './steps/sample.ts'
 import { answerAdvice, giveAdvice, seeAnswer, stopSharing } from './steps/school.ts'
-import { signOut } from './support/browser.ts'
+import { inspect, signOut } from './support/browser.ts'
+import { seeText } from './support/fields.ts'
 import { signInOf } from './support/people.ts'
 import { openStage } from './support/stage.ts'
 
@@ -65,5 +73,31 @@ it('takes a left-handed child from the referral to a letter that is read, as fiv
   await openEveryFigure(lead)
   await stopSharing(carer, teacher, child, pupilAddress)
 
+  expectNoFaults()
+})
+
+it('lets a newly qualified therapist’s letter go only when the lead has approved it', async () => {
+  const colleague = await arrive('newly qualified therapist', signInOf('rohan'))
+  await openFromCaseload(colleague, 'Kofi Adjarey')
+  await writeWholeLetter(colleague)
+  await askForApproval(colleague)
+  await inspect(colleague, 'letter-waiting-for-approval')
+
+  const lead = await arrive('lead', signInOf('ines'))
+  const words = 'The strengths come first, well done. Say in one line when you meet next.'
+  await giveBack(lead, 'Adjarey', words)
+  const { page } = colleague
+  await page.reload()
+  await seeText(page, words)
+  await inspect(colleague, 'letter-given-back')
+  await page.getByLabel(/^Next visit/).fill(addDays(dayOf(new Date(), 'Europe/London'), 14))
+  await seeText(page, /^Saved \d\d:\d\d$/)
+  await askForApproval(colleague)
+
+  await lead.page.reload()
+  await approveLetter(lead)
+  await inspect(lead, 'letter-approved-by-lead')
+  await page.reload()
+  await page.getByRole('button', { name: 'Send', exact: true }).waitFor()
   expectNoFaults()
 })
