@@ -2,11 +2,15 @@ import { randomUUID } from 'node:crypto'
 import type { Transporter } from 'nodemailer'
 import { systemActor } from '../access/actor.ts'
 import { now } from '../clock.ts'
-import { database } from '../dataSource.ts'
+import { database, type Tx } from '../dataSource.ts'
 import { OutboxMessage } from '../entities/OutboxMessage.ts'
+import { User } from '../entities/User.ts'
 import { logger } from '../logger.ts'
+import { deliveryFailed, type DeliveryProblem } from '../mail/mailTemplates.ts'
+import type { MailClinic } from '../mail/mailLayout.ts'
 import { execute, selectOne } from '../queries/sql.ts'
 import { reasonNotToDeliver, setDeliveryState } from './letterDeliveries.ts'
+import { enqueueMail } from './outbox.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { addTask, type NewTask } from './tasks.ts'
 import { transact } from './transact.ts'
@@ -66,23 +70,27 @@ const isRefusal = (error: unknown) => {
   return responseCode !== undefined && responseCode >= 500
 }
 
-/** The server's answer without addresses or names, for people who look after delivery. */
+/** What the server answered and what to do about it, without addresses or names. */
 const problemText = (error: unknown) => {
   const { responseCode, code } = error as { responseCode?: number; code?: string }
+  // EENVELOPE: turned down at the address. A later refusal is of the message, and the family cannot mend that.
+  if (responseCode !== undefined && isRefusal(error) && code === 'EENVELOPE')
+    return `The address was refused (${responseCode}): check it with the family`
   if (responseCode !== undefined) return `The mail server answered ${responseCode}`
   return `The mail server could not be reached or broke off (${code ?? 'no answer'})`
 }
 
 type Outcome =
   | { state: 'sent' }
-  | { state: 'failed'; problem: string }
+  | { state: 'failed'; problem: string; why: DeliveryProblem }
   | { state: 'cancelled'; problem: string }
   | { state: 'queued'; problem: string; waitMinutes: number }
 
 const outcomeOf = (message: Claimed, error: unknown): Outcome => {
   const problem = problemText(error)
   const age = now().getTime() - message.createdAt.getTime()
-  if (isRefusal(error) || age >= giveUpDays * 86_400_000) return { state: 'failed', problem }
+  if (isRefusal(error)) return { state: 'failed', problem, why: 'refused' }
+  if (age >= giveUpDays * 86_400_000) return { state: 'failed', problem, why: 'gave_up' }
   // Spread a little, so that a queue does not come back all at once.
   return { state: 'queued', problem, waitMinutes: retryMinutes(message.attempts) * (1 + Math.random() * 0.1) }
 }
@@ -96,7 +104,30 @@ const taskAfter: Partial<Record<Outcome['state'], Pick<NewTask, 'kind' | 'text'>
   cancelled: { kind: 'letter_cancelled', text: 'A queued letter was not sent: see why on the letter' },
 }
 
-const settle = async (message: Claimed, owner: string, outcome: Outcome): Promise<void> => {
+interface LetterUnderWay {
+  id: string
+  letterId: string
+  childId: string
+  authorId: string
+}
+
+/** Tells the author that their letter did not arrive, in the transaction that says so. Nobody without an account. */
+const tellAuthor = async (
+  tx: Tx,
+  { letterId, childId, authorId }: LetterUnderWay,
+  { clinic, appUrl, why }: { clinic: MailClinic; appUrl: string; why: DeliveryProblem },
+): Promise<void> => {
+  const author = await tx.findOneByOrFail(User, { id: authorId })
+  if (author.disabledAt !== null) return
+  const content = deliveryFailed({
+    clinic,
+    link: `${appUrl}/children/${childId}/letters/${letterId}`,
+    problem: why,
+  })
+  await enqueueMail(tx, { kind: 'delivery_failed', recipient: author.email, ...content }, null)
+}
+
+const settle = async (message: Claimed, owner: string, outcome: Outcome, appUrl: string): Promise<void> => {
   const settings = await readSettings()
   await transact(systemActor(`outbox-${message.id}`), async (tx, record) => {
     const changed = await execute(
@@ -119,8 +150,8 @@ const settle = async (message: Claimed, owner: string, outcome: Outcome): Promis
       detail: { attempts: message.attempts },
     })
     if (changed === 0 || message.kind !== 'letter') return
-    const delivery = await selectOne<{ id: string; childId: string; authorId: string }>(
-      `SELECT d.id, l.childId, l.authorId FROM letter_deliveries d JOIN letters l ON l.id = d.letterId
+    const delivery = await selectOne<LetterUnderWay>(
+      `SELECT d.id, d.letterId, l.childId, l.authorId FROM letter_deliveries d JOIN letters l ON l.id = d.letterId
        WHERE d.outboxMessageId = :id`,
       { id: message.id },
       tx,
@@ -136,22 +167,28 @@ const settle = async (message: Claimed, owner: string, outcome: Outcome): Promis
         assigneeId: delivery.authorId,
         otherwise: 'clinicLead',
       })
+    if (outcome.state === 'failed')
+      await tellAuthor(tx, delivery, { clinic: settings, appUrl, why: outcome.why })
   })
 }
 
 /**
  * Sends what is due, one message after the other, until nothing is; answers how many were tried. At least once: when
  * the answer to the final dot is lost the same bytes go again under the same Message-ID. One bad message never holds
- * up the next.
+ * up the next. `appUrl` is where the author of a letter that failed finds it.
  */
-export const deliverDue = async (transport: Transporter, mostMessages = 100): Promise<number> => {
+export const deliverDue = async (
+  transport: Transporter,
+  appUrl: string,
+  mostMessages = 100,
+): Promise<number> => {
   const owner = randomUUID()
   for (let tried = 0; tried < mostMessages; tried += 1) {
     const message = await claim(owner)
     if (!message) return tried
     const forbidden = message.kind === 'letter' ? await reasonNotToDeliver(message.id) : null
     if (forbidden !== null) {
-      await settle(message, owner, { state: 'cancelled', problem: forbidden })
+      await settle(message, owner, { state: 'cancelled', problem: forbidden }, appUrl)
       continue
     }
     const outcome = await transport
@@ -160,7 +197,7 @@ export const deliverDue = async (transport: Transporter, mostMessages = 100): Pr
         (): Outcome => ({ state: 'sent' }),
         (error: unknown) => outcomeOf(message, error),
       )
-    await settle(message, owner, outcome)
+    await settle(message, owner, outcome, appUrl)
   }
   return mostMessages
 }
@@ -170,13 +207,14 @@ const senderOf = (mime: Buffer) => /^From:.*<([^>\r\n]+)>/im.exec(mime.toString(
 /** Looks for due mail every few seconds until stopped; waits for the message under way. */
 export const startOutboxWorker = (
   transport: Transporter,
+  appUrl: string,
   everySeconds = 2,
 ): { stop: () => Promise<void> } => {
   let stopped = false
   let timer: NodeJS.Timeout | undefined
   let running: Promise<void> = Promise.resolve()
   const tick = () => {
-    running = deliverDue(transport)
+    running = deliverDue(transport, appUrl)
       .then(
         () => undefined,
         (error: unknown) =>

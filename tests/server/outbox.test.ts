@@ -4,7 +4,7 @@ import { setClock } from '../../server/clock.ts'
 import { database } from '../../server/dataSource.ts'
 import { enqueueMail } from '../../server/services/outbox.ts'
 import { deliverDue } from '../../server/services/outboxWorker.ts'
-import { signedInAs, startApp, stopApp } from '../support/app.ts'
+import { signedInAs, startApp, stopApp, testAppUrl } from '../support/app.ts'
 import { buildGuardian, buildUser, giveConsent } from '../support/factories.ts'
 import { letterScene, queuedLetter } from '../support/letters.ts'
 import { startMail, type Mail } from '../support/mail.ts'
@@ -126,7 +126,12 @@ describe('the outbox', () => {
     await mail.failNext(550, 1, scene.guardianUser.email)
     await mail.deliver()
     const after = await scene.as.get(`${scene.base}/${letter.id}`)
-    expect(after.body.deliveries[0]).toMatchObject({ state: 'failed', attempts: 1, can: { retry: false } })
+    expect(after.body.deliveries[0]).toMatchObject({
+      state: 'failed',
+      attempts: 1,
+      problem: 'The address was refused (550): check it with the family',
+      can: { retry: false },
+    })
     const tasks = await database().query('SELECT kind, assigneeId FROM tasks WHERE childId = ?', [
       scene.child.id,
     ])
@@ -137,6 +142,49 @@ describe('the outbox', () => {
     expect(retried.status).toBe(200)
     await mail.deliver()
     expect(await mail.messages(scene.guardianUser.email)).toHaveLength(1)
+  })
+
+  it('tells the author of a letter refused for good, without a name, and of nothing else', async () => {
+    const scene = await letterScene()
+    const letter = await queuedLetter(scene)
+    await mail.failNext(550, 1, scene.guardianUser.email)
+    await mail.deliver()
+    const told = await mail.messages(scene.therapist.email)
+    expect(told).toHaveLength(1)
+    expect(told[0]?.text).toContain(`${testAppUrl}${scene.base.replace('/api', '')}/${letter.id}`)
+    expect(told[0]?.text).toContain('refused')
+    for (const word of ['Wrenna', scene.child.familyName, scene.guardianUser.email])
+      expect(JSON.stringify(told)).not.toContain(word)
+    await mail.deliver()
+    expect(await mail.messages()).toHaveLength(1)
+  })
+
+  it('says five days when it gave up, and nothing more when that e-mail fails in its turn', async () => {
+    const scene = await letterScene()
+    await queuedLetter(scene)
+    await mail.failNext('refuse', 1)
+    minutesLater(5 * 24 * 60 + 1)
+    await mail.failNext(550, 1, scene.therapist.email)
+    await mail.deliver()
+    await mail.deliver()
+    const told = await database().query(
+      "SELECT state, CONVERT(mime USING utf8mb4) AS mime FROM outbox_messages WHERE kind = 'delivery_failed' AND recipient = ?",
+      [scene.therapist.email],
+    )
+    expect(told).toHaveLength(1)
+    expect(told[0].state).toBe('failed')
+    expect(told[0].mime).toContain('five days')
+  })
+
+  it('tells no author whose account was closed; the task is there all the same', async () => {
+    const scene = await letterScene()
+    await queuedLetter(scene)
+    await database().query('UPDATE users SET disabledAt = NOW() WHERE id = ?', [scene.therapist.id])
+    await mail.failNext(550, 1, scene.guardianUser.email)
+    await mail.deliver()
+    expect(await mail.messages(scene.therapist.email)).toEqual([])
+    const tasks = await database().query('SELECT kind FROM tasks WHERE childId = ?', [scene.child.id])
+    expect(tasks).toEqual([{ kind: 'letter_failed' }])
   })
 
   it('gives up after five days of trouble', async () => {
@@ -159,7 +207,11 @@ describe('the outbox', () => {
   it('never lets two workers send one message', async () => {
     const recipients = Array.from({ length: 30 }, address)
     for (const recipient of recipients) await enqueue(recipient)
-    await Promise.all([deliverDue(mail.transport), deliverDue(mail.transport), deliverDue(mail.transport)])
+    await Promise.all([
+      deliverDue(mail.transport, testAppUrl),
+      deliverDue(mail.transport, testAppUrl),
+      deliverDue(mail.transport, testAppUrl),
+    ])
     for (const recipient of recipients) expect(await mail.messages(recipient)).toHaveLength(1)
   }, 30_000)
 
