@@ -1,7 +1,8 @@
 import { attentionLevels, type Attention } from './attention.ts'
 import type { CaseloadNeed } from './caseload.ts'
-import { addDays, compareDays, formatDay, type Day } from './days.ts'
+import { addDays, compareDays, dayOf, formatDay, workingDaysBetween, type Day } from './days.ts'
 import { isOpen, type EpisodeState } from './episodes.ts'
+import type { LetterState } from './letters.ts'
 import { dueLevel, reviewLevel } from './tasks.ts'
 import { waitDays, waitingStates, waitLevel } from './waits.ts'
 
@@ -15,8 +16,9 @@ export interface NeedFacts {
   unsignedSince: Date | null
   /** When the earliest note that waits for this viewer's countersignature was signed. */
   countersignSince: Date | null
-  draftLetters: number
-  lettersToApprove: number
+  /** When the letter left longest was last changed: of this viewer's drafts, and of those to approve. */
+  draftSince: Date | null
+  approvalSince: Date | null
   lettersFailed: number
   /** Consent to assessment and therapy is in force; the day it ends, when it does. */
   consented: boolean
@@ -33,6 +35,8 @@ export interface NeedRules {
   waitTargetWeeks: number
   unsignedSoonHours: number
   unsignedOverdueHours: number
+  letterTargetWorkingDays: number
+  timeZone: string
 }
 
 /** Days before a consent ends in which that is shown (clinic rule). */
@@ -44,7 +48,10 @@ export const countersignDays = 7
 const hoursSince = (moment: Date, now: Date) => (now.getTime() - moment.getTime()) / 3_600_000
 
 /** Soon at first, due after the first limit, overdue after the second; limits in hours since the session ended. */
-export function unsignedLevel(endedAt: Date, rules: Omit<NeedRules, 'today' | 'waitTargetWeeks'>): Attention {
+export function unsignedLevel(
+  endedAt: Date,
+  rules: Pick<NeedRules, 'now' | 'unsignedSoonHours' | 'unsignedOverdueHours'>,
+): Attention {
   const hours = hoursSince(endedAt, rules.now)
   if (hours > rules.unsignedOverdueHours) return 'overdue'
   return hours > rules.unsignedSoonHours ? 'due' : 'soon'
@@ -52,6 +59,23 @@ export function unsignedLevel(endedAt: Date, rules: Omit<NeedRules, 'today' | 'w
 
 export const countersignLevel = (signedAt: Date, now: Date): Attention =>
   hoursSince(signedAt, now) > countersignDays * 24 ? 'overdue' : 'due'
+
+/**
+ * A letter that has not left: soon while it is being written, due once it waits for somebody, overdue after the clinic's
+ * working days, counted from its last change.
+ */
+export function unsentLetterLevel(
+  state: LetterState,
+  changedAt: Date,
+  {
+    today,
+    letterTargetWorkingDays,
+    timeZone,
+  }: Pick<NeedRules, 'today' | 'letterTargetWorkingDays' | 'timeZone'>,
+): Attention {
+  if (workingDaysBetween(dayOf(changedAt, timeZone), today) > letterTargetWorkingDays) return 'overdue'
+  return state === 'draft' ? 'soon' : 'due'
+}
 
 const many = (count: number, one: string, more: string) => (count === 1 ? one : `${count} ${more}`)
 
@@ -98,8 +122,16 @@ function writingNeeds(facts: NeedFacts, rules: NeedRules): CaseloadNeed[] {
         )
       : []),
     ...need('letter_failed', facts.lettersFailed > 0 ? 'overdue' : null, 'A letter could not be delivered'),
-    ...need('letter_approval', facts.lettersToApprove > 0 ? 'due' : null, 'A letter waits for approval'),
-    ...need('letter_draft', facts.draftLetters > 0 ? 'soon' : null, 'A letter is being written'),
+    ...need(
+      'letter_approval',
+      facts.approvalSince && unsentLetterLevel('awaiting_approval', facts.approvalSince, rules),
+      'A letter waits for approval',
+    ),
+    ...need(
+      'letter_draft',
+      facts.draftSince && unsentLetterLevel('draft', facts.draftSince, rules),
+      'A letter is being written',
+    ),
   ]
 }
 

@@ -5,10 +5,7 @@ import { waitDays, waitingStates } from '../../shared/waits.ts'
 import type { CaseloadRecord } from '../queries/caseload.ts'
 import { fullName } from './children/header.ts'
 
-export const presentCaseloadRow = (
-  record: CaseloadRecord,
-  rules: NeedRules & { timeZone: string },
-): CaseloadRow => ({
+export const presentCaseloadRow = (record: CaseloadRecord, rules: NeedRules): CaseloadRow => ({
   id: record.id,
   recordNumber: record.recordNumber,
   name: fullName(record),

@@ -1,5 +1,6 @@
 import type { Attention } from '../../shared/attention.ts'
-import { countersignLevel, unsignedLevel } from '../../shared/caseloadNeeds.ts'
+import { ageBand } from '../../shared/birthDates.ts'
+import { countersignLevel, unsentLetterLevel, unsignedLevel } from '../../shared/caseloadNeeds.ts'
 import { dayOf, formatDay, workingDaysBetween, type Day } from '../../shared/days.ts'
 import { episodeStateLabels, type EpisodeState } from '../../shared/episodes.ts'
 import { letterStateLabels, type LetterState } from '../../shared/letters.ts'
@@ -28,12 +29,6 @@ export interface WorkClock {
 }
 
 type Words = (row: WorkRow, clock: WorkClock) => { detail: string; level: Attention; page: string }
-
-/** A letter in the making is overdue after the clinic's working days, counted from its last change. */
-const letterLevel = (changedAt: Date, { today, settings }: WorkClock): Attention =>
-  workingDaysBetween(dayOf(changedAt, settings.timeZone), today) > settings.letterTargetWorkingDays
-    ? 'overdue'
-    : 'due'
 
 const sinceDay = (row: WorkRow, { settings }: WorkClock): Day =>
   row.sinceDay ?? (row.sinceAt ? dayOf(row.sinceAt, settings.timeZone) : '')
@@ -71,9 +66,11 @@ const countersign: Words = (row, { now }) => ({
   page: `sessions/${row.id}`,
 })
 
-const letter: Words = (row, clock) => ({
+const letter: Words = (row, { today, settings }) => ({
   detail: `Letter: ${letterStateLabels[row.words as LetterState].toLowerCase()}`,
-  level: row.sinceAt ? letterLevel(row.sinceAt, clock) : 'due',
+  level: row.sinceAt
+    ? unsentLetterLevel(row.words as LetterState, row.sinceAt, { ...settings, today })
+    : 'due',
   page: `letters/${row.id}`,
 })
 
@@ -134,6 +131,12 @@ const words: Record<WorkListId, Words> = {
 const addressOf = (row: WorkRow, page: string): string =>
   row.childId === null ? '/today' : `/children/${row.childId}/${page}`
 
+/** A referral whose name the viewer may not see yet is told from the next by age band and day. */
+const unnamed = (row: WorkRow, { today }: WorkClock): string =>
+  row.birthDate === null || row.sinceDay === null
+    ? 'A child whose name is shown when opened'
+    : `A child of ${ageBand(row.birthDate, today)}, received ${formatDay(row.sinceDay)}`
+
 export const presentWorkItem = (list: WorkListId, row: WorkRow, clock: WorkClock): WorkItem => {
   const { detail, level, page } = words[list](row, clock)
   const isReferral = list === 'referrals_undecided' || list === 'referrals_untriaged'
@@ -141,7 +144,7 @@ export const presentWorkItem = (list: WorkListId, row: WorkRow, clock: WorkClock
   const isTask = list === 'tasks'
   return {
     id: row.id,
-    title: isTask ? (row.words ?? 'Task') : (child ?? 'A child whose name is shown when opened'),
+    title: isTask ? (row.words ?? 'Task') : (child ?? unnamed(row, clock)),
     detail: isTask && child !== null ? `${child}. ${detail}` : detail,
     person: row.person,
     since: row.sinceDay ?? row.sinceAt?.toISOString() ?? '',

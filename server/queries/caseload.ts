@@ -29,8 +29,8 @@ export interface CaseloadRecord {
   unsignedNotes: number
   unsignedSince: Date | null
   countersignSince: Date | null
-  draftLetters: number
-  lettersToApprove: number
+  draftSince: Date | null
+  approvalSince: Date | null
   lettersFailed: number
   consented: boolean
   consentEndsAt: Date | null
@@ -38,7 +38,7 @@ export interface CaseloadRecord {
   tasks: number
 }
 
-type Counted = 'unsignedNotes' | 'draftLetters' | 'lettersToApprove' | 'lettersFailed' | 'tasks'
+type Counted = 'unsignedNotes' | 'lettersFailed' | 'tasks'
 type StoredRecord = Omit<CaseloadRecord, Counted | 'consented' | 'task'> &
   Record<Counted, string> & { consented: number; task: string | null; total: string }
 
@@ -147,8 +147,6 @@ const totalOf = async (
 const toRecord = ({ total: _total, ...row }: StoredRecord): CaseloadRecord => ({
   ...row,
   unsignedNotes: count(row.unsignedNotes),
-  draftLetters: count(row.draftLetters),
-  lettersToApprove: count(row.lettersToApprove),
   lettersFailed: count(row.lettersFailed),
   tasks: count(row.tasks),
   consented: flag(row.consented),

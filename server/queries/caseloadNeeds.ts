@@ -31,8 +31,8 @@ export const needColumns = `
   (SELECT MIN(n.endedAt) ${openNotes('draft')}) AS unsignedSince,
   (SELECT MIN(q.signedAt) FROM note_signatures q WHERE q.kind = 'author'
     AND q.noteId IN (SELECT n.id ${toCountersign})) AS countersignSince,
-  (SELECT COUNT(*) ${ownDrafts}) AS draftLetters,
-  (SELECT COUNT(*) ${toApprove}) AS lettersToApprove,
+  (SELECT MIN(l.changedAt) ${ownDrafts}) AS draftSince,
+  (SELECT MIN(l.changedAt) ${toApprove}) AS approvalSince,
   (SELECT COUNT(*) ${failed}) AS lettersFailed,
   EXISTS (SELECT 1 ${consent}) AS consented,
   (SELECT IF(SUM(f.expiresAt IS NULL) > 0, NULL, MAX(f.expiresAt)) ${consent}) AS consentEndsAt,

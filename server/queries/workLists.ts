@@ -34,6 +34,8 @@ export interface WorkRow {
   /** Null where the viewer may not learn whom it is about. */
   name: string | null
   recordNumber: string | null
+  /** Of a referral, for its age band; null for everything else. */
+  birthDate: Day | null
   person: string | null
   /** One of the two says since when. */
   sinceDay: Day | null
@@ -50,6 +52,7 @@ interface WorkSql {
   childId: string
   name: string
   recordNumber: string
+  birthDate: string
   person: string
   sinceDay: string
   sinceAt: string
@@ -64,6 +67,7 @@ const ofChild = {
   childId: 'c.id',
   name: recordName('c'),
   recordNumber: 'c.recordNumber',
+  birthDate: 'NULL',
   sinceDay: 'NULL',
   sinceAt: 'NULL',
   words: 'NULL',
@@ -114,6 +118,7 @@ const byReferral = (condition: string): WorkSql => ({
   childId: 'NULL',
   name: `IF(:namesReferrals, ${recordName('r')}, NULL)`,
   recordNumber: 'NULL',
+  birthDate: 'r.birthDate',
   person: 'NULL',
   sinceDay: 'r.receivedOn',
   sinceAt: 'NULL',
@@ -168,6 +173,7 @@ const lists: Record<WorkListId, WorkSql> = {
     childId: 't.childId',
     name: recordName('c'),
     recordNumber: 'c.recordNumber',
+    birthDate: 'NULL',
     person: 'NULL',
     sinceDay: 't.dueOn',
     sinceAt: 't.createdAt',

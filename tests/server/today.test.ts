@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import type { CaseloadPage } from '../../shared/caseload.ts'
 import { addDays } from '../../shared/days.ts'
 import type { TodayView } from '../../shared/today.ts'
 import { setClock } from '../../server/clock.ts'
@@ -48,6 +49,17 @@ describe('today', () => {
       referrals: 1,
     })
     expect(JSON.stringify(view)).not.toContain('Queued')
+    const waiting = view.groups.find((group) => group.id === 'referrals')?.items[0]
+    expect(waiting).toMatchObject({
+      title: expect.stringMatching(/^A child of \d+ to \d+ years, received \d{1,2} [A-Z][a-z]{2} \d{4}$/),
+      detail: 'Referral, to be looked at',
+    })
+    const draft = view.groups
+      .find((group) => group.id === 'letters-own')
+      ?.items.find((item) => item.detail === 'Letter: draft')
+    const { rows } = (await therapist.get('/api/caseload?need=letter_draft')).body as CaseloadPage
+    expect(rows[0]?.needs.find((need) => need.kind === 'letter_draft')?.level).toBe(draft?.level)
+    expect(draft?.level).toBe('soon')
     const task = view.groups.find((group) => group.id === 'tasks')?.items[0]
     expect(task).toMatchObject({ title: 'Call the family', level: 'overdue', taskId: expect.any(String) })
     expect(task?.detail).toMatch(/^Busy07 Caseload07, FF-.* Due /)
