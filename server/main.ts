@@ -59,7 +59,7 @@ const start = async (shutdown: Shutdown) => {
   })
   await listen(app, env, shutdown)
   setMailSender({ name: 'Fanflower', address: env.mailFrom })
-  const worker = startOutboxWorker(openTransport(smtpUrl))
+  const worker = startOutboxWorker(openTransport(smtpUrl), env.appUrl)
   shutdown.add('the outbox', worker.stop)
   const firstLink = env.demo ? null : await firstAdministratorLink(env.appUrl)
   printBlock([

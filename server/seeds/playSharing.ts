@@ -130,10 +130,12 @@ export const playLetterAct = async (
       return approveLetter(actor, access, letter, letter.version, { overrides: act.overrides })
     case 'send': {
       const guardianIds = act.carers.map((carer) => story.guardianIds[carer] ?? '')
+      // Only this letter is refused: neither what waited before it nor what its author is told.
+      if (act.outcome === 'failed') await deliverDue(accepting, scene.appUrl)
       await sendLetter(actor, access, letter, letter.version, guardianIds, scene.appUrl)
-      if (act.outcome === 'failed') await deliverDue(refusing)
+      if (act.outcome === 'failed') await deliverDue(refusing, scene.appUrl, guardianIds.length)
       if (act.outcome === 'queued' || act.outcome === 'cancelled') return holdBack(viewer.id)
-      await deliverDue(accepting)
+      await deliverDue(accepting, scene.appUrl)
       if (act.outcome === 'opened')
         for (const carer of act.carers) await openLetter(scene, number, carer, letter.id)
     }

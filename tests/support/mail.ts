@@ -1,6 +1,7 @@
 import { startMailFakeProcess } from '../../server/setup/mailFakeProcess.ts'
 import { openTransport } from '../../server/mail/transport.ts'
 import { deliverDue } from '../../server/services/outboxWorker.ts'
+import { testAppUrl } from './app.ts'
 
 export type Fault = 'refuse' | 421 | 450 | 451 | 550 | 'slow' | 'cutBeforeDot' | 'cutAfterDot'
 
@@ -23,7 +24,7 @@ export const startMail = async () => {
   return {
     smtpUrl: fake.smtpUrl,
     inboxUrl: fake.inboxUrl,
-    deliver: () => deliverDue(transport),
+    deliver: () => deliverDue(transport, testAppUrl),
     transport,
     failNext: async (kind: Fault, count = 1, address?: string) => {
       await api('next-failure', {
