@@ -28,6 +28,8 @@ export interface LetterStanding {
 
 export const isAuthor = (access: ChildAccess, letter: LetterStanding) => access.viewer.id === letter.authorId
 
+export const canStartLetter = (access: ChildAccess) => isRelation(access, 'assignedTherapist')
+
 export const canChangeLetter = (access: ChildAccess, letter: LetterStanding) =>
   isRelation(access, 'assignedTherapist') && letter.state === 'draft'
 
@@ -66,6 +68,22 @@ export const canRecallLetter = (access: ChildAccess, letter: LetterStanding) =>
 
 export const canDiscardLetter = (access: ChildAccess, letter: LetterStanding) =>
   canChangeLetter(access, letter) && isAuthor(access, letter) && isStaff(access.viewer.roles)
+
+export type LetterRule = (access: ChildAccess, letter: LetterStanding) => boolean
+
+/**
+ * How a step that a rule does not allow is refused: 'forbidden' when the letter is still in work and it is the lead
+ * who asks, for the step is then its author's; 'closed' when the letter's state stands in the way. Null: allowed.
+ */
+export const letterRefusal = (
+  access: ChildAccess,
+  letter: LetterStanding,
+  may: LetterRule,
+): 'forbidden' | 'closed' | null => {
+  if (may(access, letter)) return null
+  const inWork = ['draft', 'awaiting_approval', 'approved'].includes(letter.state)
+  return inWork && isRelation(access, 'clinicLead') ? 'forbidden' : 'closed'
+}
 
 /** What decides whether and how a letter may be e-mailed to one carer. */
 export interface Addressee {

@@ -8,7 +8,6 @@ import {
   newLetterSchema,
   type LetterDraft,
 } from '../../shared/letters.ts'
-import type { ChildAccess } from '../access/childAccess.ts'
 import { conflict, forbidden } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
 import {
@@ -30,7 +29,8 @@ import {
   canSubmitLetter,
   canTakeBackLetter,
   letterPolicies,
-  type LetterStanding,
+  letterRefusal,
+  type LetterRule,
 } from '../policies/letters.ts'
 import { presentLetter, presentLetterRow } from '../presenters/letters.ts'
 import { presentPage } from '../presenters/pages.ts'
@@ -58,21 +58,17 @@ import { answerStale } from '../services/versions.ts'
 
 const base = '/children/:childId/letters'
 
-/** The letter of the address; refused with 409 when its state, with 403 when the person, does not allow the act. */
-const letterFor = async (
-  req: Request,
-  may?: (access: ChildAccess, letter: LetterStanding) => boolean,
-): Promise<LetterRecord> => {
+/** The letter of the address, for a step that this person may take now; otherwise 403 or 409. */
+const letterFor = async (req: Request, may?: LetterRule): Promise<LetterRecord> => {
   const access = accessOf(req)
   const letter = await findLetter(access, String(req.params.letterId))
-  if (may && !may(access, letter)) {
-    if (['draft', 'awaiting_approval', 'approved'].includes(letter.state) && access.relation === 'clinicLead')
-      throw forbidden('This step belongs to the author of the letter.')
+  const refusal = may ? letterRefusal(access, letter, may) : null
+  if (refusal === 'forbidden') throw forbidden('This step belongs to the author of the letter.')
+  if (refusal === 'closed')
     throw conflict('closed', 'In its present state this letter does not allow that step.', {
       version: letter.version,
       state: letter.state,
     })
-  }
   return letter
 }
 
