@@ -57,6 +57,7 @@ export interface ChildHeader {
   sections: RecordSection[]
   /** Another child with the same name is on the register: tell them apart by birth date and record number. */
   namesake: boolean
+  can: { writeNote: boolean; startLetter: boolean }
 }
 
 export const recordSections = [

@@ -48,9 +48,21 @@ describe('the head of a record', () => {
       therapist: 'Hedda Holder',
       alerts: [],
       namesake: false,
+      can: { writeNote: true, startLetter: true },
     })
     expect(body.sections).toHaveLength(9)
     expect(body.age).toMatch(/^\d+ y \d+ m$/)
+  })
+
+  it('offers writing to the therapist who holds the child, and to nobody else', async () => {
+    const child = await buildChild({ therapist: holder })
+    for (const who of [lead, administrator])
+      expect((await who.get(`/api/children/${child.id}`)).body.can).toEqual({
+        writeNote: false,
+        startLetter: false,
+      })
+    const { body } = await therapist.get(`/api/children/${child.id}/glance`)
+    expect(body.child.can).toEqual({ writeNote: true, startLetter: true })
   })
 
   it('says that another child bears the same name', async () => {

@@ -8,6 +8,8 @@ import type {
 import { formatAge, type Day } from '../../../shared/days.ts'
 import type { ChildAccess } from '../../access/childAccess.ts'
 import { canChangeIdentity, sectionsFor, seesClinicalFields } from '../../policies/children.ts'
+import { canStartLetter } from '../../policies/letters.ts'
+import { canCreateNote } from '../../policies/sessionNotes.ts'
 import type { CareRow } from '../../queries/children/care.ts'
 import type { AlertRow, ChildFactsRow } from '../../queries/children/header.ts'
 import type { IdentityRow } from '../../queries/children/identity.ts'
@@ -49,6 +51,7 @@ export const presentChildHeader = (
       : [],
     sections: sectionsFor(access.relation),
     namesake: child.namesake,
+    can: { writeNote: canCreateNote(access), startLetter: canStartLetter(access) },
   }
 }
 
