@@ -75,6 +75,15 @@ export const unavailable = (retryAfterSeconds = 2) =>
     { retryAfterSeconds },
   )
 
+/** For work that waits in line here, when the line is full. */
+export const busy = (retryAfterSeconds: number) =>
+  new AppError(
+    503,
+    'busy',
+    `Too much is being worked on just now. Nothing was saved; try again in ${waitingTime(retryAfterSeconds)}.`,
+    { retryAfterSeconds },
+  )
+
 const waitingTime = (seconds: number) =>
   seconds < 60
     ? `${seconds} ${seconds === 1 ? 'second' : 'seconds'}`

@@ -3,9 +3,7 @@ import session from 'express-session'
 import { Passport } from 'passport'
 import { Strategy } from 'passport-local'
 import type { User } from '../entities/User.ts'
-import { slowDown } from '../errors.ts'
 import { checkSignIn, findViewer, newToken } from '../services/accounts.ts'
-import { QueueFull } from '../services/passwords.ts'
 import { markSeen } from '../services/sessions.ts'
 import { SessionStore } from './sessionStore.ts'
 
@@ -42,7 +40,7 @@ export const createSignIn = ({ secure, sessionSecret }: SignInSettings) => {
           requestId: req.actor.requestId,
         }).then(
           (user) => done(null, user ?? false),
-          (error: unknown) => done(error instanceof QueueFull ? slowDown(5) : error),
+          (error: unknown) => done(error),
         )
       },
     ),

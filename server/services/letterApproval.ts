@@ -6,6 +6,7 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { LetterVersion } from '../entities/LetterVersion.ts'
 import { AppError } from '../errors.ts'
+import { createLine } from '../inLine.ts'
 import { UnprintableTextError } from '../pdf/letterFonts.ts'
 import { renderLetterPdf } from '../pdf/letterPdf.ts'
 import { listOtherNames, listRecipients, type LetterRecord } from '../queries/letters.ts'
@@ -36,16 +37,8 @@ export const checkLetterText = async (
   })
 }
 
-/** PDF rendering is heavy: one at a time in this process. */
-let rendering: Promise<unknown> = Promise.resolve()
-const renderInTurn = (...[letter]: Parameters<typeof renderLetterPdf>) => {
-  const next = rendering.then(
-    () => renderLetterPdf(letter),
-    () => renderLetterPdf(letter),
-  )
-  rendering = next.catch(() => undefined)
-  return next
-}
+/** Printing a PDF is heavy: one at a time in this process. */
+const printInTurn = createLine({ atOnce: 1, mostWaiting: 8, retryAfterSeconds: 5 })
 
 /**
  * Approves a letter: checks it once more, prints it, and keeps text, overrides, PDF and hash as a version that never
@@ -71,7 +64,7 @@ export const approveLetter = async (
     })
   const settings = await readSettings()
   const approvedAt = now()
-  const pdf = await renderInTurn({
+  const page = {
     kind: letter.kind,
     childName: `${letter.preferredName ?? letter.givenName} ${letter.familyName}`,
     recordNumber: letter.recordNumber,
@@ -81,7 +74,8 @@ export const approveLetter = async (
     author: letter.author,
     approver: access.viewer.id === letter.authorId ? null : access.viewer.displayName,
     clinic: settings,
-  }).catch((error: unknown) => {
+  }
+  const pdf = await printInTurn(() => renderLetterPdf(page)).catch((error: unknown) => {
     if (error instanceof UnprintableTextError) throw new AppError(422, 'unprintable', error.message)
     throw error
   })

@@ -1,33 +1,12 @@
 import { hash, verify } from '@node-rs/argon2'
 import { dictionary } from '@zxcvbn-ts/language-common'
 import { invalid } from '../errors.ts'
+import { createLine } from '../inLine.ts'
 
 /** argon2id with 19 MiB, two passes, one lane (OWASP password storage guidance, as asked in the security bar). */
 const cost = { memoryCost: 19_456, timeCost: 2, parallelism: 1 }
-const largestQueue = 50
-const atOnce = 2
-
-let running = 0
-const waiting: (() => void)[] = []
-
-/** Hashing is heavy on purpose: two at a time, the rest queue, and a full queue answers 503. */
-const inTurn = async <T>(work: () => Promise<T>): Promise<T> => {
-  if (running < atOnce) running += 1
-  else {
-    if (waiting.length >= largestQueue) throw new QueueFull()
-    // The place of the one that ends is handed on, so that nobody slips in between.
-    await new Promise<void>((resolve) => waiting.push(resolve))
-  }
-  try {
-    return await work()
-  } finally {
-    const next = waiting.shift()
-    if (next) next()
-    else running -= 1
-  }
-}
-
-export class QueueFull extends Error {}
+/** Hashing is heavy on purpose. */
+const inTurn = createLine({ atOnce: 2, mostWaiting: 50, retryAfterSeconds: 5 })
 
 /** The only change made to a password: NFKC, so that é typed on two systems is the same letter. */
 const canonical = (password: string) => password.normalize('NFKC')

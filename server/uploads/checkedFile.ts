@@ -2,8 +2,8 @@ import { createHash } from 'node:crypto'
 import { fileTypeFromBuffer } from 'file-type'
 import { maximumImageBytes, maximumPdfBytes, type SampleType } from '../../shared/samples.ts'
 import { AppError, invalid } from '../errors.ts'
+import { createLine } from '../inLine.ts'
 import { readImage } from './imageFile.ts'
-import { oneAtATime } from './oneAtATime.ts'
 import { readPdfFile } from './pdfFile.ts'
 import type { ReceivedFile } from './receiveUpload.ts'
 
@@ -57,9 +57,13 @@ const agreedType = async ({ originalname, mimetype, buffer }: ReceivedFile): Pro
   return type
 }
 
+/** Opening a picture takes memory and a processor for a moment. */
+const openInTurn = createLine({ atOnce: 1, mostWaiting: 7, retryAfterSeconds: 5 })
+
 /**
  * Opens an upload and makes what is stored of it. The file's ending, declared type, first bytes and full decoding must
- * agree. Throws 413, 415 or 422 with a message beside the field `file`.
+ * agree. Throws 413, 415 or 422 with a message beside the field `file`; 503 when too many
+ * wait to be opened.
  */
 export const checkFile = async (file: ReceivedFile): Promise<CheckedFile> => {
   if (file.buffer.length === 0) throw invalid({ file: 'This file is empty. Choose it again.' })
@@ -67,7 +71,7 @@ export const checkFile = async (file: ReceivedFile): Promise<CheckedFile> => {
   const isPdf = contentType === 'application/pdf'
   if (file.buffer.length > (isPdf ? maximumPdfBytes : maximumImageBytes))
     throw tooLarge('This file is too large: 8 MB for pictures, 10 MB for PDF at most.')
-  const opened = await oneAtATime(async () =>
+  const opened = await openInTurn(async () =>
     isPdf
       ? { content: readPdfFile(file.buffer), thumbnail: null, width: null, height: null, pixelsPerMm: null }
       : readImage(file.buffer, contentType),
