@@ -64,7 +64,8 @@ export const createSignIn = ({ secure, sessionSecret }: SignInSettings) => {
     const found = req.user as Awaited<ReturnType<typeof findViewer>> | undefined
     if (found) {
       req.actor.viewer = found
-      if (req.get('X-Fanflower-Background') === undefined) await markSeen(req.sessionID)
+      if (req.get('X-Fanflower-Background') === undefined)
+        await markSeen(req.sessionID, req.session.lastSeenAt)
     }
     next()
   }

@@ -6,11 +6,15 @@ import { execute } from '../queries/sql.ts'
 const absoluteHours = 12
 const idleMinutes = 30
 const idleMinutesShared = 15
+/** How exactly activity is written down. */
+const seenSeconds = 10
 
 /** What a sign-in carries. The cookie part belongs to the session middleware and is passed through. */
 export interface SessionContent {
   passport?: { user: string }
   sharedComputer?: boolean
+  /** When activity was last written down, in ms; handed on by `readSession`, never kept in the content. */
+  lastSeenAt?: number
 }
 
 /** Seconds without activity after which a sign-in ends: 30 minutes, 15 on a shared computer. */
@@ -35,7 +39,9 @@ export const readSession = async <T extends SessionContent>(sid: string): Promis
   if (!row || row.endedAt) return null
   const content = JSON.parse(row.data) as T
   const idleSeconds = (now().getTime() - row.lastSeenAt.getTime()) / 1000
-  return now() >= row.expiresAt || idleSeconds > idleSecondsOf(content) ? null : content
+  return now() >= row.expiresAt || idleSeconds > idleSecondsOf(content)
+    ? null
+    : { ...content, lastSeenAt: row.lastSeenAt.getTime() }
 }
 
 /**
@@ -45,7 +51,7 @@ export const readSession = async <T extends SessionContent>(sid: string): Promis
 export const writeSession = async (sid: string, content: SessionContent): Promise<void> => {
   const idHash = sessionHash(sid)
   const userId = content.passport?.user ?? null
-  const data = JSON.stringify(content)
+  const data = JSON.stringify({ ...content, lastSeenAt: undefined })
   const updated = (await database().query(
     'UPDATE user_sessions SET data = ?, userId = ? WHERE idHash = ? AND endedAt IS NULL',
     [data, userId, idHash],
@@ -75,10 +81,14 @@ export const endSessionsOf = async (tx: Tx, userId: string, keep: Buffer | null 
   )
 }
 
-/** A person did something: the idle time starts again. Written at most every ten seconds. */
-export const markSeen = async (sid: string): Promise<void> => {
+/**
+ * A person did something: the idle time starts again. Written at most every ten seconds; asks nothing of the database
+ * when `lastSeenAt`, as read with the session, is younger than that.
+ */
+export const markSeen = async (sid: string, lastSeenAt?: number): Promise<void> => {
+  if (lastSeenAt !== undefined && now().getTime() - lastSeenAt < seenSeconds * 1000) return
   await database().query(
     'UPDATE user_sessions SET lastSeenAt = ? WHERE idHash = ? AND endedAt IS NULL AND lastSeenAt < ?',
-    [now(), sessionHash(sid), new Date(now().getTime() - 10_000)],
+    [now(), sessionHash(sid), new Date(now().getTime() - seenSeconds * 1000)],
   )
 }

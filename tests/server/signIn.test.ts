@@ -3,6 +3,7 @@ import { setClock } from '../../server/clock.ts'
 import { database } from '../../server/dataSource.ts'
 import { client, signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
 import { buildUser, testPassword } from '../support/factories.ts'
+import { statementsOf } from '../support/queries.ts'
 
 beforeAll(startApp)
 afterAll(stopApp)
@@ -102,6 +103,26 @@ describe('the end of a sign-in', () => {
     }
     at(start, 15 * 60 + 1)
     expect(await whoAmI(shared)).toBeNull()
+  })
+
+  it('is put off at most every ten seconds, without a word to the database in between', async () => {
+    const start = new Date()
+    at(start, 0)
+    const user = await buildUser('therapist')
+    const signedIn = await signedInAs(user)
+    const marksAt = async (seconds: number) => {
+      at(start, seconds)
+      const statements = await statementsOf(() => signedIn.get('/api/session'))
+      return statements.filter((statement) => statement.startsWith('UPDATE user_sessions')).length
+    }
+    expect([await marksAt(1), await marksAt(9)]).toEqual([0, 0])
+    expect([await marksAt(11), await marksAt(12), await marksAt(20)]).toEqual([1, 0, 0])
+    expect(await marksAt(22)).toBe(1)
+    const [row] = await database().query('SELECT lastSeenAt, data FROM user_sessions WHERE userId = ?', [
+      user.id,
+    ])
+    expect(row.lastSeenAt.getTime()).toBe(start.getTime() + 22_000)
+    expect(row.data).not.toContain('lastSeenAt')
   })
 
   it('is final: a request still in flight at sign-out does not bring it back', async () => {
