@@ -1,3 +1,4 @@
+import { hostname } from 'node:os'
 import { resolve } from 'node:path'
 import { mixed, object, string, ValidationError, type AnyObject, type TestContext } from 'yup'
 import { isOneMailbox } from '../shared/fields.ts'
@@ -31,7 +32,17 @@ export type Env = {
   inboxPort: number
   /** Port of the private MariaDB. */
   databasePort: number
+  /** Name of this process's audit chain; several processes in front of one database each have their own. */
+  instance: string
+  /** The least that is worth a line in the log. */
+  logLevel: LogLevel
 }
+
+const logLevels = ['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'] as const
+export type LogLevel = (typeof logLevels)[number]
+
+/** Longest name of an instance; the column holds 64 characters. */
+const longestInstance = 60
 
 type Context = TestContext<AnyObject>
 const text = () => string().transform((value: string) => (value === '' ? undefined : value))
@@ -134,6 +145,14 @@ const schema = object({
     ),
   INBOX_PORT: portSetting(),
   DB_PORT: portSetting(),
+  INSTANCE: text().test(
+    'instance',
+    `\${path} must have 1 to ${longestInstance} letters, digits, dots, hyphens or underscores, like server-2`,
+    (value) => value === undefined || (/^[\w.-]+$/.test(value) && value.length <= longestInstance),
+  ),
+  LOG_LEVEL: mixed<LogLevel>()
+    .transform((value: unknown) => (value === '' ? undefined : value))
+    .oneOf(logLevels, `\${path} must be one of ${logLevels.join(', ')}`),
 })
 
 /**
@@ -164,6 +183,8 @@ export function readEnv(source: Record<string, string | undefined>): Env {
     demo: settings.DEMO === undefined ? loopback && ownParts : settings.DEMO === '1',
     inboxPort,
     databasePort,
+    instance: settings.INSTANCE ?? hostname().slice(0, longestInstance),
+    logLevel: settings.LOG_LEVEL ?? 'warn',
   }
 }
 

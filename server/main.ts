@@ -1,9 +1,9 @@
-import { hostname } from 'node:os'
 import { fileURLToPath } from 'node:url'
 import type { SessionView } from '../shared/users.ts'
 import { createApp } from './app.ts'
 import { closeDatabase, openDatabase } from './dataSource.ts'
 import { readEnv, type Env } from './env.ts'
+import { logger } from './logger.ts'
 import { openTransport } from './mail/transport.ts'
 import { demoSignIns } from './seeds/demo.ts'
 import { firstAdministratorAddress, firstAdministratorLink } from './services/firstAdministrator.ts'
@@ -22,9 +22,6 @@ import { createShutdown, type Shutdown } from './setup/shutdown.ts'
 const isBundle = import.meta.url.endsWith('.js')
 const clientDir = fileURLToPath(new URL('../dist', import.meta.url))
 
-/** The audit chain of this process; several processes in front of one database are given names of their own. */
-const chain = process.env.INSTANCE ?? hostname().slice(0, 60)
-
 const openClinic = async (env: Env, shutdown: Shutdown) => {
   const addresses = await prepareDatabase(env, shutdown)
   if (env.demo && env.database === null && addresses.migrate) await clearHalfMadeDemo(addresses.migrate)
@@ -36,9 +33,9 @@ const openClinic = async (env: Env, shutdown: Shutdown) => {
     throw new SetUpError(`The database is not as it must be:\n- ${problems.join('\n- ')}`)
   if (env.demo && !(await hasAccounts())) {
     console.log('Making the demo clinic (first start only) …')
-    await runSeed({ access: addresses.app, chain, appUrl: env.appUrl })
+    await runSeed({ access: addresses.app, chain: env.instance, appUrl: env.appUrl })
   }
-  await openAuditChain(chain)
+  await openAuditChain(env.instance)
 }
 
 const signInLines = (signIns: SessionView['demoSignIns']) =>
@@ -46,6 +43,7 @@ const signInLines = (signIns: SessionView['demoSignIns']) =>
 
 const start = async (shutdown: Shutdown) => {
   const env = readEnv(process.env)
+  logger.level = env.logLevel
   await openClinic(env, shutdown)
   const { smtpUrl, inboxUrl } = await prepareMail(env, shutdown)
   const signIns = env.demo ? demoSignIns() : []

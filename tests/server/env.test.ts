@@ -1,3 +1,4 @@
+import { hostname } from 'node:os'
 import { isAbsolute } from 'node:path'
 import { describe, expect, it } from 'vitest'
 import { readEnv } from '../../server/env.ts'
@@ -25,6 +26,8 @@ describe('settings of a plain start on this machine', () => {
       demo: true,
       inboxPort: 3001,
       databasePort: 3002,
+      instance: hostname().slice(0, 60),
+      logLevel: 'warn',
     })
     expect(isAbsolute(env.dataDir)).toBe(true)
   })
@@ -39,9 +42,17 @@ describe('settings of a plain start on this machine', () => {
   })
 
   it('takes an empty variable for one that is not set', () => {
-    expect(readEnv({ ...production, PORT: '', SMTP_URL: '', DEMO: '', APP_URL: '' })).toEqual(
-      readEnv(production),
-    )
+    expect(
+      readEnv({ ...production, PORT: '', SMTP_URL: '', DEMO: '', APP_URL: '', INSTANCE: '', LOG_LEVEL: '' }),
+    ).toEqual(readEnv(production))
+  })
+
+  it('takes the name of its audit chain and the level of its log when they are set', () => {
+    expect(readEnv({ ...production, INSTANCE: 'server-2.eu_west', LOG_LEVEL: 'debug' })).toMatchObject({
+      instance: 'server-2.eu_west',
+      logLevel: 'debug',
+    })
+    expect(readEnv({ ...production, INSTANCE: 'x'.repeat(60) }).instance).toHaveLength(60)
   })
 
   it('begins empty when DEMO is 0', () => {
@@ -110,6 +121,10 @@ describe('settings that are wrong', () => {
     ['MAIL_FROM', { ...remote, MAIL_FROM: undefined }],
     ['SESSION_SECRET', { ...production, SESSION_SECRET: 'x'.repeat(31) }],
     ['SESSION_SECRET', { ...remote, SESSION_SECRET: undefined }],
+    ['INSTANCE', { ...production, INSTANCE: 'x'.repeat(61) }],
+    ['INSTANCE', { ...production, INSTANCE: 'server 2' }],
+    ['LOG_LEVEL', { ...production, LOG_LEVEL: 'loud' }],
+    ['LOG_LEVEL', { ...production, LOG_LEVEL: 'WARN' }],
     ['DEMO', { ...production, DEMO: 'yes' }],
     ['DEMO', { ...remote, DEMO: '1' }],
     ['DATABASE_URL', { ...production, DATABASE_URL: 'localhost:3306' }],
