@@ -4,10 +4,6 @@ import { HttpProblem } from '@/api/http.ts'
 export const statusOf = (error: unknown): number | null =>
   error instanceof HttpProblem ? error.status : null
 
-/** Stable code of a refused request, e.g. `duplicate`; null when the failure is of another kind. */
-export const codeOf = (error: unknown): string | null =>
-  error instanceof HttpProblem ? error.problem.code : null
-
 /** Sentences for the person: what happened, what was kept, what to do. */
 export function wordsFor(error: unknown): string {
   if (error instanceof HttpProblem) return error.message

@@ -1,5 +1,5 @@
 import type { DataSource } from 'typeorm'
-import { closeDatabase, openDatabase } from '../../server/dataSource.ts'
+import { openDatabase } from '../../server/dataSource.ts'
 import { openAuditChain } from '../../server/services/audit.ts'
 import { migrateDatabase } from '../../server/setup/migrateDatabase.ts'
 import { createEmptyDatabase } from './database.ts'
@@ -12,5 +12,3 @@ export const openClinicDatabase = async (): Promise<DataSource> => {
   await openAuditChain('test')
   return dataSource
 }
-
-export const closeClinicDatabase = closeDatabase
