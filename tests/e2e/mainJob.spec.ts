@@ -10,15 +10,9 @@ import {
 } from './steps/colleague.ts'
 import { acceptInvitation, inviteCarer } from './steps/invitation.ts'
 import { readLetter, seeLetterRead, sendLetter, writeLetter } from './steps/letter.ts'
+import { writeNote } from './steps/note.ts'
 import { fillQuestionnaire } from './steps/questionnaire.ts'
-import {
-  describeChild,
-  findChild,
-  observeWriting,
-  seeOnCaseload,
-  setGoal,
-  writeNote,
-} from './steps/record.ts'
+import { describeChild, findChild, observeWriting, seeOnCaseload, setGoal } from './steps/record.ts'
 import { acceptReferral, enterReferral, type NewChild } from './steps/referral.ts'
 import { openEveryFigure } from './steps/review.ts'
 import { addSamples } from './steps/sample.ts'

@@ -17,13 +17,15 @@ export const writeWholeLetter = async (therapist: Person): Promise<void> => {
   await press(page, 'Progress letter')
   await page.waitForURL(/\/letters\/[0-9a-f-]{36}$/)
   await settled(page)
-  const texts = page.getByLabel(/^Text under/)
-  for (const text of await texts.all()) {
+  const gaps = /\[[^\]]*\]/g
+  let filled = 0
+  for (const text of await page.getByLabel(/^Text under/).all()) {
     const words = await text.inputValue()
-    if (words.includes('['))
-      await text.fill(words.replaceAll(/\[[^\]]*\]/g, 'We talk about it when we next meet.'))
+    if (words.search(gaps) < 0) continue
+    await text.fill(words.replaceAll(gaps, 'We talk about it when we next meet.'))
+    filled += 1
   }
-  await seeText(page, /^Saved \d\d:\d\d$/)
+  if (filled > 0) await seeText(page, /^Saved \d\d:\d\d$/)
 }
 
 /** Gives a reason for every wording that is kept against advice, and approves. */

@@ -1,4 +1,3 @@
-import { expect } from 'vitest'
 import { inspect, type Person } from '../support/browser.ts'
 import { answer, choose, openPlace, openSection, press, seeHeading, seeText } from '../support/fields.ts'
 import type { NewChild } from './referral.ts'
@@ -82,64 +81,4 @@ export const setGoal = async (therapist: Person, targetOn: string): Promise<void
   await press(page, 'Set this goal')
   await seeText(page, 'I want to write the card for Grandad myself.')
   await inspect(therapist, 'goal-set')
-}
-
-/** Writes a session note; what was typed survives a reload before it is signed, and an addendum follows. */
-export const writeNote = async (therapist: Person): Promise<void> => {
-  const { page } = therapist
-  await openSection(page, 'Sessions')
-  await seeText(page, 'No session written up yet')
-  await press(page, 'Write a note')
-  await choose(page, /^The child’s assent/, 'Willing')
-  await page.getByLabel(/^Who was there/).fill('Mother')
-  await inspect(therapist, 'note-start')
-  await press(page, 'Start writing')
-  await page.waitForURL(/\/sessions\/[0-9a-f-]{36}$/)
-
-  await page.getByLabel('Said', { exact: true }).fill('“My arm goes for a walk over the page.”')
-  await page
-    .getByLabel('Observed', { exact: true })
-    .fill('Wrote 21 letters in a minute, 19 of them readable.')
-  await seeText(page, /^Saved \d\d:\d\d$/)
-  await page.reload()
-  await seeHeading(page, /^Therapy session/)
-  expect(await page.getByLabel('Observed', { exact: true }).inputValue()).toBe(
-    'Wrote 21 letters in a minute, 19 of them readable.',
-  )
-  await inspect(therapist, 'note-draft')
-
-  await press(page, 'Sign')
-  await seeText(page, '2 things need another look')
-  await inspect(therapist, 'note-not-complete')
-  await page
-    .getByLabel('Assessment', { exact: true })
-    .fill('The paper lies in front of the right shoulder, so the hand covers the line.')
-  await page
-    .getByLabel('Plan', { exact: true })
-    .fill('Move the paper to the left and turn it; look again in a week.')
-  await page
-    .getByLabel('Goals worked on')
-    .or(page.getByRole('group', { name: 'Goals worked on' }))
-    .getByRole('checkbox')
-    .check()
-  await press(page, 'Sign')
-  await seeHeading(page, 'Sign the note')
-  await inspect(therapist, 'note-signing')
-  await press(page, 'Sign the note')
-  await seeText(page, /One thing needs another look/)
-  await page.getByLabel('The note is complete and about this child').check()
-  await press(page, 'Sign the note')
-  await seeText(page, /^Signed by Adaeze Nwosu-Reid/)
-  expect(await page.getByRole('textbox').count()).toBe(0)
-  await inspect(therapist, 'note-signed')
-
-  await press(page, 'Addendum')
-  await page
-    .getByRole('textbox', { name: 'Addendum' })
-    .fill('The mother rang: the page stayed clean at home.')
-  await inspect(therapist, 'note-addendum')
-  await press(page, 'Add it for good')
-  await seeHeading(page, 'Addenda')
-  await seeText(page, 'The mother rang: the page stayed clean at home.')
-  await inspect(therapist, 'note-with-addendum')
 }
