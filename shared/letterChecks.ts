@@ -7,7 +7,7 @@ import type {
   LetterSection,
   LetterSectionId,
 } from './letters.ts'
-import { maximumHomeItems } from './letterTemplates.ts'
+import { maximumHomeItems, nextVisitSentence } from './letterTemplates.ts'
 import { letterBlocks } from './letterText.ts'
 import { readingLevel, readingTarget } from './readingLevel.ts'
 import { sentencesOf } from './sentences.ts'
@@ -180,7 +180,7 @@ function nextDateFindings({ nextVisitOn, sections }: LetterDraft): LetterFinding
       section: 'next',
       phrase: null,
       message: `The next date is ${formatDay(nextVisitOn)}, but the letter does not say so in these words.`,
-      instead: [`Our next visit is on ${formatDay(nextVisitOn)}.`],
+      instead: [nextVisitSentence(nextVisitOn)],
     },
   ]
 }

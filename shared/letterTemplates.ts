@@ -1,4 +1,4 @@
-import { compareDays, formatDay } from './days.ts'
+import { compareDays, formatDay, type Day } from './days.ts'
 import type { GoalFacts, ProgressFacts, SchoolFacts } from './letterFacts.ts'
 import { sampleChanges } from './letterMeasures.ts'
 import type { LetterFact, LetterSection, LetterSectionId } from './letters.ts'
@@ -227,13 +227,16 @@ function school({ childName, schoolAdvice }: ProgressFacts): Part {
   }
 }
 
+/** The record plans a review; a day and hour are agreed by appointment, so the letter promises no more. */
+export const nextVisitSentence = (on: Day): string => `We plan to meet again around ${formatDay(on)}.`
+
 function next({ nextVisitOn, clinicPhone }: ProgressFacts): Part {
   return {
     heading: 'Our next visit and who to call',
     paragraphs: [
       nextVisitOn === null
         ? gap('Write when you will meet next, or that no visit is planned and how to ask for one.')
-        : `Our next visit is on ${formatDay(nextVisitOn)}.`,
+        : nextVisitSentence(nextVisitOn),
       clinicPhone === null
         ? gap('Write the phone number to call.')
         : `If you need to change the day, or have a question, please call us on ${clinicPhone}.`,

@@ -1,7 +1,8 @@
 import { createTransport } from 'nodemailer'
 import { IsNull } from 'typeorm'
-import { addDays, formatDay, type Day } from '../../shared/days.ts'
+import { addDays, type Day } from '../../shared/days.ts'
 import type { LetterDraft } from '../../shared/letters.ts'
+import { nextVisitSentence } from '../../shared/letterTemplates.ts'
 import { database } from '../dataSource.ts'
 import { Alert } from '../entities/Alert.ts'
 import { findLetter } from '../queries/letters.ts'
@@ -67,7 +68,7 @@ export const playAdviceEnd = async (scene: Scene, number: number, advice: DemoAd
 const withDate = (text: string, { nextVisitDay }: DemoLetter, demoToday: Day): string => {
   if (nextVisitDay === null) return text
   const [, ...rest] = text.split('\n\n')
-  return [`Our next visit is on ${formatDay(addDays(demoToday, nextVisitDay))}.`, ...rest].join('\n\n')
+  return [nextVisitSentence(addDays(demoToday, nextVisitDay)), ...rest].join('\n\n')
 }
 
 /** Puts the author's wording in place of the assembled sections; null leaves a section out. */

@@ -40,6 +40,12 @@ export const checkLetterText = async (
 /** Printing a PDF is heavy: one at a time in this process. */
 const printInTurn = createLine({ atOnce: 1, mostWaiting: 8, retryAfterSeconds: 5 })
 
+/** The name a letter is filed under: the given one, with the one the child goes by. */
+const identifyingName = ({ givenName, preferredName, familyName }: LetterRecord): string =>
+  [givenName, preferredName === null || preferredName === givenName ? null : `(${preferredName})`, familyName]
+    .filter((part) => part !== null)
+    .join(' ')
+
 /**
  * Approves a letter: checks it once more, prints it, and keeps text, overrides, PDF and hash as a version that never
  * changes. Throws 422 while blocked words, gaps or unanswered findings remain, or a character cannot be printed.
@@ -66,7 +72,7 @@ export const approveLetter = async (
   const approvedAt = now()
   const page = {
     kind: letter.kind,
-    childName: `${letter.preferredName ?? letter.givenName} ${letter.familyName}`,
+    childName: identifyingName(letter),
     recordNumber: letter.recordNumber,
     approvedAt: approvedAt.toISOString(),
     salutation: letter.content.salutation,
