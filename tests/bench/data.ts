@@ -6,7 +6,8 @@ import { connectionOptions, type DatabaseAccess } from '../../server/setup/datab
 export const benchPassword = 'harbour-lantern-otter-42'
 export const benchEmail = 'therapist0@harrowmere.example'
 
-const therapists = 40
+/** Children a therapist holds, so that a page is as full in a small clinic as in a large one. */
+const heldByEach = 125
 const notesEach = 5
 
 const insert = async (connection: Connection, table: string, columns: string[], rows: unknown[][]) => {
@@ -16,8 +17,9 @@ const insert = async (connection: Connection, table: string, columns: string[], 
     ])
 }
 
-/** Fills an empty migrated database with so many children shared out among 40 therapists, each with notes. */
+/** Fills an empty migrated database with so many children, 125 for each therapist, each with notes. */
 export const fillClinic = async (access: DatabaseAccess, children: number): Promise<void> => {
+  const therapists = Math.ceil(children / heldByEach)
   const connection = await createConnection({ ...connectionOptions(access), timezone: 'Z' })
   const at = new Date('2026-09-01T09:00:00Z')
   const passwordHash = await hash(benchPassword)
