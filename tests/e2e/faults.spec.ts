@@ -56,6 +56,7 @@ it('shows both texts when one note is changed in two tabs, and loses no word of 
 
   await press(second.page, 'Earlier texts')
   const earlier = second.page.getByRole('region', { name: 'Earlier texts' })
+  await earlier.locator('summary').first().waitFor()
   for (const text of await earlier.locator('summary').all()) await text.click()
   await seeText(earlier, 'Words of the first tab.')
   await inspect(second, 'note-earlier-texts')

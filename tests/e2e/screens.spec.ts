@@ -27,10 +27,11 @@ const expectNoSidewaysScroll = async (page: Page, where: string) => {
 }
 
 /** One load of the page for all its widths and both themes: the layout follows the window, as it does for people. */
-const lookAt = async ({ page, url }: Person, { address }: Screen, where: string) => {
+const lookAt = async ({ page, url }: Person, { name, address }: Screen, where: string) => {
   await page.setViewportSize({ width: 1280, height: 900 })
   await page.goto(`${url}${address}`)
   await settled(page)
+  if (name !== 'forbidden') expect(new URL(page.url()).pathname, where).not.toBe('/forbidden')
   for (const width of [1280, 820, 360]) {
     await page.setViewportSize({ width, height: width === 360 ? 780 : 900 })
     await settled(page)

@@ -113,13 +113,16 @@ const guardianScreens = async (guardian: Person): Promise<Screen[]> => {
 }
 
 const teacherScreens = async (teacher: Person): Promise<Screen[]> => {
-  const { get, firstId } = reader(teacher)
-  const classes = await get<{ id: string; sharedPupils: number }[]>('/classes')
-  const classId = classes.find(({ sharedPupils }) => sharedPupils > 0)?.id ?? 'none'
+  const { get } = reader(teacher)
+  // The class with questions to answer: its pupils have advice to show.
+  const classes = await get<{ id: string; unanswered: number }[]>('/classes')
+  const classId = classes.find(({ unanswered }) => unanswered > 0)?.id ?? 'none'
+  const pupils = await get<{ rows: { id: string; unanswered: number }[] }>(`/classes/${classId}/pupils`)
+  const pupilId = pupils.rows.find(({ unanswered }) => unanswered > 0)?.id ?? 'none'
   return simple(
     ['classes', '/classes'],
     ['class', `/classes/${classId}`],
-    ['pupil', `/classes/${classId}/pupils/${await firstId(`/classes/${classId}/pupils`)}`],
+    ['pupil', `/classes/${classId}/pupils/${pupilId}`],
     ['profile', '/profile'],
     ['forbidden', '/forbidden'],
   )
@@ -127,6 +130,12 @@ const teacherScreens = async (teacher: Person): Promise<Screen[]> => {
 
 /** Every page a visitor may open, with ids read over the API under the visitor's own sign-in. */
 export const screensOf = async (visitor: Visitor, person: Person): Promise<Screen[]> => {
+  const allowed = routesFor(visitor)
+  const screens = await everyScreen(visitor, person)
+  return screens.filter(({ name }) => allowed.includes(name))
+}
+
+const everyScreen = async (visitor: Visitor, person: Person): Promise<Screen[]> => {
   switch (visitor) {
     case 'nobody':
       return simple(

@@ -2,7 +2,7 @@ import { mkdirSync, readFileSync } from 'node:fs'
 import { createRequire } from 'node:module'
 import { join } from 'node:path'
 import { chromium, type Browser, type Page } from 'playwright-core'
-import { expect } from 'vitest'
+import { expect, vi } from 'vitest'
 import type { SignIn } from './people.ts'
 
 const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
@@ -30,7 +30,14 @@ export interface Person {
   close: () => Promise<void>
 }
 
+/** Requests of each page that have no answer yet. */
+const inFlight = new WeakMap<Page, number>()
+
 const watch = (page: Page, url: string, faults: string[]) => {
+  const count = (change: number) => inFlight.set(page, (inFlight.get(page) ?? 0) + change)
+  page.on('request', () => count(1))
+  page.on('requestfinished', () => count(-1))
+  page.on('requestfailed', () => count(-1))
   page.on('console', (message) => {
     // The browser itself reports each refused request; refusals are judged by what the page shows.
     if (message.type() === 'error' && !message.text().includes('Failed to load resource'))
@@ -93,14 +100,24 @@ export const openTab = async ({ page, url, faults, close }: Person): Promise<Per
   close,
 })
 
-/** Waits until nothing on the page says it is loading, and nothing is fading or moving: half a colour is no colour. */
+const isQuiet = () =>
+  document.querySelector('h1') !== null &&
+  document.querySelector('[aria-busy="true"], .load-line, .p-button-loading') === null &&
+  document.getAnimations().every(({ playState }) => playState !== 'running')
+
+/**
+ * Waits until every request is answered, nothing on the page says it is loading, and nothing fades or moves (half a
+ * colour is no colour). It must look so twice: between an answer and what it brings about lies a moment.
+ */
 export const settled = async (page: Page): Promise<void> => {
-  await page.waitForLoadState('networkidle')
-  await page.waitForFunction(
-    () =>
-      document.querySelector('[aria-busy="true"], .load-line, .p-button-loading') === null &&
-      document.getAnimations().every(({ playState }) => playState !== 'running'),
-  )
+  let quiet = 0
+  const look = async () => {
+    // A page that is just being replaced cannot be asked.
+    const now = inFlight.get(page) === 0 && (await page.evaluate(isQuiet).catch(() => false))
+    quiet = now ? quiet + 1 : 0
+    return quiet > 1
+  }
+  await vi.waitUntil(look, { timeout: 30_000, interval: 40 })
 }
 
 interface AxeResult {
