@@ -135,9 +135,8 @@ export default defineConfig({
           include: ['tests/e2e/**/*.spec.ts'],
           environment: 'node',
           globalSetup: ['tests/e2e/support/clinicSetup.ts'],
-          // After the others and one file at a time: browser, server and database share the machine already.
+          // After the others: browser, server and database keep the machine busy by themselves.
           sequence: { groupOrder: 1 },
-          maxWorkers: 1,
           testTimeout: 600_000,
           hookTimeout: 120_000,
         },

@@ -1,11 +1,11 @@
 import { expect } from 'vitest'
 import { inspect, settled, type Person } from '../support/browser.ts'
-import { openPlace, openSection, press, seeHeading, seeText } from '../support/fields.ts'
+import { openPlace, openSection, press, searchFor, seeHeading, seeText } from '../support/fields.ts'
 
 /** Opens a child of the therapist's own caseload by a part of the name. */
 export const openFromCaseload = async ({ page }: Person, name: string): Promise<void> => {
   await openPlace(page, 'Caseload')
-  await page.getByRole('searchbox').fill(name)
+  await searchFor(page, name)
   await page.getByRole('link', { name: new RegExp(name) }).click()
   await page.waitForURL(/\/children\/[0-9a-f-]{36}\/glance$/)
 }

@@ -1,5 +1,14 @@
 import { inspect, type Person } from '../support/browser.ts'
-import { answer, choose, openPlace, openSection, press, seeHeading, seeText } from '../support/fields.ts'
+import {
+  answer,
+  choose,
+  openPlace,
+  openSection,
+  press,
+  searchFor,
+  seeHeading,
+  seeText,
+} from '../support/fields.ts'
 import type { NewChild } from './referral.ts'
 
 /** Opens the box with its key, types a part of the name, and goes to the child with Enter. */
@@ -23,7 +32,7 @@ export const seeOnCaseload = async (therapist: Person, child: NewChild): Promise
   await openPlace(page, 'Caseload')
   await seeHeading(page, 'Caseload')
   await inspect(therapist, 'caseload')
-  await page.getByRole('searchbox').fill(child.familyName)
+  await searchFor(page, child.familyName)
   await page.getByRole('link', { name: `${child.givenName} ${child.familyName}` }).click()
   await page.waitForURL(/\/children\//)
 }

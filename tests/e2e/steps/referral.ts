@@ -1,6 +1,6 @@
 import { expect } from 'vitest'
 import { inspect, type Person } from '../support/browser.ts'
-import { choose, follow, openPlace, press, seeHeading, seeText } from '../support/fields.ts'
+import { choose, follow, openPlace, press, searchFor, seeHeading, seeText } from '../support/fields.ts'
 
 /** A child nobody in the demo is, and the carer who will read the letter. */
 export interface NewChild {
@@ -13,7 +13,7 @@ export interface NewChild {
 /** Goes to the register and reads the birth date of a child who is already known. */
 const birthDateOf = async ({ page }: Person, name: string): Promise<NewChild['born']> => {
   await openPlace(page, 'Register')
-  await page.getByRole('searchbox', { name: 'Name or record number' }).fill(name)
+  await searchFor(page, name)
   const row = page.getByRole('row', { name })
   await row.waitFor()
   const [day = '', month = '', year = ''] = (await row.getByRole('time').innerText()).split(' ')
@@ -84,7 +84,7 @@ export const acceptReferral = async (lead: Person, child: NewChild, therapist: s
   const { page } = lead
   await inspect(lead, 'lead-today')
   await openPlace(page, 'Referrals')
-  await page.getByRole('searchbox', { name: 'Child or referrer' }).fill(child.familyName)
+  await searchFor(page, child.familyName)
   await page.getByRole('link', { name: `${child.givenName} ${child.familyName}` }).click()
   await press(page, 'Accept')
   const form = page.locator('form').filter({ hasText: 'Accept the referral' })

@@ -1,4 +1,5 @@
 import type { Locator, Page } from 'playwright-core'
+import { settled } from './browser.ts'
 
 type Scope = Page | Locator
 
@@ -43,3 +44,10 @@ export const openPlace = (page: Page, name: string): Promise<void> =>
 /** Goes to a section of the child's record. */
 export const openSection = (page: Page, name: string): Promise<void> =>
   follow(page.getByRole('navigation', { name: 'Sections of the record' }), name)
+
+/** Types into the search of a list and waits until the list is narrowed: its rows move as it is. */
+export const searchFor = async (page: Page, words: string): Promise<void> => {
+  await page.getByRole('searchbox').fill(words)
+  await page.waitForURL(({ searchParams }) => searchParams.get('search') === words)
+  await settled(page)
+}
