@@ -2,7 +2,7 @@ import { expect } from 'vitest'
 import { inspect, type Person } from '../support/browser.ts'
 import { follow, openSection, press, seeHeading, seeText } from '../support/fields.ts'
 import { waitForLink } from '../support/inbox.ts'
-import type { NewChild } from './referral.ts'
+import { purposesGiven, type NewChild } from './referral.ts'
 
 /** Staff on the child's record invite the carer; the e-mail with the link arrives and names no child. */
 export const inviteCarer = async (
@@ -14,6 +14,14 @@ export const inviteCarer = async (
   await openSection(page, 'Family and consent')
   await seeHeading(page, 'Parents and carers')
   await inspect(staff, 'child-family')
+  // Each consent stands alone: those that were given, by whom and how, and no other.
+  const consents = page.getByRole('region', { name: 'Consent, one purpose at a time' })
+  for (const purpose of purposesGiven) {
+    const line = consents.getByRole('listitem').filter({ has: page.getByRole('heading', { name: purpose }) })
+    await seeText(line, 'In force')
+    await seeText(line, new RegExp(`${child.carer.name}.*on paper, parental responsibility`))
+  }
+  expect(await consents.getByText('In force', { exact: true }).count()).toBe(purposesGiven.length)
   await press(page, `Invite ${child.carer.name}`)
   await seeHeading(page, `Invite ${child.carer.name}?`)
   await inspect(staff, 'invitation-confirmation')

@@ -10,6 +10,14 @@ export interface NewChild {
   carer: { name: string; email: string }
 }
 
+/** What the mother has agreed to on paper; everything else she has not been asked. */
+export const purposesGiven = [
+  'Assessment and therapy',
+  'Keeping photographs or scans of the child’s work',
+  'Letters: an e-mail with a link that needs sign-in',
+  'School: seating and classroom advice',
+]
+
 /** Goes to the register and reads the birth date of a child who is already known. */
 const birthDateOf = async ({ page }: Person, name: string): Promise<NewChild['born']> => {
   await openPlace(page, 'Register')
@@ -90,13 +98,9 @@ export const acceptReferral = async (lead: Person, child: NewChild, therapist: s
   const form = page.locator('form').filter({ hasText: 'Accept the referral' })
   await page.getByRole('radio', { name: 'Routine', exact: true }).check()
   await choose(form, /^Therapist/, new RegExp(`^${therapist}`))
-  for (const purpose of [
-    'Assessment and therapy',
-    'Keeping photographs or scans of the child’s work',
-    `Letters: an e-mail with a link that needs sign-in (${child.carer.name})`,
-    'School: seating and classroom advice',
-  ]) {
-    const line = form.getByRole('listitem').filter({ has: page.getByLabel(purpose, { exact: true }) })
+  for (const purpose of purposesGiven) {
+    const label = purpose.startsWith('Letters') ? `${purpose} (${child.carer.name})` : purpose
+    const line = form.getByRole('listitem').filter({ has: page.getByLabel(label, { exact: true }) })
     await line.getByRole('checkbox').check()
     // Whoever alone holds parental responsibility stands there already; how it was given is asked once.
     if (await line.getByRole('combobox', { name: 'How', exact: true }).isVisible())
