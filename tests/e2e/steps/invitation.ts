@@ -33,7 +33,7 @@ export const inviteCarer = async (
   return { link }
 }
 
-/** Neither name of the child stands in an e-mail. The carer may bear the same family name, so that is looked at apart. */
+/** Neither name of the child stands in an e-mail; the child’s family name is written otherwise than the carer’s. */
 export const expectNoName = (words: string, child: NewChild): void => {
   expect(words).not.toContain(child.givenName)
   expect(words).not.toContain(child.familyName)

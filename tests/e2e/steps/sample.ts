@@ -37,8 +37,8 @@ const drawPhotograph = async (amplitude: number): Promise<Buffer> => {
     .toBuffer()
 }
 
-/** Adds one sample; slowly enough to see how far it is when a rate (bytes a second) is given. */
-const addSample = async (
+/** Fills in the form of one sample; whoever calls sends it. */
+const fillSample = async (
   { page }: Person,
   photograph: { name: string; buffer: Buffer },
   facts: { takenOn: string; letters: string; legible: string },
@@ -65,7 +65,7 @@ export const addSamples = async (
   await seeText(page, 'No writing sample yet')
   const first = { name: 'before.jpg', buffer: await drawPhotograph(40) }
   expect((await sharp(first.buffer).metadata()).orientation).toBe(turnedClockwise)
-  await addSample(therapist, first, { takenOn: days.earlier, letters: '21', legible: '19' })
+  await fillSample(therapist, first, { takenOn: days.earlier, letters: '21', legible: '19' })
   await inspect(therapist, 'sample-form')
 
   // As over a slow line: the bar must be there while the picture is on its way.
@@ -84,7 +84,7 @@ export const addSamples = async (
   await page.getByRole('article').getByRole('img').waitFor()
 
   const second = { name: 'today.jpg', buffer: await drawPhotograph(25) }
-  await addSample(therapist, second, { takenOn: days.today, letters: '26', legible: '25' })
+  await fillSample(therapist, second, { takenOn: days.today, letters: '26', legible: '25' })
   await press(page, 'Keep this sample')
   await expect.poll(() => page.getByRole('article').count()).toBe(2)
   await inspect(therapist, 'sample-wall')
