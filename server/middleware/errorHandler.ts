@@ -45,7 +45,7 @@ const toAppError = (error: unknown): AppError | null => {
       'invalid',
       'This upload could not be read.',
     ]
-    return new AppError(status, code, message)
+    return new AppError(status, code, message, { fields: { file: message } })
   }
   const { status, type, code, driverError } = error as {
     status?: number

@@ -11,6 +11,10 @@ export interface ReceivedFile {
 }
 
 const textLimit = 64 * 1024
+const textFields = 10
+
+/** The largest file, all text fields at their limit, and room for the lines between the parts. */
+const mostBodyBytes = maximumPdfBytes + (textFields + 1) * textLimit
 
 const receive = multer({
   storage: multer.memoryStorage(),
@@ -19,7 +23,7 @@ const receive = multer({
   limits: {
     fileSize: maximumPdfBytes,
     files: 1,
-    fields: 10,
+    fields: textFields,
     parts: 20,
     fieldSize: textLimit,
     fieldNameSize: 50,
@@ -30,10 +34,12 @@ const receive = multer({
 }).single('file')
 
 /**
- * Takes one file (field `file`) and a few text fields into memory, within limits. A body that breaks off or cannot be
- * read is a 400; nothing of it is kept.
+ * Takes one file (field `file`) and a few text fields into memory, within limits. A body announced as too long is
+ * refused before any of it is held; one that breaks off or cannot be read is a 400; nothing of it is kept.
  */
 export const receiveUpload: RequestHandler = (req, res, next) => {
+  if (Number(req.headers['content-length']) > mostBodyBytes)
+    return next(new MulterError('LIMIT_FILE_SIZE', 'file'))
   receive(req, res, (error: unknown) => {
     if (error === undefined || error === null || error instanceof MulterError || error instanceof AppError)
       return next(error)

@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto'
-import { request as httpRequest } from 'node:http'
+import { request as httpRequest, type IncomingMessage } from 'node:http'
 import type { AddressInfo } from 'node:net'
+import { json } from 'node:stream/consumers'
 import { deflateSync } from 'node:zlib'
 import type { Express } from 'express'
 import sharp from 'sharp'
@@ -221,6 +222,34 @@ describe('the size of a file', () => {
     const padded = Buffer.concat([small, Buffer.alloc(bytes - small.length, '\n')])
     const response = await send({ bytes: padded, name: 'scan.pdf', type: 'application/pdf' })
     expect(response.status, response.text).toBe(status)
+  })
+
+  it('is refused as soon as too much is announced, before the file is sent', async () => {
+    const server = app.listen(0, '127.0.0.1')
+    await new Promise((resolve) => server.once('listening', resolve))
+    const sending = httpRequest({
+      port: (server.address() as AddressInfo).port,
+      host: '127.0.0.1',
+      method: 'POST',
+      path: `/api/children/${child.id}/samples`,
+      headers: {
+        'Content-Type': 'multipart/form-data; boundary=cut',
+        'Content-Length': 50 * 1024 * 1024,
+        'X-Fanflower-User': anna.userId,
+        'Sec-Fetch-Site': 'same-origin',
+        Cookie: anna.cookie.join('; '),
+      },
+    })
+    sending.on('error', () => undefined)
+    sending.write('--cut\r\n')
+    const answer = await new Promise<IncomingMessage>((resolve) => sending.once('response', resolve))
+    expect([answer.statusCode, await json(answer)]).toEqual([
+      413,
+      expect.objectContaining({ code: 'too_large', fields: { file: expect.stringContaining('8 MB') } }),
+    ])
+    sending.destroy()
+    server.closeAllConnections()
+    await new Promise((resolve) => server.close(resolve))
   })
 
   it('ends at 500 MB for one child', async () => {
