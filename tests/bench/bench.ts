@@ -1,14 +1,16 @@
-import { fork, type ChildProcess } from 'node:child_process'
+import type { ChildProcess } from 'node:child_process'
 import { mkdtempSync, rmSync } from 'node:fs'
 import { cpus, tmpdir } from 'node:os'
 import { join } from 'node:path'
-import { fileURLToPath } from 'node:url'
 import autocannon from 'autocannon'
 import { createConnection } from 'mysql2/promise'
-import { connectionOptions, type DatabaseAccess } from '../../server/setup/databaseAccess.ts'
+import { connectionOptions } from '../../server/setup/databaseAccess.ts'
 import { startMariaDb } from '../../server/setup/mariadb.ts'
 import { migrateDatabase } from '../../server/setup/migrateDatabase.ts'
-import { benchEmail, benchPassword, fillClinic } from './data.ts'
+import { measureAccounts } from './accounts.ts'
+import { childWithConsent, fillClinic } from './data.ts'
+import { median, signIn, startServer } from './servers.ts'
+import { measureUploads } from './uploads.ts'
 
 /*
  * Speed as ratios within one run, because machines differ: the caseload page against the least a server could do with
@@ -17,39 +19,11 @@ import { benchEmail, benchPassword, fillClinic } from './data.ts'
 const seconds = Number(process.env.SECONDS ?? 4)
 const rounds = 3
 
-const start = async (file: string, access: DatabaseAccess): Promise<{ child: ChildProcess; url: string }> => {
-  const child = fork(fileURLToPath(new URL(file, import.meta.url)), {
-    execArgv: ['--import', 'tsx'],
-    env: { ...process.env, NODE_ENV: 'test', BENCH_ACCESS: JSON.stringify(access) },
-  })
-  const { port } = await new Promise<{ port: number }>((resolve, reject) => {
-    child.once('message', (message) => resolve(message as { port: number }))
-    child.once('exit', () => reject(new Error(`${file} did not start`)))
-  })
-  return { child, url: `http://127.0.0.1:${port}` }
-}
-
-const signIn = async (url: string): Promise<string> => {
-  const response = await fetch(`${url}/api/sign-in`, {
-    method: 'POST',
-    headers: { 'Content-Type': 'application/json', 'X-Fanflower-User': 'none' },
-    body: JSON.stringify({ email: benchEmail, password: benchPassword, sharedComputer: false }),
-  })
-  if (response.status !== 200) throw new Error(`Sign-in failed: ${response.status} ${await response.text()}`)
-  return response.headers
-    .getSetCookie()
-    .map((line) => line.split(';')[0])
-    .join('; ')
-}
-
 interface Reading {
   p50: number
   p99: number
   perSecond: number
 }
-
-const median = (values: number[]) =>
-  values.toSorted((a, b) => a - b)[Math.floor(values.length / 2)] ?? Number.NaN
 
 const measure = async (targets: { name: string; url: string; cookie?: string }[], connections: number) => {
   const readings = new Map<string, Reading[]>()
@@ -97,15 +71,16 @@ try {
     return mariadb.access('app', name)
   }
   const [full, tenth] = [await prepare('bench_full', 5000), await prepare('bench_tenth', 500)]
-  const floor = await start('./floorServer.ts', full)
-  const app = await start('./appServer.ts', full)
-  const small = await start('./appServer.ts', tenth)
+  const floor = await startServer('./floorServer.ts', full)
+  const app = await startServer('./appServer.ts', full)
+  const small = await startServer('./appServer.ts', tenth)
   children.push(floor.child, app.child, small.child)
+  const therapist = await signIn(app.url)
   const page = '/api/caseload?size=25'
   const targets = [
     { name: 'floor', url: floor.url },
-    { name: 'caseload, 5000 children', url: `${app.url}${page}`, cookie: await signIn(app.url) },
-    { name: 'caseload, 500 children', url: `${small.url}${page}`, cookie: await signIn(small.url) },
+    { name: 'caseload, 5000 children', url: `${app.url}${page}`, cookie: therapist.cookie },
+    { name: 'caseload, 500 children', url: `${small.url}${page}`, cookie: (await signIn(small.url)).cookie },
   ]
   const results = [...(await measure(targets, 1)), ...(await measure(targets, 20))]
   console.log(`${cpus().length} cores, Node ${process.version}, ${rounds} rounds of ${seconds} s, medians`)
@@ -121,6 +96,26 @@ try {
       `c=${connections}: 5000 ÷ 500 children in p50 = ${((whole?.p50 ?? 0) / (part?.p50 || 1)).toFixed(2)}`,
     )
   }
+
+  const fast = await startServer('./appServer.ts', full, { BENCH_TIME_FACTOR: '4000' })
+  children.push(fast.child)
+  for (const { name, tries, known, unknown } of await measureAccounts(fast.url))
+    console.log(
+      `${name}, ${tries} times each: known ÷ unknown address in median time = ${(known / unknown).toFixed(3)}`,
+    )
+  fast.child.kill()
+
+  const uploads = await measureUploads({
+    server: app,
+    ...therapist,
+    childId: await childWithConsent(mariadb.access('migrate', 'bench_full')),
+  })
+  console.log(`uploads answered ${JSON.stringify(uploads.answers)}`)
+  console.log(`20 uploads over the limit: memory rose by ${uploads.overLimitRise.toFixed(2)} × the limit`)
+  console.log(
+    `five bombs, then five of 39 megapixels at once: by ${uploads.decodedRise.toFixed(2)} × the limit`,
+  )
+  console.log(`caseload beside them: p99 ÷ idle p50 = ${(uploads.besideP99 / uploads.idleP50).toFixed(1)}`)
 } finally {
   children.forEach((child) => child.kill())
   await mariadb.stop()

@@ -118,3 +118,23 @@ export const fillClinic = async (access: DatabaseAccess, children: number): Prom
   await connection.query('ANALYZE TABLE children, episodes, assignments, session_notes, users')
   await connection.end()
 }
+
+/** A child of the first therapist whose family lets the clinic keep pictures of its work. */
+export const childWithConsent = async (access: DatabaseAccess): Promise<string> => {
+  const connection = await createConnection({ ...connectionOptions(access), timezone: 'Z' })
+  const [rows] = await connection.query(
+    `SELECT a.childId, a.therapistId FROM assignments a JOIN users u ON u.id = a.therapistId WHERE u.email = ? LIMIT 1`,
+    [benchEmail],
+  )
+  const [held] = rows as { childId: string; therapistId: string }[]
+  if (!held) throw new Error('The first therapist of the bench holds nobody')
+  const at = new Date('2026-06-01T09:00:00Z')
+  for (const purpose of ['assessment_treatment', 'store_work_samples'])
+    await connection.query(
+      `INSERT INTO consents (id, childId, purpose, kind, basis, method, givenByName, at, recordedById, recordedAt)
+       VALUES (?, ?, ?, 'given', 'parental_responsibility', 'paper', 'A parent', ?, ?, ?)`,
+      [randomUUID(), held.childId, purpose, at, held.therapistId, at],
+    )
+  await connection.end()
+  return held.childId
+}
