@@ -2,27 +2,32 @@ import 'reflect-metadata'
 import { DataSource, type EntityManager } from 'typeorm'
 import { AdviceAnswer } from './entities/AdviceAnswer.ts'
 import { Alert } from './entities/Alert.ts'
+import { AnswerRequest } from './entities/AnswerRequest.ts'
 import { Assignment } from './entities/Assignment.ts'
 import { AuditEntry } from './entities/AuditEntry.ts'
 import { AuditHead } from './entities/AuditHead.ts'
 import { Child } from './entities/Child.ts'
 import { ClassTeacher } from './entities/ClassTeacher.ts'
 import { ClinicSetting } from './entities/ClinicSetting.ts'
+import { Conclusion } from './entities/Conclusion.ts'
 import { Consent } from './entities/Consent.ts'
 import { Episode } from './entities/Episode.ts'
 import { EpisodeChange } from './entities/EpisodeChange.ts'
 import { Goal } from './entities/Goal.ts'
 import { GoalRating } from './entities/GoalRating.ts'
 import { Guardian } from './entities/Guardian.ts'
+import { History } from './entities/History.ts'
 import { IdempotencyKey } from './entities/IdempotencyKey.ts'
 import { KnownDevice } from './entities/KnownDevice.ts'
 import { Letter } from './entities/Letter.ts'
 import { LetterDelivery } from './entities/LetterDelivery.ts'
 import { LetterVersion } from './entities/LetterVersion.ts'
+import { Measure } from './entities/Measure.ts'
 import { NoteAddendum } from './entities/NoteAddendum.ts'
 import { NoteRevision } from './entities/NoteRevision.ts'
 import { NoteSignature } from './entities/NoteSignature.ts'
 import { OutboxMessage } from './entities/OutboxMessage.ts'
+import { QuestionnaireForm } from './entities/QuestionnaireForm.ts'
 import { QuestionnaireResponse } from './entities/QuestionnaireResponse.ts'
 import { RecordNumber } from './entities/RecordNumber.ts'
 import { Referral } from './entities/Referral.ts'
@@ -44,10 +49,11 @@ import { connectionOptions, type DatabaseAccess } from './setup/databaseAccess.t
 const statementSeconds = 5
 
 export const entities = [
-  AdviceAnswer, Alert, Assignment, AuditEntry, AuditHead, Child, ClassTeacher, ClinicSetting, Consent, Episode,
-  EpisodeChange, Goal, GoalRating, Guardian, IdempotencyKey, KnownDevice, Letter, LetterDelivery, LetterVersion,
-  NoteAddendum, NoteRevision, NoteSignature, OutboxMessage, QuestionnaireResponse, RecordNumber, Referral, Sample,
-  School, SchoolAdvice, SchoolClass, SessionNote, Task, Throttle, User, UserSession, UserToken, WritingObservation,
+  AdviceAnswer, Alert, AnswerRequest, Assignment, AuditEntry, AuditHead, Child, ClassTeacher, ClinicSetting,
+  Conclusion, Consent, Episode, EpisodeChange, Goal, GoalRating, Guardian, History, IdempotencyKey, KnownDevice,
+  Letter, LetterDelivery, LetterVersion, Measure, NoteAddendum, NoteRevision, NoteSignature, OutboxMessage,
+  QuestionnaireForm, QuestionnaireResponse, RecordNumber, Referral, Sample, School, SchoolAdvice, SchoolClass,
+  SessionNote, Task, Throttle, User, UserSession, UserToken, WritingObservation,
 ] // prettier-ignore
 
 /** Logging stays off: TypeORM would print query parameters, which are personal data. */

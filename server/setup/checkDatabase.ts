@@ -1,5 +1,6 @@
 import type { DataSource } from 'typeorm'
 import { guardNames } from '../migrations/1764547300000-CloseWhatIsClosed.ts'
+import { assessmentGuardNames } from '../migrations/1764580000000-AddAssessment.ts'
 import { findRightsProblems } from './grants.ts'
 
 /** Three times the largest upload, for the driver sends binary data as hexadecimal text. */
@@ -38,7 +39,7 @@ export const databaseProblems = async (app: DataSource): Promise<string[]> => {
     return problems
   }
   const triggers = (await app.query('SELECT name FROM guard_names')) as { name: string }[]
-  for (const name of guardNames)
+  for (const name of [...guardNames, ...assessmentGuardNames])
     if (!triggers.some((trigger) => trigger.name === name)) problems.push(`the trigger ${name} is missing`)
 
   const loose = (await app.query('SELECT name FROM passing_keys')) as { name: string }[]

@@ -19,7 +19,12 @@ export const updatableTables: readonly string[] = [
   'assignments',
   'alerts',
   'tasks',
+  'questionnaire_forms',
   'questionnaire_responses',
+  'answer_requests',
+  'histories',
+  'measures',
+  'conclusions',
   'session_notes',
   'samples',
   'goals',
@@ -31,5 +36,10 @@ export const updatableTables: readonly string[] = [
   'audit_heads',
 ]
 
-/** Tables whose rows the running server may delete: a questionnaire that was begun and never locked. */
-export const deletableTables: readonly string[] = ['questionnaire_responses']
+/** Tables whose rows the running server may delete: what was begun and never locked, sent or signed. */
+export const deletableTables: readonly string[] = [
+  'questionnaire_responses',
+  'histories',
+  'measures',
+  'conclusions',
+]

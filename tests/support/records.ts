@@ -47,7 +47,7 @@ export const buildQuestionnaire = (
     answers: allAnswers(),
     comment: null,
     cutOffSet: cutOffSets[0].id,
-    score: locked ? scoreHandUse(allAnswers()) : null,
+    score: locked ? { ...scoreHandUse(allAnswers()), method: 'edinburgh_style', total: null } : null,
     lockedAt: locked ? now() : null,
     lockedById: locked ? by.id : null,
     startedById: by.id,
