@@ -1,4 +1,6 @@
-import type { Day } from './days.ts'
+import { mixed, number, string, type InferType } from 'yup'
+import { dayField, type Day } from './days.ts'
+import { body, choice, optionalId, optionalText } from './fields.ts'
 import type { FormAnswers, FormView } from './forms.ts'
 import type { HistoryDetails } from './histories.ts'
 
@@ -14,8 +16,129 @@ export type AnswererKind = (typeof answererKinds)[number]
 export const requestDays = 28
 export const reminderDays = [7, 14] as const
 
+/** A reminder sent by hand so many days before one was due takes its place. */
+const restDays = 2
+const dayMs = 86_400_000
+
+interface RequestMoments {
+  askedAt: Date
+  remindedAt: Date | null
+  savedAt: Date | null
+}
+
+/**
+ * The day (7 or 14 after asking) whose reminder is due now; null when none is. One e-mail makes up for all that were
+ * missed. Nobody is reminded who saved something in the last day: they are at it.
+ */
+export function dueReminder({ askedAt, remindedAt, savedAt }: RequestMoments, at: Date): number | null {
+  const dueAt = (days: number) => askedAt.getTime() + days * dayMs
+  const latest = reminderDays.filter((days) => at.getTime() >= dueAt(days)).at(-1)
+  if (latest === undefined) return null
+  if (remindedAt !== null && remindedAt.getTime() >= dueAt(latest - restDays)) return null
+  if (savedAt !== null && at.getTime() - savedAt.getTime() < dayMs) return null
+  return latest
+}
+
 export const requestStates = ['waiting', 'begun', 'answered', 'expired', 'cancelled'] as const
 export type RequestState = (typeof requestStates)[number]
+export const requestStateLabels: Record<RequestState, string> = {
+  waiting: 'Waiting',
+  begun: 'Begun',
+  answered: 'Answered',
+  expired: 'Time is over',
+  cancelled: 'Withdrawn',
+}
+
+/** How families and teachers read what is asked. */
+export const requestTitles: Record<RequestedForm, string> = {
+  history: 'How things began',
+  questionnaire: 'Which hand for which activity',
+}
+
+export const answerRequestSchema = body({
+  asks: choice('what you ask for', requestedForms),
+  /** An edition of a questionnaire; null for the history. */
+  formId: string()
+    .nullable()
+    .defined()
+    .max(40, 'Choose a form from the list')
+    .when('asks', {
+      is: 'questionnaire',
+      then: (schema) => schema.required('Choose a form'),
+      otherwise: (schema) => schema.oneOf([null], 'The history has one form only'),
+    }),
+  answerer: choice('whom you ask', answererKinds).when('asks', {
+    is: 'history',
+    then: (schema) => schema.oneOf(['guardian'], 'Only a parent or carer is asked how things began'),
+  }),
+  guardianId: optionalId('The carer').when('answerer', {
+    is: 'guardian',
+    then: (schema) => schema.required('Choose a carer'),
+    otherwise: (schema) => schema.oneOf([null], 'Choose either a carer or a teacher'),
+  }),
+  teacherId: optionalId('The teacher').when('answerer', {
+    is: 'teacher',
+    then: (schema) => schema.required('Choose a teacher'),
+    otherwise: (schema) => schema.oneOf([null], 'Choose either a carer or a teacher'),
+  }),
+  /** An e-mail with a link that needs no sign-in; for carers only. */
+  byLink: mixed<boolean>()
+    .required('Choose how it is answered')
+    .oneOf([true, false], 'Choose how it is answered')
+    .when('answerer', {
+      is: 'teacher',
+      then: (schema) => schema.oneOf([false], 'Teachers sign in to answer'),
+    }),
+})
+export type AnswerRequestDetails = InferType<typeof answerRequestSchema>
+
+/** Answers so far, as they come in; their content is checked against the form that was asked. */
+const draftFields = {
+  answers: mixed<FormAnswers>().test('map', 'The answers could not be read', isMapOrAbsent),
+  comment: optionalText('The comment', { max: 1000 }).optional(),
+  history: mixed<HistoryDetails>().test('map', 'The answers could not be read', isMapOrAbsent),
+}
+
+function isMapOrAbsent(value: unknown): boolean {
+  return value === undefined || (typeof value === 'object' && value !== null && !Array.isArray(value))
+}
+
+export const answerDraftSchema = body(draftFields)
+export interface AnswerDraft {
+  answers?: FormAnswers
+  comment?: string | null
+  history?: HistoryDetails
+}
+
+const proof = {
+  token: string().required('This link is not complete').max(200, 'This link is not complete'),
+  /** The child's, typed by the carer. */
+  birthDate: dayField('The date of birth'),
+}
+const savedVersion = number().required().integer().min(0).max(999_999_999)
+
+export const answerLinkSchema = body(proof)
+export type AnswerLink = InferType<typeof answerLinkSchema>
+export const answerLinkDraftSchema = body({ ...proof, version: savedVersion, ...draftFields })
+export const answerLinkSendSchema = body({ ...proof, version: savedVersion })
+
+/** Whom a therapist can ask, and what for. */
+export interface AnswerChoices {
+  /** Why nothing can be asked now, in words; null when it can. */
+  blocked: string | null
+  forms: { id: string; title: string; informants: AnswererKind[] }[]
+  guardians: {
+    id: string
+    name: string
+    /** Why this carer cannot be asked, in words; null when they can. */
+    refused: string | null
+    byLink: boolean
+    signedIn: boolean
+  }[]
+  teachers: { id: string; name: string }[]
+  /** Why no teacher can be asked, in words; null when one can. */
+  teachersRefused: string | null
+}
 
 /** A request as the therapist sees it. */
 export interface AnswerRequestView {

@@ -1,12 +1,23 @@
-import { Column, Entity, JoinColumn, ManyToOne, PrimaryColumn, VersionColumn, type Relation } from 'typeorm'
+import {
+  Column,
+  Entity,
+  Index,
+  JoinColumn,
+  ManyToOne,
+  PrimaryColumn,
+  VersionColumn,
+  type Relation,
+} from 'typeorm'
 import type { AnswererKind, RequestedForm } from '../../shared/answerRequests.ts'
 import { Child } from './Child.ts'
 import { Guardian } from './Guardian.ts'
+import { OutboxMessage } from './OutboxMessage.ts'
 import { QuestionnaireForm } from './QuestionnaireForm.ts'
 import { User } from './User.ts'
 
 /** The clinic asks one carer or one teacher for one form. Only the SHA-256 of the link's token is kept. */
 @Entity('answer_requests')
+@Index(['answeredAt', 'expiresAt'])
 export class AnswerRequest {
   @PrimaryColumn('uuid') id!: string
   @Column('uuid') childId!: string
@@ -36,8 +47,16 @@ export class AnswerRequest {
   @JoinColumn({ name: 'askedById' })
   askedBy!: Relation<User>
   @Column('datetime', { precision: 6 }) expiresAt!: Date
-  /** Reminders sent so far: one after 7 days, one after 14. */
+  /** Reminders sent so far: one after 7 days, one after 14, and those sent by hand. */
   @Column('int', { default: 0 }) reminders!: number
+  @Column('datetime', { precision: 6, nullable: true }) remindedAt!: Date | null
+  /** When something was last saved. Autosaves leave the version alone: it belongs to the clinic's own changes. */
+  @Column('datetime', { precision: 6, nullable: true }) savedAt!: Date | null
+  /** The newest e-mail about it; older ones no longer count. */
+  @Column('uuid', { nullable: true }) mailId!: string | null
+  @ManyToOne(() => OutboxMessage, { nullable: true, onDelete: 'RESTRICT', onUpdate: 'RESTRICT' })
+  @JoinColumn({ name: 'mailId' })
+  mail!: Relation<OutboxMessage | null>
   @Column('datetime', { precision: 6, nullable: true }) answeredAt!: Date | null
   @Column('datetime', { precision: 6, nullable: true }) cancelledAt!: Date | null
   @VersionColumn({ type: 'int' }) version!: number

@@ -2,7 +2,8 @@ import { Column, Entity, Index, JoinColumn, ManyToOne, PrimaryColumn, type Relat
 import { User } from './User.ts'
 
 /** What an e-mail is for; decides which checks run again before it leaves. */
-export type OutboxKind = 'letter' | 'invitation' | 'password_reset' | 'password_changed' | 'delivery_failed'
+export type OutboxKind =
+  'letter' | 'invitation' | 'password_reset' | 'password_changed' | 'delivery_failed' | 'answer_request'
 
 /** An e-mail, frozen when it was decided on; written in the transaction of the act. Message-ID and bytes never change. */
 @Entity('outbox_messages')
