@@ -24,6 +24,13 @@ export const recordRoutes: RouteRecordRaw[] = [
     meta: { title: 'Hand-use questionnaire' },
   },
   {
+    name: 'conclusion',
+    path: 'conclusions/:conclusionId',
+    props: true,
+    component: () => import('@/views/conclusions/ConclusionView.vue'),
+    meta: { title: 'Conclusion' },
+  },
+  {
     name: 'child-handwriting',
     path: 'handwriting',
     props: true,
