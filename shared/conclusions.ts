@@ -132,12 +132,15 @@ export const signConclusionSchema = body({
     .required('Confirm that you have read the conclusion and that it is about this child')
     .oneOf([true], 'Confirm that you have read the conclusion and that it is about this child'),
 })
+export type SignConclusion = InferType<typeof signConclusionSchema>
 
 export interface EvidenceChoice extends EvidenceLink {
   /** E.g. 'Reaching across the midline, 3 Mar 2026: 14 left, 7 right'. */
   words: string
   on: Day
 }
+
+export type SignConclusion = InferType<typeof signConclusionSchema>
 
 export const conclusionTexts = [
   'strengths',
@@ -204,6 +207,8 @@ export interface ReportHead {
 /** What is kept at signing, so that the report is the same whenever it is opened. */
 export interface SignedEvidence extends ConclusionEvidence {
   head: ReportHead
+  /** What must stand beside the figures. */
+  cautions: string[]
 }
 
 export interface ConclusionView {
