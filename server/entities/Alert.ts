@@ -1,7 +1,7 @@
 import { Column, Entity, JoinColumn, ManyToOne, PrimaryColumn, VersionColumn, type Relation } from 'typeorm'
 import type { Attention } from '../../shared/attention.ts'
 import type { AlertOrigin } from '../../shared/alerts.ts'
-import type { RedFlagUrgency } from '../../shared/redFlags.ts'
+import type { RedFlagUrgency } from '../../shared/redFlagRows.ts'
 import { Child } from './Child.ts'
 import { User } from './User.ts'
 

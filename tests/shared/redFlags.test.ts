@@ -77,7 +77,7 @@ describe('redFlags', () => {
     [{ swapsWithinTask: true, ageMonths: 71 }, []],
     [{ swapsWithinTask: true }, []],
     [{ wideMotorDifficulty: true }, ['wide-motor-difficulty: ask']],
-    [{ painAfter: 4 }, ['pain: ask']],
+    [{ painAfter: 4 }, ['pain: safeguarding']],
     [{ painAfter: 3 }, []],
     [{ punishedForHand: true }, ['punished-for-hand: safeguarding']],
     [{ notBroughtInSixMonths: 2 }, ['not-brought: safeguarding']],
@@ -97,7 +97,7 @@ describe('redFlags', () => {
       'new-neurological-signs: same_day',
       'preference-before-12-months: priority',
       'punished-for-hand: safeguarding',
-      'pain: ask',
+      'pain: safeguarding',
     ])
   })
 

@@ -1,0 +1,58 @@
+import type { Day } from '../../shared/days.ts'
+import { isId } from '../../shared/fields.ts'
+import type { HistoryDetails, HistoryInformant } from '../../shared/histories.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import type { Tx } from '../dataSource.ts'
+import { notFound } from '../errors.ts'
+import { within } from './scope.ts'
+import { fromJson, selectRows } from './sql.ts'
+
+interface StoredHistory {
+  id: string
+  childId: string
+  informant: HistoryInformant
+  respondentName: string | null
+  answeredOn: Day
+  details: string
+  lockedAt: Date | null
+  /** The carer's name where one answered at home. */
+  lockedBy: string | null
+  replacesId: string | null
+  replacedById: string | null
+  version: number
+}
+
+export interface HistoryRecord extends Omit<StoredHistory, 'details'> {
+  details: HistoryDetails
+}
+
+const select = async (
+  access: ChildAccess,
+  condition: string,
+  parameters: Record<string, string> = {},
+  tx?: Tx,
+): Promise<HistoryRecord[]> => {
+  const scope = within(access, 'h.childId')
+  const rows = await selectRows<StoredHistory>(
+    `SELECT h.id, h.childId, h.informant, COALESCE(h.respondentName, g.name) AS respondentName, h.answeredOn,
+       h.details, h.lockedAt, COALESCE(u.displayName, g.name) AS lockedBy, h.replacesId, n.id AS replacedById, h.version
+     FROM histories h
+     LEFT JOIN users u ON u.id = h.lockedById
+     LEFT JOIN guardians g ON g.id = h.guardianId
+     LEFT JOIN histories n ON n.replacesId = h.id
+     WHERE ${scope.sql} AND ${condition} ORDER BY h.answeredOn DESC, h.createdAt DESC, h.id`,
+    { ...scope.parameters, ...parameters },
+    tx,
+  )
+  return rows.map(({ details, ...rest }) => ({ ...rest, details: fromJson<HistoryDetails>(details) }))
+}
+
+/** Every history of a child, newest first. */
+export const listHistories = (access: ChildAccess): Promise<HistoryRecord[]> => select(access, '1 = 1')
+
+export const findHistory = async (access: ChildAccess, id: string, tx?: Tx): Promise<HistoryRecord> => {
+  if (!isId(id)) throw notFound()
+  const [found] = await select(access, 'h.id = :historyId', { historyId: id }, tx)
+  if (!found) throw notFound()
+  return found
+}
