@@ -140,8 +140,6 @@ export interface EvidenceChoice extends EvidenceLink {
   on: Day
 }
 
-export type SignConclusion = InferType<typeof signConclusionSchema>
-
 export const conclusionTexts = [
   'strengths',
   'mattersToChild',
