@@ -1,6 +1,11 @@
 import type { Day } from './days.ts'
 import type { Hand } from './roles.ts'
 
+/*
+ * The words of measures. Input schemas stand in measureSchemas.ts, scores in measureScores.ts (scoreMeasure,
+ * emptyDetails, lockProblems) and in the file of each method: reaching.ts, handSkill.ts, sides.ts, seatingFit.ts.
+ */
+
 /** Measures a therapist takes with the child. */
 export const measureKinds = ['reaching', 'pegs', 'tapping', 'dots', 'sides', 'seating'] as const
 export type MeasureKind = (typeof measureKinds)[number]
@@ -23,7 +28,7 @@ export interface Reach {
   place: ReachPlace
   /** Null is a lost reach: nobody saw it, or the card fell. */
   hand: Hand | null
-  /** The card changed hands on the way; `hand` is the one that took it first. */
+  /** The card changed hands on the way; `hand` is the one that took it first, so a lost reach is never swapped. */
   swapped: boolean
 }
 
