@@ -19,6 +19,7 @@ const nouns: Record<string, string> = {
   referral: 'Referral',
   task: 'Task',
   questionnaire: 'Questionnaire',
+  measure: 'Measure',
   handProfile: 'Hand profile',
   sessionNote: 'Session note',
   writingObservation: 'Writing observation',

@@ -1,4 +1,6 @@
 import type { Router } from 'express'
+import { answerLinkRoutes } from './answerLinks.ts'
+import { answerRequestRoutes } from './answerRequests.ts'
 import { auditEntryRoutes } from './auditEntries.ts'
 import { caseloadRoutes } from './caseload.ts'
 import { childRoutes } from './children.ts'
@@ -8,6 +10,7 @@ import { familyRoutes } from './family.ts'
 import { goalRoutes } from './goals.ts'
 import { guardianRoutes } from './guardians.ts'
 import { letterRoutes } from './letters.ts'
+import { measureRoutes } from './measures.ts'
 import { questionnaireRoutes } from './questionnaires.ts'
 import { receivedLetterRoutes } from './receivedLetters.ts'
 import { referralRoutes } from './referrals.ts'
@@ -29,6 +32,9 @@ export interface RouteSettings {
 
 /** The routers of all nouns, one line each, mounted under /api. */
 export const nounRoutes = (settings: RouteSettings): Router[] => [
+  answerLinkRoutes(),
+  // Before classRoutes, where /pupils/to-answer would be a child's id.
+  answerRequestRoutes(settings),
   auditEntryRoutes(),
   caseloadRoutes(),
   childRoutes(),
@@ -38,6 +44,7 @@ export const nounRoutes = (settings: RouteSettings): Router[] => [
   goalRoutes(),
   guardianRoutes(settings),
   letterRoutes(settings),
+  measureRoutes(),
   questionnaireRoutes(),
   receivedLetterRoutes(),
   referralRoutes(),

@@ -1,0 +1,165 @@
+import { randomInt } from 'node:crypto'
+import { formatDay } from '../../shared/days.ts'
+import { seedLimit, type MeasureDraft, type MeasureStart } from '../../shared/measureSchemas.ts'
+import { emptyDetails, lockProblems, methodVersions, scoreMeasure } from '../../shared/measureScores.ts'
+import { measureKindLabels, type MeasureDetails } from '../../shared/measures.ts'
+import type { Actor } from '../access/actor.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { now } from '../clock.ts'
+import type { Tx } from '../dataSource.ts'
+import { Measure } from '../entities/Measure.ts'
+import { conflict, invalid } from '../errors.ts'
+import { lockChild } from '../queries/lockChild.ts'
+import { findMeasure, openMeasureOf, type MeasureRecord } from '../queries/measures.ts'
+import { findForChild } from '../queries/scope.ts'
+import { selectOne } from '../queries/sql.ts'
+import type { AuditFact } from './audit.ts'
+import { createOnce } from './once.ts'
+import { requireConsent, requirePastDay } from './recordRules.ts'
+import { transact } from './transact.ts'
+import { updateIfCurrent } from './versions.ts'
+
+const fact = (access: ChildAccess, action: string, id: string): AuditFact => ({
+  action: `measure.${action}`,
+  objectType: 'measure',
+  objectId: id,
+  childId: access.childId,
+  relation: access.relation,
+})
+
+const closed = () =>
+  conflict(
+    'closed',
+    'This measure is locked and stays as it is. To correct it, start a new version that replaces it.',
+  )
+
+/** The measure for writing; locked ones are refused here and, should this ever fail, by a trigger. */
+const openMeasure = async (tx: Tx, access: ChildAccess, id: string): Promise<Measure> => {
+  const measure = await findForChild(access, Measure, id, tx, { lock: true })
+  if (measure.lockedAt !== null) throw closed()
+  return measure
+}
+
+/** The locked measure that a new version corrects. */
+const replacedBy = async (tx: Tx, access: ChildAccess, { kind, replacesId }: MeasureStart) => {
+  if (replacesId === null) return null
+  const earlier = await findForChild(access, Measure, replacesId, tx, { lock: true })
+  if (earlier.kind !== kind)
+    throw invalid({ replacesId: 'The earlier measure is of another kind, so it cannot be replaced by this.' })
+  if (earlier.lockedAt === null)
+    throw conflict('not_locked', 'Only a locked measure is replaced. This one can still be changed.')
+  // A locking read: the newest row counts, not the one this transaction saw first.
+  const newer = await selectOne(
+    'SELECT id FROM measures WHERE replacesId = :replacesId FOR UPDATE',
+    { replacesId },
+    tx,
+  )
+  if (newer) throw conflict('duplicate', 'A version that replaces this one was already begun. Open that one.')
+  return earlier
+}
+
+/** Two people who begin the same part for the same day are told, so that one occasion has one record. */
+const refuseSecond = async (tx: Tx, access: ChildAccess, { kind, measuredOn }: MeasureStart) => {
+  const open = await openMeasureOf(access, kind, measuredOn, tx)
+  if (!open) return
+  const what = `${measureKindLabels[kind]} of ${formatDay(measuredOn)}`
+  throw conflict(
+    'duplicate',
+    `${what} was already begun by ${open.startedBy}. Open that one and go on there.`,
+  )
+}
+
+/**
+ * Begins a measure with nothing recorded; the order of cards is drawn here. A new version of a locked measure begins with
+ * what that one holds, to be corrected. Answers its id.
+ */
+export const startMeasure = async (
+  actor: Actor,
+  access: ChildAccess,
+  start: MeasureStart,
+  key: string | null,
+): Promise<string> => {
+  await requirePastDay(access, 'measuredOn', 'The date', start.measuredOn)
+  return transact(actor, (tx, record) => {
+    const request = ['measure', access.childId, start]
+    const factOf = (id: string) => fact(access, 'started', id)
+    return createOnce(tx, actor, record, { key, request }, factOf, async (newId) => {
+      await requireConsent(tx, access, 'assessment_treatment')
+      await lockChild(access, tx)
+      const earlier = await replacedBy(tx, access, start)
+      await refuseSecond(tx, access, start)
+      await tx.insert(Measure, {
+        id: newId,
+        childId: access.childId,
+        kind: start.kind,
+        methodVersion: methodVersions[start.kind],
+        measuredOn: start.measuredOn,
+        details: earlier
+          ? earlier.details
+          : emptyDetails(start.kind, start.options ?? {}, randomInt(seedLimit)),
+        score: null,
+        notDoneReason: earlier ? earlier.notDoneReason : null,
+        comment: earlier ? earlier.comment : null,
+        startedById: access.viewer.id,
+        lockedAt: null,
+        lockedById: null,
+        replacesId: start.replacesId,
+        createdAt: now(),
+      })
+    })
+  })
+}
+
+/** What was drawn or chosen when the measure began stays as it was. */
+const checkSame = (before: MeasureDetails, after: MeasureDetails): void => {
+  if (before.kind !== after.kind)
+    throw invalid({ details: 'This measure is of another kind. Reload the page.' })
+  if (before.kind !== 'reaching' || after.kind !== 'reaching') return
+  if (before.seed !== after.seed || before.cardsPerPlace !== after.cardsPerPlace)
+    throw invalid({ details: 'The cards of this occasion were drawn in another order. Reload the page.' })
+}
+
+/** Saves the trials so far and answers them as this save left them. Throws StaleWrite when somebody saved in between. */
+export const saveMeasure = async (
+  actor: Actor,
+  access: ChildAccess,
+  id: string,
+  version: number,
+  { measuredOn, details, notDoneReason, comment }: MeasureDraft,
+): Promise<MeasureRecord> => {
+  await requirePastDay(access, 'measuredOn', 'The date', measuredOn)
+  return transact(actor, async (tx, record) => {
+    const measure = await openMeasure(tx, access, id)
+    checkSame(measure.details, details)
+    await updateIfCurrent(tx, Measure, id, version, { measuredOn, details, notDoneReason, comment })
+    record(fact(access, 'changed', id))
+    return findMeasure(access, id, tx)
+  })
+}
+
+/**
+ * Locks a measure and stores its score with the version of the method, computed here from the stored trials: no figure of
+ * the browser is used. Something must be recorded, or a reason given why it was not done. Throws StaleWrite.
+ */
+export const lockMeasure = (actor: Actor, access: ChildAccess, id: string, version: number): Promise<void> =>
+  transact(actor, async (tx, record) => {
+    const { kind, details, notDoneReason } = await openMeasure(tx, access, id)
+    await requireConsent(tx, access, 'assessment_treatment')
+    const problems = lockProblems(details, notDoneReason)
+    if (Object.keys(problems).length > 0) throw invalid(problems)
+    await updateIfCurrent(tx, Measure, id, version, {
+      methodVersion: methodVersions[kind],
+      score: scoreMeasure(details),
+      lockedAt: now(),
+      lockedById: access.viewer.id,
+    })
+    record(fact(access, 'locked', id))
+  })
+
+/** Removes a measure that was begun and never locked. */
+export const discardMeasure = (actor: Actor, access: ChildAccess, id: string): Promise<void> =>
+  transact(actor, async (tx, record) => {
+    await openMeasure(tx, access, id)
+    await tx.delete(Measure, id)
+    record(fact(access, 'discarded', id))
+  })
