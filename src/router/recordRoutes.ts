@@ -31,6 +31,13 @@ export const recordRoutes: RouteRecordRaw[] = [
     meta: { title: 'Conclusion' },
   },
   {
+    name: 'measure',
+    path: 'measures/:measureId',
+    props: true,
+    component: () => import('@/views/measures/MeasureView.vue'),
+    meta: { title: 'Measure' },
+  },
+  {
     name: 'child-handwriting',
     path: 'handwriting',
     props: true,
