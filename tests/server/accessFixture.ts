@@ -146,6 +146,15 @@ export const accessRows: readonly AccessRow[] = [
   child('GET …/writing-observations', ['T1', 'L']),
   child('POST …/writing-observations', ['T1'], ['L']),
 
+  // Measures are observations: taken and locked by the therapist, read by the lead. Discarding one that was begun and
+  // never locked is read as part of U.
+  child('GET …/measures', ['T1', 'L']),
+  child('POST …/measures', ['T1'], ['L']),
+  child('GET …/measures/:id', ['T1', 'L']),
+  child('PUT …/measures/:id', ['T1'], ['L']),
+  child('DELETE …/measures/:id', ['T1'], ['L']),
+  child('POST …/measures/:id/lock', ['T1'], ['L']),
+
   // Session notes: a draft is its author's; a signed one takes addenda and countersignatures of therapist and lead
   child('GET …/session-notes', ['T1', 'L']),
   child('POST …/session-notes', ['T1'], ['L']),

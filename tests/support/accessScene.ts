@@ -15,6 +15,7 @@ import { signedInAs } from './app.ts'
 import { buildAdvice, buildAlert, buildReferral, buildReply } from './clinicRows.ts'
 import { buildChild, buildClass, buildGuardian, buildUser, giveConsent } from './factories.ts'
 import { insertRow } from './insertRow.ts'
+import { buildMeasure } from './measures.ts'
 import { buildGoal, buildNote, buildObservation, buildQuestionnaire, buildSample } from './records.ts'
 import { buildTask } from './tasks.ts'
 import { buildDelivery, buildLetter, letterText } from './storedLetters.ts'
@@ -134,6 +135,7 @@ const fillRecord = async (of: SceneChild, teacher: User, office: User, picture: 
   if (!carer) throw new Error('Every child of the scene has a carer')
   await buildQuestionnaire(child, therapist, { locked: false, comment: `Commentword${key}` })
   await buildQuestionnaire(child, therapist, { locked: true, comment: `Commentword${key}` })
+  await buildMeasure(child, therapist, { locked: true, kind: 'sides', comment: `Commentword${key}` })
   await buildObservation(child, therapist, { note: `Observedword${key}` })
   await buildNote(child, therapist, 'draft', { said: `Saidword${key}`, plan: `Planword${key}` })
   await buildNote(child, therapist, 'signed', { plan: `Signedword${key}` })

@@ -6,13 +6,21 @@ import { accountCalls } from './accessCalls/account.ts'
 import type { Call, Calls } from './accessCalls/call.ts'
 import { childCalls } from './accessCalls/child.ts'
 import { letterCalls } from './accessCalls/letters.ts'
+import { measureCalls } from './accessCalls/measures.ts'
 import { recordCalls } from './accessCalls/record.ts'
 import { roomCalls } from './accessCalls/rooms.ts'
 import { parts, personKeys, standingOf, type ChildKey, type PersonKey } from './accessPeople.ts'
 import { childOf, personOf, type Scene } from './accessScene.ts'
 import type { Answer, Wire } from './accessWire.ts'
 
-const calls: Calls = { ...accountCalls, ...childCalls, ...recordCalls, ...letterCalls, ...roomCalls }
+const calls: Calls = {
+  ...accountCalls,
+  ...childCalls,
+  ...recordCalls,
+  ...measureCalls,
+  ...letterCalls,
+  ...roomCalls,
+}
 
 /** Names of parameters do not matter: only where they stand. */
 export const routeKey = (route: string) => route.replace(/:\w+/g, ':id')
