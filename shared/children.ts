@@ -4,6 +4,7 @@ import { dayField, optionalDayField, type Day } from './days.ts'
 import type { EpisodeState, StateChangeView } from './episodes.ts'
 import { body, choice, optionalChoice, optionalId, optionalText, text } from './fields.ts'
 import type { LateralLineRow } from './lateralLine.ts'
+import type { RedFlagUrgency } from './redFlagRows.ts'
 import { scriptDirections, type ReferralConcern, type ScriptDirection } from './referrals.ts'
 import type { ChildRelation } from './roles.ts'
 
@@ -52,7 +53,19 @@ export interface ChildHeader {
   /** Null for an administrator, who sees identity and contact only. */
   state: EpisodeState | null
   therapist: string | null
-  alerts: { id: string; text: string; level: Attention; raisedAt: string }[]
+  alerts: {
+    id: string
+    text: string
+    level: Attention
+    urgency: RedFlagUrgency
+    /** What is usually done; null where the text says it. */
+    advice: string | null
+    raisedAt: string
+  }[]
+  /** What the clinic tells families to do in an emergency, while a sign that needs help the same day is open. */
+  emergencyText: string | null
+  /** The age counted from the due date, for a young child born early; null where it is not used. */
+  correctedAge: string | null
   /** Sections of the record this viewer may open. */
   sections: RecordSection[]
   /** Another child with the same name is on the register: tell them apart by birth date and record number. */

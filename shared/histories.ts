@@ -267,6 +267,8 @@ export interface HistoryView {
   details: HistoryDetails
   /** Ids of the questions without an answer. */
   missing: string[]
+  /** Clinic setting: months since birth below which an age is counted from the due date. */
+  correctedUntilMonths: number
   lockedAt: string | null
   lockedBy: string | null
   replacesId: string | null

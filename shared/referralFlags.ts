@@ -1,5 +1,6 @@
 import type { Attention } from './attention.ts'
 import { ageInMonths, ageInYears, isDay, type Day } from './days.ts'
+import type { RedFlagUrgency } from './redFlagRows.ts'
 import type { ReferralConcern } from './referrals.ts'
 
 /*
@@ -25,6 +26,7 @@ export interface ReferralFlag {
   /** What was noticed and what is usually done, for the person who decides. */
   text: string
   level: Attention
+  urgency: RedFlagUrgency
   /** The words of the referral that raised it; null when an answer or the age did. */
   words: string | null
 }
@@ -36,46 +38,54 @@ interface FlaggedReferral {
   receivedOn: Day | null
 }
 
-const texts: Record<ReferralFlagId, { text: string; level: Attention }> = {
+const texts: Record<ReferralFlagId, { text: string; level: Attention; urgency: RedFlagUrgency }> = {
   // New one-sided weakness in a child is an emergency even after a fall: Bhate & Ganesan 2015 (acute hemiparesis).
   new_weakness: {
     text: 'Possible new weakness, numbness, drooping face, headache or seizure. Do not wait for an appointment: same-day medical advice, or the emergency number if it is new or getting worse, even after a fall.',
     level: 'overdue',
+    urgency: 'same_day',
   },
   // NICE NG127 (2019): hand preference before one year, corrected for early birth, is a reason to refer.
   preference_before_12_months: {
     text: 'One hand preferred before 12 months (counted from the due date if born early). Usual step: priority, and a referral to the child development service before therapy is planned.',
     level: 'overdue',
+    urgency: 'priority',
   },
   // Evidence for the stretch between 12 and 18 months is weak: asking is the usual step.
   preference_12_to_18_months: {
     text: 'One hand preferred between 12 and 18 months. Usual step: ask about a weaker or stiffer side, a fisted hand and late milestones, then decide.',
     level: 'due',
+    urgency: 'ask',
   },
   // NICE NG127 (2019): fisting, one-sided use and loss of a skill.
   other_hand_little_used: {
     text: 'One hand hardly used, held in a fist, dropping things, or a skill lost. Usual step: medical review first, no routine block.',
     level: 'overdue',
+    urgency: 'medical_review',
   },
   // Common practice, from memory: cause and date are recorded, a doctor looks at it.
   change_of_hand: {
     text: 'A change of hand, or an injury or plaster of the arm. Usual step: write down date and cause, ask for a medical review, plan the way back.',
     level: 'due',
+    urgency: 'medical_review',
   },
   // Common practice, from memory.
   pain: {
     text: 'Pain when writing. Usual step: ask how strong it is from 0 to 10; from 4 on it is looked at soon and the child’s welfare is kept in mind.',
     level: 'due',
+    urgency: 'safeguarding',
   },
   // Common practice, from memory; no hand is ever changed on this clinic's advice.
   pressure_to_switch: {
     text: 'Pressure or punishment for using the left hand. Usual step: think about the child’s welfare under the local safeguarding procedure, and advise home and school to leave the hand as it is.',
     level: 'due',
+    urgency: 'safeguarding',
   },
   // Common practice, from memory.
   swaps_from_six: {
     text: 'Hand not settled at six or older. Usual step: full assessment, and ask whether anybody has asked the child to change hands.',
     level: 'soon',
+    urgency: 'ask',
   },
 }
 

@@ -22,6 +22,7 @@ export const settingsSchema = body({
   untriagedWorkingDays: days('the time to first look', 1, 60),
   unsignedSoonHours: days('the first limit for unsigned notes', 1, 240),
   unsignedOverdueHours: days('the second limit for unsigned notes', 1, 480),
+  correctedUntilMonths: days('how long the corrected age is used', 0, 36),
   cutOffSet: choice(
     'a cut-off set',
     cutOffSets.map((set) => set.id),

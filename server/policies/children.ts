@@ -26,7 +26,6 @@ export const childPolicies = {
     'administrator',
     'guardian',
   ]),
-  actOnAlert: childPolicy('alert.act', clinicians, 'write', notClinicians),
 }
 
 /** Sections of the record that this relation may open; an administrator sees family and consents, nothing clinical. */

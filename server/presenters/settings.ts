@@ -16,6 +16,7 @@ export const presentSettings = (
   untriagedWorkingDays: settings.untriagedWorkingDays,
   unsignedSoonHours: settings.unsignedSoonHours,
   unsignedOverdueHours: settings.unsignedOverdueHours,
+  correctedUntilMonths: settings.correctedUntilMonths,
   cutOffSet: settings.cutOffSet,
   emergencyText: settings.emergencyText,
   version,

@@ -1,6 +1,7 @@
 import type { Router } from 'express'
 import { answerLinkRoutes } from './answerLinks.ts'
 import { answerRequestRoutes } from './answerRequests.ts'
+import { alertRoutes } from './alerts.ts'
 import { auditEntryRoutes } from './auditEntries.ts'
 import { caseloadRoutes } from './caseload.ts'
 import { childRoutes } from './children.ts'
@@ -9,6 +10,7 @@ import { consentRoutes } from './consents.ts'
 import { familyRoutes } from './family.ts'
 import { goalRoutes } from './goals.ts'
 import { guardianRoutes } from './guardians.ts'
+import { historyRoutes } from './histories.ts'
 import { letterRoutes } from './letters.ts'
 import { measureRoutes } from './measures.ts'
 import { questionnaireRoutes } from './questionnaires.ts'
@@ -35,6 +37,7 @@ export const nounRoutes = (settings: RouteSettings): Router[] => [
   answerLinkRoutes(),
   // Before classRoutes, where /pupils/to-answer would be a child's id.
   answerRequestRoutes(settings),
+  alertRoutes(),
   auditEntryRoutes(),
   caseloadRoutes(),
   childRoutes(),
@@ -43,6 +46,7 @@ export const nounRoutes = (settings: RouteSettings): Router[] => [
   familyRoutes(),
   goalRoutes(),
   guardianRoutes(settings),
+  historyRoutes(),
   letterRoutes(settings),
   measureRoutes(),
   questionnaireRoutes(),

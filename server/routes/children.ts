@@ -1,5 +1,4 @@
 import { Router, type Request } from 'express'
-import { alertActionSchema } from '../../shared/alerts.ts'
 import { allocationSchema, careSchema, childIdentitySchema } from '../../shared/children.ts'
 import { stateChangeSchema } from '../../shared/episodes.ts'
 import { notFound } from '../errors.ts'
@@ -24,7 +23,6 @@ import { findIdentity } from '../queries/children/identity.ts'
 import { findChildren, listRegister } from '../queries/children/lists.ts'
 import { findEpisode } from '../queries/episodes.ts'
 import { listQuestionnaires } from '../queries/questionnaires.ts'
-import { actOnAlert } from '../services/alerts.ts'
 import { recordAudit, recordChildRead } from '../services/audit.ts'
 import { allocate, changeCare, changeIdentity } from '../services/children.ts'
 import { changeState } from '../services/episodes.ts'
@@ -59,7 +57,7 @@ export const childRoutes = (): Router => {
       readSettings(),
     ])
     await recordChildRead(req.actor, access, 'child.header_read')
-    res.json(presentChildHeader(child, alerts, access, clinicToday(settings)))
+    res.json(presentChildHeader(child, alerts, access, settings, clinicToday(settings)))
   })
 
   router.get('/children/:childId/glance', allow(childPolicies.glance), async (req, res) => {
@@ -72,7 +70,7 @@ export const childRoutes = (): Router => {
       readSettings(),
     ])
     await recordChildRead(req.actor, access, 'child.glance_read')
-    res.json(presentGlance({ child, last, lists, questionnaires }, access, clinicToday(settings)))
+    res.json(presentGlance({ child, last, lists, questionnaires }, access, settings, clinicToday(settings)))
   })
 
   const identity = '/children/:childId/identity'
@@ -128,16 +126,6 @@ export const childRoutes = (): Router => {
     await allocate(req.actor, accessOf(req), await bodyOf(req, allocationSchema))
     res.status(204).end()
   })
-
-  router.post(
-    '/children/:childId/alerts/:alertId/action',
-    allow(childPolicies.actOnAlert),
-    async (req, res) => {
-      const action = await bodyOf(req, alertActionSchema)
-      await actOnAlert(req.actor, accessOf(req), String(req.params.alertId), action)
-      res.status(204).end()
-    },
-  )
 
   return router
 }

@@ -1,8 +1,9 @@
 import { randomUUID } from 'node:crypto'
 import { IsNull } from 'typeorm'
 import type { Attention } from '../../shared/attention.ts'
-import type { AlertAction } from '../../shared/alerts.ts'
+import type { AlertAction, AlertRaised } from '../../shared/alerts.ts'
 import { addWorkingDays, type Day } from '../../shared/days.ts'
+import { redFlagRows, type RedFlagUrgency } from '../../shared/redFlagRows.ts'
 import type { ReferralFlag } from '../../shared/referralFlags.ts'
 import { alertTask } from '../../shared/tasks.ts'
 import type { Actor } from '../access/actor.ts'
@@ -14,6 +15,8 @@ import { Task } from '../entities/Task.ts'
 import { conflict } from '../errors.ts'
 import { findForChild } from '../queries/scope.ts'
 import type { AuditFact } from './audit.ts'
+import { createOnce } from './once.ts'
+import { askToLook, insertAlert } from './redFlags.ts'
 import { addTask } from './tasks.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -31,6 +34,8 @@ export interface NewAlert {
   /** What was noticed and what is usually done. */
   text: string
   level: Attention
+  /** What it calls for; left out, a pressing sign asks for a medical review and any other for a look. */
+  urgency?: RedFlagUrgency
   /** What somebody must do about it. */
   task: string
 }
@@ -42,7 +47,7 @@ export interface NewAlert {
 export const raiseAlert = async (
   tx: Tx,
   record: (fact: AuditFact) => void,
-  { childId, therapistId, today, flag, text, level, task }: NewAlert,
+  { childId, therapistId, today, flag, text, level, urgency, task }: NewAlert,
 ): Promise<void> => {
   const id = randomUUID()
   await tx.insert(Alert, {
@@ -51,7 +56,7 @@ export const raiseAlert = async (
     flag,
     text,
     level,
-    urgency: level === 'overdue' ? 'medical_review' : 'ask',
+    urgency: urgency ?? (level === 'overdue' ? 'medical_review' : 'ask'),
     advice: null,
     origin: 'referral',
     originId: null,
@@ -90,6 +95,7 @@ export const raiseReferralFlags = async (
       flag: flag.id,
       text: wordsOf(flag),
       level: flag.level,
+      urgency: flag.urgency,
       task: 'A warning sign stands on the referral: look at it and write down what was done',
     })
 }
@@ -126,5 +132,30 @@ export const actOnAlert = (
       objectId: id,
       childId: access.childId,
       relation: access.relation,
+    })
+  })
+
+/** Puts a sign on the record that a therapist or the lead saw or was told, with its row of the clinic's table. */
+export const raiseByHand = (
+  actor: Actor,
+  { childId, relation, viewer }: ChildAccess,
+  { flag, words }: AlertRaised,
+  key: string | null,
+): Promise<string> =>
+  transact(actor, (tx, record) => {
+    const factOf = (id: string): AuditFact => ({
+      action: 'alert.raised_by_hand',
+      objectType: 'alert',
+      objectId: id,
+      childId,
+      relation,
+      detail: { flag },
+    })
+    const request = ['alert', childId, { flag, words }]
+    return createOnce(tx, actor, record, { key, request }, factOf, async (id) => {
+      const row = redFlagRows[flag]
+      const from = { id, childId, origin: 'therapist', originId: null, raisedById: viewer.id } as const
+      await insertAlert(tx, from, { ...row, words })
+      await askToLook(tx, childId, [row])
     })
   })

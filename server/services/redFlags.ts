@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import type { AlertOrigin } from '../../shared/alerts.ts'
 import { addWorkingDays, compareDays, type Day } from '../../shared/days.ts'
-import { attentionOf } from '../../shared/redFlagRows.ts'
+import { attentionOf, type RedFlagRow } from '../../shared/redFlagRows.ts'
 import type { RedFlag } from '../../shared/redFlags.ts'
 import { alertTask } from '../../shared/tasks.ts'
 import { now } from '../clock.ts'
@@ -74,23 +74,25 @@ export const raiseFlags = async (
       touched.push(open.id)
       continue
     }
-    touched.push(await insertAlert(tx, record, { childId, origin, originId, raisedById }, flag))
+    const id = randomUUID()
+    await insertAlert(tx, { id, childId, origin, originId, raisedById }, flag)
+    const detail = { flag: flag.id, origin }
+    record({ action: 'alert.raised', objectType: 'alert', objectId: id, childId, detail })
+    touched.push(id)
     raised.push(flag)
   }
   if (raised.length > 0) await askToLook(tx, childId, raised)
   return touched
 }
 
-const insertAlert = async (
+/** One alert with the urgency, the advice and the hold of its row; the caller records it. */
+export const insertAlert = async (
   tx: Tx,
-  record: (fact: AuditFact) => void,
-  from: Pick<RaisedFlags, 'childId' | 'origin' | 'originId' | 'raisedById'>,
-  flag: RedFlag,
-): Promise<string> => {
-  const id = randomUUID()
+  from: Pick<RaisedFlags, 'childId' | 'origin' | 'originId' | 'raisedById'> & { id: string },
+  flag: RedFlagRow & { words: string },
+): Promise<void> => {
   await tx.insert(Alert, {
     ...from,
-    id,
     flag: flag.id,
     text: flag.words,
     level: attentionOf[flag.urgency],
@@ -102,18 +104,14 @@ const insertAlert = async (
     actedById: null,
     action: null,
   })
-  record({
-    action: 'alert.raised',
-    objectType: 'alert',
-    objectId: id,
-    childId: from.childId,
-    detail: { flag: flag.id, origin: from.origin },
-  })
-  return id
 }
 
 /** One open task is enough for all signs of a child, as long as it is due early enough for the newest. */
-const askToLook = async (tx: Tx, childId: string, flags: readonly RedFlag[]): Promise<void> => {
+export const askToLook = async (
+  tx: Tx,
+  childId: string,
+  flags: readonly Pick<RedFlagRow, 'urgency'>[],
+): Promise<void> => {
   const today = clinicToday(await readSettings())
   const pressing = flags.some(({ urgency }) => attentionOf[urgency] === 'overdue')
   const dueOn: Day = pressing ? today : addWorkingDays(today, daysToLook)

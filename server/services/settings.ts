@@ -19,6 +19,7 @@ export const firstSettings: ClinicSettings = {
   untriagedWorkingDays: 10,
   unsignedSoonHours: 24,
   unsignedOverdueHours: 48,
+  correctedUntilMonths: 24,
   cutOffSet: 'clinic-40',
   emergencyText:
     'If a child is suddenly unwell or weak on one side, call the emergency number of your country at once.',

@@ -1,11 +1,15 @@
+import { ageInMonths } from '../../shared/days.ts'
+import { redFlagsOfObservation } from '../../shared/redFlagSources.ts'
 import type { WritingObservationDetails } from '../../shared/writingObservations.ts'
 import type { Actor } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { WritingObservation } from '../entities/WritingObservation.ts'
 import { invalid } from '../errors.ts'
+import { findChildFacts } from '../queries/childFacts.ts'
 import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
+import { raiseFlags } from './redFlags.ts'
 import { transact } from './transact.ts'
 
 const nothingSeen = ({ observedOn: _day, ...seen }: WritingObservationDetails): boolean =>
@@ -39,6 +43,17 @@ export const addObservation = async (
         details,
         observedById: access.viewer.id,
         recordedAt: now(),
+      })
+      const { birthDate, writingHand } = await findChildFacts(access, tx)
+      await raiseFlags(tx, record, {
+        childId: access.childId,
+        origin: 'observation',
+        originId: observationId,
+        flags: redFlagsOfObservation(details, {
+          ageMonths: ageInMonths(birthDate, details.observedOn),
+          writingHand,
+        }),
+        raisedById: access.viewer.id,
       })
     })
   })

@@ -22,6 +22,8 @@ const child: ChildHeader = {
   state: 'active',
   therapist: 'Hedda Holder',
   alerts: [],
+  emergencyText: null,
+  correctedAge: null,
   sections: ['letters'],
   namesake: false,
   can: { writeNote: true, startLetter: true },

@@ -3,6 +3,7 @@ import { consentPurposeLabels, type ConsentPurpose } from '../../../shared/conse
 import type { Day } from '../../../shared/days.ts'
 import { isOpen } from '../../../shared/episodes.ts'
 import { lettersPerMinute, percentLegible } from '../../../shared/handwriting.ts'
+import type { ClinicSettings } from '../../../shared/settings.ts'
 import { attentionLevels } from '../../../shared/attention.ts'
 import { dueLevel } from '../../../shared/tasks.ts'
 import type { ChildAccess } from '../../access/childAccess.ts'
@@ -41,12 +42,17 @@ export interface GlanceFacts {
   questionnaires: readonly QuestionnaireRecord[]
 }
 
-export const presentGlance = (facts: GlanceFacts, access: ChildAccess, today: Day): GlanceView => {
+export const presentGlance = (
+  facts: GlanceFacts,
+  access: ChildAccess,
+  settings: ClinicSettings,
+  today: Day,
+): GlanceView => {
   const { child, last, lists, questionnaires } = facts
   const choices = stateChoices(access, child.state)
   const open = child.state !== null && isOpen(child.state)
   return {
-    child: presentChildHeader(child, lists.alerts, access, today),
+    child: presentChildHeader(child, lists.alerts, access, settings, today),
     writingHand: child.writingHand,
     strengths: child.strengths,
     scriptDirection: child.scriptDirection,

@@ -5,7 +5,9 @@ import type {
   FoundChild,
   RegisterRow,
 } from '../../../shared/children.ts'
+import { correctedAgeText } from '../../../shared/correctedAge.ts'
 import { formatAge, type Day } from '../../../shared/days.ts'
+import type { ClinicSettings } from '../../../shared/settings.ts'
 import type { ChildAccess } from '../../access/childAccess.ts'
 import { canChangeIdentity, sectionsFor, seesClinicalFields } from '../../policies/children.ts'
 import { canStartLetter } from '../../policies/letters.ts'
@@ -27,6 +29,7 @@ export const presentChildHeader = (
   child: ChildFactsRow,
   alerts: readonly AlertRow[],
   access: ChildAccess,
+  settings: ClinicSettings,
   today: Day,
 ): ChildHeader => {
   const clinical = seesClinicalFields(access)
@@ -47,8 +50,25 @@ export const presentChildHeader = (
     state: clinical ? child.state : null,
     therapist: child.therapist,
     alerts: clinical
-      ? alerts.map(({ id, text, level, raisedAt }) => ({ id, text, level, raisedAt: raisedAt.toISOString() }))
+      ? alerts.map(({ id, text, level, urgency, advice, raisedAt }) => ({
+          id,
+          text,
+          level,
+          urgency,
+          advice,
+          raisedAt: raisedAt.toISOString(),
+        }))
       : [],
+    emergencyText:
+      clinical && alerts.some(({ urgency }) => urgency === 'same_day') ? settings.emergencyText : null,
+    correctedAge: clinical
+      ? correctedAgeText({
+          birth: child.birthDate,
+          on: today,
+          gestationWeeks: child.gestationWeeks,
+          limitMonths: settings.correctedUntilMonths,
+        })
+      : null,
     sections: sectionsFor(access.relation),
     namesake: child.namesake,
     can: { writeNote: canCreateNote(access), startLetter: canStartLetter(access) },

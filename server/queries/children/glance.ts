@@ -2,6 +2,7 @@ import type { Attention } from '../../../shared/attention.ts'
 import type { Day } from '../../../shared/days.ts'
 import type { EpisodeState } from '../../../shared/episodes.ts'
 import type { LetterState } from '../../../shared/letters.ts'
+import type { RedFlagUrgency } from '../../../shared/redFlagRows.ts'
 import type { Role } from '../../../shared/roles.ts'
 import type { NoteState } from '../../../shared/sessionNotes.ts'
 import type { ChildAccess } from '../../access/childAccess.ts'
@@ -92,7 +93,7 @@ interface GlanceLine {
 export const listForGlance = async (access: ChildAccess): Promise<GlanceLists> => {
   const scope = (column: string) => within(access, column).sql
   const lines = await selectRows<GlanceLine>(
-    `SELECT 'alerts' AS kind, CAST(a.id AS CHAR) AS id, a.text, a.level AS one, NULL AS two, NULL AS three, CAST(NULL AS DATE) AS day, a.raisedAt AS at
+    `SELECT 'alerts' AS kind, CAST(a.id AS CHAR) AS id, a.text, a.level AS one, a.urgency AS two, a.advice AS three, CAST(NULL AS DATE) AS day, a.raisedAt AS at
        FROM alerts a WHERE a.actedAt IS NULL AND ${scope('a.childId')}
      UNION ALL SELECT 'tasks', CAST(t.id AS CHAR), t.text, CAST(t.assigneeId AS CHAR), t.forRole, t.kind, t.dueOn, t.createdAt
        FROM tasks t WHERE t.doneAt IS NULL AND ${scope('t.childId')}
@@ -107,8 +108,19 @@ export const listForGlance = async (access: ChildAccess): Promise<GlanceLists> =
   )
   const of = (kind: keyof GlanceLists) => lines.filter((line) => line.kind === kind)
   return {
-    alerts: of('alerts').flatMap(({ id, text, one, at }) =>
-      at === null ? [] : [{ id, text, level: one as Attention, raisedAt: at }],
+    alerts: of('alerts').flatMap(({ id, text, one, two, three, at }) =>
+      at === null
+        ? []
+        : [
+            {
+              id,
+              text,
+              level: one as Attention,
+              urgency: two as RedFlagUrgency,
+              advice: three,
+              raisedAt: at,
+            },
+          ],
     ),
     tasks: of('tasks').flatMap(({ id, text, one, two, three, day }) =>
       three === null

@@ -3,6 +3,7 @@ import type { WritingHand } from '../../../shared/children.ts'
 import type { ConsentPurpose } from '../../../shared/consents.ts'
 import type { Day } from '../../../shared/days.ts'
 import type { EpisodeState } from '../../../shared/episodes.ts'
+import type { RedFlagUrgency } from '../../../shared/redFlagRows.ts'
 import type { ReferralConcern, ScriptDirection } from '../../../shared/referrals.ts'
 import type { ChildAccess } from '../../access/childAccess.ts'
 import { now } from '../../clock.ts'
@@ -40,12 +41,18 @@ export interface ChildFactsRow {
   receivedOn: Day | null
   reason: string | null
   concerns: ReferralConcern[]
+  /** Of the newest history that says it; completed weeks. */
+  gestationWeeks: number | null
   consentsInForce: ConsentPurpose[]
 }
 
 type Flags = 'lookedAfter' | 'consentsForSelf' | 'courtOrder' | 'namesake'
-type StoredFacts = Omit<ChildFactsRow, Flags | 'concerns' | 'consentsInForce'> &
-  Record<Flags, number> & { concerns: string | null; consentsInForce: string | null }
+type StoredFacts = Omit<ChildFactsRow, Flags | 'concerns' | 'gestationWeeks' | 'consentsInForce'> &
+  Record<Flags, number> & {
+    concerns: string | null
+    gestationWeeks: string | null
+    consentsInForce: string | null
+  }
 
 /** Identity, school, latest episode with its referral, and what marks the head of a record; one query. */
 export const findChildHead = async (access: ChildAccess): Promise<ChildFactsRow> => {
@@ -60,6 +67,9 @@ export const findChildHead = async (access: ChildAccess): Promise<ChildFactsRow>
          AND o.givenName = c.givenName) AS namesake,
        e.id AS episodeId, e.version AS episodeVersion, e.state, e.receivedOn,
        JSON_VALUE(r.details, '$.reason') AS reason, JSON_QUERY(r.details, '$.concerns') AS concerns,
+       (SELECT JSON_VALUE(h.details, '$.gestationWeeks') FROM histories h WHERE h.childId = c.id
+         AND JSON_VALUE(h.details, '$.gestationWeeks') IS NOT NULL
+         ORDER BY h.answeredOn DESC, h.createdAt DESC, h.id LIMIT 1) AS gestationWeeks,
        (SELECT GROUP_CONCAT(DISTINCT f.purpose) FROM consents f WHERE f.childId = c.id
          AND ${consentHolds('f')}) AS consentsInForce
      FROM children c LEFT JOIN school_classes k ON k.id = c.schoolClassId LEFT JOIN schools s ON s.id = k.schoolId
@@ -74,6 +84,7 @@ export const findChildHead = async (access: ChildAccess): Promise<ChildFactsRow>
     consentsForSelf: flag(row.consentsForSelf),
     courtOrder: flag(row.courtOrder),
     namesake: flag(row.namesake),
+    gestationWeeks: row.gestationWeeks === null ? null : Number(row.gestationWeeks),
     concerns: row.concerns === null ? [] : fromJson<ReferralConcern[]>(row.concerns),
     consentsInForce: row.consentsInForce === null ? [] : (row.consentsInForce.split(',') as ConsentPurpose[]),
   }
@@ -83,6 +94,8 @@ export interface AlertRow {
   id: string
   text: string
   level: Attention
+  urgency: RedFlagUrgency
+  advice: string | null
   raisedAt: Date
 }
 
@@ -90,8 +103,9 @@ export interface AlertRow {
 export const listOpenAlerts = (access: ChildAccess): Promise<AlertRow[]> => {
   const scope = within(access, 'a.childId')
   return selectRows<AlertRow>(
-    `SELECT a.id, a.text, a.level, a.raisedAt FROM alerts a WHERE a.actedAt IS NULL AND ${scope.sql}
-     ORDER BY FIELD(a.level, 'overdue', 'due', 'soon'), a.raisedAt, a.id`,
+    `SELECT a.id, a.text, a.level, a.urgency, a.advice, a.raisedAt FROM alerts a
+     WHERE a.actedAt IS NULL AND ${scope.sql}
+     ORDER BY a.urgency = 'same_day' DESC, FIELD(a.level, 'overdue', 'due', 'soon'), a.raisedAt, a.id`,
     scope.parameters,
   )
 }

@@ -12,6 +12,7 @@ export const clinicSettings: ClinicSettings = {
   untriagedWorkingDays: 10,
   unsignedSoonHours: 24,
   unsignedOverdueHours: 48,
+  correctedUntilMonths: 24,
   cutOffSet: 'clinic-40',
   emergencyText:
     'If a child is suddenly weak on one side, has a drooping face, a seizure or a sudden severe headache, call 999 at once. Do not wait for us.',
