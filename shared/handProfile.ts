@@ -1,7 +1,45 @@
 import { compareDays, type Day } from './days.ts'
 import { handUseStandingLabels, type HandUseScore } from './handUse.ts'
-import type { LateralLineRow } from './lateralLine.ts'
-import { informantLabels, type Informant } from './questionnaires.ts'
+import type { HandStatement } from './sideStatements.ts'
+import type { InformantComparison } from './informants.ts'
+import type { HandProfileRow, LateralLineRow } from './lateralLine.ts'
+import { measureRows, type LockedMeasure } from './measureRows.ts'
+import type { MeasureView } from './measures.ts'
+import type { MeasureComparison } from './measureOccasions.ts'
+import type { FormComparison } from './occasions.ts'
+import { questionnaireRows, type LockedResponse } from './questionnaireRows.ts'
+import { informantLabels, type Informant, type QuestionnaireView } from './questionnaires.ts'
+
+export interface HandProfileView {
+  /** Preference first, then reaching, skill, foot, eye and ear; newest first within a track. */
+  lateralLine: HandProfileRow[]
+  statements: HandStatement[]
+  /** Forms answered by at least two kinds of informant, side by side. */
+  informants: InformantComparison[]
+  /** Each form and each measure of the two newest occasions, item by item. */
+  occasions: { forms: FormComparison[]; measures: MeasureComparison[] }
+  questionnaires: QuestionnaireView[]
+  measures: MeasureView[]
+  /** Why nothing can be added now, in words; null when it can. */
+  blocked: string | null
+  can: { add: boolean }
+}
+
+/** Every row of the lateral line: what was answered first, then what was seen, then skill, foot, eye and ear. */
+export const handProfileRows = (
+  responses: readonly LockedResponse[],
+  measures: readonly LockedMeasure[],
+): HandProfileRow[] => {
+  const measured = measureRows(measures)
+  const of = (...aspects: HandProfileRow['aspect'][]) =>
+    measured.filter((row) => aspects.includes(row.aspect))
+  return [
+    ...questionnaireRows(responses),
+    ...of('reaching'),
+    ...of('skill'),
+    ...of('foot', 'eye_far', 'eye_near', 'ear'),
+  ]
+}
 
 /** A locked hand-use response that no later one replaces. */
 export interface LockedHandUse {
@@ -20,10 +58,14 @@ export function handUseRows(responses: readonly LockedHandUse[]): LateralLineRow
   )
   return newestFirst.map(({ id, answeredOn, informant, score }, index) => ({
     id,
+    aspect: 'preference' as const,
+    track: `hand-use-10|${informant}`,
     measure: 'Hand-use questionnaire',
     occasion: answeredOn,
     value: score.quotient,
+    side: score.direction === 'mixed' ? ('middle' as const) : score.direction,
     interval: null,
+    chance: null,
     basis: `${score.answered} of ${score.answered + score.doesNotDo + score.unanswered} activities answered`,
     caution: score.standing === 'scorable' ? null : handUseStandingLabels[score.standing],
     cutOffs: {
@@ -34,5 +76,6 @@ export function handUseRows(responses: readonly LockedHandUse[]): LateralLineRow
     },
     informant: informantLabels[informant],
     latest: index === 0,
+    source: { kind: 'questionnaire' as const, id },
   }))
 }

@@ -84,3 +84,10 @@ export const reliableChangeCautions: readonly string[] = [
     '(Provins & Cunliffe 1972, 20 people).',
   'Children get quicker with practice on pegs (Mathiowetz et al. 1985): some change is practice.',
 ]
+
+/** Whether a change is told from measurement error, and why (not). */
+export interface ReliableChangeNote {
+  used: boolean
+  why: string
+  cautions: string[]
+}
