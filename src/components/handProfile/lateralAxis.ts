@@ -1,39 +1,93 @@
-import { directionOf, handUseDirectionLabels } from '@shared/handUse.ts'
-import type { LateralLineRow } from '@shared/lateralLine.ts'
+import type { LateralAspect, LateralDetails, LateralLineRow } from '@shared/lateralLine.ts'
 
 export type Side = 'left' | 'right' | 'neither'
+
+/** A row of the line; where it opens down, with what it opens to. */
+export type OpeningRow = LateralLineRow & { opens?: LateralDetails }
 
 /** Where a value of −100 … +100 sits along the axis, as a percentage of its width (0 left, 100 right). */
 export const axisPosition = (value: number): number =>
   Math.round(((Math.min(100, Math.max(-100, value)) + 100) / 2) * 100) / 100
 
+/** How wide a band from one value to another is, as a percentage of the axis. */
+export const axisWidth = (low: number, high: number): number =>
+  Math.round((axisPosition(high) - axisPosition(low)) * 100) / 100
+
 /** Which way the half-petal points: by sign only, so the mark never hides a value between the cut-offs. */
 export const sideOf = (value: number): Side => (value < 0 ? 'left' : value > 0 ? 'right' : 'neither')
 
-/** The value in words: by the measure's own cut-offs where it has them, else by side alone. */
-export function sideWords(row: Pick<LateralLineRow, 'value' | 'cutOffs'>): string {
-  if (row.value === null) return 'Not scorable'
-  if (row.cutOffs) return handUseDirectionLabels[directionOf(row.value, row.cutOffs)]
-  return { left: 'To the left', right: 'To the right', neither: 'Neither side' }[sideOf(row.value)]
+const middleWords: Record<LateralAspect, string> = {
+  preference: 'Mixed',
+  reaching: 'Within chance',
+  skill: 'No clear difference',
+  foot: 'Mixed',
+  eye_far: 'Mixed',
+  eye_near: 'Mixed',
+  ear: 'Mixed',
+}
+
+/** The value in words, by the measure's own rule. Preference and skill are told in words of their own. */
+export function sideWords({
+  value,
+  side,
+  aspect,
+}: Pick<LateralLineRow, 'value' | 'side' | 'aspect'>): string {
+  if (value === null) return 'Not scorable'
+  if (side === null) return 'No side told'
+  if (side === 'middle') return middleWords[aspect]
+  const word = side === 'left' ? 'Left' : 'Right'
+  return aspect === 'skill' ? `${word} hand ahead` : word
 }
 
 export interface LateralTrack {
   id: string
+  aspect: LateralAspect
   measure: string
   informant: string | null
   /** Newest first. */
-  rows: LateralLineRow[]
+  rows: OpeningRow[]
 }
 
 /** One track for each measure and informant: what a parent said is never drawn as what a teacher said. */
-export function tracksOf(rows: readonly LateralLineRow[]): LateralTrack[] {
+export function tracksOf(rows: readonly OpeningRow[]): LateralTrack[] {
   const tracks = new Map<string, LateralTrack>()
   for (const row of rows) {
-    const key = `${row.measure}|${row.informant ?? ''}`
-    const track = tracks.get(key) ?? { id: key, measure: row.measure, informant: row.informant, rows: [] }
+    const { track: id, aspect, measure, informant } = row
+    const track = tracks.get(id) ?? { id, aspect, measure, informant, rows: [] }
     track.rows.push(row)
-    tracks.set(key, track)
+    tracks.set(id, track)
   }
-  for (const track of tracks.values()) track.rows.sort((a, b) => b.occasion.localeCompare(a.occasion))
+  for (const track of tracks.values())
+    track.rows.sort((a, b) => Number(b.latest) - Number(a.latest) || b.occasion.localeCompare(a.occasion))
   return [...tracks.values()]
 }
+
+export interface LateralGroup {
+  label: string
+  tracks: LateralTrack[]
+}
+
+const groupsInOrder: { label: string; aspects: readonly LateralAspect[] }[] = [
+  { label: 'Which hand is chosen', aspects: ['preference', 'reaching'] },
+  { label: 'How well each hand does', aspects: ['skill'] },
+  { label: 'Foot, eye and ear', aspects: ['foot', 'eye_far', 'eye_near', 'ear'] },
+]
+
+/** Preference, skill and the other sides, always apart and in this order; empty groups are left out. */
+export const lateralGroups = (rows: readonly OpeningRow[]): LateralGroup[] => {
+  const tracks = tracksOf(rows)
+  return groupsInOrder
+    .map(({ label, aspects }) => ({
+      label,
+      tracks: aspects.flatMap((aspect) => tracks.filter((track) => track.aspect === aspect)),
+    }))
+    .filter((group) => group.tracks.length > 0)
+}
+
+/** Where the words "within chance" stand: in the half of the band that the mark leaves free. */
+export const chanceWordsAt = (chance: { low: number; high: number }, value: number | null): number =>
+  axisPosition(
+    value === null || value < chance.low || value > chance.high
+      ? (chance.low + chance.high) / 2
+      : (value <= 0 ? chance.high : chance.low) / 2,
+  )
