@@ -1,19 +1,9 @@
-import { compareDays, type Day } from './days.ts'
+import { compareDays } from './days.ts'
 import { formatQuotient } from './laterality.ts'
 import type { LockedMeasure } from './measureRows.ts'
 import { measureKindLabels, type MeasureScore, type SideSummary, type SkillScore } from './measures.ts'
+import type { MeasureComparison } from './occasions.ts'
 import { reliabilitiesRead, reliableChangeCautions, type ReliableChangeNote } from './reliableChange.ts'
-
-export interface MeasureComparison {
-  kind: LockedMeasure['details']['kind']
-  title: string
-  before: { measureId: string; on: Day }
-  after: { measureId: string; on: Day }
-  lines: { label: string; before: string; after: string }[]
-  reliable: ReliableChangeNote | null
-  /** Means of each hand for `reliableChange`, where somebody has a published SD and coefficient at hand. Else empty. */
-  means: { label: string; before: number | null; after: number | null }[]
-}
 
 const newestFirst = (a: LockedMeasure, b: LockedMeasure) =>
   compareDays(b.measuredOn, a.measuredOn) || (a.lockedAt < b.lockedAt ? 1 : -1)

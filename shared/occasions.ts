@@ -1,6 +1,7 @@
 import { compareDays, type Day } from './days.ts'
 import type { HandUseAnswer } from './handUse.ts'
 import { answerSide } from './informants.ts'
+import type { MeasureKind } from './measures.ts'
 import { scoreValue, type LockedResponse } from './questionnaireRows.ts'
 import { informantLabels, informants, type Informant } from './questionnaires.ts'
 import type { ReliableChangeNote } from './reliableChange.ts'
@@ -38,6 +39,17 @@ export interface FormComparison {
   reliable: ReliableChangeNote
   /** Says so when the editions differ; null otherwise. */
   caution: string | null
+}
+
+export interface MeasureComparison {
+  kind: MeasureKind
+  title: string
+  before: { measureId: string; on: Day }
+  after: { measureId: string; on: Day }
+  lines: { label: string; before: string; after: string }[]
+  reliable: ReliableChangeNote | null
+  /** Means of each hand for `reliableChange`, where somebody has a published SD and coefficient at hand. Else empty. */
+  means: { label: string; before: number | null; after: number | null }[]
 }
 
 /** How one answer became another. */
