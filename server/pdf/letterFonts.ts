@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs'
 import { createRequire } from 'node:module'
+import PDFDocument from 'pdfkit'
 
 export type Weight = 400 | 600
 
@@ -9,12 +10,12 @@ export interface Run {
   text: string
 }
 
-/** The letter holds characters that no font here can draw. Printing a box in a name would be worse than refusing. */
+/** A text holds characters that no font here can draw. Printing a box in a name would be worse than refusing. */
 export class UnprintableTextError extends Error {
   readonly characters: string[]
 
   constructor(characters: string[]) {
-    super(`The letter has characters that cannot be printed: ${characters.join(' ')}`)
+    super(`There are characters that cannot be printed: ${characters.join(' ')}`)
     this.name = 'UnprintableTextError'
     this.characters = characters
   }
@@ -71,15 +72,26 @@ export const printable = (text: string) =>
 const fontFor = (pdf: PDFKit.PDFDocument, character: string, weight: Weight) =>
   subsets.map((subset) => fontName(subset, weight)).find((font) => canDraw(pdf, font, character))
 
-/** Refuses texts with characters that no font file has, naming each of them once. */
-export function assertPrintable(pdf: PDFKit.PDFDocument, texts: readonly string[]) {
+const unknownTo = (pdf: PDFKit.PDFDocument, texts: readonly string[]): string[] => {
   const characters = new Set(
     texts.flatMap((text) =>
       [...graphemes.segment(printable(text).replace(/\s/g, ' '))].map((part) => part.segment),
     ),
   )
-  const unknown = [...characters].filter((character) => fontFor(pdf, character, 400) === undefined)
+  return [...characters].filter((character) => fontFor(pdf, character, 400) === undefined)
+}
+
+/** Refuses texts with characters that no font file has, naming each of them once. */
+export function assertPrintable(pdf: PDFKit.PDFDocument, texts: readonly string[]) {
+  const unknown = unknownTo(pdf, texts)
   if (unknown.length > 0) throw new UnprintableTextError(unknown)
+}
+
+/** The characters of these texts that cannot be printed, each once; empty when all can. Nothing is laid out. */
+export function unprintableIn(texts: readonly string[]): string[] {
+  const pdf = new PDFDocument({ autoFirstPage: false })
+  registerFonts(pdf)
+  return unknownTo(pdf, texts)
 }
 
 /** Splits text into runs by the font file that has its characters. A letter and its combining accents stay together. */

@@ -71,3 +71,20 @@ function cutWord(word: string, width: number, measure: (part: string) => number)
   }
   return pieces
 }
+
+/** Sets one line with its top at `top`; nothing is broken or moved on. */
+export function drawLine(
+  pdf: PDFKit.PDFDocument,
+  content: Line,
+  { x, top }: { x: number; top: number },
+  style: TextStyle,
+): void {
+  // The capital's height in the middle of the leading: lines of different sizes keep an even rhythm.
+  const baseline = top + style.leading / 2 + style.size * 0.33
+  let at = x
+  for (const run of content) {
+    pdf.font(run.font, style.size).fillColor(style.colour)
+    pdf.text(run.text, at, baseline, { lineBreak: false, baseline: 'alphabetic' })
+    at += widthOf(pdf, [run], style.size)
+  }
+}

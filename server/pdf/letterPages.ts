@@ -1,5 +1,5 @@
 import { splitIntoRuns } from './letterFonts.ts'
-import { heightOf, widthOf, type Line, type Piece, type TextStyle } from './letterLayout.ts'
+import { drawLine, heightOf, type Line, type Piece, type TextStyle } from './letterLayout.ts'
 
 /** A4 in points. The wide margin is on one side, on purpose: it carries the ornament and leaves room for a hand. */
 const page = { width: 595.28, height: 841.89, left: 98, right: 62, top: 58, bottom: 66 }
@@ -14,13 +14,29 @@ const pollen = '#F4C64F'
 const line = '#8C8775'
 const footer: TextStyle = { size: 9, weight: 400, leading: 12, colour: '#565B73' }
 
+/** Where something is drawn, in points from the top left corner of the page. */
+export interface Place {
+  x: number
+  top: number
+}
+
 export interface Pages {
+  /** Height of the text column, in points. */
+  height: number
   /** Width of the text column, in points. */
   width: number
   print: (pieces: Piece[]) => void
   /** Prints a section on a tinted panel when it fits on one page, plainly when it does not. */
   printOnPanel: (pieces: Piece[]) => void
+  /** Does something of this height still go on the page? At its top, always. */
+  fits: (height: number) => boolean
   keepTogether: (height: number) => void
+  /** Gives `draw` a place of this height, on the next page when it does not fit here; `gap` is left above it. */
+  place: (height: number, gap: number, draw: (place: Place) => void) => void
+  /** Draws what is not read aloud. */
+  asDecoration: (draw: () => void) => void
+  /** Element of the whole document, for what is tagged outside of here. */
+  root: PDFKit.PDFStructureElement
   ornament: () => void
   rule: () => void
   finish: (text: (page: number, count: number) => string) => void
@@ -56,20 +72,23 @@ export function createPages(pdf: PDFKit.PDFDocument): Pages {
     atTop = true
   }
 
+  const fits = (height: number) => atTop || y + height <= floor
+
   const keepTogether = (height: number) => {
-    if (!atTop && y + height > floor) newPage()
+    if (!fits(height)) newPage()
   }
 
-  const drawLine = (content: Line, x: number, style: TextStyle) => {
-    // The capital's height in the middle of the leading: lines of different sizes keep an even rhythm.
-    const baseline = y + style.leading / 2 + style.size * 0.33
-    let at = x
-    for (const run of content) {
-      pdf.font(run.font, style.size).fillColor(style.colour)
-      pdf.text(run.text, at, baseline, { lineBreak: false, baseline: 'alphabetic' })
-      at += widthOf(pdf, [run], style.size)
-    }
+  const printLine = (content: Line, x: number, style: TextStyle) => {
+    drawLine(pdf, content, { x, top: y }, style)
     y += style.leading
+    atTop = false
+  }
+
+  const place: Pages['place'] = (height, gap, draw) => {
+    keepTogether(gap + height)
+    if (!atTop) y += gap
+    draw({ x: page.left, top: y })
+    y += height
     atTop = false
   }
 
@@ -90,7 +109,7 @@ export function createPages(pdf: PDFKit.PDFDocument): Pages {
         continue
       }
       for (const content of piece.lines.slice(done, done + count))
-        drawLine(content, page.left + piece.indent, piece.style)
+        printLine(content, page.left + piece.indent, piece.style)
       done += count
     }
   }
@@ -116,7 +135,7 @@ export function createPages(pdf: PDFKit.PDFDocument): Pages {
     const top = y
     item.add(
       pdf.struct('Lbl', {}, () => {
-        drawLine(splitIntoRuns(pdf, '•', 600), page.left + 2, { ...piece.style, weight: 600, colour: petal })
+        printLine(splitIntoRuns(pdf, '•', 600), page.left + 2, { ...piece.style, weight: 600, colour: petal })
         y = top
       }),
     )
@@ -203,10 +222,24 @@ export function createPages(pdf: PDFKit.PDFDocument): Pages {
       pdf.switchToPage(index)
       pdf.markContent('Artifact', { type: 'Pagination' })
       y = page.height - 44
-      drawLine(splitIntoRuns(pdf, text(index + 1, count), footer.weight), page.left, footer)
+      printLine(splitIntoRuns(pdf, text(index + 1, count), footer.weight), page.left, footer)
       pdf.endMarkedContent()
     }
   }
 
-  return { width, print, printOnPanel, keepTogether, ornament, rule, finish }
+  const height = floor - page.top
+  return {
+    width,
+    height,
+    root,
+    fits,
+    keepTogether,
+    place,
+    asDecoration,
+    print,
+    printOnPanel,
+    ornament,
+    rule,
+    finish,
+  }
 }

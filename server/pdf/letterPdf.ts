@@ -6,6 +6,7 @@ import type { ClinicSettings } from '../../shared/settings.ts'
 import { assertPrintable, registerFonts } from './letterFonts.ts'
 import { breakIntoLines, heightOf, type Line, type Piece, type TextStyle } from './letterLayout.ts'
 import { createPages, type Pages } from './letterPages.ts'
+import { collect, documentSettings } from './pdfFile.ts'
 
 export type Letterhead = Pick<ClinicSettings, 'clinicName' | 'clinicAddress' | 'clinicPhone' | 'timeZone'>
 
@@ -39,34 +40,15 @@ const styles = {
 
 const listIndent = 15
 
-// pdfkit knows this subset; its published types do not yet.
-const declaredAccessible: object = { subset: 'PDF/UA' }
-
 /**
  * Prints an approved letter as a tagged A4 PDF. The same letter gives the same bytes every time, so its SHA-256 can be
  * kept with the approval. Rejects with UnprintableTextError when a character is in none of the fonts.
  */
 export async function renderLetterPdf(letter: LetterForPrint): Promise<Buffer> {
   const title = letterKindLabels[letter.kind]
-  const pdf = new PDFDocument({
-    size: 'A4',
-    pdfVersion: '1.7',
-    tagged: true,
-    lang: 'en-GB',
-    displayTitle: true,
-    bufferPages: true,
-    autoFirstPage: false,
-    margin: 0,
-    ...declaredAccessible,
-    info: {
-      // No child's name: titles are shown in lists of files and in window bars.
-      Title: `${title} from ${letter.clinic.clinicName}`,
-      Author: letter.clinic.clinicName,
-      Creator: 'Fanflower',
-      Producer: 'Fanflower',
-      CreationDate: new Date(letter.approvedAt),
-    },
-  })
+  const pdf = new PDFDocument(
+    documentSettings({ title, clinicName: letter.clinic.clinicName, at: letter.approvedAt }),
+  )
   const bytes = collect(pdf)
   registerFonts(pdf)
   assertPrintable(pdf, textsOf(letter))
@@ -79,15 +61,6 @@ export async function renderLetterPdf(letter: LetterForPrint): Promise<Buffer> {
   )
   pdf.end()
   return bytes
-}
-
-function collect(pdf: PDFKit.PDFDocument): Promise<Buffer> {
-  return new Promise((resolve, reject) => {
-    const chunks: Buffer[] = []
-    pdf.on('data', (chunk: Buffer) => chunks.push(chunk))
-    pdf.on('end', () => resolve(Buffer.concat(chunks)))
-    pdf.on('error', reject)
-  })
 }
 
 /** Every text of the letter: looked through before anything is drawn, so that all odd characters are told at once. */

@@ -6,12 +6,12 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import { LetterVersion } from '../entities/LetterVersion.ts'
 import { AppError } from '../errors.ts'
-import { createLine } from '../inLine.ts'
 import { UnprintableTextError } from '../pdf/letterFonts.ts'
 import { renderLetterPdf } from '../pdf/letterPdf.ts'
 import { listOtherNames, listRecipients, type LetterRecord } from '../queries/letters.ts'
 import { wholeNames } from '../queries/names.ts'
 import { letterFact, patchLetter } from './letters.ts'
+import { printInTurn } from './printInTurn.ts'
 import { readSettings } from './settings.ts'
 import { transact } from './transact.ts'
 
@@ -36,9 +36,6 @@ export const checkLetterText = async (
     otherNames,
   })
 }
-
-/** Printing a PDF is heavy: one at a time in this process. */
-const printInTurn = createLine({ atOnce: 1, mostWaiting: 8, retryAfterSeconds: 5 })
 
 /** The name a letter is filed under: the given one, with the one the child goes by. */
 const identifyingName = ({ givenName, preferredName, familyName }: LetterRecord): string =>
