@@ -2,7 +2,8 @@ import { randomInt } from 'node:crypto'
 import { formatDay } from '../../shared/days.ts'
 import { seedLimit, type MeasureDraft, type MeasureStart } from '../../shared/measureSchemas.ts'
 import { emptyDetails, lockProblems, methodVersions, scoreMeasure } from '../../shared/measureScores.ts'
-import { measureKindLabels, type MeasureDetails } from '../../shared/measures.ts'
+import { measureKindLabels, type MeasureDetails, type MeasureScore } from '../../shared/measures.ts'
+import { redFlagsOfSkill } from '../../shared/redFlagSources.ts'
 import type { Actor } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
@@ -11,10 +12,12 @@ import { Measure } from '../entities/Measure.ts'
 import { conflict, invalid } from '../errors.ts'
 import { lockChild } from '../queries/lockChild.ts'
 import { findMeasure, openMeasureOf, type MeasureRecord } from '../queries/measures.ts'
+import { findChildFacts } from '../queries/childFacts.ts'
 import { findForChild } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
+import { raiseFlags } from './redFlags.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -137,6 +140,14 @@ export const saveMeasure = async (
   })
 }
 
+/** A hand that does not write and clearly does better asks for a full look; nothing else here is a warning sign. */
+const flagsOf = async (access: ChildAccess, score: MeasureScore, tx: Tx) => {
+  if (score.kind !== 'pegs' && score.kind !== 'tapping' && score.kind !== 'dots') return []
+  const { writingHand } = await findChildFacts(access, tx)
+  const { index, interval } = score
+  return redFlagsOfSkill([{ task: measureKindLabels[score.kind], index, interval }], writingHand)
+}
+
 /**
  * Locks a measure and stores its score with the version of the method, computed here from the stored trials: no figure of
  * the browser is used. Something must be recorded, or a reason given why it was not done. Throws StaleWrite.
@@ -147,13 +158,24 @@ export const lockMeasure = (actor: Actor, access: ChildAccess, id: string, versi
     await requireConsent(tx, access, 'assessment_treatment')
     const problems = lockProblems(details, notDoneReason)
     if (Object.keys(problems).length > 0) throw invalid(problems)
+    const score = scoreMeasure(details)
     await updateIfCurrent(tx, Measure, id, version, {
       methodVersion: methodVersions[kind],
-      score: scoreMeasure(details),
+      score,
       lockedAt: now(),
       lockedById: access.viewer.id,
     })
     record(fact(access, 'locked', id))
+    const { childId, viewer } = access
+    const flags = await flagsOf(access, score, tx)
+    await raiseFlags(tx, record, {
+      childId,
+      origin: 'measure',
+      originId: id,
+      flags,
+      fresh: flags.map((flag) => flag.id),
+      raisedById: viewer.id,
+    })
   })
 
 /** Removes a measure that was begun and never locked. */

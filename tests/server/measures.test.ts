@@ -327,6 +327,53 @@ describe('two people at one occasion', () => {
   })
 })
 
+describe('skill on the other side than the writing hand', () => {
+  const alerts = () =>
+    database().query('SELECT flag, text, origin, originId, actedAt FROM alerts WHERE childId = ?', [
+      child.id,
+    ]) as Promise<{ flag: string; text: string; origin: string; originId: string }[]>
+  const writes = (hand: string | null) =>
+    database().query('UPDATE children SET writingHand = ? WHERE id = ?', [hand, child.id])
+  /** The right hand is quicker by far more than the trials differ among themselves. */
+  const rightQuicker = pegsDetails([30.1, 30.4, 29.9], [20.2, 20.0, 20.3])
+
+  it('asks for a full look once the measure is locked, and names the task', async () => {
+    await writes('left')
+    const { id } = await begun({ kind: 'pegs' })
+    await put(id, 1, draft(rightQuicker))
+    expect(await alerts()).toEqual([])
+    expect((await lock(id, 2)).status).toBe(200)
+    const raised = await alerts()
+    expect(raised).toEqual([expect.objectContaining({ origin: 'measure', originId: id })])
+    expect(raised[0]?.text).toContain('the right hand did clearly better at: Moving pegs')
+  })
+
+  it('adds a second task to the sign that stands already', async () => {
+    await writes('left')
+    await lockedPegs(rightQuicker)
+    const { id, details } = await begun({ kind: 'tapping' })
+    const counts = [30, 31, 30]
+      .map((n) => trial('left', n))
+      .concat([50, 51, 50].map((n) => trial('right', n)))
+    await put(id, 1, draft({ ...details, trials: counts }))
+    expect((await lock(id, 2)).status).toBe(200)
+    const raised = await alerts()
+    expect(raised).toHaveLength(1)
+    expect(raised[0]?.text).toMatch(/Moving pegs.*Tapping/)
+  })
+
+  it.each([
+    ['the same hand writes', 'right', rightQuicker],
+    ['the writing hand is not known', null, rightQuicker],
+    ['the hands differ no more than their trials', 'left', pegsDetails([22, 26, 24], [23, 25, 22])],
+    ['there is one trial a hand and no interval', 'left', pegsDetails([30], [20])],
+  ])('asks for nothing when %s', async (_when, hand, details) => {
+    await writes(hand)
+    await lockedPegs(details)
+    expect(await alerts()).toEqual([])
+  })
+})
+
 describe('bad input', () => {
   it.each([
     ['an unknown kind', { kind: 'strength' }, ['kind']],
