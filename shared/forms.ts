@@ -1,4 +1,11 @@
-import type { CutOffSet, HandUseAnswer, HandUseDirection, HandUseStanding } from './handUse.ts'
+import {
+  handUseAnswerLabels,
+  type CutOffSet,
+  type CutOffSetId,
+  type HandUseAnswer,
+  type HandUseDirection,
+  type HandUseStanding,
+} from './handUse.ts'
 import type { Informant } from './questionnaires.ts'
 
 /** How the answers of a form become a score. The methods are code, cited where they stand; forms are data. */
@@ -36,6 +43,8 @@ export interface FormDefinition {
   citation: string
   /** Stand beside the score. */
   cautions: string[]
+  /** Bounds that belong to this form; null leaves the choice to the clinic's settings. */
+  cutOffSet: CutOffSetId | null
 }
 
 /** A form with its name in the database: `<key>.v<edition>`. */
@@ -46,6 +55,20 @@ export interface FormView {
   definition: FormDefinition
   retiredAt: string | null
 }
+
+/** What a form that does not ask for "always" calls its answers: "mostly" would say more than was asked. */
+const plainLabels: Record<HandUseAnswer, string> = {
+  ...handUseAnswerLabels,
+  left: 'Left hand',
+  either: 'Either hand',
+  right: 'Right hand',
+}
+
+/** What an answer is called on a form that offers these options. */
+export const answerLabel = (answer: HandUseAnswer, { options }: Pick<FormDefinition, 'options'>): string =>
+  options.some((option) => option === 'strong_left' || option === 'strong_right')
+    ? handUseAnswerLabels[answer]
+    : plainLabels[answer]
 
 /** Answers by item id. Null is "not answered yet"; "either hand" and "does not do this yet" are answers. */
 export type FormAnswers = Record<string, HandUseAnswer | null>

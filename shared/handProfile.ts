@@ -1,5 +1,6 @@
 import { compareDays, type Day } from './days.ts'
-import { handUseStandingLabels, type HandUseScore } from './handUse.ts'
+import type { FormScore } from './forms.ts'
+import { handUseStandingLabels } from './handUse.ts'
 import type { HandStatement } from './sideStatements.ts'
 import type { InformantComparison } from './informants.ts'
 import type { HandProfileRow, LateralLineRow } from './lateralLine.ts'
@@ -45,7 +46,10 @@ export interface LockedHandUse {
   id: string
   answeredOn: Day
   informant: Informant
-  score: HandUseScore
+  score: Pick<
+    FormScore,
+    'quotient' | 'answered' | 'doesNotDo' | 'unanswered' | 'standing' | 'direction' | 'cutOffs'
+  >
   /** ISO moment; tells two responses of one day apart. */
   lockedAt: string
 }

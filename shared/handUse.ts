@@ -116,6 +116,7 @@ export const cutOffSets = [
     source: 'Veale 2014, Laterality 19:164-177, for a four-item form with adults; bounds from memory.',
   },
 ] as const satisfies readonly CutOffSet[]
+export type CutOffSetId = (typeof cutOffSets)[number]['id']
 export const defaultCutOffSet: CutOffSet = cutOffSets[0]
 
 /** The set of that name, or null when no such set is known. */

@@ -1,13 +1,8 @@
-import { object, string, type InferType } from 'yup'
+import { mixed, string, type InferType } from 'yup'
 import { dayField, type Day } from './days.ts'
 import { body, choice, optionalId, optionalText } from './fields.ts'
-import {
-  cutOffSets,
-  handUseAnswers,
-  handUseFormV1,
-  type HandUseAnswer,
-  type HandUseScore,
-} from './handUse.ts'
+import type { FormAnswers, FormScore, FormView } from './forms.ts'
+import { cutOffSets } from './handUse.ts'
 import type { LateralLineRow } from './lateralLine.ts'
 
 export const informants = ['guardian', 'teacher', 'child_demonstrated', 'therapist'] as const
@@ -19,20 +14,13 @@ export const informantLabels: Record<Informant, string> = {
   therapist: 'Therapist saw it',
 }
 
-const answer = string<HandUseAnswer>()
-  .nullable()
-  .defined()
-  .oneOf([...handUseAnswers, null] as HandUseAnswer[], 'Choose one of the six answers')
+export type HandUseAnswers = FormAnswers
 
-/** Answers by item id; null is "not answered yet". Every item of the form must be present. */
-export const handUseAnswersSchema = object(
-  Object.fromEntries(handUseFormV1.items.map((item) => [item.id, answer])),
-)
-  .noUnknown('This form has no activity ${unknown}')
-  .required('The answers are missing')
-export type HandUseAnswers = Record<string, HandUseAnswer | null>
+const isMap = (value: unknown) => typeof value === 'object' && value !== null && !Array.isArray(value)
 
 export const questionnaireStartSchema = body({
+  /** An edition in use. */
+  formId: string().required('Choose a form').max(40, 'Choose a form from the list'),
   informant: choice('who answered', informants),
   respondentName: optionalText('Who answered', { max: 120 }),
   answeredOn: dayField('The date answered'),
@@ -45,31 +33,35 @@ export const questionnaireDraftSchema = body({
   informant: choice('who answered', informants),
   respondentName: optionalText('Who answered', { max: 120 }),
   answeredOn: dayField('The date answered'),
-  answers: handUseAnswersSchema,
+  /** By item of the form that was begun: each is there, null when it is not answered yet. Checked against that form. */
+  answers: mixed<FormAnswers>()
+    .required('The answers are missing')
+    .test('map', 'The answers could not be read', isMap),
   cutOffSet: choice(
     'a cut-off set',
     cutOffSets.map((set) => set.id),
   ),
   comment: optionalText('The comment', { max: 1000 }),
 })
-export type QuestionnaireDraft = Omit<InferType<typeof questionnaireDraftSchema>, 'answers'> & {
-  answers: HandUseAnswers
-}
+export type QuestionnaireDraft = InferType<typeof questionnaireDraftSchema>
 
 export interface QuestionnaireView {
   id: string
   childId: string
-  formVersion: string
+  /** The edition that is answered. */
+  form: FormView
   informant: Informant
   respondentName: string | null
   answeredOn: Day
-  answers: HandUseAnswers
+  answers: FormAnswers
   comment: string | null
   cutOffSet: string
   /** Computed by the server; stored with the response once locked. */
-  score: HandUseScore
+  score: FormScore
   lockedAt: string | null
   lockedBy: string | null
+  /** The request that a carer or teacher answers with it; null when staff write the answers down. */
+  requestId: string | null
   replacesId: string | null
   replacedById: string | null
   version: number

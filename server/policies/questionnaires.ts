@@ -14,14 +14,16 @@ export const questionnairePolicies = {
 
 interface Response {
   lockedAt: Date | null
+  /** Set while a carer or teacher answers for themselves. */
+  requestId: string | null
   replacedById: string | null
 }
 
 export const canAddQuestionnaire = (access: ChildAccess, consented: boolean) =>
   isRelation(access, 'assignedTherapist') && consented
 
-export const canChangeQuestionnaire = (access: ChildAccess, { lockedAt }: Response) =>
-  isRelation(access, 'assignedTherapist') && lockedAt === null
+export const canChangeQuestionnaire = (access: ChildAccess, { lockedAt, requestId }: Response) =>
+  isRelation(access, 'assignedTherapist') && lockedAt === null && requestId === null
 
 export const canReplaceQuestionnaire = (access: ChildAccess, { lockedAt, replacedById }: Response) =>
   isRelation(access, 'assignedTherapist') && lockedAt !== null && replacedById === null

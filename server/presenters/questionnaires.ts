@@ -9,6 +9,7 @@ import {
   canReplaceQuestionnaire,
 } from '../policies/questionnaires.ts'
 import type { QuestionnaireRecord } from '../queries/questionnaires.ts'
+import { presentForm } from './forms.ts'
 
 export const presentQuestionnaire = (
   response: QuestionnaireRecord,
@@ -16,7 +17,7 @@ export const presentQuestionnaire = (
 ): QuestionnaireView => ({
   id: response.id,
   childId: response.childId,
-  formVersion: response.formVersion,
+  form: presentForm(response.form),
   informant: response.informant,
   respondentName: response.respondentName,
   answeredOn: response.answeredOn,
@@ -26,6 +27,7 @@ export const presentQuestionnaire = (
   score: response.score,
   lockedAt: response.lockedAt?.toISOString() ?? null,
   lockedBy: response.lockedBy,
+  requestId: response.requestId,
   replacesId: response.replacesId,
   replacedById: response.replacedById,
   version: response.version,

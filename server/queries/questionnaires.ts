@@ -1,17 +1,24 @@
 import type { Day } from '../../shared/days.ts'
-import { cutOffSetById, defaultCutOffSet, scoreHandUse, type HandUseScore } from '../../shared/handUse.ts'
-import type { HandUseAnswers, Informant } from '../../shared/questionnaires.ts'
 import { isId } from '../../shared/fields.ts'
+import { scoreForm } from '../../shared/formScores.ts'
+import type { FormAnswers, FormDefinition, FormScore } from '../../shared/forms.ts'
+import { cutOffSetById, defaultCutOffSet, type HandUseScore } from '../../shared/handUse.ts'
+import type { Informant } from '../../shared/questionnaires.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
+import type { FormRecord } from './forms.ts'
 import { within } from './scope.ts'
 import { flag, fromJson, selectRows } from './sql.ts'
 
 interface StoredResponse {
   id: string
   childId: string
-  formVersion: string
+  formId: string
+  formKey: string
+  edition: number
+  definition: string
+  retiredAt: Date | null
   informant: Informant
   respondentName: string | null
   answeredOn: Day
@@ -21,29 +28,44 @@ interface StoredResponse {
   score: string | null
   lockedAt: Date | null
   lockedBy: string | null
+  requestId: string | null
   replacesId: string | null
   replacedById: string | null
   superseded: number
   version: number
 }
 
-export interface QuestionnaireRecord extends Omit<StoredResponse, 'answers' | 'score' | 'superseded'> {
-  answers: HandUseAnswers
+type Read = 'answers' | 'score' | 'superseded' | 'formId' | 'formKey' | 'edition' | 'definition' | 'retiredAt'
+
+export interface QuestionnaireRecord extends Omit<StoredResponse, Read> {
+  /** The edition that is answered, which stays though a newer one was made. */
+  form: FormRecord
+  answers: FormAnswers
   /** As stored when locked; until then computed from the answers at hand. */
-  score: HandUseScore
+  score: FormScore
   /** A locked newer version took its place. */
   superseded: boolean
 }
 
-const toRecord = ({ answers, score, superseded, ...rest }: StoredResponse): QuestionnaireRecord => {
-  const given = fromJson<HandUseAnswers>(answers)
+const toRecord = (stored: StoredResponse): QuestionnaireRecord => {
+  const { formId, formKey, edition, definition, retiredAt, answers, score, superseded, ...rest } = stored
+  const form = {
+    id: formId,
+    key: formKey,
+    edition,
+    definition: fromJson<FormDefinition>(definition),
+    retiredAt,
+  }
+  const given = fromJson<FormAnswers>(answers)
   return {
     ...rest,
+    form,
     answers: given,
     score:
       score === null
-        ? scoreHandUse(given, cutOffSetById(rest.cutOffSet) ?? defaultCutOffSet)
-        : fromJson<HandUseScore>(score),
+        ? scoreForm(form, given, cutOffSetById(rest.cutOffSet) ?? defaultCutOffSet)
+        : // Scores stored while there was one form only name neither method nor total.
+          { method: form.definition.scoring, total: null, ...fromJson<HandUseScore | FormScore>(score) },
     superseded: flag(superseded),
   }
 }
@@ -56,10 +78,12 @@ const selectResponses = async (
 ) => {
   const scope = within(access, 'q.childId')
   const rows = await selectRows<StoredResponse>(
-    `SELECT q.id, q.childId, q.formVersion, q.informant, q.respondentName, q.answeredOn, q.answers, q.comment,
-       q.cutOffSet, q.score, q.lockedAt, u.displayName AS lockedBy, q.replacesId, n.id AS replacedById,
+    `SELECT q.id, q.childId, f.id AS formId, f.formKey, f.edition, f.definition, f.retiredAt, q.informant,
+       q.respondentName, q.answeredOn, q.answers, q.comment, q.cutOffSet, q.score, q.lockedAt,
+       u.displayName AS lockedBy, q.requestId, q.replacesId, n.id AS replacedById,
        (n.lockedAt IS NOT NULL) AS superseded, q.version
      FROM questionnaire_responses q
+     JOIN questionnaire_forms f ON f.id = q.formVersion
      LEFT JOIN users u ON u.id = q.lockedById
      LEFT JOIN questionnaire_responses n ON n.replacesId = q.id
      WHERE ${scope.sql} AND ${condition} ORDER BY q.answeredOn DESC, q.createdAt DESC, q.id`,

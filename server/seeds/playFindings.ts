@@ -1,4 +1,5 @@
 import { addDays, type Day } from '../../shared/days.ts'
+import { handUseFormV1 } from '../../shared/handUse.ts'
 import { database } from '../dataSource.ts'
 import { Goal } from '../entities/Goal.ts'
 import { QuestionnaireResponse } from '../entities/QuestionnaireResponse.ts'
@@ -18,7 +19,7 @@ export const playQuestionnaire = async (
   on: Day,
 ): Promise<void> => {
   const { actor, access } = await acting(scene, number, by)
-  const start = { informant, respondentName, answeredOn: on, replacesId: null }
+  const start = { formId: handUseFormV1.version, informant, respondentName, answeredOn: on, replacesId: null }
   const id = await startQuestionnaire(actor, access, start, null)
   const versionNow = async () =>
     (await database().manager.findOneByOrFail(QuestionnaireResponse, { id })).version

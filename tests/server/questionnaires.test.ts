@@ -36,7 +36,13 @@ beforeEach(async () => {
 })
 
 const at = (path = '', of: Pick<Child, 'id'> = child) => `/api/children/${of.id}/questionnaires${path}`
-const start = { informant: 'guardian', respondentName: 'Mother', answeredOn: '2026-06-09', replacesId: null }
+const start = {
+  formId: 'hand-use-10.v1',
+  informant: 'guardian',
+  respondentName: 'Mother',
+  answeredOn: '2026-06-09',
+  replacesId: null,
+}
 
 const answersOf = (given: (HandUseAnswer | null)[]) =>
   Object.fromEntries(handUseFormV1.items.map((item, index) => [item.id, given[index] ?? null]))
@@ -93,7 +99,7 @@ describe('a hand-use questionnaire', () => {
   it('is begun without answers under the clinic’s cut-offs, saved, locked with its score, and shown on the line', async () => {
     const fresh = await begun()
     expect(fresh).toMatchObject({
-      formVersion: 'hand-use-10.v1',
+      form: { id: 'hand-use-10.v1', key: 'hand-use-10', edition: 1, retiredAt: null },
       cutOffSet: 'clinic-40',
       version: 1,
       lockedAt: null,
@@ -223,7 +229,7 @@ describe('a hand-use questionnaire', () => {
 
   it.each([
     ['an answer that is none', { answers: { ...answersOf(settled), throws: 'both' } }, 'answers.throws'],
-    ['an activity of another form', { answers: { ...answersOf(settled), juggles: 'left' } }, 'answers'],
+    ['an activity of another form', { answers: { ...answersOf(settled), juggles: 'left' } }, 'answers.juggles'],
     ['an activity left out', { answers: {} }, 'answers.throws'],
     ['cut-offs nobody knows', { cutOffSet: 'mine' }, 'cutOffSet'],
     ['a day that cannot be', { answeredOn: '2026-02-30' }, 'answeredOn'],

@@ -23,7 +23,13 @@ const path = (rest: string) => rest.replace('…', '/api/children/:childId')
 export const recordCalls: Calls = {
   [path('GET …/hand-profile')]: () => ({}),
   [path('POST …/questionnaires')]: () => ({
-    body: { informant: 'therapist', respondentName: null, answeredOn: seenOn(), replacesId: null },
+    body: {
+      formId: 'hand-use-10.v1',
+      informant: 'therapist',
+      respondentName: null,
+      answeredOn: seenOn(),
+      replacesId: null,
+    },
   }),
   [path('GET …/questionnaires/:id')]: draftForm,
   [path('PUT …/questionnaires/:id')]: async (on) => ({
