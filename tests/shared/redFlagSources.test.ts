@@ -1,0 +1,241 @@
+import { describe, expect, it } from 'vitest'
+import { emptyHistory, type HistoryDetails } from '../../shared/histories.ts'
+import { redFlagIds, redFlagRows } from '../../shared/redFlagRows.ts'
+import { newlyRaised } from '../../shared/redFlags.ts'
+import {
+  redFlagsOfHistory,
+  redFlagsOfObservation,
+  redFlagsOfSkill,
+  redFlagsOfVisits,
+  urgentWordsFor,
+} from '../../shared/redFlagSources.ts'
+import { checkWording } from '../../shared/wording.ts'
+
+const eight = { ageMonths: 100, writingHand: 'left' } as const
+const history = (given: Partial<HistoryDetails>): HistoryDetails => ({ ...emptyHistory, ...given })
+const raised = (given: Partial<HistoryDetails>, child: Parameters<typeof redFlagsOfHistory>[1] = eight) =>
+  redFlagsOfHistory(history(given), child).map(({ id }) => id)
+const ids = (flags: readonly { id: string }[]) => flags.map(({ id }) => id)
+
+/*
+ * The clinic's table, row by row. Sources stand in the rows: NICE NG127 (2019) and early-detection prompts for early
+ * preference, loss of skill and the other hand; Bhate & Ganesan 2015 for new weakness; Darvik et al. 2018 for wide motor
+ * difficulty; the rest from memory or the clinic's own, as the rows say.
+ */
+describe('flags of a history', () => {
+  it.each([
+    // One-hand preference before 12 months (corrected), 12 to 18 months
+    [{ firstNoticedMonths: 11 }, ['preference-before-12-months']],
+    [{ firstNoticedMonths: 12 }, ['preference-12-to-18-months']],
+    [{ firstNoticedMonths: 17 }, ['preference-12-to-18-months']],
+    [{ firstNoticedMonths: 18 }, []],
+    // Born at 32 weeks: 8 weeks early, 1.84 months. 13 months are 11.2, 14 are 12.2; 19 are 17.2, 20 are 18.2.
+    [{ firstNoticedMonths: 13, gestationWeeks: 32 }, ['preference-before-12-months']],
+    [{ firstNoticedMonths: 14, gestationWeeks: 32 }, ['preference-12-to-18-months']],
+    [{ firstNoticedMonths: 19, gestationWeeks: 32 }, ['preference-12-to-18-months']],
+    [{ firstNoticedMonths: 20, gestationWeeks: 32 }, []],
+    // 37 weeks is not early.
+    [{ firstNoticedMonths: 12, gestationWeeks: 37 }, ['preference-12-to-18-months']],
+    [{ firstNoticedMonths: 12, gestationWeeks: 36 }, ['preference-before-12-months']],
+    [{ firstNoticedMonths: 8, earlySteady: 'no' }, []],
+    [{ firstNoticedMonths: 8, earlySteady: 'unsure' }, ['preference-before-12-months']],
+    [{ firstNoticedUnsure: true }, []],
+    // Change of hand with new weakness, numbness, face droop, headache, seizure
+    [{ handChanged: 'yes', newWeakness: 'yes' }, ['new-neurological-signs']],
+    [{ numbness: 'yes' }, ['new-neurological-signs']],
+    [{ faceDroop: 'yes' }, ['new-neurological-signs']],
+    [{ seizure: 'yes' }, ['new-neurological-signs']],
+    [{ handChanged: 'yes', newHeadache: 'yes' }, ['new-neurological-signs']],
+    [{ newHeadache: 'yes' }, []],
+    [{ newWeakness: 'yes', injury: 'yes' }, ['new-neurological-signs']],
+    [{ newWeakness: 'unsure', numbness: 'unsure', faceDroop: 'unsure', seizure: 'unsure' }, []],
+    [{ walkChanged: 'yes' }, ['walk-changed']],
+    // Change of hand without those
+    [{ handChanged: 'yes' }, ['change-of-hand']],
+    [{ handChanged: 'yes', injury: 'yes' }, ['change-of-hand']],
+    [{ handChanged: 'no', injury: 'yes' }, []],
+    // The other hand
+    [{ otherHandHardlyUsed: 'yes' }, ['other-hand-or-lost-skill']],
+    [{ otherHandFisted: 'yes' }, ['other-hand-or-lost-skill']],
+    [{ dropsThings: 'yes' }, ['other-hand-or-lost-skill']],
+    [{ lostSkill: 'yes' }, ['other-hand-or-lost-skill']],
+    [{ weakerSide: 'yes' }, ['other-hand-or-lost-skill']],
+    [{ otherHandHardlyUsed: 'no', otherHandFisted: 'no', dropsThings: 'unsure' }, []],
+    // Tremor
+    [{ tremor: 'yes' }, ['tremor']],
+    [{ tremor: 'yes', tremorSudden: 'yes' }, ['sudden-tremor']],
+    [{ tremor: 'yes', numbness: 'yes' }, ['new-neurological-signs', 'sudden-tremor']],
+    [{ tremor: 'no', tremorSudden: 'yes' }, []],
+    // Milestones, from the due date
+    [{ satInTime: 'no' }, ['late-milestones']],
+    [{ walkedInTime: 'no' }, ['late-milestones']],
+    [{ satInTime: 'yes', walkedInTime: 'unsure' }, []],
+    // Welfare
+    [{ punishedForHand: 'yes' }, ['punished-for-hand']],
+    [{ askedToSwitch: 'yes' }, []],
+    [{ pain: 3 }, []],
+    [{ pain: 4 }, ['pain']],
+    [{ pain: 0 }, []],
+    [{ consistency: 'swaps_within_task' }, ['swaps-within-task']],
+    [{ consistency: 'swaps_between_tasks' }, []],
+    [{ wideMotorDifficulty: 'yes' }, ['wide-motor-difficulty']],
+    [{}, []],
+  ] as [Partial<HistoryDetails>, string[]][])('%j raises %j', (given, expected) => {
+    expect(raised(given)).toEqual(expected)
+  })
+
+  it('of a change of hand within a job stands from six years on', () => {
+    const at = (ageMonths: number | null) =>
+      raised({ consistency: 'swaps_within_task' }, { ageMonths, writingHand: null })
+    expect([at(71), at(72), at(null)]).toEqual([[], ['swaps-within-task'], []])
+  })
+
+  it('of wide motor difficulty is for left-handers and those who have no settled hand', () => {
+    const of = (writingHand: 'left' | 'right' | 'swaps' | null) =>
+      raised({ wideMotorDifficulty: 'yes' }, { ageMonths: 100, writingHand })
+    expect([of('left').length, of('swaps').length, of(null).length, of('right').length]).toEqual([1, 1, 1, 0])
+  })
+
+  it('of an infant with a steady hand stand by today’s age, corrected', () => {
+    const at = (ageMonths: number, given: Partial<HistoryDetails> = {}) =>
+      raised({ consistency: 'mostly', ...given }, { ageMonths, writingHand: null })
+    expect(at(10)).toEqual(['preference-before-12-months'])
+    expect(at(13)).toEqual(['preference-12-to-18-months'])
+    expect(at(13, { gestationWeeks: 30 })).toEqual(['preference-before-12-months'])
+    expect(at(18)).toEqual([])
+    expect(at(10, { consistency: 'swaps_between_tasks' })).toEqual([])
+  })
+
+  it('say from which age they were counted', () => {
+    const words = (given: Partial<HistoryDetails>) => redFlagsOfHistory(history(given), eight)[0]?.words
+    expect(words({ firstNoticedMonths: 13, gestationWeeks: 32 })).toContain(
+      'about 11 months from the due date',
+    )
+    expect(words({ firstNoticedMonths: 9 })).toContain('not corrected')
+    expect(words({ firstNoticedMonths: 9, gestationWeeks: 40 })).toBe(
+      'One hand was preferred from about 9 months.',
+    )
+  })
+})
+
+describe('flags of a writing observation', () => {
+  const nothing = { writingHand: null, painBefore: null, painAfter: null }
+  it.each([
+    [{ painAfter: 4 }, eight, ['pain']],
+    [{ painAfter: 3, painBefore: 3 }, eight, []],
+    [{ painBefore: 4, painAfter: 1 }, eight, ['pain']],
+    [{ writingHand: 'right' }, eight, ['change-of-hand']],
+    [{ writingHand: 'left' }, eight, []],
+    [{ writingHand: 'left' }, { ageMonths: 100, writingHand: null }, []],
+    [{ writingHand: 'left' }, { ageMonths: 100, writingHand: 'swaps' }, []],
+    [{ writingHand: 'swaps' }, { ageMonths: 72, writingHand: 'left' }, ['swaps-within-task']],
+    [{ writingHand: 'swaps' }, { ageMonths: 71, writingHand: 'left' }, []],
+  ] as const)('%j of %j raise %j', (seen, child, expected) => {
+    expect(ids(redFlagsOfObservation({ ...nothing, ...seen }, child))).toEqual(expected)
+  })
+})
+
+describe('the flag of skill', () => {
+  const skill = (low: number, high: number) => ({
+    task: 'pegs',
+    index: (low + high) / 2,
+    interval: { low, high },
+  })
+
+  // Minus is left better; clear is an interval that does not reach zero.
+  it.each([
+    ['left', skill(1, 9), ['skill-opposite-writing-hand']],
+    ['left', skill(0, 9), []],
+    ['left', skill(-9, -1), []],
+    ['right', skill(-9, -1), ['skill-opposite-writing-hand']],
+    ['right', skill(-9, 0), []],
+    ['right', skill(1, 9), []],
+    ['swaps', skill(1, 9), []],
+    [null, skill(1, 9), []],
+    ['left', { task: 'pegs', index: 20, interval: null }, []],
+    ['left', { task: 'pegs', index: null, interval: null }, []],
+  ] as const)('writing hand %s, %j: %j', (hand, measured, expected) => {
+    expect(ids(redFlagsOfSkill([measured], hand))).toEqual(expected)
+  })
+
+  it('names every such task and both hands', () => {
+    const [flag] = redFlagsOfSkill([skill(1, 9), { ...skill(2, 5), task: 'tapping' }], 'left')
+    expect(flag?.words).toBe(
+      'The child writes with the left hand, and the right hand did clearly better at: pegs, tapping.',
+    )
+  })
+})
+
+describe('the flag of visits', () => {
+  it.each([
+    [0, []],
+    [1, []],
+    [2, ['not-brought']],
+    [5, ['not-brought']],
+  ])('%d times in six months: %j', (times, expected) => {
+    expect(ids(redFlagsOfVisits(times))).toEqual(expected)
+  })
+})
+
+describe('the table', () => {
+  it('holds routine booking back where a doctor or a referral comes first, and nowhere else', () => {
+    expect(redFlagIds.filter((id) => redFlagRows[id].holdsBooking)).toEqual([
+      'new-neurological-signs',
+      'sudden-tremor',
+      'walk-changed',
+      'preference-before-12-months',
+      'other-hand-or-lost-skill',
+    ])
+  })
+
+  it('asks for help on the same day for new signs, and for thought about welfare for pain and punishment', () => {
+    const of = (urgency: string) => redFlagIds.filter((id) => redFlagRows[id].urgency === urgency)
+    expect(of('same_day')).toEqual(['new-neurological-signs', 'sudden-tremor', 'walk-changed'])
+    expect(of('safeguarding')).toEqual(['punished-for-hand', 'pain', 'not-brought'])
+  })
+
+  it('fits the record, names no diagnosis and blames no hand', () => {
+    for (const row of Object.values(redFlagRows)) {
+      expect(row.id.length).toBeLessThanOrEqual(40)
+      expect(row.action.length).toBeLessThanOrEqual(500)
+      const words = `${row.title}. ${row.action}`
+      expect(words).not.toMatch(/palsy|stroke|dyspraxia|DCD|epilep|hemi|tumou?r|disorder/i)
+      expect(checkWording(words)).toEqual([])
+    }
+  })
+})
+
+describe('what is new since the last save', () => {
+  const of = (given: Partial<HistoryDetails>) => redFlagsOfHistory(history(given), eight)
+
+  it('is a flag, or a further sign under one; not what stood before, nor what was taken back', () => {
+    expect(ids(newlyRaised(of({}), of({ seizure: 'yes' })))).toEqual(['new-neurological-signs'])
+    expect(ids(newlyRaised(of({ seizure: 'yes' }), of({ seizure: 'yes', pain: 6 })))).toEqual(['pain'])
+    expect(ids(newlyRaised(of({ seizure: 'yes' }), of({ seizure: 'yes', numbness: 'yes' })))).toEqual([
+      'new-neurological-signs',
+    ])
+    expect(newlyRaised(of({ seizure: 'yes', numbness: 'yes' }), of({ seizure: 'yes' }))).toEqual([])
+    expect(newlyRaised(of({ seizure: 'yes' }), of({}))).toEqual([])
+  })
+})
+
+describe('the words for the family', () => {
+  it('ask for help today when a sign calls for it, and are silent otherwise', () => {
+    const words = urgentWordsFor(history({ newWeakness: 'yes', faceDroop: 'yes' })).join(' ')
+    expect(words).toContain('new weakness and a drooping face')
+    expect(words).toMatch(/medical help today/)
+    expect(words).toMatch(/even if it came after a fall/)
+    expect(words).not.toMatch(/palsy|stroke|epilep|tumou?r/i)
+    for (const given of [{}, { lostSkill: 'yes' }, { pain: 9 }, { punishedForHand: 'yes' }] as const)
+      expect(urgentWordsFor(history(given))).toEqual([])
+  })
+
+  it('name every same-day sign in plain words', () => {
+    const words = urgentWordsFor(
+      history({ tremor: 'yes', tremorSudden: 'yes', walkChanged: 'yes', seizure: 'yes' }),
+    ).join(' ')
+    for (const sign of ['a seizure', 'a tremor that came suddenly', 'way of walking'])
+      expect(words).toContain(sign)
+    expect(words).not.toMatch(/sudden-tremor|walk-changed/)
+  })
+})
