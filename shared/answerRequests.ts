@@ -1,4 +1,4 @@
-import { mixed, number, string, type InferType } from 'yup'
+import { boolean, mixed, number, string, type InferType } from 'yup'
 import { dayField, type Day } from './days.ts'
 import { body, choice, optionalId, optionalText } from './fields.ts'
 import type { FormAnswers, FormView } from './forms.ts'
@@ -17,7 +17,7 @@ export const requestDays = 28
 export const reminderDays = [7, 14] as const
 
 /** A reminder sent by hand so many days before one was due takes its place. */
-const restDays = 2
+export const reminderRestDays = 2
 const dayMs = 86_400_000
 
 interface RequestMoments {
@@ -34,7 +34,7 @@ export function dueReminder({ askedAt, remindedAt, savedAt }: RequestMoments, at
   const dueAt = (days: number) => askedAt.getTime() + days * dayMs
   const latest = reminderDays.filter((days) => at.getTime() >= dueAt(days)).at(-1)
   if (latest === undefined) return null
-  if (remindedAt !== null && remindedAt.getTime() >= dueAt(latest - restDays)) return null
+  if (remindedAt !== null && remindedAt.getTime() >= dueAt(latest - reminderRestDays)) return null
   if (savedAt !== null && at.getTime() - savedAt.getTime() < dayMs) return null
   return latest
 }
@@ -69,7 +69,12 @@ export const answerRequestSchema = body({
     }),
   answerer: choice('whom you ask', answererKinds).when('asks', {
     is: 'history',
-    then: (schema) => schema.oneOf(['guardian'], 'Only a parent or carer is asked how things began'),
+    then: (schema) =>
+      schema.test(
+        'carer',
+        'Only a parent or carer is asked how things began',
+        (answerer) => answerer === 'guardian',
+      ),
   }),
   guardianId: optionalId('The carer').when('answerer', {
     is: 'guardian',
@@ -82,12 +87,11 @@ export const answerRequestSchema = body({
     otherwise: (schema) => schema.oneOf([null], 'Choose either a carer or a teacher'),
   }),
   /** An e-mail with a link that needs no sign-in; for carers only. */
-  byLink: mixed<boolean>()
+  byLink: boolean()
     .required('Choose how it is answered')
-    .oneOf([true, false], 'Choose how it is answered')
     .when('answerer', {
       is: 'teacher',
-      then: (schema) => schema.oneOf([false], 'Teachers sign in to answer'),
+      then: (schema) => schema.test('signed-in', 'Teachers sign in to answer', (byLink) => byLink === false),
     }),
 })
 export type AnswerRequestDetails = InferType<typeof answerRequestSchema>

@@ -6,6 +6,7 @@ import { auditEntryRoutes } from './auditEntries.ts'
 import { caseloadRoutes } from './caseload.ts'
 import { childRoutes } from './children.ts'
 import { classRoutes } from './classes.ts'
+import { conclusionRoutes } from './conclusions.ts'
 import { consentRoutes } from './consents.ts'
 import { familyRoutes } from './family.ts'
 import { goalRoutes } from './goals.ts'
@@ -42,6 +43,7 @@ export const nounRoutes = (settings: RouteSettings): Router[] => [
   caseloadRoutes(),
   childRoutes(),
   classRoutes(),
+  conclusionRoutes(),
   consentRoutes(),
   familyRoutes(),
   goalRoutes(),

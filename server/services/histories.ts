@@ -157,7 +157,7 @@ const childOf = async (tx: Tx, childId: string): Promise<KnownChild> => {
     tx,
   )
   if (!child) throw notFound()
-  const today = clinicToday(await readSettings())
+  const today = clinicToday(await readSettings(tx))
   return { ...child, today, ageMonths: ageInMonths(child.birthDate, today) }
 }
 

@@ -9,6 +9,8 @@ import { logger } from '../logger.ts'
 import { deliveryFailed, type DeliveryProblem } from '../mail/mailTemplates.ts'
 import type { MailClinic } from '../mail/mailLayout.ts'
 import { execute, selectOne } from '../queries/sql.ts'
+import { reasonNotToAsk, tellRequestFailed } from './answerMail.ts'
+import { sendDueReminders } from './answerReminders.ts'
 import { reasonNotToDeliver, setDeliveryState } from './letterDeliveries.ts'
 import { enqueueMail } from './outbox.ts'
 import { clinicToday, readSettings } from './settings.ts'
@@ -149,7 +151,10 @@ const settle = async (message: Claimed, owner: string, outcome: Outcome, appUrl:
       objectId: message.id,
       detail: { attempts: message.attempts },
     })
-    if (changed === 0 || message.kind !== 'letter') return
+    if (changed === 0) return
+    if (message.kind === 'answer_request' && outcome.state === 'failed')
+      await tellRequestFailed(tx, message.id, clinicToday(settings))
+    if (message.kind !== 'letter') return
     const delivery = await selectOne<LetterUnderWay>(
       `SELECT d.id, d.letterId, l.childId, l.authorId FROM letter_deliveries d JOIN letters l ON l.id = d.letterId
        WHERE d.outboxMessageId = :id`,
@@ -172,6 +177,12 @@ const settle = async (message: Claimed, owner: string, outcome: Outcome, appUrl:
   })
 }
 
+/** Why a message must not leave after all, in words; null when it may. Judged at the moment of sending. */
+const reasonToKeep = (message: Claimed): Promise<string | null> | null => {
+  if (message.kind === 'letter') return reasonNotToDeliver(message.id)
+  return message.kind === 'answer_request' ? reasonNotToAsk(message) : null
+}
+
 /**
  * Sends what is due, one message after the other, until nothing is; answers how many were tried. At least once: when
  * the answer to the final dot is lost the same bytes go again under the same Message-ID. One bad message never holds
@@ -186,7 +197,7 @@ export const deliverDue = async (
   for (let tried = 0; tried < mostMessages; tried += 1) {
     const message = await claim(owner)
     if (!message) return tried
-    const forbidden = message.kind === 'letter' ? await reasonNotToDeliver(message.id) : null
+    const forbidden = await reasonToKeep(message)
     if (forbidden !== null) {
       await settle(message, owner, { state: 'cancelled', problem: forbidden }, appUrl)
       continue
@@ -204,7 +215,10 @@ export const deliverDue = async (
 
 const senderOf = (mime: Buffer) => /^From:.*<([^>\r\n]+)>/im.exec(mime.toString('latin1', 0, 4000))?.[1] ?? ''
 
-/** Looks for due mail every few seconds until stopped; waits for the message under way. */
+/** Rounds of the worker between two looks for reminders that are due. */
+const roundsPerReminders = 30
+
+/** Looks for due reminders and mail every few seconds until stopped; waits for the message under way. */
 export const startOutboxWorker = (
   transport: Transporter,
   appUrl: string,
@@ -213,8 +227,14 @@ export const startOutboxWorker = (
   let stopped = false
   let timer: NodeJS.Timeout | undefined
   let running: Promise<void> = Promise.resolve()
+  let round = 0
+  const work = async () => {
+    if (round % roundsPerReminders === 0) await sendDueReminders(appUrl)
+    round += 1
+    await deliverDue(transport, appUrl)
+  }
   const tick = () => {
-    running = deliverDue(transport, appUrl)
+    running = work()
       .then(
         () => undefined,
         (error: unknown) =>

@@ -112,7 +112,7 @@ export const askToLook = async (
   childId: string,
   flags: readonly Pick<RedFlagRow, 'urgency'>[],
 ): Promise<void> => {
-  const today = clinicToday(await readSettings())
+  const today = clinicToday(await readSettings(tx))
   const pressing = flags.some(({ urgency }) => attentionOf[urgency] === 'overdue')
   const dueOn: Day = pressing ? today : addWorkingDays(today, daysToLook)
   const open = await selectRows<{ dueOn: Day | null }>(

@@ -2,7 +2,7 @@ import type { ClinicSettings } from '../../shared/settings.ts'
 import type { Actor } from '../access/actor.ts'
 import { dayOf, type Day } from '../../shared/days.ts'
 import { now } from '../clock.ts'
-import { database } from '../dataSource.ts'
+import { database, type Tx } from '../dataSource.ts'
 import { ClinicSetting } from '../entities/ClinicSetting.ts'
 import { transact } from './transact.ts'
 import { StaleWrite } from './versions.ts'
@@ -25,14 +25,15 @@ export const firstSettings: ClinicSettings = {
     'If a child is suddenly unwell or weak on one side, call the emergency number of your country at once.',
 }
 
-export const readSettingsRow = async (): Promise<{ settings: ClinicSettings; version: number }> => {
-  const row = await database().manager.findOneBy(ClinicSetting, { id: 1 })
+export const readSettingsRow = async (tx?: Tx): Promise<{ settings: ClinicSettings; version: number }> => {
+  const row = await (tx ?? database().manager).findOneBy(ClinicSetting, { id: 1 })
   return row
     ? { settings: { ...firstSettings, ...row.settings }, version: row.version }
     : { settings: firstSettings, version: 0 }
 }
 
-export const readSettings = async (): Promise<ClinicSettings> => (await readSettingsRow()).settings
+/** Inside a transaction pass it: a second connection for each of many writers at once would exhaust the pool. */
+export const readSettings = async (tx?: Tx): Promise<ClinicSettings> => (await readSettingsRow(tx)).settings
 
 /** Today in the clinic's time zone. */
 export const clinicToday = (settings: Pick<ClinicSettings, 'timeZone'>): Day =>

@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto'
 import { now } from '../clock.ts'
-import { database } from '../dataSource.ts'
+import { database, type Tx } from '../dataSource.ts'
 import { slowDown } from '../errors.ts'
 
 const freeFailures = 5
@@ -15,8 +15,11 @@ interface ThrottleRow {
   blockedUntil: Date | null
 }
 
-const read = async (key: string): Promise<ThrottleRow | null> => {
-  const [row] = (await database().query(
+/** Where it is counted: by itself, or in the transaction that also holds what is guessed at. */
+type Via = Pick<Tx, 'query'>
+
+const read = async (key: string, via: Via = database()): Promise<ThrottleRow | null> => {
+  const [row] = (await via.query(
     'SELECT failures, windowStartedAt, blockedUntil FROM throttles WHERE keyHash = ?',
     [keyHash(key)],
   )) as ThrottleRow[]
@@ -29,23 +32,28 @@ const secondsUntil = (moment: Date) => Math.max(1, Math.ceil((moment.getTime() -
 export const delaySeconds = (failures: number): number =>
   failures <= freeFailures ? 0 : Math.min(2 ** (failures - freeFailures - 1), longestDelaySeconds)
 
+/** Throws 429 while attempts are held back. */
+export const refuseWhileBlocked = async (key: string, via: Via = database()): Promise<void> => {
+  const row = await read(key, via)
+  if (row && row.failures >= mostFailures) throw slowDown(longestDelaySeconds)
+  if (row?.blockedUntil && row.blockedUntil > now()) throw slowDown(secondsUntil(row.blockedUntil))
+}
+
 /**
  * Counts one attempt before it is judged, so that parallel guesses cannot slip through between look and count.
  * Throws 429 while blocked; after 100 failures in a row only a reset by mail helps. Shared by all processes.
  */
-export const countAttempt = async (key: string): Promise<void> => {
-  const row = await read(key)
-  if (row && row.failures >= mostFailures) throw slowDown(longestDelaySeconds)
-  if (row?.blockedUntil && row.blockedUntil > now()) throw slowDown(secondsUntil(row.blockedUntil))
-  await database().query(
+export const countAttempt = async (key: string, via: Via = database()): Promise<void> => {
+  await refuseWhileBlocked(key, via)
+  await via.query(
     `INSERT INTO throttles (keyHash, failures, windowStartedAt, blockedUntil) VALUES (?, 1, ?, NULL)
      ON DUPLICATE KEY UPDATE failures = failures + 1`,
     [keyHash(key), now()],
   )
-  const counted = await read(key)
+  const counted = await read(key, via)
   const delay = delaySeconds(counted?.failures ?? 1)
   if (delay > 0)
-    await database().query('UPDATE throttles SET blockedUntil = ? WHERE keyHash = ?', [
+    await via.query('UPDATE throttles SET blockedUntil = ? WHERE keyHash = ?', [
       new Date(now().getTime() + delay * 1000),
       keyHash(key),
     ])

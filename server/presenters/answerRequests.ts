@@ -1,0 +1,125 @@
+import {
+  requestTitles,
+  type AnswerChoices,
+  type AnswererKind,
+  type AnswerPage,
+  type AnswerRequestView,
+  type RequestState,
+  type ToAnswer,
+} from '../../shared/answerRequests.ts'
+import { dayOf } from '../../shared/days.ts'
+import type { FormView } from '../../shared/forms.ts'
+import { urgentWordsFor } from '../../shared/redFlagSources.ts'
+import { consentNeededTexts } from '../../shared/consentNeeded.ts'
+import type { ClinicSettings } from '../../shared/settings.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { canChangeRequest, carerRefusal, noObservationConsent } from '../policies/answerRequests.ts'
+import type { CarerToAsk, TeacherToAsk } from '../queries/answerAddressees.ts'
+import type {
+  AnswerableRequest,
+  AnswerRequestRow,
+  StoredForm,
+  ToAnswerRow,
+} from '../queries/answerRequests.ts'
+import type { KeptAnswers } from '../queries/answers.ts'
+
+const stateOf = (row: AnswerRequestRow, at: Date): RequestState => {
+  if (row.answeredAt !== null) return 'answered'
+  if (row.cancelledAt !== null) return 'cancelled'
+  if (row.expiresAt <= at) return 'expired'
+  return row.answerId === null ? 'waiting' : 'begun'
+}
+
+export const presentAnswerRequest = (
+  row: AnswerRequestRow,
+  access: ChildAccess,
+  at: Date,
+): AnswerRequestView => {
+  const state = stateOf(row, at)
+  return {
+    id: row.id,
+    asks: row.asks,
+    formTitle: row.formTitle ?? requestTitles[row.asks],
+    answerer: row.answerer,
+    askedOf: row.askedOf,
+    askedAt: row.askedAt.toISOString(),
+    expiresAt: row.expiresAt.toISOString(),
+    byLink: row.byLink,
+    reminders: row.reminders,
+    state,
+    answeredAt: row.answeredAt?.toISOString() ?? null,
+    answerId: row.answerId,
+    version: row.version,
+    can: { cancel: canChangeRequest(access, state), remind: canChangeRequest(access, state) },
+  }
+}
+
+const isAnswerer = (informant: string): informant is AnswererKind =>
+  informant === 'guardian' || informant === 'teacher'
+
+export const presentAnswerChoices = (of: {
+  consented: boolean
+  observationShared: boolean
+  forms: readonly StoredForm[]
+  carers: readonly CarerToAsk[]
+  teachers: readonly TeacherToAsk[]
+}): AnswerChoices => ({
+  blocked: of.consented ? null : consentNeededTexts.assessment_treatment,
+  forms: of.forms
+    .map((form) => ({
+      id: form.id,
+      title: form.definition.title,
+      informants: form.definition.informants.filter(isAnswerer),
+    }))
+    .filter((form) => form.informants.length > 0),
+  guardians: of.carers.map((carer) => ({
+    id: carer.id,
+    name: carer.name,
+    refused: carerRefusal(carer, true),
+    byLink: carerRefusal(carer, true) === null,
+    signedIn: carerRefusal(carer, false) === null,
+  })),
+  teachers: of.observationShared ? of.teachers.map(({ id, name }) => ({ id, name })) : [],
+  teachersRefused: !of.observationShared
+    ? noObservationConsent
+    : of.teachers.length === 0
+      ? 'No teacher of the child’s present class has a sign-in.'
+      : null,
+})
+
+export const presentToAnswer = (row: ToAnswerRow, timeZone: string): ToAnswer => ({
+  id: row.id,
+  childId: row.childId,
+  childName: row.childName,
+  title: row.formTitle ?? requestTitles[row.asks],
+  begun: row.begun,
+  askedOn: dayOf(row.askedAt, timeZone),
+  answerBy: dayOf(row.expiresAt, timeZone),
+})
+
+const presentAskedForm = (form: StoredForm): FormView => ({
+  id: form.id,
+  key: form.key,
+  edition: form.edition,
+  definition: form.definition,
+  retiredAt: form.retiredAt?.toISOString() ?? null,
+})
+
+export const presentAnswerPage = (
+  request: AnswerableRequest,
+  kept: KeptAnswers,
+  clinic: ClinicSettings,
+): AnswerPage => ({
+  requestId: request.id,
+  asks: request.asks,
+  childName: request.childName,
+  askedOf: request.askedOf,
+  answerBy: dayOf(request.expiresAt, clinic.timeZone),
+  form: kept.form && presentAskedForm(kept.form),
+  answers: kept.answers,
+  comment: kept.comment,
+  history: kept.history,
+  version: kept.version,
+  urgent: kept.history === null ? [] : urgentWordsFor(kept.history),
+  clinic: { name: clinic.clinicName, phone: clinic.clinicPhone, emergencyText: clinic.emergencyText },
+})
