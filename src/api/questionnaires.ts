@@ -1,15 +1,9 @@
 import { http } from '@/api/http.ts'
-import type {
-  HandProfileView,
-  QuestionnaireDraft,
-  QuestionnaireStart,
-  QuestionnaireView,
-} from '@shared/questionnaires.ts'
+import type { QuestionnaireDraft, QuestionnaireStart, QuestionnaireView } from '@shared/questionnaires.ts'
 
 const path = (childId: string) => `/children/${childId}/questionnaires`
 
 export const questionnairesApi = {
-  handProfile: (childId: string) => http.get<HandProfileView>(`/children/${childId}/hand-profile`),
   start: (childId: string, start: QuestionnaireStart, idempotencyKey: string) =>
     http.post<QuestionnaireView>(path(childId), start, { idempotencyKey }),
   one: (childId: string, id: string) => http.get<QuestionnaireView>(`${path(childId)}/${id}`),
