@@ -1,6 +1,5 @@
 import {
   conclusionTexts,
-  handPreferenceLabels,
   type ConclusionContent,
   type ConclusionFinding,
   type ConclusionText,
@@ -26,9 +25,6 @@ const handOf: Record<HandPreference, Hand | null> = {
 export const preferredHand = (preference: HandPreference | null): Hand | null =>
   preference === null ? null : handOf[preference]
 
-const isSettled = (preference: HandPreference | null) =>
-  preference === 'left_settled' || preference === 'right_settled'
-
 const isBlank = (text: string | null) => text === null || text.trim() === ''
 
 /**
@@ -52,15 +48,6 @@ export function missingForSigning(
   if (contradictions.length > 0 && isBlank(content.aboutDisagreements))
     missing.aboutDisagreements = 'Write what you make of the disagreements listed here'
   return missing
-}
-
-/**
- * A preference called settled that rests on a single source is listed among the disagreements (clinic rule): one form or
- * one task alone is too little for that word.
- */
-export function restsOnOneSource({ handPreference, evidence }: ConclusionContent): string | null {
-  if (handPreference === null || !isSettled(handPreference) || evidence.length !== 1) return null
-  return `“${handPreferenceLabels[handPreference]}” rests on one piece of evidence only.`
 }
 
 const switching = {

@@ -29,6 +29,13 @@ export interface EvidenceRow {
   superseded: boolean
 }
 
+/** Stand in every report; what a measure needs besides comes with the measure. */
+export const reportCautions: readonly string[] = [
+  'The figures tell what was answered and seen on these days. They are no diagnosis, and no norms for children are claimed.',
+  'Which hand is chosen and how well each hand does are different things. They stand side by side and are not averaged.',
+  'Nothing here is a reason to have a child use the other hand.',
+]
+
 const joined = (parts: readonly (string | null)[]) => parts.filter((part) => part !== null).join(', ')
 
 const formResult = (score: FormScore): string => {

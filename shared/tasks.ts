@@ -4,6 +4,9 @@ import { addDays, compareDays, type Day } from './days.ts'
 /** Kind of the task that a warning sign gives: it is done by answering the sign, not by ticking it off. */
 export const alertTask = 'red_flag'
 
+/** Kind of the task to countersign a conclusion: the countersignature does it. */
+export const conclusionTask = 'conclusion_to_countersign'
+
 /** How pressing a task is: overdue once its day has passed, due on the day, soon before it or without a day. */
 export function dueLevel(dueOn: Day | null, today: Day): Attention {
   if (dueOn === null) return 'soon'

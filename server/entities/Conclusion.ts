@@ -8,7 +8,7 @@ import {
   VersionColumn,
   type Relation,
 } from 'typeorm'
-import type { ConclusionContent, ConclusionEvidence, ConclusionState } from '../../shared/conclusions.ts'
+import type { ConclusionContent, ConclusionState, SignedEvidence } from '../../shared/conclusions.ts'
 import { Child } from './Child.ts'
 import { User } from './User.ts'
 
@@ -28,7 +28,7 @@ export class Conclusion {
   @Column('varchar', { length: 26 }) state!: ConclusionState
   @Column('json') content!: ConclusionContent
   /** The measures, disagreements and cautions as they stood when it was signed; the report is drawn from them. */
-  @Column('json', { nullable: true }) evidence!: ConclusionEvidence | null
+  @Column('json', { nullable: true }) evidence!: SignedEvidence | null
   @Column('datetime', { precision: 6, nullable: true }) signedAt!: Date | null
   @Column('datetime', { precision: 6, nullable: true }) countersignedAt!: Date | null
   @Column('uuid', { nullable: true }) countersignedById!: string | null

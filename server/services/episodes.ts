@@ -9,6 +9,7 @@ import {
 } from '../../shared/episodes.ts'
 import type { Priority } from '../../shared/referrals.ts'
 import { reviewDateAfter } from '../../shared/reviewDates.ts'
+import type { ClinicSettings } from '../../shared/settings.ts'
 import type { Actor } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
@@ -18,9 +19,12 @@ import { Episode } from '../entities/Episode.ts'
 import { EpisodeChange } from '../entities/EpisodeChange.ts'
 import { conflict, invalid } from '../errors.ts'
 import { stateChoices } from '../policies/children.ts'
-import { findEpisode } from '../queries/episodes.ts'
+import { isConsentGiven } from '../queries/childFacts.ts'
+import { findEpisode, type EpisodeRow } from '../queries/episodes.ts'
 import { lockChild } from '../queries/lockChild.ts'
 import { selectOne } from '../queries/sql.ts'
+import type { AuditFact } from './audit.ts'
+import { requireNoBookingHold } from './bookingHold.ts'
 import { requireConsent } from './recordRules.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { transact } from './transact.ts'
@@ -83,10 +87,44 @@ export const lockOpenEpisode = (
 /** States in which the clinic works with the child; each needs consent to assessment and therapy. */
 const statesWithChild: readonly EpisodeState[] = ['consented', 'assessing', 'formulated', 'active', 'review']
 
+/** Writes one step of an episode: the new state, who, when and why, and the review that follows from it. */
+const moveEpisode = async (
+  tx: Tx,
+  record: (fact: AuditFact) => void,
+  access: ChildAccess,
+  episode: EpisodeRow,
+  { to, reason, settings }: StateChange & { settings: ClinicSettings },
+): Promise<void> => {
+  const today = clinicToday(settings)
+  await updateIfCurrent(tx, Episode, episode.id, episode.version, {
+    state: to,
+    firstSeenOn: to === 'assessing' ? (episode.firstSeenOn ?? today) : episode.firstSeenOn,
+    closedOn: isOpen(to) ? null : today,
+  })
+  await tx.insert(EpisodeChange, {
+    id: randomUUID(),
+    episodeId: episode.id,
+    fromState: episode.state,
+    toState: to,
+    reason,
+    byId: access.viewer.id,
+    at: now(),
+  })
+  await moveReview(tx, access, { from: episode.state, to, today, reviewWeeks: settings.reviewWeeks })
+  record({
+    action: 'episode.state_changed',
+    objectType: 'episode',
+    objectId: episode.id,
+    childId: access.childId,
+    relation: access.relation,
+    detail: { from: episode.state, to },
+  })
+}
+
 /**
  * Moves the child's episode on and keeps who, when and why. The wait ends when the assessment begins; the next review
- * follows the clinic's interval. 409 `closed` for a closed episode, 409 `consent_needed` without consent;
- * throws StaleWrite when somebody moved it in between.
+ * follows the clinic's interval. 409 `closed` for a closed episode, 409 `consent_needed` without consent,
+ * 409 `booking_held` for therapy while a warning sign comes first; throws StaleWrite when somebody moved it in between.
  */
 export const changeState = async (
   actor: Actor,
@@ -95,7 +133,6 @@ export const changeState = async (
   { to, reason }: StateChange,
 ): Promise<void> => {
   const settings = await readSettings()
-  const today = clinicToday(settings)
   await transact(actor, async (tx, record) => {
     await lockChild(access, tx)
     const episode = await findEpisode(access, tx)
@@ -107,30 +144,27 @@ export const changeState = async (
         to: `“${episodeStateLabels[to]}” cannot follow “${episodeStateLabels[episode.state]}” here`,
       })
     if (statesWithChild.includes(to)) await requireConsent(tx, access, 'assessment_treatment')
-    await updateIfCurrent(tx, Episode, episode.id, version, {
-      state: to,
-      firstSeenOn: to === 'assessing' ? (episode.firstSeenOn ?? today) : episode.firstSeenOn,
-      closedOn: isOpen(to) ? null : today,
-    })
-    await tx.insert(EpisodeChange, {
-      id: randomUUID(),
-      episodeId: episode.id,
-      fromState: episode.state,
-      toState: to,
-      reason,
-      byId: access.viewer.id,
-      at: now(),
-    })
-    await moveReview(tx, access, { from: episode.state, to, today, reviewWeeks: settings.reviewWeeks })
-    record({
-      action: 'episode.state_changed',
-      objectType: 'episode',
-      objectId: episode.id,
-      childId: access.childId,
-      relation: access.relation,
-      detail: { from: episode.state, to },
-    })
+    if (to === 'active') await requireNoBookingHold(tx, access)
+    await moveEpisode(tx, record, access, episode, { to, reason, settings })
   })
+}
+
+/**
+ * An assessment ends with its signed conclusion: the episode moves on from “assessing”, in the transaction of the
+ * signature. An episode elsewhere stays where it is, and so does one whose family took its consent back: what was
+ * concluded is kept, and the work with the child does not go on by itself.
+ */
+export const closeAssessment = async (
+  tx: Tx,
+  record: (fact: AuditFact) => void,
+  access: ChildAccess,
+  settings: ClinicSettings,
+): Promise<void> => {
+  const episode = await findEpisode(access, tx)
+  if (episode?.state !== 'assessing' || !stateChoices(access, episode.state).includes('formulated')) return
+  if (!(await isConsentGiven(access, 'assessment_treatment', tx))) return
+  const reason = 'The conclusion of the assessment was signed'
+  await moveEpisode(tx, record, access, episode, { to: 'formulated', reason, settings })
 }
 
 const moveReview = async (

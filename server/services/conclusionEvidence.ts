@@ -1,0 +1,65 @@
+import { evidenceChoice, reportCautions, type EvidenceRow } from '../../shared/conclusionEvidence.ts'
+import type { ConclusionContent, EvidenceChoice, EvidenceLink } from '../../shared/conclusions.ts'
+import { ageInYears } from '../../shared/days.ts'
+import { handProfileRows } from '../../shared/handProfile.ts'
+import { handContradictions, handStatements, statementText } from '../../shared/handStatements.ts'
+import { compareInformants } from '../../shared/informants.ts'
+import type { LateralLineRow } from '../../shared/lateralLine.ts'
+import type { ChildAccess } from '../access/childAccess.ts'
+import { findChildFacts } from '../queries/childFacts.ts'
+import { listLockedHandEvidence } from '../queries/handEvidence.ts'
+
+/** What the measures of a child say, side by side. */
+export interface HandFindings {
+  lateralLine: LateralLineRow[]
+  statements: string[]
+  citations: string[]
+  cautions: string[]
+}
+
+const each = (texts: readonly string[]) => [...new Set(texts)]
+
+/** The whole hand profile of a child as far as it is locked. */
+export const readHandFindings = async (access: ChildAccess): Promise<HandFindings> => {
+  const { birthDate } = await findChildFacts(access)
+  const { responses, measures } = await listLockedHandEvidence(access)
+  const rows = handProfileRows(responses, measures)
+  const newest = rows
+    .map(({ occasion }) => occasion)
+    .toSorted()
+    .at(-1)
+  const statements = handStatements(rows, {
+    ageYears: newest === undefined ? null : ageInYears(birthDate, newest),
+    informants: compareInformants(responses),
+  })
+  return {
+    lateralLine: rows.map(({ opens: _opens, ...row }) => row),
+    statements: statements.map(statementText),
+    citations: each(rows.map(({ opens }) => opens.citation)),
+    cautions: each([...reportCautions, ...rows.flatMap(({ opens }) => opens.cautions)]),
+  }
+}
+
+/** What does not agree, as the therapist is shown it before the signature. */
+export const contradictionsOf = (
+  { lateralLine }: Pick<HandFindings, 'lateralLine'>,
+  { handPreference }: Pick<ConclusionContent, 'handPreference'>,
+): string[] => handContradictions(lateralLine, handPreference)
+
+const isSame = (a: EvidenceLink, b: EvidenceLink) => a.kind === b.kind && a.id === b.id
+
+/** What may be chosen: everything that no newer one replaced, and whatever this draft names already. */
+export const evidenceChoices = (
+  rows: readonly EvidenceRow[],
+  chosen: readonly EvidenceLink[],
+): EvidenceChoice[] =>
+  rows.filter((row) => !row.superseded || chosen.some((link) => isSame(link, row))).map(evidenceChoice)
+
+/** The chosen evidence in words; null when a piece is not a closed one of this child. */
+export const chosenEvidence = (
+  rows: readonly EvidenceRow[],
+  chosen: readonly EvidenceLink[],
+): EvidenceChoice[] | null => {
+  const found = chosen.map((link) => rows.find((row) => isSame(link, row)))
+  return found.every((row) => row !== undefined) ? found.map(evidenceChoice) : null
+}
