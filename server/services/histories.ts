@@ -11,6 +11,7 @@ import {
 } from '../../shared/histories.ts'
 import { newlyRaised } from '../../shared/redFlags.ts'
 import { redFlagsOfHistory, urgentWordsFor } from '../../shared/redFlagSources.ts'
+import type { ChildRelation } from '../../shared/roles.ts'
 import type { Actor } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
@@ -43,22 +44,30 @@ export interface NewHistory {
   replacesId: string | null
 }
 
+/** Families answer their own histories and therapists write down theirs; nobody else changes either. */
+const relationTo = ({ informant }: { informant: HistoryInformant }): ChildRelation =>
+  informant === 'guardian' ? 'guardian' : 'assignedTherapist'
+
+const historyFact = (
+  history: { id: string; childId: string; informant: HistoryInformant },
+  action: string,
+): AuditFact => ({
+  action: `history.${action}`,
+  objectType: 'history',
+  objectId: history.id,
+  childId: history.childId,
+  relation: relationTo(history),
+})
+
+const insertHistory = async (tx: Tx, id: string, details: HistoryDetails, begun: NewHistory) => {
+  await tx.insert(History, { ...begun, id, details, lockedAt: null, lockedById: null, createdAt: now() })
+}
+
 /** Begins a history in which nothing is answered. Answers its id; its version is 1. The caller checks consent. */
-export const beginHistory = async (
-  tx: Tx,
-  record: Record,
-  begun: NewHistory,
-  id: string = randomUUID(),
-): Promise<string> => {
-  await tx.insert(History, {
-    ...begun,
-    id,
-    details: emptyHistory,
-    lockedAt: null,
-    lockedById: null,
-    createdAt: now(),
-  })
-  record({ action: 'history.started', objectType: 'history', objectId: id, childId: begun.childId })
+export const beginHistory = async (tx: Tx, record: Record, begun: NewHistory): Promise<string> => {
+  const id = randomUUID()
+  await insertHistory(tx, id, emptyHistory, begun)
+  record(historyFact({ ...begun, id }, 'started'))
   return id
 }
 
@@ -97,7 +106,7 @@ export const saveHistory = async (
     ...(respondentName !== undefined && { respondentName }),
     ...(answeredOn !== undefined && { answeredOn }),
   })
-  record({ action: 'history.changed', objectType: 'history', objectId: history.id, childId: history.childId })
+  record(historyFact(history, 'changed'))
   const flags = redFlagsOfHistory(details, child)
   const fresh = newlyRaised(redFlagsOfHistory(history.details, child), flags).map(({ id }) => id)
   await raiseFlags(tx, record, {
@@ -107,6 +116,7 @@ export const saveHistory = async (
     flags,
     fresh,
     raisedById: byId,
+    relation: relationTo(history),
   })
 }
 
@@ -130,13 +140,14 @@ export const lockHistory = async (
       [`${part}.enjoys`]: 'Write what the child enjoys first: letters and goals begin with it',
     })
   await updateIfCurrent(tx, History, history.id, version, { lockedAt: now(), lockedById })
-  record({ action: 'history.locked', objectType: 'history', objectId: history.id, childId: history.childId })
+  record(historyFact(history, 'locked'))
   await raiseFlags(tx, record, {
     childId: history.childId,
     origin: 'history',
     originId: history.id,
     flags: redFlagsOfHistory(history.details, await childOf(tx, history.childId)),
     raisedById: lockedById,
+    relation: relationTo(history),
   })
 }
 
@@ -191,30 +202,20 @@ export const startHistory = async (
   await requirePastDay(access, 'answeredOn', 'The date it was told', answeredOn)
   return transact(actor, (tx, record) => {
     const request = ['history', access.childId, { respondentName, answeredOn, replacesId }]
-    const factOf = (id: string): AuditFact => ({
-      action: 'history.asked_for',
-      objectType: 'history',
-      objectId: id,
-      childId: access.childId,
-      relation: access.relation,
-    })
+    const factOf = (id: string) =>
+      historyFact({ id, childId: access.childId, informant: 'therapist' }, 'started')
     return createOnce(tx, actor, record, { key, request }, factOf, async (id) => {
       await requireConsent(tx, access, 'assessment_treatment')
       const details = replacesId === null ? emptyHistory : await checkReplaced(tx, access, replacesId)
-      await tx.insert(History, {
-        id,
+      await insertHistory(tx, id, details, {
         childId: access.childId,
         informant: 'therapist',
         respondentName,
         answeredOn,
-        details,
         requestId: null,
         guardianId: null,
         startedById: access.viewer.id,
-        lockedAt: null,
-        lockedById: null,
         replacesId,
-        createdAt: now(),
       })
     })
   })
@@ -266,13 +267,7 @@ export const closeHistory = (actor: Actor, access: ChildAccess, id: string, vers
 /** Removes a history that a therapist began and never closed. What it raised stays on the record. */
 export const discardHistory = (actor: Actor, access: ChildAccess, id: string): Promise<void> =>
   transact(actor, async (tx, record) => {
-    await openHistory(tx, access, id)
+    const history = await openHistory(tx, access, id)
     await tx.delete(History, id)
-    record({
-      action: 'history.discarded',
-      objectType: 'history',
-      objectId: id,
-      childId: access.childId,
-      relation: access.relation,
-    })
+    record(historyFact(history, 'discarded'))
   })

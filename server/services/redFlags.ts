@@ -3,6 +3,7 @@ import type { AlertOrigin } from '../../shared/alerts.ts'
 import { addWorkingDays, compareDays, type Day } from '../../shared/days.ts'
 import { attentionOf, type RedFlagRow } from '../../shared/redFlagRows.ts'
 import type { RedFlag } from '../../shared/redFlags.ts'
+import type { ChildRelation } from '../../shared/roles.ts'
 import { alertTask } from '../../shared/tasks.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
@@ -28,6 +29,8 @@ export interface RaisedFlags {
   fresh?: readonly string[]
   /** Null when nobody signed in gave the answer. */
   raisedById: string | null
+  /** How the person who gave the answer stands to the child, for the trail. */
+  relation?: ChildRelation | null
 }
 
 interface Standing {
@@ -47,7 +50,7 @@ interface Standing {
 export const raiseFlags = async (
   tx: Tx,
   record: (fact: AuditFact) => void,
-  { childId, origin, originId, flags, fresh = [], raisedById }: RaisedFlags,
+  { childId, origin, originId, flags, fresh = [], raisedById, relation = null }: RaisedFlags,
 ): Promise<string[]> => {
   if (flags.length === 0) return []
   // Two answers of one child come one after the other, so that neither raises what the other just did.
@@ -70,14 +73,14 @@ export const raiseFlags = async (
     const added = open ? `${open.text} Reported since: ${flag.words}` : flag.words
     if (open && [...added].length <= longestText) {
       await updateIfCurrent(tx, Alert, open.id, open.version, { text: added })
-      record({ action: 'alert.added_to', objectType: 'alert', objectId: open.id, childId })
+      record({ action: 'alert.added_to', objectType: 'alert', objectId: open.id, childId, relation })
       touched.push(open.id)
       continue
     }
     const id = randomUUID()
     await insertAlert(tx, { id, childId, origin, originId, raisedById }, flag)
     const detail = { flag: flag.id, origin }
-    record({ action: 'alert.raised', objectType: 'alert', objectId: id, childId, detail })
+    record({ action: 'alert.raised', objectType: 'alert', objectId: id, childId, relation, detail })
     touched.push(id)
     raised.push(flag)
   }

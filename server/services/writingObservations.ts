@@ -54,6 +54,7 @@ export const addObservation = async (
           writingHand,
         }),
         raisedById: access.viewer.id,
+        relation: access.relation,
       })
     })
   })

@@ -114,6 +114,9 @@ export const accessRows: readonly AccessRow[] = [
   child('PUT …/identity', ['T1', 'L', 'AD'], ['E1', 'G1']),
   child('PATCH …/care', ['T1', 'L'], ['E1', 'G1', 'AD']),
   child('POST …/state', ['T1', 'L'], ['E1', 'G1', 'AD']),
+  // Warning signs are part of the clinical record, which therapist and lead may change.
+  child('GET …/alerts', ['T1', 'L'], ['E1', 'G1', 'AD']),
+  child('POST …/alerts', ['T1', 'L'], ['E1', 'G1', 'AD']),
   child('POST …/alerts/:id/action', ['T1', 'L'], ['E1', 'G1', 'AD']),
   // Caseload assignment: staff who see the child read it, a carer sees the therapist's name, only the lead changes it
   child('POST …/allocation', ['L'], ['T1', 'AD', 'G1']),
@@ -141,6 +144,14 @@ export const accessRows: readonly AccessRow[] = [
   // The matrix grants no deletion; throwing away one's own unlocked form is read as part of U.
   child('DELETE …/questionnaires/:id', ['T1'], ['L']),
   child('POST …/questionnaires/:id/lock', ['T1'], ['L']),
+
+  // Histories: the family's questionnaire on the child, so as questionnaire responses. A carer's own form has its rooms.
+  child('GET …/histories', ['T1', 'L']),
+  child('POST …/histories', ['T1'], ['L']),
+  child('GET …/histories/:id', ['T1', 'L']),
+  child('PUT …/histories/:id', ['T1'], ['L']),
+  child('DELETE …/histories/:id', ['T1'], ['L']),
+  child('POST …/histories/:id/lock', ['T1'], ['L']),
 
   // Observations
   child('GET …/writing-observations', ['T1', 'L']),
@@ -237,4 +248,10 @@ export const accessRows: readonly AccessRow[] = [
   // Clinic settings: the lead decides; an administrator may see them
   area('GET /api/settings', office, 0),
   area('PUT /api/settings', ['clinicLead']),
+  // Questionnaires as the clinic asks them belong to its settings: the lead decides, staff see what there is to ask. They
+  // name no child and no person.
+  area('GET /api/forms', staff, 0),
+  area('POST /api/forms', ['clinicLead']),
+  within('POST /api/forms/:id/retire', ['clinicLead'], 'clinic', ['L']),
+  within('POST /api/forms/:id/restore', ['clinicLead'], 'clinic', ['L']),
 ]

@@ -15,6 +15,7 @@ import { signedInAs } from './app.ts'
 import { buildAdvice, buildAlert, buildReferral, buildReply } from './clinicRows.ts'
 import { buildChild, buildClass, buildGuardian, buildUser, giveConsent } from './factories.ts'
 import { insertRow } from './insertRow.ts'
+import { buildHistory } from './histories.ts'
 import { buildMeasure } from './measures.ts'
 import { buildGoal, buildNote, buildObservation, buildQuestionnaire, buildSample } from './records.ts'
 import { buildTask } from './tasks.ts'
@@ -118,7 +119,7 @@ const buildSceneChild = async (
       contacts,
       clinical: [
         ...['Strengthword', 'Saidword', 'Planword', 'Signedword', 'Commentword', 'Alertword', 'Observedword'],
-        ...['Sampleword', 'Taskword'],
+        ...['Sampleword', 'Taskword', 'Enjoysword'],
       ].map((word) => word + key),
       goals: [`Goalword${key}`],
       advice: [`Becauseword${key}`, `Replyword${key}`],
@@ -136,6 +137,7 @@ const fillRecord = async (of: SceneChild, teacher: User, office: User, picture: 
   await buildQuestionnaire(child, therapist, { locked: false, comment: `Commentword${key}` })
   await buildQuestionnaire(child, therapist, { locked: true, comment: `Commentword${key}` })
   await buildMeasure(child, therapist, { locked: true, kind: 'sides', comment: `Commentword${key}` })
+  await buildHistory(child, therapist, { locked: true, details: { enjoys: `Enjoysword${key}` } })
   await buildObservation(child, therapist, { note: `Observedword${key}` })
   await buildNote(child, therapist, 'draft', { said: `Saidword${key}`, plan: `Planword${key}` })
   await buildNote(child, therapist, 'signed', { plan: `Signedword${key}` })

@@ -5,6 +5,8 @@ import type { AccessRow, Expected, Standing } from '../server/accessFixture.ts'
 import { accountCalls } from './accessCalls/account.ts'
 import type { Call, Calls } from './accessCalls/call.ts'
 import { childCalls } from './accessCalls/child.ts'
+import { formCalls } from './accessCalls/forms.ts'
+import { historyCalls } from './accessCalls/histories.ts'
 import { letterCalls } from './accessCalls/letters.ts'
 import { measureCalls } from './accessCalls/measures.ts'
 import { recordCalls } from './accessCalls/record.ts'
@@ -17,6 +19,8 @@ const calls: Calls = {
   ...accountCalls,
   ...childCalls,
   ...recordCalls,
+  ...formCalls,
+  ...historyCalls,
   ...measureCalls,
   ...letterCalls,
   ...roomCalls,
