@@ -132,8 +132,8 @@ const sideGaps = (details: SidesDetails): string[] => {
 const seatingGaps = (details: SeatingDetails): string[] => {
   const names = seatingGroups
     .flatMap(({ fields }) => fields)
-    // A measure in shoes has nothing to add; stature is asked for only without the knee.
-    .filter(({ name }) => name !== 'shoeCm' && (name !== 'statureCm' || details.poplitealCm === null))
+    // A measure in shoes has nothing to add, and stature only stands in for the knee.
+    .filter(({ name }) => name !== 'shoeCm' && name !== 'statureCm')
     .filter(({ name }) => details[name] === null)
     .map(({ name }) => seatingLabels[name].toLowerCase())
   return names.length === 0 ? [] : [`Not measured: ${names.join(', ')}.`]
@@ -147,7 +147,9 @@ export function gapsOf(details: MeasureDetails): string[] {
       const lost = details.reaches.filter(({ hand }) => hand === null).length
       return [
         ...(open > 0 ? [`${open} of ${details.cardsPerPlace * 7} reaches are not recorded.`] : []),
-        ...(lost > 0 ? [`${lost} ${lost === 1 ? 'reach was' : 'reaches were'} lost and stay out.`] : []),
+        ...(lost > 0
+          ? [`${lost} ${lost === 1 ? 'reach was lost and stays' : 'reaches were lost and stay'} out.`]
+          : []),
       ]
     }
     case 'sides':

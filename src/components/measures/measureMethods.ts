@@ -12,7 +12,6 @@ export interface MeasureMethod {
   sources: string[]
 }
 
-const comparedWithThemselves = 'Compared with the child only: no table of times or counts by age is built in.'
 const neighbourCaution =
   'A left-hander wants the left elbow free: the left end of a shared table, or no right-hander on the left. A side tablet made for the right hand does not suit.'
 const skillSources = [
@@ -99,6 +98,6 @@ export function cautionsOf(score: MeasureScore): string[] {
     case 'seating':
       return [...seatingCautionsOf(score), neighbourCaution]
     default:
-      return [comparedWithThemselves, ...skillCautions(score), neverAveraged]
+      return [...skillCautions(score), neverAveraged]
   }
 }
