@@ -63,6 +63,10 @@ const measure = (label: string, min: number, max: number, unit: string) =>
     .min(min, `${label}: ${min} to ${max} ${unit}`)
     .max(max, `${label}: ${min} to ${max} ${unit}`)
 
+/** A measure that came later: forms and rows from before it have no such field, which reads as "not looked at". */
+const laterMeasure = (label: string, min: number, max: number, unit: string) =>
+  measure(label, min, max, unit).optional().default(null)
+
 export const writingObservationSchema = body({
   observedOn: dayField('The date'),
   writingHand: optionalChoice('the writing hand', ['left', 'right', 'swaps'] as const),
@@ -70,9 +74,12 @@ export const writingObservationSchema = body({
   paperTiltDegrees: measure('Paper turned', -60, 60, 'degrees, plus is clockwise'),
   otherHandSteadies: optionalChoice('whether the other hand steadies', steadyings),
   wristPosture: optionalChoice('the wrist', wristPostures),
+  /** Estimated; minus is bent towards the palm. */
+  wristExtensionDegrees: laterMeasure('Wrist bent back', -40, 60, 'degrees, minus is bent forward'),
   grip: optionalChoice('the grip', grips),
   fingerToTipMm: measure('Finger to tip', 5, 70, 'mm'),
   pressure: optionalChoice('the pressure', pressures),
+  minutesWritten: laterMeasure('Minutes written', 1, 60, 'minutes'),
   painBefore: measure('Pain before', 0, 10, ''),
   painAfter: measure('Pain after ten minutes', 0, 10, ''),
   deskType: optionalChoice('the desk', deskTypes),
@@ -84,6 +91,9 @@ export const writingObservationSchema = body({
   note: optionalText('The note', { max: 1000 }),
 })
 export type WritingObservationDetails = InferType<typeof writingObservationSchema>
+
+/** Fields that rows from before them do not have. */
+export const laterObserved = { wristExtensionDegrees: null, minutesWritten: null } as const
 
 export interface WritingObservationView extends WritingObservationDetails {
   id: string

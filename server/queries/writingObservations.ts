@@ -1,4 +1,4 @@
-import type { WritingObservationDetails } from '../../shared/writingObservations.ts'
+import { laterObserved, type WritingObservationDetails } from '../../shared/writingObservations.ts'
 import { isId } from '../../shared/fields.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { notFound } from '../errors.ts'
@@ -28,7 +28,10 @@ const selectObservations = async (
      WHERE ${scope.sql} AND ${condition} ORDER BY o.observedOn DESC, o.recordedAt DESC, o.id`,
     { ...scope.parameters, ...parameters },
   )
-  return rows.map((row) => ({ ...row, details: fromJson<WritingObservationDetails>(row.details) }))
+  return rows.map((row) => ({
+    ...row,
+    details: { ...laterObserved, ...fromJson<WritingObservationDetails>(row.details) },
+  }))
 }
 
 /** Observations of a child's writing, the newest first. */

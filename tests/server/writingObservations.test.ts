@@ -37,9 +37,11 @@ const seen = (given: Partial<WritingObservationDetails> = {}): WritingObservatio
   paperTiltDegrees: 25,
   otherHandSteadies: 'partly',
   wristPosture: 'below_line',
+  wristExtensionDegrees: -10,
   grip: 'dynamic_tripod',
   fingerToTipMm: 28.5,
   pressure: 'medium',
+  minutesWritten: 10,
   painBefore: 0,
   painAfter: 2,
   deskType: 'double',
@@ -78,6 +80,25 @@ describe('a writing observation', () => {
     expect(body).toMatchObject({ painBefore: 0, paperTiltDegrees: 0, painAfter: null, grip: null })
   })
 
+  it('of before wrist and minutes were asked for reads as not looked at', async () => {
+    const { wristExtensionDegrees: _wrist, minutesWritten: _minutes, ...before } = seen()
+    expect((await anna.post(at()).send(before)).body).toEqual(
+      expect.objectContaining({ wristExtensionDegrees: null, minutesWritten: null }),
+    )
+    await database().query(
+      `INSERT INTO writing_observations (id, childId, observedOn, details, observedById, recordedAt)
+       VALUES (?, ?, '2026-01-15', ?, ?, '2026-01-15 10:00:00')`,
+      [randomUUID(), child.id, JSON.stringify({ ...before, observedOn: '2026-01-15' }), therapist.id],
+    )
+    expect((await list())[1]).toEqual(
+      expect.objectContaining({
+        observedOn: '2026-01-15',
+        wristExtensionDegrees: null,
+        minutesWritten: null,
+      }),
+    )
+  })
+
   it('needs at least one thing that was seen', async () => {
     const refused = await anna.post(at()).send(nothing)
     expect([refused.status, Object.keys(refused.body.fields)]).toEqual([422, ['form']])
@@ -85,6 +106,8 @@ describe('a writing observation', () => {
 
   it.each([
     ['a tilt that cannot be', { paperTiltDegrees: 61 }, 'paperTiltDegrees'],
+    ['a wrist that cannot be', { wristExtensionDegrees: -41 }, 'wristExtensionDegrees'],
+    ['no minutes', { minutesWritten: 0 }, 'minutesWritten'],
     ['pain beyond the scale', { painAfter: 11 }, 'painAfter'],
     ['a grip nobody knows', { grip: 'left' }, 'grip'],
     ['text for a number', { leftClearanceCm: '40' }, 'leftClearanceCm'],

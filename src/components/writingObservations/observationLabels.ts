@@ -46,9 +46,20 @@ export function observedFacts(seen: WritingObservationView): { label: string; va
       value: seen.otherHandSteadies && steadyingLabels[seen.otherHandSteadies],
     },
     { label: 'Hand to the line', value: seen.wristPosture && wristPostureLabels[seen.wristPosture] },
+    {
+      label: 'Wrist bent back',
+      value:
+        seen.wristExtensionDegrees === null
+          ? null
+          : signed(seen.wristExtensionDegrees, 'forward', 'back', 'degrees'),
+    },
     { label: 'Grip', value: seen.grip && gripLabels[seen.grip] },
     { label: 'Finger to tip', value: seen.fingerToTipMm === null ? null : `${seen.fingerToTipMm} mm` },
     { label: 'Pressure', value: seen.pressure && pressureLabels[seen.pressure] },
+    {
+      label: 'Minutes written',
+      value: seen.minutesWritten === null ? null : `${seen.minutesWritten} minutes`,
+    },
     { label: 'Pain before', value: seen.painBefore === null ? null : `${seen.painBefore} of 10` },
     { label: 'Pain after ten minutes', value: seen.painAfter === null ? null : `${seen.painAfter} of 10` },
     { label: 'Desk', value: seen.deskType && deskTypeLabels[seen.deskType] },
