@@ -9,8 +9,10 @@ import { classRoutes } from './classes.ts'
 import { conclusionRoutes } from './conclusions.ts'
 import { consentRoutes } from './consents.ts'
 import { familyRoutes } from './family.ts'
+import { formRoutes } from './forms.ts'
 import { goalRoutes } from './goals.ts'
 import { guardianRoutes } from './guardians.ts'
+import { handProfileRoutes } from './handProfile.ts'
 import { historyRoutes } from './histories.ts'
 import { letterRoutes } from './letters.ts'
 import { measureRoutes } from './measures.ts'
@@ -46,8 +48,10 @@ export const nounRoutes = (settings: RouteSettings): Router[] => [
   conclusionRoutes(),
   consentRoutes(),
   familyRoutes(),
+  formRoutes(),
   goalRoutes(),
   guardianRoutes(settings),
+  handProfileRoutes(),
   historyRoutes(),
   letterRoutes(settings),
   measureRoutes(),
