@@ -4,7 +4,7 @@ import type { Role } from '../../shared/roles.ts'
  * Who may do what, route by route, written by hand from the clinic's access matrix. It is not derived from the code's
  * policies: where the two differ, the sweep (accessSweep.test.ts) fails.
  *
- * Emergency grants are not built yet, so the holder of one is left out. Teachers' and carers' own questionnaires,
+ * Emergency grants are not built yet, so the holder of one is left out. Teachers' and carers' own
  * samples and referrals, goal ratings and comments are not built either: until they are, the record's own routes know
  * neither teacher nor carer.
  */
@@ -230,6 +230,26 @@ export const accessRows: readonly AccessRow[] = [
   within('GET /api/my/letters/:id', ['guardian'], 'letter', ['G1']),
   within('GET /api/my/letters/:id/pdf', ['guardian'], 'letter', ['G1']),
   within('GET /api/my/deliveries/:id', ['guardian'], 'letter', ['G1']),
+
+  // Own forms of carers and teachers, signed in: a request belongs to the one person who was asked. The therapist asks and
+  // the lead reads what was asked (their row of questionnaire responses).
+  child('GET …/answer-requests', ['T1', 'L']),
+  child('GET …/answer-choices', ['T1'], ['L']),
+  child('POST …/answer-requests', ['T1'], ['L']),
+  child('POST …/answer-requests/:id/cancel', ['T1'], ['L']),
+  child('POST …/answer-requests/:id/remind', ['T1'], ['L']),
+  area('GET /api/my/to-answer', ['guardian']),
+  child('GET /api/my/children/:childId/answer-requests/:id', ['G1']),
+  child('PUT /api/my/children/:childId/answer-requests/:id', ['G1']),
+  child('POST /api/my/children/:childId/answer-requests/:id/send', ['G1']),
+  area('GET /api/pupils/to-answer', ['teacher']),
+  child('GET /api/pupils/:childId/answer-requests/:id', ['E1']),
+  child('PUT /api/pupils/:childId/answer-requests/:id', ['E1']),
+  child('POST /api/pupils/:childId/answer-requests/:id/send', ['E1']),
+  // A carer without a sign-in: the link's secret and the child's birth date are the proof, checked in answerLinks.test.ts.
+  open('POST /api/answer-links/open'),
+  open('PUT /api/answer-links'),
+  open('POST /api/answer-links/send'),
 
   // Schools, classes and who teaches them
   area('GET /api/schools', staff, 0),

@@ -3,6 +3,7 @@ import { database } from '../../server/dataSource.ts'
 import type { ChildRelation } from '../../shared/roles.ts'
 import type { AccessRow, Expected, Standing } from '../server/accessFixture.ts'
 import { accountCalls } from './accessCalls/account.ts'
+import { answerCalls } from './accessCalls/answers.ts'
 import type { Call, Calls } from './accessCalls/call.ts'
 import { childCalls } from './accessCalls/child.ts'
 import { formCalls } from './accessCalls/forms.ts'
@@ -24,6 +25,7 @@ const calls: Calls = {
   ...measureCalls,
   ...letterCalls,
   ...roomCalls,
+  ...answerCalls,
 }
 
 /** Names of parameters do not matter: only where they stand. */
