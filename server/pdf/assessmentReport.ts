@@ -40,7 +40,7 @@ export async function renderAssessmentReport(report: ReportForPrint): Promise<Bu
   )
   const bytes = collect(pdf)
   registerFonts(pdf)
-  assertPrintable(pdf, textsOf(report))
+  assertPrintable(pdf, textsOfReport(report))
   const pages = createPages(pdf)
   printHead(pdf, pages, report)
   printConclusion(pdf, pages, report)
@@ -58,7 +58,7 @@ const rowTexts = ({ measure, informant, basis, caution, cutOffs }: LateralLineRo
   [measure, informant, basis, caution, cutOffs?.name ?? null].filter((text) => text !== null)
 
 /** Every text of the report that is not our own wording here. */
-const textsOf = ({ content, evidence, countersigned }: ReportForPrint): string[] => {
+export const textsOfReport = ({ content, evidence, countersigned }: ReportForPrint): string[] => {
   const { head, cautions, contradictions, statements, citations } = evidence
   const { strengths, mattersToChild, reasoning, planDetail, aboutDisagreements } = content
   return [

@@ -1,11 +1,10 @@
 import { evidenceChoice, reportCautions, type EvidenceRow } from '../../shared/conclusionEvidence.ts'
 import type { ConclusionContent, EvidenceChoice, EvidenceLink } from '../../shared/conclusions.ts'
-import { ageInYears } from '../../shared/days.ts'
-import { handProfileRows } from '../../shared/handProfile.ts'
-import { handContradictions, handStatements, statementText } from '../../shared/handStatements.ts'
-import { compareInformants } from '../../shared/informants.ts'
+import { handProfileOf, withoutDetails } from '../../shared/handProfile.ts'
+import { handContradictions, statementText } from '../../shared/handStatements.ts'
 import type { LateralLineRow } from '../../shared/lateralLine.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
+import type { Tx } from '../dataSource.ts'
 import { findChildFacts } from '../queries/childFacts.ts'
 import { listLockedHandEvidence } from '../queries/handEvidence.ts'
 
@@ -19,24 +18,19 @@ export interface HandFindings {
 
 const each = (texts: readonly string[]) => [...new Set(texts)]
 
-/** The whole hand profile of a child as far as it is locked. */
-export const readHandFindings = async (access: ChildAccess): Promise<HandFindings> => {
-  const { birthDate } = await findChildFacts(access)
-  const { responses, measures } = await listLockedHandEvidence(access)
-  const rows = handProfileRows(responses, measures)
-  const newest = rows
-    .map(({ occasion }) => occasion)
-    .toSorted()
-    .at(-1)
-  const statements = handStatements(rows, {
-    ageYears: newest === undefined ? null : ageInYears(birthDate, newest),
-    informants: compareInformants(responses),
-  })
+/**
+ * The whole hand profile of a child as far as it is locked. Inside a transaction everything is read through it: asking
+ * for a second connection while holding one would stop the server once enough people do so.
+ */
+export const readHandFindings = async (access: ChildAccess, tx?: Tx): Promise<HandFindings> => {
+  const { birthDate } = await findChildFacts(access, tx)
+  const { responses, measures } = await listLockedHandEvidence(access, tx)
+  const { lateralLine, statements } = handProfileOf(responses, measures, birthDate)
   return {
-    lateralLine: rows.map(({ opens: _opens, ...row }) => row),
+    lateralLine: lateralLine.map(withoutDetails),
     statements: statements.map(statementText),
-    citations: each(rows.map(({ opens }) => opens.citation)),
-    cautions: each([...reportCautions, ...rows.flatMap(({ opens }) => opens.cautions)]),
+    citations: each(lateralLine.map(({ opens }) => opens.citation)),
+    cautions: each([...reportCautions, ...lateralLine.flatMap(({ opens }) => opens.cautions)]),
   }
 }
 

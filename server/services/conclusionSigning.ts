@@ -1,7 +1,6 @@
 import { IsNull } from 'typeorm'
 import { conclusionFindings, missingForSigning, signingProblems } from '../../shared/conclusionChecks.ts'
 import {
-  conclusionTexts,
   type ConclusionCheck,
   type ConclusionContent,
   type SignedEvidence,
@@ -17,6 +16,7 @@ import type { Tx } from '../dataSource.ts'
 import { Conclusion } from '../entities/Conclusion.ts'
 import { Task } from '../entities/Task.ts'
 import { AppError, conflict, forbidden, invalid } from '../errors.ts'
+import { textsOfReport, type ReportForPrint } from '../pdf/assessmentReport.ts'
 import { unprintableIn } from '../pdf/letterFonts.ts'
 import { canChangeConclusion, mayCountersignConclusion } from '../policies/conclusions.ts'
 import { listEvidence, listUnfinished } from '../queries/conclusionEvidence.ts'
@@ -69,7 +69,7 @@ const snapshot = async (
   settings: ClinicSettings,
 ): Promise<SignedEvidence> => {
   const child = await findReportChild(access, tx)
-  const findings = await readHandFindings(access)
+  const findings = await readHandFindings(access, tx)
   const { clinicName, clinicAddress, clinicPhone, timeZone } = settings
   const calledOtherwise = child.preferredName !== null && child.preferredName !== child.givenName
   return {
@@ -90,15 +90,9 @@ const snapshot = async (
   }
 }
 
-/** Every text that the report prints: looked through before the signature, for afterwards nothing can be reworded. */
-const requirePrintable = (content: ConclusionContent, signed: SignedEvidence) => {
-  const { clinic, ...names } = signed.head
-  const odd = unprintableIn([
-    ...conclusionTexts.map((field) => content[field]).filter((text) => text !== null),
-    ...[...Object.values(names), ...Object.values(clinic)],
-    ...[...signed.contradictions, ...signed.statements, ...signed.cautions, ...signed.citations],
-    ...signed.evidence.map(({ words }) => words),
-  ])
+/** The report must be printable before it is signed, for afterwards nothing can be reworded. */
+const requirePrintable = (report: ReportForPrint): void => {
+  const odd = unprintableIn(textsOfReport(report))
   if (odd.length > 0)
     throw new AppError(
       422,
@@ -131,10 +125,11 @@ export const signConclusion = async (
       ...unfinishedProblem(await listUnfinished(access, tx)),
     }
     if (Object.keys(problems).length > 0) throw invalid(problems)
-    requirePrintable(content, evidence)
+    const signedAt = now()
+    requirePrintable({ content, evidence, signedAt: signedAt.toISOString(), countersigned: null })
 
     const state = access.viewer.newlyQualified ? 'awaiting_countersignature' : 'signed'
-    const patch = { state, evidence, authorId: access.viewer.id, signedAt: now() } as const
+    const patch = { state, evidence, authorId: access.viewer.id, signedAt } as const
     await updateIfCurrent(tx, Conclusion, id, version, patch)
     record({ ...conclusionFact(access, 'signed', id), detail: { state } })
     if (state === 'signed') await closeAssessment(tx, record, access, settings)
@@ -176,9 +171,15 @@ export const countersignConclusion = async (
     if (!mayCountersignConclusion(access, conclusion))
       throw forbidden('A second, experienced person countersigns: never the author.')
     if (conclusion.version !== version) throw new StaleWrite()
+    const { content, evidence, signedAt } = conclusion
+    if (evidence === null || signedAt === null)
+      throw new Error('A conclusion waits for its countersignature without what was signed')
+    const countersignedAt = now()
+    const countersigned = { by: access.viewer.displayName, at: countersignedAt.toISOString() }
+    requirePrintable({ content, evidence, signedAt: signedAt.toISOString(), countersigned })
     await updateIfCurrent(tx, Conclusion, id, version, {
       state: 'signed',
-      countersignedAt: now(),
+      countersignedAt,
       countersignedById: access.viewer.id,
     })
     await closeTask(tx, access)

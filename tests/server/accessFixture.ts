@@ -166,6 +166,18 @@ export const accessRows: readonly AccessRow[] = [
   child('DELETE …/measures/:id', ['T1'], ['L']),
   child('POST …/measures/:id/lock', ['T1'], ['L']),
 
+  // Conclusions rest on observations and follow their row: written and signed by the therapist, read by the lead; the
+  // countersignature is the lead's or an experienced colleague's, as for notes.
+  child('GET …/conclusions', ['T1', 'L']),
+  child('POST …/conclusions', ['T1'], ['L']),
+  child('GET …/conclusions/:id', ['T1', 'L']),
+  child('PUT …/conclusions/:id', ['T1'], ['L']),
+  child('DELETE …/conclusions/:id', ['T1'], ['L']),
+  child('GET …/conclusions/:id/check', ['T1', 'L']),
+  child('POST …/conclusions/:id/sign', ['T1'], ['L']),
+  child('POST …/conclusions/:id/countersign', ['T1', 'L']),
+  child('GET …/conclusions/:id/report.pdf', ['T1', 'L']),
+
   // Session notes: a draft is its author's; a signed one takes addenda and countersignatures of therapist and lead
   child('GET …/session-notes', ['T1', 'L']),
   child('POST …/session-notes', ['T1'], ['L']),

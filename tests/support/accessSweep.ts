@@ -8,6 +8,7 @@ import type { Call, Calls } from './accessCalls/call.ts'
 import { childCalls } from './accessCalls/child.ts'
 import { formCalls } from './accessCalls/forms.ts'
 import { historyCalls } from './accessCalls/histories.ts'
+import { conclusionCalls } from './accessCalls/conclusions.ts'
 import { letterCalls } from './accessCalls/letters.ts'
 import { measureCalls } from './accessCalls/measures.ts'
 import { recordCalls } from './accessCalls/record.ts'
@@ -23,6 +24,7 @@ const calls: Calls = {
   ...formCalls,
   ...historyCalls,
   ...measureCalls,
+  ...conclusionCalls,
   ...letterCalls,
   ...roomCalls,
   ...answerCalls,
