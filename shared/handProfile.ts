@@ -1,14 +1,14 @@
-import { compareDays, type Day } from './days.ts'
-import type { FormScore } from './forms.ts'
-import { handUseStandingLabels } from './handUse.ts'
-import type { HandStatement } from './sideStatements.ts'
-import type { InformantComparison } from './informants.ts'
+import { ageInYears, type Day } from './days.ts'
+import { handStatements } from './handStatements.ts'
+import { compareInformants, type InformantComparison } from './informants.ts'
 import type { HandProfileRow, LateralLineRow } from './lateralLine.ts'
+import { compareMeasureOccasions } from './measureOccasions.ts'
 import { measureRows, type LockedMeasure } from './measureRows.ts'
 import type { MeasureView } from './measures.ts'
-import type { FormComparison, MeasureComparison } from './occasions.ts'
+import { compareFormOccasions, type FormComparison, type MeasureComparison } from './occasions.ts'
 import { questionnaireRows, type LockedResponse } from './questionnaireRows.ts'
-import { informantLabels, type Informant, type QuestionnaireView } from './questionnaires.ts'
+import type { QuestionnaireView } from './questionnaires.ts'
+import type { HandStatement } from './sideStatements.ts'
 
 export interface HandProfileView {
   /** Preference first, then reaching, skill, foot, eye and ear; newest first within a track. */
@@ -41,44 +41,26 @@ export const handProfileRows = (
   ]
 }
 
-/** A locked hand-use response that no later one replaces. */
-export interface LockedHandUse {
-  id: string
-  answeredOn: Day
-  informant: Informant
-  score: Pick<
-    FormScore,
-    'quotient' | 'answered' | 'doesNotDo' | 'unanswered' | 'standing' | 'direction' | 'cutOffs'
-  >
-  /** ISO moment; tells two responses of one day apart. */
-  lockedAt: string
-}
+/** A row without what it opens to, for places that only point to the full picture. */
+export const withoutDetails = ({ opens: _opens, ...row }: HandProfileRow): LateralLineRow => row
 
-/** Rows of the lateral line for the hand-use questionnaire, newest first. Only the newest is `latest`. */
-export function handUseRows(responses: readonly LockedHandUse[]): LateralLineRow[] {
-  const newestFirst = responses.toSorted(
-    (a, b) => compareDays(b.answeredOn, a.answeredOn) || (a.lockedAt < b.lockedAt ? 1 : -1),
-  )
-  return newestFirst.map(({ id, answeredOn, informant, score }, index) => ({
-    id,
-    aspect: 'preference' as const,
-    track: `hand-use-10|${informant}`,
-    measure: 'Hand-use questionnaire',
-    occasion: answeredOn,
-    value: score.quotient,
-    side: score.direction === 'mixed' ? ('middle' as const) : score.direction,
-    interval: null,
-    chance: null,
-    basis: `${score.answered} of ${score.answered + score.doesNotDo + score.unanswered} activities answered`,
-    caution: score.standing === 'scorable' ? null : handUseStandingLabels[score.standing],
-    cutOffs: {
-      name: score.cutOffs.label,
-      left: score.cutOffs.left,
-      right: score.cutOffs.right,
-      inclusive: score.cutOffs.inclusive,
-    },
-    informant: informantLabels[informant],
-    latest: index === 0,
-    source: { kind: 'questionnaire' as const, id },
-  }))
+/** Everything that is worked out from locked answers and measures; `birthDate` tells the age at the newest of them. */
+export function handProfileOf(
+  responses: readonly LockedResponse[],
+  measures: readonly LockedMeasure[],
+  birthDate: Day,
+): Pick<HandProfileView, 'lateralLine' | 'statements' | 'informants' | 'occasions'> {
+  const lateralLine = handProfileRows(responses, measures)
+  const informants = compareInformants(responses)
+  const newest = lateralLine
+    .map(({ occasion }) => occasion)
+    .toSorted()
+    .at(-1)
+  const ageYears = newest === undefined ? null : ageInYears(birthDate, newest)
+  return {
+    lateralLine,
+    statements: handStatements(lateralLine, { ageYears, informants }),
+    informants,
+    occasions: { forms: compareFormOccasions(responses), measures: compareMeasureOccasions(measures) },
+  }
 }

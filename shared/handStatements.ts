@@ -1,110 +1,25 @@
+import type { HandPreference } from './conclusions.ts'
 import type { InformantComparison, InformantPair } from './informants.ts'
-import type { LateralLineRow, LateralSide } from './lateralLine.ts'
+import { rowName, type LateralLineRow } from './lateralLine.ts'
+import {
+  askedAndReached,
+  askedStatement,
+  chosenHand,
+  isSided,
+  pointsTo,
+  preferenceRows,
+  reachedStatement,
+} from './preferenceStatements.ts'
 import { informantLabels } from './questionnaires.ts'
-import { crossingExpectedFrom, reachingCautions } from './reaching.ts'
+import { crossingExpectedFrom } from './reaching.ts'
 import type { Hand } from './roles.ts'
-import { idsOf, namedRows, sideStatements, skillStatements, type HandStatement } from './sideStatements.ts'
-
-type Sided = LateralLineRow & { side: LateralSide }
-
-const isSided = (row: LateralLineRow): row is Sided => row.side !== null
-const pointsTo = (rows: readonly LateralLineRow[], hand: Hand) => rows.filter((row) => row.side === hand)
-
-/** Newest rows that say which hand is chosen: what people answered and what reaching showed. */
-export const preferenceRows = (rows: readonly LateralLineRow[]): LateralLineRow[] =>
-  rows.filter((row) => row.latest && (row.aspect === 'preference' || row.aspect === 'reaching'))
-
-const askedAndReached = (rows: readonly LateralLineRow[]) => {
-  const chosen = preferenceRows(rows).filter(isSided)
-  return {
-    asked: chosen.filter((row) => row.aspect === 'preference'),
-    reached: chosen.find((row) => row.aspect === 'reaching') ?? null,
-  }
-}
-
-/** The one hand that rows point to, none of them to the other; null when they point both ways or to neither. */
-function oneHand(rows: readonly LateralLineRow[]): Hand | null {
-  const [left, right] = [pointsTo(rows, 'left').length > 0, pointsTo(rows, 'right').length > 0]
-  return left === right ? null : left ? 'left' : 'right'
-}
-
-/** The hand that what was asked and seen points to; null where they point both ways, to neither, or say nothing yet. */
-export const chosenHand = (rows: readonly LateralLineRow[]): Hand | null => oneHand(preferenceRows(rows))
-
-function askedStatement(asked: readonly Sided[]): HandStatement | null {
-  const [first] = asked
-  if (!first)
-    return { kind: 'open', text: 'No questionnaire has been scored yet.', because: null, rowIds: [] }
-  if (asked.length < 2) return null
-  const rowIds = idsOf(asked)
-  if (asked.every((row) => row.side === first.side))
-    return {
-      kind: 'agrees',
-      text:
-        first.side === 'middle'
-          ? `All ${asked.length} questionnaires lie between the cut-offs.`
-          : `All ${asked.length} questionnaires point to the ${first.side} hand.`,
-      because: null,
-      rowIds,
-    }
-  const groups = [
-    { words: 'To the left', rows: pointsTo(asked, 'left') },
-    { words: 'To the right', rows: pointsTo(asked, 'right') },
-    { words: 'Between the cut-offs', rows: asked.filter((row) => row.side === 'middle') },
-  ].filter(({ rows }) => rows.length > 0)
-  return {
-    kind: 'differs',
-    text: `The questionnaires do not all say the same. ${groups.map(({ words, rows }) => `${words}: ${namedRows(rows)}.`).join(' ')}`,
-    because:
-      'People see a child at different jobs and in different places, and forms ask about different activities. Compare ' +
-      'the activities one by one before weighing them.',
-    rowIds,
-  }
-}
-
-const youngReaching = reachingCautions.young
-const practised =
-  'Questions are about practised jobs, reaching is a choice made on the spot, so they can part. See which activities and ' +
-  'places differ, and ask whether anyone has pressed for one hand.'
-
-function reachedStatement(asked: readonly Sided[], reached: Sided | null, young: boolean): HandStatement {
-  if (!reached)
-    return {
-      kind: 'open',
-      text: 'Reaching across the midline was not recorded yet.',
-      because: null,
-      rowIds: [],
-    }
-  const hand = oneHand(asked)
-  const rowIds = idsOf(hand === null ? [reached] : [...pointsTo(asked, hand), reached])
-  if (reached.side === 'middle')
-    return {
-      kind: hand === null ? 'open' : 'differs',
-      text: `Reaching points to neither hand beyond chance (${namedRows([reached])}).`,
-      because: young ? youngReaching : reachingCautions.specific,
-      rowIds,
-    }
-  if (hand === null)
-    return {
-      kind: 'open',
-      text: `Reaching points to the ${reached.side} hand, and what was answered does not point to one hand.`,
-      because: practised,
-      rowIds,
-    }
-  if (reached.side === hand)
-    return {
-      kind: 'agrees',
-      text: `What was answered and what reaching showed point to the same hand, the ${hand}.`,
-      because: null,
-      rowIds,
-    }
-  return {
-    kind: 'differs',
-    text: `What was answered points to the ${hand} hand and reaching to the ${reached.side} (${namedRows([reached])}).`,
-    because: young ? `${practised} ${youngReaching}` : practised,
-    rowIds,
-  }
-}
+import {
+  namedRows,
+  otherHand,
+  sideStatements,
+  skillStatements,
+  type HandStatement,
+} from './sideStatements.ts'
 
 const per = (share: number | null) => (share === null ? 'none' : `${Math.round(100 * share)} %`)
 const kappaWords = ({ kappa, kappaInterval }: InformantPair) => {
@@ -138,7 +53,7 @@ function informantStatement(title: string, pair: InformantPair): HandStatement |
 }
 
 export interface StatementFacts {
-  /** Whole years at the newest occasion, corrected where the clinic corrects; null when nothing was recorded yet. */
+  /** Whole years at the newest occasion; null when nothing was recorded yet. */
   ageYears: number | null
   informants: readonly InformantComparison[]
 }
@@ -177,3 +92,82 @@ export function handStatements(rows: readonly LateralLineRow[], facts: Statement
 /** A statement as one text, for a report. */
 export const statementText = ({ text, because }: HandStatement): string =>
   because === null ? text : `${text} ${because}`
+
+const handOfLabel: Partial<Record<HandPreference, { hand: Hand; settled: boolean }>> = {
+  left_settled: { hand: 'left', settled: true },
+  right_settled: { hand: 'right', settled: true },
+  left_emerging: { hand: 'left', settled: false },
+  right_emerging: { hand: 'right', settled: false },
+}
+
+/** What does not fit together whatever the label. */
+function contradictionsAmong(chosen: readonly LateralLineRow[]): string[] {
+  const asked = chosen.filter((row) => row.aspect === 'preference')
+  const reached = chosen.filter((row) => row.aspect === 'reaching')
+  const found: string[] = []
+  if (pointsTo(asked, 'left').length > 0 && pointsTo(asked, 'right').length > 0)
+    found.push(
+      `The questionnaires point to different hands (${namedRows(asked.filter((row) => row.side !== 'middle'))}).`,
+    )
+  for (const hand of ['left', 'right'] as const)
+    if (pointsTo(asked, hand).length > 0 && pointsTo(reached, otherHand(hand)).length > 0)
+      found.push(
+        `What was answered points to the ${hand} hand (${namedRows(pointsTo(asked, hand))}) and reaching to the ` +
+          `${otherHand(hand)} (${namedRows(pointsTo(reached, otherHand(hand)))}).`,
+      )
+  return found
+}
+
+function contradictionsOfHand(rows: readonly LateralLineRow[], hand: Hand, settled: boolean): string[] {
+  const chosen = preferenceRows(rows)
+  const label = settled ? 'settled' : 'emerging'
+  const found: string[] = []
+  const against = pointsTo(chosen, otherHand(hand))
+  if (against.length > 0)
+    found.push(`The label says ${hand}, ${label}, and this points to the other hand: ${namedRows(against)}.`)
+  const neither = chosen.filter((row) => row.side === 'middle')
+  if (settled && neither.length > 0)
+    found.push(`The label says settled, and this points to neither hand: ${namedRows(neither)}.`)
+  if (pointsTo(chosen, hand).length === 0)
+    found.push(`Nothing that was asked or seen points to the ${hand} hand so far.`)
+  const skilled = rows.filter((row) => row.latest && row.aspect === 'skill' && row.side === otherHand(hand))
+  if (skilled.length > 0)
+    found.push(
+      `The ${otherHand(hand)} hand does better at ${namedRows(skilled)}. Preference and skill are different things; ask ` +
+        'whether anyone has pressed for one hand.',
+    )
+  return found
+}
+
+/**
+ * What a therapist is shown before signing a conclusion: measures that point opposite ways, and a label that does not
+ * fit them or rests on one source only. Nothing here decides; an empty list means that nothing of this kind was found.
+ */
+export function handContradictions(
+  rows: readonly LateralLineRow[],
+  preference: HandPreference | null,
+): string[] {
+  const chosen = preferenceRows(rows)
+  const found = contradictionsAmong(chosen)
+  if (preference === null) return found
+  const label = handOfLabel[preference]
+  if (label) found.push(...contradictionsOfHand(rows, label.hand, label.settled))
+  else if (preference === 'mixed_steady_by_task' || preference === 'unclear')
+    for (const hand of ['left', 'right'] as const)
+      if (chosen.filter(isSided).length >= 2 && chosen.filter(isSided).every((row) => row.side === hand))
+        found.push(
+          `Everything that was asked or seen points to the ${hand} hand (${namedRows(chosen)}), and the label does not.`,
+        )
+  const sources = new Set(chosen.filter(isSided).map((row) => row.track))
+  if (sources.size === 0) found.push('The label rests on no scored questionnaire and no observed reaching.')
+  if (sources.size === 1)
+    found.push(`The label rests on one source only: ${namedRows(chosen.filter(isSided))}.`)
+  const provisional = chosen.filter((row) => row.caution !== null)
+  if (label?.settled && provisional.length > 0)
+    found.push(
+      `The label says settled, and part of its ground is thin: ${provisional
+        .map((row) => `${rowName(row)}: ${row.caution}`)
+        .join('; ')}.`,
+    )
+  return found
+}

@@ -2,7 +2,7 @@ import { compareDays, type Day } from './days.ts'
 import type { HandUseAnswer } from './handUse.ts'
 import { answerSide } from './informants.ts'
 import type { MeasureKind } from './measures.ts'
-import { scoreValue, type LockedResponse } from './questionnaireRows.ts'
+import type { LockedResponse } from './questionnaireRows.ts'
 import { informantLabels, informants, type Informant } from './questionnaires.ts'
 import type { ReliableChangeNote } from './reliableChange.ts'
 
@@ -93,7 +93,7 @@ function compareForms(before: LockedResponse, after: LockedResponse): FormCompar
   const side = ({ id, answeredOn, score }: LockedResponse) => ({
     responseId: id,
     on: answeredOn,
-    value: scoreValue(score),
+    value: score.quotient,
   })
   return {
     formKey: after.form.key,

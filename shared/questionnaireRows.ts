@@ -1,6 +1,6 @@
 import { compareDays, type Day } from './days.ts'
-import type { FormAnswers, FormScore, FormView, ScoringMethod } from './forms.ts'
-import { handUseAnswerLabels, handUseStandingLabels } from './handUse.ts'
+import { answerLabel, type FormAnswers, type FormScore, type FormView, type ScoringMethod } from './forms.ts'
+import { standingWords } from './formScores.ts'
 import { formatQuotient } from './laterality.ts'
 import type { HandProfileRow, LateralDetails, LateralSide } from './lateralLine.ts'
 import { informantLabels, type Informant } from './questionnaires.ts'
@@ -35,15 +35,8 @@ const formulas: Record<ScoringMethod, string> = {
     '100 × (16 − sum) ÷ 8.',
 }
 
-/** Place of the sum of eight demonstrated actions (8 right … 24 left) on the lateral line. */
-export const demonstratedIndex = (total: number): number => (100 * (16 - total)) / 8
-
-/** Where a score stands on the lateral line; null when it could not be scored. */
-export const scoreValue = (score: FormScore): number | null =>
-  score.quotient ?? (score.total === null ? null : demonstratedIndex(score.total))
-
 function worked(score: FormScore): string | null {
-  const value = scoreValue(score)
+  const value = score.quotient
   if (value === null) return null
   const result = formatQuotient(value)
   if (score.total !== null) return `100 × (16 − ${score.total}) ÷ 8 = ${result}`
@@ -64,7 +57,7 @@ const details = ({ form: { definition }, answers, score }: LockedResponse): Late
   worked: worked(score),
   raw: definition.items.map((item) => {
     const answer = answers[item.id] ?? null
-    return { label: item.label, value: answer === null ? 'Not answered' : handUseAnswerLabels[answer] }
+    return { label: item.label, value: answer === null ? 'Not answered' : answerLabel(answer, definition) }
   }),
   sideRule: sideRule(score),
   citation: definition.citation,
@@ -97,12 +90,12 @@ export function questionnaireRows(responses: readonly LockedResponse[]): HandPro
       track,
       measure: form.definition.title,
       occasion: answeredOn,
-      value: scoreValue(score),
+      value: score.quotient,
       side: sideOf(score),
       interval: null,
       chance: null,
       basis: `${score.answered} of ${score.answered + score.doesNotDo + score.unanswered} activities answered`,
-      caution: score.standing === 'scorable' ? null : handUseStandingLabels[score.standing],
+      caution: standingWords(score),
       cutOffs: {
         name: score.cutOffs.label,
         left: score.cutOffs.left,

@@ -3,7 +3,6 @@ import { dayField, type Day } from './days.ts'
 import { body, choice, optionalId, optionalText } from './fields.ts'
 import type { FormAnswers, FormScore, FormView } from './forms.ts'
 import { cutOffSets } from './handUse.ts'
-import type { LateralLineRow } from './lateralLine.ts'
 
 export const informants = ['guardian', 'teacher', 'child_demonstrated', 'therapist'] as const
 export type Informant = (typeof informants)[number]
@@ -66,12 +65,4 @@ export interface QuestionnaireView {
   replacedById: string | null
   version: number
   can: { change: boolean; lock: boolean; replace: boolean }
-}
-
-export interface HandProfileView {
-  lateralLine: LateralLineRow[]
-  questionnaires: QuestionnaireView[]
-  /** Why nothing can be added now, in words; null when it can. */
-  blocked: string | null
-  can: { add: boolean }
 }

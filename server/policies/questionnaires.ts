@@ -4,7 +4,6 @@ import { childPolicy, isRelation } from './policy.ts'
 const write = (name: string) => childPolicy(name, ['assignedTherapist'], 'write', ['clinicLead'])
 
 export const questionnairePolicies = {
-  handProfile: childPolicy('handProfile.read', ['assignedTherapist', 'clinicLead'], 'read'),
   read: childPolicy('questionnaire.read', ['assignedTherapist', 'clinicLead'], 'read'),
   start: write('questionnaire.start'),
   change: write('questionnaire.change'),

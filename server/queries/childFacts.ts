@@ -40,3 +40,18 @@ export const isConsentGiven = async (
   )
   return found !== null && flag(found.given)
 }
+
+/** Birth date, and whether a consent for this purpose is in force now, in one query. */
+export const findConsentedChild = async (
+  access: ChildAccess,
+  purpose: ConsentPurpose,
+): Promise<{ birthDate: Day; consented: boolean }> => {
+  const scope = within(access, 'c.id')
+  const consent = consentInForce('c.id', [purpose])
+  const found = await selectOne<{ birthDate: Day; given: number }>(
+    `SELECT c.birthDate, ${consent.sql} AS given FROM children c WHERE ${scope.sql}`,
+    { ...scope.parameters, ...consent.parameters },
+  )
+  if (!found) throw notFound()
+  return { birthDate: found.birthDate, consented: flag(found.given) }
+}

@@ -22,7 +22,7 @@ import { findChildHead, listOpenAlerts } from '../queries/children/header.ts'
 import { findIdentity } from '../queries/children/identity.ts'
 import { findChildren, listRegister } from '../queries/children/lists.ts'
 import { findEpisode } from '../queries/episodes.ts'
-import { listQuestionnaires } from '../queries/questionnaires.ts'
+import { listLockedHandEvidence } from '../queries/handEvidence.ts'
 import { recordAudit, recordChildRead } from '../services/audit.ts'
 import { allocate, changeCare, changeIdentity } from '../services/children.ts'
 import { changeState } from '../services/episodes.ts'
@@ -62,15 +62,15 @@ export const childRoutes = (): Router => {
 
   router.get('/children/:childId/glance', allow(childPolicies.glance), async (req, res) => {
     const access = accessOf(req)
-    const [child, last, lists, questionnaires, settings] = await Promise.all([
+    const [child, last, lists, evidence, settings] = await Promise.all([
       findChildHead(access),
       findLastOnRecord(access),
       listForGlance(access),
-      listQuestionnaires(access),
+      listLockedHandEvidence(access),
       readSettings(),
     ])
     await recordChildRead(req.actor, access, 'child.glance_read')
-    res.json(presentGlance({ child, last, lists, questionnaires }, access, settings, clinicToday(settings)))
+    res.json(presentGlance({ child, last, lists, evidence }, access, settings, clinicToday(settings)))
   })
 
   const identity = '/children/:childId/identity'

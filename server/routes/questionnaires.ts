@@ -9,9 +9,8 @@ import { allow } from '../middleware/allow.ts'
 import { bodyOf, idempotencyKeyOf, ifMatchOf } from '../middleware/requestBody.ts'
 import { accessOf } from '../middleware/requestContext.ts'
 import { questionnairePolicies } from '../policies/questionnaires.ts'
-import { presentHandProfile, presentQuestionnaire } from '../presenters/questionnaires.ts'
-import { isConsentGiven } from '../queries/childFacts.ts'
-import { findQuestionnaire, listQuestionnaires } from '../queries/questionnaires.ts'
+import { presentQuestionnaire } from '../presenters/questionnaires.ts'
+import { findQuestionnaire } from '../queries/questionnaires.ts'
 import { recordChildRead } from '../services/audit.ts'
 import {
   discardQuestionnaire,
@@ -40,20 +39,6 @@ const viewForReading = async (req: Request, id: string) => {
 
 export const questionnaireRoutes = (): Router => {
   const router = Router()
-
-  router.get(
-    '/children/:childId/hand-profile',
-    allow(questionnairePolicies.handProfile),
-    async (req, res) => {
-      const access = accessOf(req)
-      const responses = await listQuestionnaires(access)
-      const consented = await isConsentGiven(access, 'assessment_treatment')
-      await recordChildRead(req.actor, access, 'handProfile.read', {
-        detail: { ids: responses.map((response) => response.id) },
-      })
-      res.json(presentHandProfile(responses, access, consented))
-    },
-  )
 
   router.post(base, allow(questionnairePolicies.start), async (req, res) => {
     const start = await bodyOf(req, questionnaireStartSchema)

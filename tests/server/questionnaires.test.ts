@@ -10,7 +10,8 @@ import { errorHandler } from '../../server/middleware/errorHandler.ts'
 import { requestContext } from '../../server/middleware/requestContext.ts'
 import { fromJson, selectOne } from '../../server/queries/sql.ts'
 import { handUseFormV1, type HandUseAnswer } from '../../shared/handUse.ts'
-import type { HandProfileView, QuestionnaireView } from '../../shared/questionnaires.ts'
+import type { HandProfileView } from '../../shared/handProfile.ts'
+import type { QuestionnaireView } from '../../shared/questionnaires.ts'
 import { signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
 import { buildChild, buildClass, buildGuardian, buildUser, giveConsent } from '../support/factories.ts'
 
@@ -229,7 +230,11 @@ describe('a hand-use questionnaire', () => {
 
   it.each([
     ['an answer that is none', { answers: { ...answersOf(settled), throws: 'both' } }, 'answers.throws'],
-    ['an activity of another form', { answers: { ...answersOf(settled), juggles: 'left' } }, 'answers.juggles'],
+    [
+      'an activity of another form',
+      { answers: { ...answersOf(settled), juggles: 'left' } },
+      'answers.juggles',
+    ],
     ['an activity left out', { answers: {} }, 'answers.throws'],
     ['cut-offs nobody knows', { cutOffSet: 'mine' }, 'cutOffSet'],
     ['a day that cannot be', { answeredOn: '2026-02-30' }, 'answeredOn'],

@@ -2,6 +2,7 @@ import type { GlanceView, TaskView } from '../../../shared/children.ts'
 import { consentPurposeLabels, type ConsentPurpose } from '../../../shared/consents.ts'
 import type { Day } from '../../../shared/days.ts'
 import { isOpen } from '../../../shared/episodes.ts'
+import { handProfileRows, withoutDetails } from '../../../shared/handProfile.ts'
 import { lettersPerMinute, percentLegible } from '../../../shared/handwriting.ts'
 import type { ClinicSettings } from '../../../shared/settings.ts'
 import { attentionLevels } from '../../../shared/attention.ts'
@@ -11,8 +12,7 @@ import { canAllocate, canChangeIdentity, seesClinicalFields, stateChoices } from
 import { canFinishTask } from '../../policies/tasks.ts'
 import type { GlanceLists, LastOnRecord, TaskRow } from '../../queries/children/glance.ts'
 import type { ChildFactsRow } from '../../queries/children/header.ts'
-import type { QuestionnaireRecord } from '../../queries/questionnaires.ts'
-import { presentHandUseRows } from '../questionnaires.ts'
+import type { HandEvidence } from '../../queries/handEvidence.ts'
 import { fullName, presentChildHeader } from './header.ts'
 
 /** Purposes whose absence stops something in the ordinary course of care. */
@@ -39,7 +39,7 @@ export interface GlanceFacts {
   child: ChildFactsRow
   last: LastOnRecord
   lists: GlanceLists
-  questionnaires: readonly QuestionnaireRecord[]
+  evidence: HandEvidence
 }
 
 export const presentGlance = (
@@ -48,7 +48,7 @@ export const presentGlance = (
   settings: ClinicSettings,
   today: Day,
 ): GlanceView => {
-  const { child, last, lists, questionnaires } = facts
+  const { child, last, lists, evidence } = facts
   const choices = stateChoices(access, child.state)
   const open = child.state !== null && isOpen(child.state)
   return {
@@ -62,7 +62,7 @@ export const presentGlance = (
     receivedOn: child.receivedOn,
     nextReviewOn: child.nextReviewOn,
     tasks: lists.tasks.map((task) => presentTask(task, child, access, today)).toSorted(byLevel),
-    lateralLine: presentHandUseRows(questionnaires),
+    lateralLine: handProfileRows(evidence.responses, evidence.measures).map(withoutDetails),
     lastNote: last.note && {
       id: last.note.id,
       heldOn: last.note.heldOn,
