@@ -8,19 +8,15 @@ import {
   type ToAnswer,
 } from '../../shared/answerRequests.ts'
 import { dayOf } from '../../shared/days.ts'
-import type { FormView } from '../../shared/forms.ts'
 import { urgentWordsFor } from '../../shared/redFlagSources.ts'
 import { consentNeededTexts } from '../../shared/consentNeeded.ts'
 import type { ClinicSettings } from '../../shared/settings.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { canChangeRequest, carerRefusal, noObservationConsent } from '../policies/answerRequests.ts'
 import type { CarerToAsk, TeacherToAsk } from '../queries/answerAddressees.ts'
-import type {
-  AnswerableRequest,
-  AnswerRequestRow,
-  StoredForm,
-  ToAnswerRow,
-} from '../queries/answerRequests.ts'
+import type { AnswerableRequest, AnswerRequestRow, ToAnswerRow } from '../queries/answerRequests.ts'
+import type { FormRecord } from '../queries/forms.ts'
+import { presentForm } from './forms.ts'
 import type { KeptAnswers } from '../queries/answers.ts'
 
 const stateOf = (row: AnswerRequestRow, at: Date): RequestState => {
@@ -60,12 +56,13 @@ const isAnswerer = (informant: string): informant is AnswererKind =>
 export const presentAnswerChoices = (of: {
   consented: boolean
   observationShared: boolean
-  forms: readonly StoredForm[]
+  forms: readonly FormRecord[]
   carers: readonly CarerToAsk[]
   teachers: readonly TeacherToAsk[]
 }): AnswerChoices => ({
   blocked: of.consented ? null : consentNeededTexts.assessment_treatment,
   forms: of.forms
+    .filter((form) => form.retiredAt === null)
     .map((form) => ({
       id: form.id,
       title: form.definition.title,
@@ -97,14 +94,6 @@ export const presentToAnswer = (row: ToAnswerRow, timeZone: string): ToAnswer =>
   answerBy: dayOf(row.expiresAt, timeZone),
 })
 
-const presentAskedForm = (form: StoredForm): FormView => ({
-  id: form.id,
-  key: form.key,
-  edition: form.edition,
-  definition: form.definition,
-  retiredAt: form.retiredAt?.toISOString() ?? null,
-})
-
 export const presentAnswerPage = (
   request: AnswerableRequest,
   kept: KeptAnswers,
@@ -115,7 +104,7 @@ export const presentAnswerPage = (
   childName: request.childName,
   askedOf: request.askedOf,
   answerBy: dayOf(request.expiresAt, clinic.timeZone),
-  form: kept.form && presentAskedForm(kept.form),
+  form: kept.form && presentForm(kept.form),
   answers: kept.answers,
   comment: kept.comment,
   history: kept.history,

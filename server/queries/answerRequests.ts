@@ -1,6 +1,5 @@
 import type { AnswererKind, RequestedForm } from '../../shared/answerRequests.ts'
 import type { Day } from '../../shared/days.ts'
-import type { FormDefinition } from '../../shared/forms.ts'
 import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
@@ -10,7 +9,7 @@ import { notFound } from '../errors.ts'
 import { consentHolds } from './inForce.ts'
 import { calledName } from './names.ts'
 import { childScope, ownLink, within } from './scope.ts'
-import { flag, fromJson, selectOne, selectRows, type SqlParameters } from './sql.ts'
+import { flag, selectOne, selectRows, type SqlParameters } from './sql.ts'
 
 // The purposes are words of ours; parameters of their own would clash with those of a teacher's scope.
 export const agreed = (purpose: 'assessment_treatment' | 'share_school_observation') =>
@@ -168,38 +167,3 @@ export const listToAnswer = async (
   )
   return rows.map((row) => ({ ...row, begun: flag(row.begun) }))
 }
-
-export interface StoredForm {
-  id: string
-  key: string
-  edition: number
-  definition: FormDefinition
-  retiredAt: Date | null
-}
-
-type FormText = Omit<StoredForm, 'definition'> & { definition: string }
-const formColumns = 'f.id, f.formKey AS `key`, f.edition, f.definition, f.retiredAt'
-const toForm = (row: FormText): StoredForm => ({
-  ...row,
-  definition: fromJson<FormDefinition>(row.definition),
-})
-
-/** The edition that was asked for; it stays answerable after it was retired. */
-export const findAskedForm = async (formId: string, tx?: Tx): Promise<StoredForm | null> => {
-  const row = await selectOne<FormText>(
-    `SELECT ${formColumns} FROM questionnaire_forms f WHERE f.id = :formId`,
-    { formId },
-    tx,
-  )
-  return row && toForm(row)
-}
-
-/** Editions in use now. */
-export const listFormsInUse = async (tx?: Tx): Promise<StoredForm[]> =>
-  (
-    await selectRows<FormText>(
-      `SELECT ${formColumns} FROM questionnaire_forms f WHERE f.retiredAt IS NULL ORDER BY f.formKey, f.edition DESC`,
-      {},
-      tx,
-    )
-  ).map(toForm)

@@ -1,11 +1,13 @@
+import { blankAnswers } from '../../shared/formAnswers.ts'
 import type { FormAnswers } from '../../shared/forms.ts'
 import type { HistoryDetails } from '../../shared/histories.ts'
-import { findAskedForm, type AnswerableRequest, type StoredForm } from './answerRequests.ts'
+import type { AnswerableRequest } from './answerRequests.ts'
+import { findForm, type FormRecord } from './forms.ts'
 import { fromJson, selectOne } from './sql.ts'
 
 /** What was answered so far to a request, whichever form was asked. */
 export interface KeptAnswers {
-  form: StoredForm | null
+  form: FormRecord | null
   answers: FormAnswers | null
   comment: string | null
   history: HistoryDetails | null
@@ -28,7 +30,7 @@ const findKeptHistory = async ({ id, childId }: AnswerableRequest): Promise<Kept
 }
 
 const findKeptResponse = async ({ id, childId, formId }: AnswerableRequest): Promise<KeptAnswers> => {
-  const form = formId === null ? null : await findAskedForm(formId)
+  const form = formId === null ? null : await findForm(formId)
   if (!form) throw new Error('A request asks for a form that is not there')
   const kept = await selectOne<{ answers: string; comment: string | null; version: number }>(
     `SELECT q.answers, q.comment, q.version FROM questionnaire_responses q
@@ -37,9 +39,7 @@ const findKeptResponse = async ({ id, childId, formId }: AnswerableRequest): Pro
   )
   return {
     form,
-    answers: kept
-      ? fromJson<FormAnswers>(kept.answers)
-      : Object.fromEntries(form.definition.items.map((item) => [item.id, null])),
+    answers: kept ? fromJson<FormAnswers>(kept.answers) : blankAnswers(form.definition),
     comment: kept?.comment ?? null,
     history: null,
     version: kept?.version ?? 0,

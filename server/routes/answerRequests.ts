@@ -15,9 +15,10 @@ import {
   presentToAnswer,
 } from '../presenters/answerRequests.ts'
 import { listCarersToAsk, listTeachersToAsk } from '../queries/answerAddressees.ts'
-import { listAnswerRequests, listFormsInUse, listToAnswer } from '../queries/answerRequests.ts'
+import { listAnswerRequests, listToAnswer } from '../queries/answerRequests.ts'
 import { findKeptAnswers } from '../queries/answers.ts'
 import { isConsentGiven } from '../queries/childFacts.ts'
+import { listForms } from '../queries/forms.ts'
 import { askForAnswers, cancelRequest, remindByHand } from '../services/answerRequests.ts'
 import { openOwnRequest, requestFact, saveOwnAnswers, sendOwnAnswers } from '../services/answers.ts'
 import { recordAudit, recordChildRead } from '../services/audit.ts'
@@ -51,7 +52,7 @@ const askingRoutes = (router: Router, { appUrl }: RouteSettings): void => {
     const [consented, observationShared, forms, carers, teachers] = await Promise.all([
       isConsentGiven(access, 'assessment_treatment'),
       isConsentGiven(access, 'share_school_observation'),
-      listFormsInUse(),
+      listForms(),
       listCarersToAsk(access),
       listTeachersToAsk(access),
     ])

@@ -12,8 +12,8 @@ import {
   reasonNotToWrite,
 } from '../policies/answerRequests.ts'
 import { findRequestToWriteAbout, listCarersToAsk, listTeachersToAsk } from '../queries/answerAddressees.ts'
-import { findAskedForm } from '../queries/answerRequests.ts'
 import { isConsentGiven } from '../queries/childFacts.ts'
+import { findForm } from '../queries/forms.ts'
 import { lockChild } from '../queries/lockChild.ts'
 import { findForChild } from '../queries/scope.ts'
 import { execute, selectOne } from '../queries/sql.ts'
@@ -37,7 +37,7 @@ const fact = (access: ChildAccess, action: string, id: string): AuditFact => ({
 
 const checkForm = async (tx: Tx, { formId, answerer }: AnswerRequestDetails) => {
   if (formId === null) return
-  const form = await findAskedForm(formId, tx)
+  const form = await findForm(formId, tx)
   if (!form || form.retiredAt !== null) throw invalid({ formId: 'Choose a form from the list' })
   if (!form.definition.informants.includes(answerer))
     throw invalid({ formId: 'This form is not made for the person you ask' })

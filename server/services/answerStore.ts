@@ -1,27 +1,19 @@
 import { randomUUID } from 'node:crypto'
 import type { AnswerDraft } from '../../shared/answerRequests.ts'
-import type { FormAnswers } from '../../shared/forms.ts'
-import { cutOffSetById, scoreHandUse } from '../../shared/handUse.ts'
 import { historyDetailsSchema, type HistoryDetails } from '../../shared/histories.ts'
 import type { ClinicSettings } from '../../shared/settings.ts'
-import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { History } from '../entities/History.ts'
 import { QuestionnaireResponse } from '../entities/QuestionnaireResponse.ts'
-import { conflict, invalid } from '../errors.ts'
-import { findAskedForm, type AnswerableRequest, type StoredForm } from '../queries/answerRequests.ts'
+import { invalid } from '../errors.ts'
+import type { AnswerableRequest } from '../queries/answerRequests.ts'
 import type { AuditFact } from './audit.ts'
 import { beginHistory, lockHistory, saveHistory } from './histories.ts'
+import { beginRequestedResponse, lockResponse, saveAnswers } from './questionnaires.ts'
 import { clinicToday } from './settings.ts'
-import { StaleWrite, updateIfCurrent } from './versions.ts'
+import { StaleWrite } from './versions.ts'
 
 type Record = (fact: AuditFact) => void
-
-const formOf = async (request: AnswerableRequest, tx: Tx): Promise<StoredForm> => {
-  const form = request.formId === null ? null : await findAskedForm(request.formId, tx)
-  if (!form) throw new Error('A request asks for a form that is not there')
-  return form
-}
 
 const rowOf = <E extends typeof History | typeof QuestionnaireResponse>(
   entity: E,
@@ -43,47 +35,29 @@ interface Given {
   settings: ClinicSettings
 }
 
-/** Answers of another form, or none at all, are a fault of the page: it is told beside the answers. */
-const checkAnswers = (form: StoredForm, answers: FormAnswers | undefined): FormAnswers => {
-  if (answers === undefined) throw invalid({ answers: 'The answers are missing' })
-  const { items, options } = form.definition
-  const known = new Set(items.map(({ id }) => id))
-  const fields: { [path: string]: string } = {}
-  for (const [id, answer] of Object.entries(answers)) {
-    if (!known.has(id)) fields[`answers.${id}`] = 'This form has no such activity'
-    else if (answer !== null && !options.includes(answer))
-      fields[`answers.${id}`] = 'Choose one of the answers of this form'
-  }
-  for (const id of known) if (!(id in answers)) fields[`answers.${id}`] = 'This activity is missing'
-  if (Object.keys(fields).length > 0) throw invalid(fields)
-  return answers
-}
-
 const storeResponse = async (tx: Tx, request: AnswerableRequest, given: Given) => {
   const { version, draft, settings } = given
-  const form = await formOf(request, tx)
-  const answers = checkAnswers(form, draft.answers)
-  const kept = await rowOf(QuestionnaireResponse, request, tx)
-  const patch = { answers, comment: draft.comment ?? null, answeredOn: clinicToday(settings) }
-  if (kept) return updateIfCurrent(tx, QuestionnaireResponse, kept.id, version, patch)
-  if (version !== 0) throw new StaleWrite()
-  const id = randomUUID()
-  await tx.insert(QuestionnaireResponse, {
-    id,
+  const { formId } = request
+  if (formId === null) throw new Error('A request for a questionnaire names no form')
+  if (draft.answers === undefined) throw invalid({ answers: 'The answers are missing' })
+  let kept = await rowOf(QuestionnaireResponse, request, tx)
+  if (version !== (kept?.version ?? 0)) throw new StaleWrite()
+  kept ??= await beginRequestedResponse(tx, {
+    id: randomUUID(),
     childId: request.childId,
-    formVersion: form.id,
+    formId,
     informant: request.answerer,
     respondentName: request.askedOf,
-    ...patch,
+    answeredOn: clinicToday(settings),
     cutOffSet: settings.cutOffSet,
-    score: null,
-    lockedAt: null,
-    lockedById: null,
     requestId: request.id,
     guardianId: request.guardianId,
     startedById: request.userId,
-    replacesId: null,
-    createdAt: now(),
+  })
+  await saveAnswers(tx, kept, kept.version, {
+    answers: draft.answers,
+    comment: draft.comment ?? null,
+    answeredOn: clinicToday(settings),
   })
 }
 
@@ -92,8 +66,8 @@ const storeHistory = async (tx: Tx, record: Record, request: AnswerableRequest, 
   if (draft.history === undefined) throw invalid({ history: 'The answers are missing' })
   const details = await checkHistory(draft.history)
   let kept = await rowOf(History, request, tx)
+  if (version !== (kept?.version ?? 0)) throw new StaleWrite()
   if (!kept) {
-    if (version !== 0) throw new StaleWrite()
     await beginHistory(tx, record, {
       childId: request.childId,
       informant: 'guardian',
@@ -105,7 +79,7 @@ const storeHistory = async (tx: Tx, record: Record, request: AnswerableRequest, 
       replacesId: null,
     })
     kept = await rowOf(History, request, tx)
-  } else if (version !== kept.version) throw new StaleWrite()
+  }
   if (!kept) throw new Error('A history that was just begun is gone')
   await saveHistory(tx, record, {
     history: kept,
@@ -147,12 +121,6 @@ export const lockAnswers = async (
     return lockHistory(tx, record, { history, version, lockedById: request.userId, part: 'history' })
   }
   const kept = await rowOf(QuestionnaireResponse, request, tx)
-  if (!kept || Object.values(kept.answers).every((answer) => answer === null)) throw nothingAnswered()
-  const cutOffs = cutOffSetById(kept.cutOffSet)
-  if (!cutOffs) throw conflict('closed', 'unknown cut-offs')
-  await updateIfCurrent(tx, QuestionnaireResponse, kept.id, version, {
-    score: { ...scoreHandUse(kept.answers, cutOffs), method: 'edinburgh_style', total: null },
-    lockedAt: now(),
-    lockedById: request.userId,
-  })
+  if (!kept) throw nothingAnswered()
+  await lockResponse(tx, kept, version, request.userId)
 }

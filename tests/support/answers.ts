@@ -100,6 +100,13 @@ export const put = (who: Client, path: string, version: number, body: object) =>
   who.put(path).set('If-Match', `"${version}"`).send(body)
 export const send = (who: Client, path: string, version: number) =>
   who.post(`${path}/send`).set('If-Match', `"${version}"`).send({})
+/** Saves and sends, as one who answers everything at once. */
+export const saveAndSend = async (who: Client, path: string, body: object, version = 0): Promise<void> => {
+  const saved = await put(who, path, version, body)
+  expect(saved.status, saved.text).toBe(200)
+  const sent = await send(who, path, saved.body.version)
+  expect(sent.status, sent.text).toBe(204)
+}
 
 export const byLink = {
   open: (token: string, date = birthDate, who: Client = client()) =>
