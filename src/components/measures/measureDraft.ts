@@ -18,10 +18,10 @@ import type {
 /** A draft as it is being filled: the day may be empty for a moment. */
 export type MeasureInWork = Omit<MeasureDraft, 'measuredOn'> & { measuredOn: Day | null }
 
-/** Only what may be written; score, lock and rights stay behind. */
+/** Only what may be written; score, lock and rights stay behind. Recorders replace the details and never write into them. */
 export const draftOf = ({ measuredOn, details, notDoneReason, comment }: MeasureView): MeasureDraft => ({
   measuredOn,
-  details: structuredClone(details),
+  details,
   notDoneReason,
   comment,
 })
