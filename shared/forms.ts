@@ -47,6 +47,9 @@ export interface FormDefinition {
   cutOffSet: CutOffSetId | null
 }
 
+/** The clinic's everyday form: the one to begin with unless there is a reason for another. */
+export const everydayFormKey = 'hand-use-10'
+
 /** A form with its name in the database: `<key>.v<edition>`. */
 export interface FormView {
   id: string

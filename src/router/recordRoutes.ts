@@ -21,7 +21,7 @@ export const recordRoutes: RouteRecordRaw[] = [
     path: 'questionnaires/:questionnaireId',
     props: true,
     component: () => import('@/views/questionnaires/QuestionnaireView.vue'),
-    meta: { title: 'Hand-use questionnaire' },
+    meta: { title: 'Questionnaire' },
   },
   {
     name: 'conclusion',

@@ -1,5 +1,5 @@
 import type { Day } from '@shared/days.ts'
-import { handUseAnswerLabels, handUseFormV1, type HandUseAnswer } from '@shared/handUse.ts'
+import { answerLabel, type FormDefinition } from '@shared/forms.ts'
 import {
   informantLabels,
   type Informant,
@@ -24,20 +24,25 @@ export const draftOf = (view: QuestionnaireView): QuestionnaireDraft => ({
   comment: view.comment,
 })
 
-const words = (answer: HandUseAnswer | null | undefined) =>
-  answer ? handUseAnswerLabels[answer] : 'Not answered'
-
 const line = (draft: QuestionnaireDraft) =>
   `${informantLabels[draft.informant]}, ${draft.respondentName ?? 'no name'}, ${draft.answeredOn}`
 
 /** Where two people's drafts of one questionnaire differ. */
-export function differingAnswers(mine: QuestionnaireDraft, theirs: QuestionnaireDraft) {
+export function differingAnswers(
+  definition: FormDefinition,
+  mine: QuestionnaireDraft,
+  theirs: QuestionnaireDraft,
+) {
+  const words = ({ answers }: QuestionnaireDraft, id: string) => {
+    const answer = answers[id] ?? null
+    return answer === null ? 'Not answered' : answerLabel(answer, definition)
+  }
   const parts = [
     { label: 'Who answered, and when', mine: line(mine), theirs: line(theirs) },
-    ...handUseFormV1.items.map(({ id, label }) => ({
+    ...definition.items.map(({ id, label }) => ({
       label,
-      mine: words(mine.answers[id]),
-      theirs: words(theirs.answers[id]),
+      mine: words(mine, id),
+      theirs: words(theirs, id),
     })),
     { label: 'Comment', mine: mine.comment ?? '', theirs: theirs.comment ?? '' },
   ]
