@@ -13,6 +13,7 @@ import { randomUUID } from 'node:crypto'
 import { childKeys, parts, personKeys, type ChildKey, type PersonKey } from './accessPeople.ts'
 import { signedInAs } from './app.ts'
 import { buildAdvice, buildAlert, buildReferral, buildReply } from './clinicRows.ts'
+import { buildConclusion } from './conclusions.ts'
 import { buildChild, buildClass, buildGuardian, buildUser, giveConsent } from './factories.ts'
 import { insertRow } from './insertRow.ts'
 import { buildHistory } from './histories.ts'
@@ -119,7 +120,7 @@ const buildSceneChild = async (
       contacts,
       clinical: [
         ...['Strengthword', 'Saidword', 'Planword', 'Signedword', 'Commentword', 'Alertword', 'Observedword'],
-        ...['Sampleword', 'Taskword', 'Enjoysword'],
+        ...['Sampleword', 'Taskword', 'Concludedword', 'Enjoysword'],
       ].map((word) => word + key),
       goals: [`Goalword${key}`],
       advice: [`Becauseword${key}`, `Replyword${key}`],
@@ -142,6 +143,7 @@ const fillRecord = async (of: SceneChild, teacher: User, office: User, picture: 
   await buildNote(child, therapist, 'draft', { said: `Saidword${key}`, plan: `Planword${key}` })
   await buildNote(child, therapist, 'signed', { plan: `Signedword${key}` })
   await buildSample(child, therapist, picture, { note: `Sampleword${key}` })
+  await buildConclusion(child, therapist, 'signed', { strengths: `Concludedword${key}` })
   await buildGoal(child, therapist, { childVoice: `I want Goalword${key}` })
   await buildLetter(child, therapist, 'draft', letterText(`Draws Draftword${key}`))
   await buildLetter(child, therapist, 'approved', letterText(`Draws Approvedword${key}`))
