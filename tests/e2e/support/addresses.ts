@@ -60,6 +60,10 @@ const childScreens = async (staff: Person): Promise<Screen[]> => {
   const notes = await get<Listed>(`/children/${childId}/session-notes`)
   const letters = await get<Listed>(`/children/${childId}/letters`)
   add('questionnaire', ...profile.questionnaires.slice(0, 1).map(({ id }) => `questionnaires/${id}`))
+  const measures = await get<{ id: string; kind: string; lockedAt: string | null }[]>(
+    `/children/${childId}/measures`,
+  )
+  add('measure', ...measures.map(({ id }) => `measures/${id}`))
   add('session-note', 'sessions/new', ...notes.rows.slice(0, 1).map(({ id }) => `sessions/${id}`))
   add('letter', ...letters.rows.slice(0, 1).map(({ id }) => `letters/${id}`))
   return screens
