@@ -8,15 +8,13 @@ import {
 } from '../../shared/conclusions.ts'
 import { dayOf, formatDay } from '../../shared/days.ts'
 import { letterBlocks } from '../../shared/letterText.ts'
-import { formatQuotient } from '../../shared/laterality.ts'
-import { rowName, type LateralLineRow } from '../../shared/lateralLine.ts'
-import { occasionsByTrack, printLateralLine, sideWords } from './lateralPicture.ts'
+import type { LateralLineRow } from '../../shared/lateralLine.ts'
 import { assertPrintable, registerFonts } from './letterFonts.ts'
-import { heightOf, type Piece } from './letterLayout.ts'
+import { heightOf, type Piece, type TextStyle } from './letterLayout.ts'
 import { createPages, type Pages } from './letterPages.ts'
 import { collect, documentSettings } from './pdfFile.ts'
+import { printMeasures } from './reportMeasures.ts'
 import { pieceOf, styles } from './reportStyles.ts'
-import { printTable } from './reportTable.ts'
 
 /** A signed conclusion with all that is printed, as it was kept at the signature. */
 export interface ReportForPrint {
@@ -44,7 +42,7 @@ export async function renderAssessmentReport(report: ReportForPrint): Promise<Bu
   const pages = createPages(pdf)
   printHead(pdf, pages, report)
   printConclusion(pdf, pages, report)
-  printMeasures(pdf, pages, report)
+  printMeasures(pdf, pages, report.evidence.lateralLine)
   printPlanAndGround(pdf, pages, report)
   printSignatures(pdf, pages, report)
   pages.finish(
@@ -134,15 +132,9 @@ const section = (pdf: PDFKit.PDFDocument, pages: Pages, heading: string, text: s
 const listed = (
   pdf: PDFKit.PDFDocument,
   pages: Pages,
-  opening: string | null,
   items: readonly string[],
-): Piece[] => {
-  if (items.length === 0) return []
-  return [
-    ...(opening === null ? [] : [pieceOf(pdf, pages, 'P', [opening], styles.body, 7)]),
-    ...items.map((item) => pieceOf(pdf, pages, 'LI', [item], styles.body, 2)),
-  ]
-}
+  style: TextStyle = styles.body,
+): Piece[] => items.map((item) => pieceOf(pdf, pages, 'LI', [item], style, 2))
 
 function printConclusion(pdf: PDFKit.PDFDocument, pages: Pages, { content, evidence }: ReportForPrint) {
   pages.printOnPanel(section(pdf, pages, 'What goes well', content.strengths))
@@ -161,8 +153,11 @@ function printConclusion(pdf: PDFKit.PDFDocument, pages: Pages, { content, evide
   const { statements, contradictions } = evidence
   const about = section(pdf, pages, '', content.aboutDisagreements).slice(1)
   const agreement = [
-    ...listed(pdf, pages, null, statements),
-    ...listed(pdf, pages, 'What did not agree when this was signed:', contradictions),
+    ...listed(pdf, pages, statements),
+    ...(contradictions.length === 0
+      ? []
+      : [pieceOf(pdf, pages, 'P', ['What did not agree when this was signed:'], styles.body, 7)]),
+    ...listed(pdf, pages, contradictions),
     ...(about.length === 0
       ? []
       : [pieceOf(pdf, pages, 'P', ['The therapist on this:'], styles.strong, 7), ...about]),
@@ -174,78 +169,11 @@ function printConclusion(pdf: PDFKit.PDFDocument, pages: Pages, { content, evide
     ])
 }
 
-const key = (rows: readonly LateralLineRow[]): string => {
-  const sets = new Map(rows.flatMap(({ cutOffs }) => (cutOffs ? [[cutOffs.name, cutOffs] as const] : [])))
-  const parts = [
-    'The flat edge of a half petal stands on the value; its round side points to the hand.',
-    rows.some(({ interval }) => interval) ? 'A bar under a mark is its 95\u00a0% interval.' : null,
-    rows.some(({ chance }) => chance) ? 'Inside a hatched band the choice of hand may be chance.' : null,
-    ...[...sets.values()].map(
-      (set) =>
-        `Tinted ends: ${set.name} (left up to ${formatQuotient(set.left)}, right from ${formatQuotient(set.right)}).`,
-    ),
-    rows.some(({ latest }) => !latest) ? 'Dashed marks are earlier occasions.' : null,
-  ]
-  return parts.filter((part) => part !== null).join(' ')
-}
-
-const span = ({ low, high }: { low: number; high: number }) =>
-  `${formatQuotient(low)} to ${formatQuotient(high)}`
-
-const rowOf = (row: LateralLineRow): string[] => [
-  rowName(row),
-  formatDay(row.occasion),
-  row.value === null
-    ? 'Not scorable'
-    : `${formatQuotient(row.value)}${row.side === null ? '' : `, ${sideWords[row.side]}`}`,
-  [
-    row.interval ? span(row.interval) : null,
-    row.chance ? `By chance ${span(row.chance)}` : null,
-    !row.interval && !row.chance ? 'None given' : null,
-  ]
-    .filter((part) => part !== null)
-    .join('. '),
-  row.caution === null ? row.basis : `${row.basis}. ${row.caution}`,
-]
-
-function printMeasures(pdf: PDFKit.PDFDocument, pages: Pages, { evidence }: ReportForPrint) {
-  const rows = evidence.lateralLine
-  if (rows.length === 0) return
-  const lead = [
-    pieceOf(pdf, pages, 'H2', ['The lateral line'], styles.heading, 15),
-    pieceOf(
-      pdf,
-      pages,
-      'P',
-      ['Every measure on one line, from −100 (always the left hand) to +100 (always the right hand).'],
-      styles.body,
-      3,
-    ),
-  ]
-  printLateralLine(pdf, pages, rows, {
-    height: lead.reduce((sum, piece) => sum + heightOf(piece), 0),
-    print: () => pages.print(lead),
-  })
-  pages.print([pieceOf(pdf, pages, 'P', [key(rows)], styles.small, 5)])
-  const heading = [pieceOf(pdf, pages, 'H2', ['The measures as figures'], styles.heading, 15)]
-  pages.keepTogether(heightOf(heading[0] as Piece) + 70)
-  pages.print(heading)
-  printTable(pdf, pages, {
-    columns: [
-      { title: 'Measure', share: 0.26 },
-      { title: 'When', share: 0.13 },
-      { title: 'Value', share: 0.2 },
-      { title: 'Interval', share: 0.17 },
-      { title: 'Rests on', share: 0.24 },
-    ],
-    rows: occasionsByTrack(rows).flat().map(rowOf),
-  })
-}
-
 function printPlanAndGround(pdf: PDFKit.PDFDocument, pages: Pages, { content, evidence }: ReportForPrint) {
   const { cautions, citations } = evidence
   const heading = (text: string) => pieceOf(pdf, pages, 'H2', [text], styles.heading, 15)
-  if (cautions.length > 0) pages.print([heading('How to read this'), ...listed(pdf, pages, null, cautions)])
+  if (cautions.length > 0)
+    pages.print([heading('How to read this'), ...listed(pdf, pages, cautions, styles.note)])
   if (content.plan !== null) {
     const plan = [
       heading('What happens next'),
@@ -260,12 +188,11 @@ function printPlanAndGround(pdf: PDFKit.PDFDocument, pages: Pages, { content, ev
     ...listed(
       pdf,
       pages,
-      null,
       evidence.evidence.map(({ words }) => words),
     ),
   ])
   if (citations.length > 0)
-    pages.print([heading('Methods and sources'), ...listed(pdf, pages, null, citations)])
+    pages.print([heading('Methods and sources'), ...listed(pdf, pages, citations, styles.note)])
 }
 
 function printSignatures(pdf: PDFKit.PDFDocument, pages: Pages, report: ReportForPrint) {

@@ -21,6 +21,7 @@ export const styles = {
   heading: { size: 12.5, weight: 600, leading: 17, colour: colours.petal },
   body: { size: 11, weight: 400, leading: 16, colour: colours.ink },
   strong: { size: 11, weight: 600, leading: 16, colour: colours.ink },
+  note: { size: 10, weight: 400, leading: 14, colour: colours.ink },
   cell: { size: 9.5, weight: 400, leading: 12.5, colour: colours.ink },
   cellStrong: { size: 9.5, weight: 600, leading: 12.5, colour: colours.ink },
 } as const satisfies Record<string, TextStyle>
