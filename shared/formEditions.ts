@@ -1,4 +1,4 @@
-import { array, string, type InferType } from 'yup'
+import { array, string, ValidationError, type InferType } from 'yup'
 import { body, choice, choices, optionalChoice, optionalText, text } from './fields.ts'
 import { scoringMethods, type FormDefinition } from './forms.ts'
 import { cutOffSets, handUseAnswers } from './handUse.ts'
@@ -64,3 +64,13 @@ export function editionProblems(before: FormDefinition, next: FormDefinition): R
   })
   return found
 }
+
+/** The schema of the edition that follows `before`, so that a form is checked by the rules the server keeps. */
+export const editionSchemaAfter = (before: FormDefinition) =>
+  formEditionSchema.test('keeps', (value, context) => {
+    const next = value.definition as Partial<FormDefinition> | undefined
+    if (!next?.items || !next.options || !next.informants) return true
+    const problems = Object.entries(editionProblems(before, next as FormDefinition))
+    if (problems.length === 0) return true
+    return new ValidationError(problems.map(([path, message]) => context.createError({ path, message })))
+  })
