@@ -124,6 +124,12 @@ const staffRoutes: RouteRecordRaw[] = [
     meta: { roles: managers, title: 'Settings' },
   },
   {
+    name: 'forms',
+    path: '/forms',
+    component: () => import('@/views/forms/FormsView.vue'),
+    meta: { roles: ['clinicLead'], title: 'Questionnaire forms' },
+  },
+  {
     name: 'people',
     path: '/people',
     component: () => import('@/views/users/PeopleView.vue'),

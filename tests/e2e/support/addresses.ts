@@ -155,7 +155,7 @@ const everyScreen = async (visitor: Visitor, person: Person): Promise<Screen[]> 
       return [
         ...(await staffScreens(person, true)),
         ...(await therapistScreens(person)),
-        ...simple(['review', '/review'], ['review-list', '/review/waiting']),
+        ...simple(['review', '/review'], ['review-list', '/review/waiting'], ['forms', '/forms']),
       ]
     case 'administrator':
       return [...(await staffScreens(person, true)), ...simple(['register', '/register'])]
