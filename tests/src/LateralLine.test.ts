@@ -129,7 +129,7 @@ describe('LateralLine', () => {
     const mark = wrapper.get('.track svg')
     expect(mark.attributes('x')).toBe('40%')
     expect(mark.get('.mark').classes()).toContain('left')
-    const whisker = wrapper.get('.whisker line')
+    const whisker = wrapper.get('.whisker .line')
     expect([whisker.attributes('x1'), whisker.attributes('x2')]).toEqual(['27.5%', '55%'])
     expect(wrapper.findAll('.whisker .cap').map((cap) => cap.attributes('x1'))).toEqual(['27.5%', '55%'])
     expect(wrapper.get('.band.left').attributes()).toMatchObject({ x: '0', width: '30%' })
@@ -138,7 +138,7 @@ describe('LateralLine', () => {
 
   it('leaves the cap off where an interval passes the end of the scale: it does not end there', () => {
     const wrapper = picture([row({ value: -90, interval: { low: -112, high: -68 } })])
-    const whisker = wrapper.get('.whisker line')
+    const whisker = wrapper.get('.whisker .line')
     expect([whisker.attributes('x1'), whisker.attributes('x2')]).toEqual(['0%', '16%'])
     expect(wrapper.findAll('.whisker .cap').map((cap) => cap.attributes('x1'))).toEqual(['16%'])
   })
