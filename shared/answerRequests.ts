@@ -168,6 +168,8 @@ export interface AnswerRequestView {
 export interface ToAnswer {
   id: string
   childId: string
+  /** The child's class, for a teacher's own pages; null for a carer. */
+  classId: string | null
   childName: string
   title: string
   begun: boolean

@@ -87,6 +87,7 @@ export const presentAnswerChoices = (of: {
 export const presentToAnswer = (row: ToAnswerRow, timeZone: string): ToAnswer => ({
   id: row.id,
   childId: row.childId,
+  classId: row.classId,
   childName: row.childName,
   title: row.formTitle ?? requestTitles[row.asks],
   begun: row.begun,

@@ -143,6 +143,7 @@ export const lockRequest = async (tx: Tx, by: { id: string } | { tokenHash: Buff
 export interface ToAnswerRow {
   id: string
   childId: string
+  classId: string | null
   childName: string
   asks: RequestedForm
   formTitle: string | null
@@ -158,7 +159,8 @@ export const listToAnswer = async (
 ): Promise<ToAnswerRow[]> => {
   const scope = childScope(viewer, relation, 'r.childId')
   const rows = await selectRows<Omit<ToAnswerRow, 'begun'> & { begun: number }>(
-    `SELECT r.id, r.childId, ${calledName('c')} AS childName, r.asks, ${formTitle} AS formTitle,
+    `SELECT r.id, r.childId, IF(r.answerer = 'teacher', c.schoolClassId, NULL) AS classId,
+       ${calledName('c')} AS childName, r.asks, ${formTitle} AS formTitle,
        ${answerId} IS NOT NULL AS begun, r.askedAt, r.expiresAt
      FROM answer_requests r ${withPeople} ${withAnswers}
      WHERE ${ownRequest(relation)} AND ${stillOpen('r')} AND ${agreed('assessment_treatment')} AND ${scope.sql}

@@ -43,6 +43,12 @@ const openRoutes: RouteRecordRaw[] = [
     component: () => import('@/views/auth/InvitationView.vue'),
     meta: { open: true, title: 'Your invitation' },
   },
+  {
+    name: 'answer-link',
+    path: '/answer',
+    component: () => import('@/views/answers/AnswerLinkView.vue'),
+    meta: { open: true, title: 'Questions from the clinic' },
+  },
 ]
 
 const staffRoutes: RouteRecordRaw[] = [
@@ -159,6 +165,13 @@ const familyRoutes: RouteRecordRaw[] = [
     meta: { roles: ['guardian'], title: 'A letter for you' },
   },
   {
+    name: 'my-answers',
+    path: '/my-child/:childId/answer/:requestId',
+    props: true,
+    component: () => import('@/views/family/AnswerView.vue'),
+    meta: { roles: ['guardian'], title: 'Questions for you' },
+  },
+  {
     name: 'delivery',
     path: '/letter/:deliveryId',
     props: true,
@@ -187,6 +200,13 @@ const schoolRoutes: RouteRecordRaw[] = [
     props: true,
     component: () => import('@/views/classes/PupilView.vue'),
     meta: { roles: ['teacher'], title: 'Pupil' },
+  },
+  {
+    name: 'pupil-answers',
+    path: '/classes/:classId/pupils/:childId/answer/:requestId',
+    props: true,
+    component: () => import('@/views/classes/PupilAnswerView.vue'),
+    meta: { roles: ['teacher'], title: 'Questions about a pupil' },
   },
 ]
 

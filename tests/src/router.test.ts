@@ -38,7 +38,14 @@ describe('addresses', () => {
 
   it('opens only the sign-in pages and the missing page to people who are not signed in', () => {
     const open = pages.filter(({ meta }) => meta?.open).map(({ name }) => name)
-    expect(open).toEqual(['sign-in', 'forgot-password', 'reset-password', 'invitation', 'not-found'])
+    expect(open).toEqual([
+      'sign-in',
+      'forgot-password',
+      'reset-password',
+      'invitation',
+      'answer-link',
+      'not-found',
+    ])
   })
 
   it('sends somebody who is not signed in to sign in, and remembers where they wanted to go', async () => {

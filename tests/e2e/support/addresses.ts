@@ -105,10 +105,14 @@ const guardianScreens = async (guardian: Person): Promise<Screen[]> => {
   const { get } = reader(guardian)
   const childId = (await get<{ id: string }[]>('/my/children'))[0]?.id ?? 'none'
   const { letters } = await get<{ letters: { id: string }[] }>(`/my/children/${childId}`)
+  const toAnswer = await get<{ id: string; childId: string }[]>('/my/to-answer')
+  const asked = toAnswer.filter((request) => request.childId === childId)
   return simple(
     ['my-children', '/my-child'],
     ['my-child', `/my-child/${childId}`],
     ['received-letter', `/my-child/${childId}/letters/${letters[0]?.id}`],
+    // No such questions, or closed ones: either way the page says in words what to do.
+    ['my-answers', `/my-child/${childId}/answer/${asked[0]?.id ?? childId}`],
     // No such delivery, or one whose link has ended: either way the page says in words what to do.
     ['delivery', `/letter/${childId}`],
     ['profile', '/profile'],
@@ -122,11 +126,16 @@ const teacherScreens = async (teacher: Person): Promise<Screen[]> => {
   const classes = await get<{ id: string; unanswered: number }[]>('/classes')
   const classId = classes.find(({ unanswered }) => unanswered > 0)?.id ?? 'none'
   const pupils = await get<{ rows: { id: string; unanswered: number }[] }>(`/classes/${classId}/pupils`)
+  const asked = (await get<{ id: string; childId: string }[]>('/pupils/to-answer'))[0]
   const pupilId = pupils.rows.find(({ unanswered }) => unanswered > 0)?.id ?? 'none'
   return simple(
     ['classes', '/classes'],
     ['class', `/classes/${classId}`],
     ['pupil', `/classes/${classId}/pupils/${pupilId}`],
+    [
+      'pupil-answers',
+      `/classes/${classId}/pupils/${asked?.childId ?? pupilId}/answer/${asked?.id ?? pupilId}`,
+    ],
     ['profile', '/profile'],
     ['forbidden', '/forbidden'],
   )
@@ -147,6 +156,7 @@ const everyScreen = async (visitor: Visitor, person: Person): Promise<Screen[]> 
         ['forgot-password', '/forgot-password'],
         ['reset-password', '/reset-password#not-a-real-token'],
         ['invitation', '/invitation#not-a-real-token'],
+        ['answer-link', '/answer#not-a-real-token'],
         ['not-found', '/no-such-page'],
       )
     case 'therapist':

@@ -1,0 +1,59 @@
+import { useQuery } from '@pinia/colada'
+import { ref, toValue, type MaybeRefOrGetter } from 'vue'
+import { answerRequestsApi } from '@/api/answerRequests.ts'
+import { newIdempotencyKey } from '@/api/http.ts'
+import { useAction } from '@/composables/useAction.ts'
+import { childKey } from '@/composables/useChild.ts'
+import { useConfirmStep } from '@/composables/useConfirmStep.ts'
+import type { AnswerRequestDetails, AnswerRequestView } from '@shared/answerRequests.ts'
+
+/** What was asked about a child, and the acts of the therapist who asks. */
+export function useAnswerRequests(child: MaybeRefOrGetter<string>, mayAsk: MaybeRefOrGetter<boolean>) {
+  const childId = () => toValue(child)
+  const confirm = useConfirmStep()
+  const requests = useQuery({
+    key: () => childKey(childId(), 'answer-requests'),
+    query: () => answerRequestsApi.forChild(childId()),
+  })
+  const choices = useQuery({
+    key: () => childKey(childId(), 'answer-choices'),
+    query: () => answerRequestsApi.choices(childId()),
+    enabled: () => toValue(mayAsk),
+  })
+  const asking = ref<boolean>(false)
+  let key = newIdempotencyKey()
+  const begin = async () => {
+    // One key for each time the form is opened: sent again after a lost answer it asks nobody twice.
+    key = newIdempotencyKey()
+    await choices.refetch()
+    asking.value = true
+  }
+  const ask = (asked: AnswerRequestDetails) => answerRequestsApi.ask(childId(), asked, key)
+  const asked = async () => {
+    asking.value = false
+    await requests.refetch()
+  }
+
+  const reminding = ref<string | null>(null)
+  const reminder = useAction(async ({ id }: AnswerRequestView) => {
+    reminding.value = id
+    try {
+      await answerRequestsApi.remind(childId(), id)
+      await requests.refetch()
+    } finally {
+      reminding.value = null
+    }
+  })
+  const cancelling = useAction(async ({ id, version }: AnswerRequestView) => {
+    await answerRequestsApi.cancel(childId(), id, version).finally(() => requests.refetch())
+  })
+  const cancel = async (request: AnswerRequestView) => {
+    const yes = await confirm({
+      title: `Withdraw what ${request.askedOf} was asked?`,
+      text: 'The questions close at once and a link in an e-mail ends. What was answered so far is kept.',
+      action: 'Withdraw',
+    })
+    if (yes) await cancelling.run(request)
+  }
+  return { requests, choices, asking, begin, ask, asked, reminding, reminder, cancelling, cancel }
+}
