@@ -10,11 +10,13 @@ import { migrateDatabase } from '../../server/setup/migrateDatabase.ts'
 import { measureAccounts } from './accounts.ts'
 import { childWithConsent, fillClinic } from './data.ts'
 import { median, signIn, startServer } from './servers.ts'
+import { fillHandProfile } from './handProfile.ts'
 import { measureUploads } from './uploads.ts'
 
 /*
  * Speed as ratios within one run, because machines differ: the caseload page against the least a server could do with
- * the same duties, and against itself with a tenth of the children. Servers take turns, so that drift hits both.
+ * the same duties, and against itself with a tenth of the children; the hand profile against the same rows read by plain
+ * SQL. Servers take turns, so that drift hits both.
  */
 const seconds = Number(process.env.SECONDS ?? 4)
 const rounds = 3
@@ -97,6 +99,25 @@ try {
     )
   }
 
+  const profiled = await childWithConsent(mariadb.access('migrate', 'bench_full'))
+  await fillHandProfile(mariadb.access('migrate', 'bench_full'), profiled)
+  const profiles = await measure(
+    [
+      { name: 'rows of a hand profile by plain SQL', url: `${floor.url}/?child=${profiled}` },
+      {
+        name: 'hand profile',
+        url: `${app.url}/api/children/${profiled}/hand-profile`,
+        cookie: therapist.cookie,
+      },
+    ],
+    1,
+  )
+  console.table(profiles)
+  const [plain, profile] = profiles
+  console.log(
+    `hand profile ÷ plain SQL in time for a page = ${((plain?.perSecond ?? 0) / (profile?.perSecond ?? 1)).toFixed(2)} (bar 2.5)`,
+  )
+
   const fast = await startServer('./appServer.ts', full, { BENCH_TIME_FACTOR: '4000' })
   children.push(fast.child)
   for (const { name, tries, known, unknown } of await measureAccounts(fast.url))
@@ -108,7 +129,7 @@ try {
   const uploads = await measureUploads({
     server: app,
     ...therapist,
-    childId: await childWithConsent(mariadb.access('migrate', 'bench_full')),
+    childId: profiled,
   })
   console.log(`uploads answered ${JSON.stringify(uploads.answers)}`)
   console.log(`20 uploads over the limit: memory rose by ${uploads.overLimitRise.toFixed(2)} × the limit`)
