@@ -1,5 +1,4 @@
 import { http } from '@/api/http.ts'
-import type { AlertAction } from '@shared/alerts.ts'
 import type {
   Allocation,
   CareDetails,
@@ -25,8 +24,6 @@ export const childrenApi = {
     http.patch<void>(`${path(childId)}/care`, care, { ifMatch: version }),
   changeState: (childId: string, change: StateChange, episodeVersion: number) =>
     http.post<void>(`${path(childId)}/state`, change, { ifMatch: episodeVersion }),
-  actOnAlert: (childId: string, alertId: string, action: AlertAction) =>
-    http.post<void>(`${path(childId)}/alerts/${alertId}/action`, action),
   allocate: (childId: string, allocation: Allocation) =>
     http.post<void>(`${path(childId)}/allocation`, allocation),
 }

@@ -38,6 +38,13 @@ export const recordRoutes: RouteRecordRaw[] = [
     meta: { title: 'Measure' },
   },
   {
+    name: 'history',
+    path: 'histories/:historyId',
+    props: true,
+    component: () => import('@/views/histories/HistoryView.vue'),
+    meta: { title: 'History' },
+  },
+  {
     name: 'child-handwriting',
     path: 'handwriting',
     props: true,
