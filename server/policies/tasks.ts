@@ -1,5 +1,5 @@
 import { staffRoles, type Role } from '../../shared/roles.ts'
-import { alertTask } from '../../shared/tasks.ts'
+import { actOfTask } from '../../shared/tasks.ts'
 import type { Viewer } from '../access/actor.ts'
 import { rolePolicy } from './policy.ts'
 
@@ -14,10 +14,10 @@ interface HeldTask {
   doneAt: Date | null
 }
 
-/** A task is finished by the person or the role that holds it, or by the lead; that of a warning sign by its answer. */
+/** A task is finished by the person or the role that holds it, or by the lead, unless an act on the record does it. */
 export const canFinishTask = (viewer: Viewer, { kind, assigneeId, forRole, doneAt }: HeldTask) =>
   doneAt === null &&
-  kind !== alertTask &&
+  actOfTask(kind) === null &&
   (assigneeId === viewer.id ||
     (forRole !== null && viewer.roles.includes(forRole)) ||
     viewer.roles.includes('clinicLead'))

@@ -1,5 +1,5 @@
 import { attentionLevels } from '../../shared/attention.ts'
-import { alertTask } from '../../shared/tasks.ts'
+import { actOfTask } from '../../shared/tasks.ts'
 import type { TodayItem, TodayView } from '../../shared/today.ts'
 import type { TodayGroupRows } from '../queries/today.ts'
 import { presentWorkItem, type WorkClock } from './workItems.ts'
@@ -30,7 +30,7 @@ const presentGroup = ({ id, label, list, rows, total }: TodayGroupRows, clock: W
         detail,
         level,
         to,
-        taskId: list === 'tasks' && row.kind !== alertTask ? row.id : null,
+        taskId: list === 'tasks' && row.kind !== null && actOfTask(row.kind) === null ? row.id : null,
       }
     })
     .toSorted((a, b) => attentionLevels.indexOf(b.level) - attentionLevels.indexOf(a.level)),

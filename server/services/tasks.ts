@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import type { Day } from '../../shared/days.ts'
 import type { Role } from '../../shared/roles.ts'
-import { alertTask } from '../../shared/tasks.ts'
+import { actOfTask } from '../../shared/tasks.ts'
 import { isId } from '../../shared/fields.ts'
 import { now } from '../clock.ts'
 import type { Actor, Viewer } from '../access/actor.ts'
@@ -61,11 +61,8 @@ export const finishTask = (actor: Actor, viewer: Viewer, id: string): Promise<vo
       .getOne()
     if (!task) throw notFound()
     if (task.doneAt) throw conflict('closed', 'This was done already. Nothing was changed.')
-    if (task.kind === alertTask)
-      throw conflict(
-        'answer_needed',
-        'Open the record and write down what was done about the warning sign. This task is then done by itself.',
-      )
+    const act = actOfTask(task.kind)
+    if (act !== null) throw conflict('answer_needed', act)
     if (!canFinishTask(viewer, task)) throw forbidden('This task is held by somebody else.')
     await tx.update(Task, { id }, { doneAt: now(), doneById: viewer.id })
     record({ action: 'task.finished', objectType: 'task', objectId: id, childId: task.childId })

@@ -546,6 +546,8 @@ describe('a conclusion by a newly qualified therapist', () => {
     expect(await stateOf()).toBe('assessing')
     const [task] = await database().manager.findBy(Task, { childId: child.id })
     expect(task).toMatchObject({ forRole: 'clinicLead', doneAt: null, dueOn: '2026-06-17' })
+    const ticked = await lead.post(`/api/tasks/${task?.id}/finish`)
+    expect([ticked.status, ticked.body.code]).toEqual([409, 'answer_needed'])
     expect((await bytesOf(june, waiting.id)).status).toBe(409)
 
     expect((await act('countersign', waiting.id, waiting.version, lead, {})).status).toBe(422)
