@@ -1,19 +1,22 @@
 import { useQuery } from '@pinia/colada'
 import { toValue, type MaybeRefOrGetter } from 'vue'
+import { alertsApi } from '@/api/alerts.ts'
+import { answerRequestsApi } from '@/api/answerRequests.ts'
 import { conclusionsApi } from '@/api/conclusions.ts'
 import { handProfileApi } from '@/api/handProfile.ts'
+import { historiesApi } from '@/api/histories.ts'
 import { childKey } from '@/composables/useChild.ts'
 
 /** Everything the hand profile is put together from; each part loads, fails and retries by itself. */
-export function useHandProfile(childId: MaybeRefOrGetter<string>) {
-  const id = () => toValue(childId)
-  const profile = useQuery({
-    key: () => childKey(id(), 'hand-profile'),
-    query: () => handProfileApi.forChild(id()),
-  })
-  const conclusions = useQuery({
-    key: () => childKey(id(), 'conclusions'),
-    query: () => conclusionsApi.forChild(id()),
-  })
-  return { profile, conclusions }
+export function useHandProfile(child: MaybeRefOrGetter<string>) {
+  const childId = () => toValue(child)
+  const part = <T>(name: string, query: (id: string) => Promise<T>) =>
+    useQuery({ key: () => childKey(childId(), name), query: () => query(childId()) })
+  return {
+    profile: part('hand-profile', handProfileApi.forChild),
+    histories: part('histories', historiesApi.forChild),
+    requests: part('answer-requests', answerRequestsApi.forChild),
+    alerts: part('alerts', alertsApi.forChild),
+    conclusions: part('conclusions', conclusionsApi.forChild),
+  }
 }
