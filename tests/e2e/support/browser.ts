@@ -57,9 +57,11 @@ export const openPerson = async (
   url: string,
   width = 1280,
   height = 900,
+  hasTouch = false,
 ): Promise<Person> => {
   const context = await browser.newContext({
     viewport: { width, height },
+    hasTouch,
     locale: 'en-GB',
     timezoneId: 'Europe/London',
     bypassCSP: false,

@@ -28,15 +28,21 @@ export const openStage = () => {
   }
 
   /** A person with a browser window of their own, not signed in. */
-  const enter = async (name: string, width?: number, height?: number): Promise<Person> => {
+  const enter = async (name: string, width?: number, height?: number, touch?: boolean): Promise<Person> => {
     if (!browser) throw new Error('The browser is not open yet')
-    const person = await openPerson(browser, clinic.url, width, height)
+    const person = await openPerson(browser, clinic.url, width, height, touch)
     present.set(name, person)
     return person
   }
   /** The same, signed in. */
-  const arrive = async (name: string, how: SignIn, width?: number, height?: number): Promise<Person> => {
-    const person = await enter(name, width, height)
+  const arrive = async (
+    name: string,
+    how: SignIn,
+    width?: number,
+    height?: number,
+    touch?: boolean,
+  ): Promise<Person> => {
+    const person = await enter(name, width, height, touch)
     await signIn(person, how)
     return person
   }
