@@ -17,35 +17,38 @@ const saved = ({ page }: Person) =>
 it.each([
   { who: 'mairi' as const, child: 'Soraya Haidari', hand: 'left' },
   { who: 'tomasz' as const, child: 'Tane Whetuira', hand: 'right' },
-])('records 21 reaches by touch with the working edge on the side of the hand: $hand', async ({ who, child, hand }) => {
-  const therapist = await arrive('therapist', signInOf(who), 820, 1180, true)
-  const { page } = therapist
-  await openFromCaseload(therapist, child)
-  await startMeasure(therapist, 'Reaching across the midline')
-  const side = await sideOf(therapist, 'Left')
-  if (hand === 'left') expect(side).toBeLessThan(0.25)
-  else expect(side).toBeGreaterThan(0.75)
+])(
+  'records 21 reaches by touch with the working edge on the side of the hand: $hand',
+  async ({ who, child, hand }) => {
+    const therapist = await arrive('therapist', signInOf(who), 820, 1180, true)
+    const { page } = therapist
+    await openFromCaseload(therapist, child)
+    await startMeasure(therapist, 'Reaching across the midline')
+    const side = await sideOf(therapist, 'Left')
+    if (hand === 'left') expect(side).toBeLessThan(0.25)
+    else expect(side).toBeGreaterThan(0.75)
 
-  const edge = edgeOf(therapist)
-  const tap = (name: string) => edge.getByRole('button', { name, exact: true }).tap()
-  await tap('Right')
-  await tap('Undo')
-  for (let reach = 0; reach < 17; reach += 1) await tap(reach % 4 === 3 ? 'Right' : 'Left')
-  await tap('Swapped')
-  await tap('Lost')
-  for (let reach = 0; reach < 3; reach += 1)
-    expect(await tapToShown(therapist, 'Left'), 'from tap to shown, ms').toBeLessThanOrEqual(100)
-  await seeText(page, 'All 21 reaches are recorded')
-  await saved(therapist)
-  await inspect(therapist, `reaching-${hand}`)
+    const edge = edgeOf(therapist)
+    const tap = (name: string) => edge.getByRole('button', { name, exact: true }).tap()
+    await tap('Right')
+    await tap('Undo')
+    for (let reach = 0; reach < 17; reach += 1) await tap(reach % 4 === 3 ? 'Right' : 'Left')
+    await tap('Swapped')
+    await tap('Lost')
+    for (let reach = 0; reach < 3; reach += 1)
+      expect(await tapToShown(therapist, 'Left'), 'from tap to shown, ms').toBeLessThanOrEqual(100)
+    await seeText(page, 'All 21 reaches are recorded')
+    await saved(therapist)
+    await inspect(therapist, `reaching-${hand}`)
 
-  // Of 20 counted reaches 16 left, 4 right: 100 (4 − 16) / 20 = −60.0.
-  expect(await lockMeasure(therapist)).toContain('1 reach was lost')
-  await seeText(page, '16 left, 4 right')
-  await seeText(page, /−60\.0/)
-  await inspect(therapist, `reaching-${hand}-locked`)
-  expectNoFaults()
-})
+    // Of 20 counted reaches 16 left, 4 right: 100 (4 − 16) / 20 = −60.0.
+    expect(await lockMeasure(therapist)).toContain('1 reach was lost')
+    await seeText(page, '16 left, 4 right')
+    await seeText(page, /−60\.0/)
+    await inspect(therapist, `reaching-${hand}-locked`)
+    expectNoFaults()
+  },
+)
 
 it('records reaches and times by keyboard alone, and loses nothing while the network is away', async () => {
   const therapist = await arrive('therapist', signInOf('tomasz'))

@@ -160,3 +160,9 @@ export function gapsOf(details: MeasureDetails): string[] {
       return skillGaps(details)
   }
 }
+
+/** Is every trial that belongs to it taken? Lost reaches were taken too. */
+export const isComplete = (details: MeasureDetails): boolean =>
+  details.kind === 'reaching'
+    ? details.reaches.length === details.cardsPerPlace * 7
+    : gapsOf(details).length === 0
