@@ -10,7 +10,7 @@ import {
   preferenceRows,
   reachedStatement,
 } from './preferenceStatements.ts'
-import { informantLabels } from './questionnaires.ts'
+import type { Informant } from './questionnaires.ts'
 import { crossingExpectedFrom } from './reaching.ts'
 import type { Hand } from './roles.ts'
 import {
@@ -31,9 +31,17 @@ const kappaWords = ({ kappa, kappaInterval }: InformantPair) => {
   return `, kappa ${shown(kappa)}${interval}`
 }
 
+/** Who answered, in a sentence. */
+const whoSaid: Record<Informant, string> = {
+  guardian: 'parent or carer',
+  teacher: 'teacher',
+  child_demonstrated: 'child showing it',
+  therapist: 'therapist watching',
+}
+
 function informantStatement(title: string, pair: InformantPair): HandStatement | null {
   if (pair.compared === 0) return null
-  const who = `${informantLabels[pair.one]} and ${informantLabels[pair.other].toLowerCase()}`
+  const who = `The ${whoSaid[pair.one]} and the ${whoSaid[pair.other]}`
   const figures = `agreement ${per(pair.share)}${kappaWords(pair)}`
   return pair.discrepancies === 0
     ? {

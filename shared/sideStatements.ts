@@ -40,7 +40,7 @@ function skillAgainst(hand: Hand, skills: readonly LateralLineRow[]): HandStatem
   if (worse.length > 0)
     statements.push({
       kind: 'differs',
-      text: `The ${hand} hand is chosen and the ${otherHand(hand)} hand does better at ${namedRows(worse)}.`,
+      text: `The ${hand} hand is chosen, and the ${otherHand(hand)} hand does better at ${namedRows(worse)}.`,
       because: skillIsAnother,
       rowIds: idsOf(worse),
     })
@@ -104,7 +104,7 @@ function partStatement(
   if (row.side === otherHand(hand))
     return {
       kind: 'differs',
-      text: `The ${hand} hand is chosen and the ${otherHand(hand)} ${name}.`,
+      text: `The child chooses the ${hand} hand and the ${otherHand(hand)} ${name}.`,
       because: rates === null ? crossedCaution : `${rates} ${crossedCaution}`,
       rowIds,
     }
@@ -118,14 +118,26 @@ function partStatement(
   return null
 }
 
+/** Leaves a caution with the first statement that carries it: read three times over, it is not read at all. */
+function once(caution: string, statements: readonly HandStatement[]): HandStatement[] {
+  const first = statements.findIndex(({ because }) => because?.includes(caution))
+  return statements.map((statement, index) => {
+    if (index === first || !statement.because?.includes(caution)) return statement
+    const rest = statement.because.replace(caution, '').trim()
+    return { ...statement, because: rest === '' ? null : rest }
+  })
+}
+
 /** Foot, eyes and ear beside the hand; a different side is ordinary and is said to be. */
 export function sideStatements(hand: Hand | null, rows: readonly LateralLineRow[]): HandStatement[] {
   const found = parts.flatMap((part) => {
     const row = rows.find(({ latest, aspect }) => latest && aspect === part.aspect)
     return row ? [{ part, row }] : []
   })
-  const statements =
-    hand === null ? [] : found.flatMap(({ part, row }) => partStatement(hand, row, part) ?? [])
+  const statements = once(
+    crossedCaution,
+    hand === null ? [] : found.flatMap(({ part, row }) => partStatement(hand, row, part) ?? []),
+  )
   const far = found.find(({ part }) => part.aspect === 'eye_far')?.row
   const near = found.find(({ part }) => part.aspect === 'eye_near')?.row
   if (far && near && far.side !== near.side)

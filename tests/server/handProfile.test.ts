@@ -96,9 +96,9 @@ describe('the hand profile', () => {
       expect(opens.cautions.length).toBeGreaterThan(0)
     }
     expect(statements.map(({ kind }) => kind)).toContain('agrees')
-    expect(statements.some(({ text }) => text.includes('The left hand is chosen and the right foot'))).toBe(
-      true,
-    )
+    expect(
+      statements.some(({ text }) => text.includes('The child chooses the left hand and the right foot')),
+    ).toBe(true)
     expect([measures.length, questionnaires.length]).toEqual([3, 1])
   })
 
@@ -189,7 +189,7 @@ describe('who sees the hand profile', () => {
 
   it('answers 404 to everybody else, the same as for a child that does not exist', async () => {
     const guardian = await buildUser('guardian')
-    await buildGuardian(child, { userId: guardian.id })
+    await buildGuardian(child, guardian)
     const absent = await anna.get(`/api/children/${randomUUID()}/hand-profile`)
     for (const other of [
       guardian,
