@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { handProfileOf, handProfileRows, withoutDetails } from '../../shared/handProfile.ts'
 import { measureRows } from '../../shared/measureRows.ts'
@@ -182,12 +183,56 @@ describe('the whole profile', () => {
       lateralLine: [],
       statements: [],
       informants: [],
-      occasions: { forms: [], measures: [] },
+      occasions: { forms: [], measures: [], trends: [] },
     })
   })
 
   it('leaves what a row opens to away where only the line is shown', () => {
     const [row] = handProfileRows(responses, measures)
     expect(row && 'opens' in withoutDetails(row)).toBe(false)
+  })
+
+  it('turns every value, side and interval round when the hands are swapped', () => {
+    const codes = ['LL', 'L', 'B', 'R', 'RR', 'N', '-']
+    const swapped = ['RR', 'R', 'B', 'L', 'LL', 'N', '-']
+    const hand = fc.constantFrom('left' as const, 'right' as const)
+    const other = { left: 'right', right: 'left', middle: 'middle' } as const
+    const seconds = fc.array(fc.integer({ min: 8, max: 40 }), { minLength: 2, maxLength: 4 })
+    fc.assert(
+      fc.property(
+        fc.array(fc.nat(6), { minLength: 10, maxLength: 10 }),
+        fc.array(hand, { minLength: 7, maxLength: 7 }),
+        seconds,
+        seconds,
+        hand,
+        (answers, hands, left, right, side) => {
+          const rowsOf = (turn: boolean) =>
+            handProfileRows(
+              [answered(answers.map((code) => (turn ? swapped : codes)[code]).join(' '))],
+              [
+                measured(
+                  reachingDetails((place) => {
+                    const used = hands[place - 1] ?? 'left'
+                    return turn ? other[used] : used
+                  }),
+                ),
+                measured(turn ? pegsDetails(right, left) : pegsDetails(left, right)),
+                measured(sidesDetails(turn ? other[side] : side, turn ? other[side] : side)),
+              ],
+            )
+          const [before, after] = [rowsOf(false), rowsOf(true)]
+          expect(after).toHaveLength(before.length)
+          after.forEach((row, index) => {
+            const was = before[index]
+            if (row.value === null) expect(was?.value).toBeNull()
+            else expect(row.value + (was?.value ?? NaN)).toBeCloseTo(0, 9)
+            expect(row.side).toBe(was?.side ? other[was.side] : was?.side)
+            if (row.interval) expect(row.interval.low + (was?.interval?.high ?? NaN)).toBeCloseTo(0, 6)
+            expect(row.chance).toEqual(was?.chance)
+          })
+        },
+      ),
+      { numRuns: 60 },
+    )
   })
 })

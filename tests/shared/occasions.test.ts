@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { compareMeasureOccasions } from '../../shared/measureOccasions.ts'
 import { compareFormOccasions, itemChange } from '../../shared/occasions.ts'
 import { answered, measured, sidesDetails } from '../support/handEvidence.ts'
+import { skillTrends } from '../../shared/trends.ts'
 import { pegsDetails, reachingDetails } from '../support/measures.ts'
 
 describe('itemChange', () => {
@@ -93,5 +94,36 @@ describe('compareMeasureOccasions', () => {
         measured(pegsDetails([18, 18], [20, 20]), { measuredOn: '2025-03-03' }),
       ]),
     ).toEqual([])
+  })
+})
+
+describe('skillTrends', () => {
+  const pegs = (measuredOn: string, left: number, right: number) =>
+    measured(pegsDetails([left, left], [right, right]), { measuredOn })
+
+  it('gives slopes for 30 days from real dates, by hand: 20, 18 and 14 s thirty and sixty days apart', () => {
+    const trends = skillTrends([
+      pegs('2026-04-01', 14, 20),
+      pegs('2026-01-01', 20, 20),
+      pegs('2026-01-31', 18, 20),
+    ])
+    expect(trends.map(({ label }) => label)).toEqual(['Left hand, mean seconds', 'Right hand, mean seconds'])
+    // Slopes in 30 days: −2 (20 to 18), −2 (18 to 14 over 60) and −2 (20 to 14 over 90).
+    expect(trends[0]).toMatchObject({ occasions: 3, from: '2026-01-01', to: '2026-04-01' })
+    expect(trends[0]?.per30Days).toBeCloseTo(-2, 9)
+    expect(trends[0]?.leastSquares.per30Days).toBeCloseTo(-2, 9)
+    // Three falling values are one of six orders: two-sided a third, so never a finding.
+    expect(trends[0]?.p).toBeCloseTo(1 / 3, 9)
+    expect(trends[1]).toMatchObject({ per30Days: 0, p: null })
+  })
+
+  it('gives none for two days, for parts not done and for what is no task of both hands', () => {
+    expect(skillTrends([pegs('2026-01-01', 20, 20), pegs('2026-01-31', 18, 20)])).toEqual([])
+    const notDone = measured(pegsDetails([14, 14], [20, 20]), {
+      measuredOn: '2026-04-01',
+      notDoneReason: 'Tired',
+    })
+    expect(skillTrends([pegs('2026-01-01', 20, 20), pegs('2026-01-31', 18, 20), notDone])).toEqual([])
+    expect(skillTrends([measured(sidesDetails('left', 'left'))])).toEqual([])
   })
 })
