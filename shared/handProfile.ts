@@ -9,7 +9,6 @@ import { compareFormOccasions, type FormComparison, type MeasureComparison } fro
 import { questionnaireRows, type LockedResponse } from './questionnaireRows.ts'
 import type { QuestionnaireView } from './questionnaires.ts'
 import type { HandStatement } from './sideStatements.ts'
-import { skillTrends, type MeasureTrend } from './trends.ts'
 
 export interface HandProfileView {
   /** Preference first, then reaching, skill, foot, eye and ear; newest first within a track. */
@@ -17,8 +16,8 @@ export interface HandProfileView {
   statements: HandStatement[]
   /** Forms answered by at least two kinds of informant, side by side. */
   informants: InformantComparison[]
-  /** Each form and measure of the two newest occasions, item by item; trends over three days or more. */
-  occasions: { forms: FormComparison[]; measures: MeasureComparison[]; trends: MeasureTrend[] }
+  /** Each form and each measure of the two newest occasions, item by item. */
+  occasions: { forms: FormComparison[]; measures: MeasureComparison[] }
   questionnaires: QuestionnaireView[]
   measures: MeasureView[]
   /** Why nothing can be added now, in words; null when it can. */
@@ -62,10 +61,6 @@ export function handProfileOf(
     lateralLine,
     statements: handStatements(lateralLine, { ageYears, informants }),
     informants,
-    occasions: {
-      forms: compareFormOccasions(responses),
-      measures: compareMeasureOccasions(measures),
-      trends: skillTrends(measures),
-    },
+    occasions: { forms: compareFormOccasions(responses), measures: compareMeasureOccasions(measures) },
   }
 }

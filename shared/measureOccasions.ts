@@ -4,6 +4,7 @@ import type { LockedMeasure } from './measureRows.ts'
 import { measureKindLabels, type MeasureScore, type SideSummary, type SkillScore } from './measures.ts'
 import type { MeasureComparison } from './occasions.ts'
 import { reliabilitiesRead, reliableChangeCautions, type ReliableChangeNote } from './reliableChange.ts'
+import { skillTrends } from './trends.ts'
 
 const newestFirst = (a: LockedMeasure, b: LockedMeasure) =>
   compareDays(b.measuredOn, a.measuredOn) || (a.lockedAt < b.lockedAt ? 1 : -1)
@@ -108,6 +109,7 @@ function meansOf(before: MeasureScore, after: MeasureScore): MeasureComparison['
 /** The two newest occasions of each kind of measure, figure by figure. Parts that were not done are left out. */
 export function compareMeasureOccasions(measures: readonly LockedMeasure[]): MeasureComparison[] {
   const kinds = [...new Set(measures.map(({ details }) => details.kind))]
+  const trends = skillTrends(measures)
   return kinds.flatMap((kind) => {
     const [after, before] = measures
       .filter(({ details, notDoneReason }) => details.kind === kind && notDoneReason === null)
@@ -127,6 +129,7 @@ export function compareMeasureOccasions(measures: readonly LockedMeasure[]): Mea
         })),
         reliable: reliabilityOf(kind),
         means: meansOf(before.score, after.score),
+        trends: trends.filter((trend) => trend.kind === kind),
       },
     ]
   })

@@ -5,6 +5,7 @@ import type { MeasureKind } from './measures.ts'
 import type { LockedResponse } from './questionnaireRows.ts'
 import { informantLabels, informants, type Informant } from './questionnaires.ts'
 import type { ReliableChangeNote } from './reliableChange.ts'
+import type { MeasureTrend } from './trends.ts'
 
 /**
  * What became of an activity between two occasions. `firmer` keeps the side and changes always/mostly; `newly` was not
@@ -50,6 +51,8 @@ export interface MeasureComparison {
   reliable: ReliableChangeNote | null
   /** Means of each hand for `reliableChange`, where somebody has a published SD and coefficient at hand. Else empty. */
   means: { label: string; before: number | null; after: number | null }[]
+  /** Of each hand over three different days or more; empty otherwise. */
+  trends: MeasureTrend[]
 }
 
 /** How one answer became another. */

@@ -183,7 +183,7 @@ describe('the whole profile', () => {
       lateralLine: [],
       statements: [],
       informants: [],
-      occasions: { forms: [], measures: [], trends: [] },
+      occasions: { forms: [], measures: [] },
     })
   })
 

@@ -115,6 +115,16 @@ describe('skillTrends', () => {
     // Three falling values are one of six orders: two-sided a third, so never a finding.
     expect(trends[0]?.p).toBeCloseTo(1 / 3, 9)
     expect(trends[1]).toMatchObject({ per30Days: 0, p: null })
+    expect(trends[0]?.words).toContain('−2.0 in 30 days')
+  })
+
+  it('stand with the comparison of their measure', () => {
+    const [found] = compareMeasureOccasions([
+      pegs('2026-01-01', 20, 20),
+      pegs('2026-01-31', 18, 20),
+      pegs('2026-04-01', 14, 20),
+    ])
+    expect(found?.trends).toHaveLength(2)
   })
 
   it('gives none for two days, for parts not done and for what is no task of both hands', () => {
