@@ -93,7 +93,11 @@ describe('QuestionnaireForm', () => {
   })
 
   it('says how many answers are still needed while the form is being filled', () => {
-    expect(scoreOf(form(given('L,L,L,L'))).facts[0]).toBe('A quotient appears after 6 answers: 2 more')
+    const score = scoreOf(form(given('L,L,L,L')))
+    expect([score.figure, score.facts[0]]).toEqual(['not yet', 'A quotient appears after 6 answers: 2 more'])
+    const signed = scoreOf(form(given('L,L,L,L'), { locked: true }))
+    expect(signed.figure).toBe('not scorable')
+    expect(signed.facts[0]).toMatch(/^Not scorable/)
   })
 
   it('gives strength as the share of "always", apart from the quotient', () => {

@@ -62,12 +62,12 @@ describe('QuestionnaireStartForm', () => {
     await choose('Ten tasks, two marks')
     expect(offered()).toEqual(['Parent or carer', 'Child showed it', 'Therapist saw it'])
     await wrapper.get('form').trigger('submit')
-    await flushPromises()
+    await vi.waitFor(() => expect(wrapper.find('.summary').exists()).toBe(true))
     expect(start).not.toHaveBeenCalled()
     await choose('Eight actions')
     expect(offered()).toEqual(['Child showed it'])
     await wrapper.get('form').trigger('submit')
-    await flushPromises()
+    await vi.waitFor(() => expect(start).toHaveBeenCalledTimes(1))
     expect(start).toHaveBeenCalledWith({
       formId: 'shown-8.v1',
       informant: 'child_demonstrated',
@@ -90,8 +90,10 @@ describe('QuestionnaireStartForm', () => {
     const { wrapper, start } = await page(query([older, newer, startForm('ten-task')]), replaces)
     expect(wrapper.text()).toContain('It is answered on edition 2')
     await wrapper.get('form').trigger('submit')
-    await flushPromises()
-    expect(start).toHaveBeenCalledWith(expect.objectContaining({ formId: 'short-4.v2', replacesId: replaces.id }))
+    await vi.waitFor(() => expect(start).toHaveBeenCalledTimes(1))
+    expect(start).toHaveBeenCalledWith(
+      expect.objectContaining({ formId: 'short-4.v2', replacesId: replaces.id }),
+    )
   })
 
   it('says that there is nothing to begin with, and offers to try again when the forms did not come', async () => {

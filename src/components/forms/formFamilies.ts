@@ -1,4 +1,4 @@
-import type { FormView } from '@shared/forms.ts'
+import { everydayFormKey, type FormView } from '@shared/forms.ts'
 
 /** A form with all its editions. */
 export interface FormFamily {
@@ -9,7 +9,7 @@ export interface FormFamily {
   others: FormView[]
 }
 
-/** Editions put together by form; forms in use first, then by title. */
+/** Editions put together by form: those in use first, among them the everyday one, then by title. */
 export function formFamilies(forms: readonly FormView[]): FormFamily[] {
   const keys = [...new Set(forms.map(({ key }) => key))]
   const families = keys.flatMap((key) => {
@@ -20,6 +20,7 @@ export function formFamilies(forms: readonly FormView[]): FormFamily[] {
   return families.toSorted(
     (a, b) =>
       Number(a.current.retiredAt !== null) - Number(b.current.retiredAt !== null) ||
+      Number(b.key === everydayFormKey) - Number(a.key === everydayFormKey) ||
       a.current.definition.title.localeCompare(b.current.definition.title, 'en-GB'),
   )
 }

@@ -9,8 +9,8 @@ export const activitiesWords = ({ items }: Pick<FormDefinition, 'items'>): strin
 
 export const capitalised = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1)
 
-/** 'Parent or carer, therapist saw it' */
+/** 'parent or carer, child showed it' */
 export const informantsWords = ({ informants }: Pick<FormDefinition, 'informants'>): string =>
-  capitalised(informants.map((informant) => informantLabels[informant].toLowerCase()).join(', '))
+  informants.map((informant) => informantLabels[informant].toLowerCase()).join(', ')
 
 export const isInUse = ({ retiredAt }: Pick<FormView, 'retiredAt'>): boolean => retiredAt === null
