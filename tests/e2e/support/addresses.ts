@@ -64,6 +64,8 @@ const childScreens = async (staff: Person): Promise<Screen[]> => {
     `/children/${childId}/measures`,
   )
   add('measure', ...measures.map(({ id }) => `measures/${id}`))
+  const conclusions = await get<{ id: string }[]>(`/children/${childId}/conclusions`)
+  add('conclusion', ...conclusions.slice(0, 1).map(({ id }) => `conclusions/${id}`))
   add('session-note', 'sessions/new', ...notes.rows.slice(0, 1).map(({ id }) => `sessions/${id}`))
   add('letter', ...letters.rows.slice(0, 1).map(({ id }) => `letters/${id}`))
   return screens
