@@ -59,7 +59,7 @@ export function handProfileOf(
   const ageYears = newest === undefined ? null : ageInYears(birthDate, newest)
   return {
     lateralLine,
-    statements: handStatements(lateralLine, { ageYears, informants }),
+    statements: handStatements(lateralLine, { ageYears, informants, measures }),
     informants,
     occasions: { forms: compareFormOccasions(responses), measures: compareMeasureOccasions(measures) },
   }

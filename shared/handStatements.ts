@@ -1,6 +1,9 @@
 import type { HandPreference } from './conclusions.ts'
+import { compareDays, formatDay } from './days.ts'
 import type { InformantComparison, InformantPair } from './informants.ts'
 import { rowName, type LateralLineRow } from './lateralLine.ts'
+import type { LockedMeasure } from './measureRows.ts'
+import { measureKindLabels } from './measures.ts'
 import {
   askedAndReached,
   askedStatement,
@@ -64,6 +67,21 @@ export interface StatementFacts {
   /** Whole years at the newest occasion; null when nothing was recorded yet. */
   ageYears: number | null
   informants: readonly InformantComparison[]
+  /** Locked measures, for the parts that were not done and why. */
+  measures?: readonly LockedMeasure[]
+}
+
+/** Parts whose newest occasion was not done, with the reason that was given. */
+function notDoneStatements(measures: readonly LockedMeasure[]): HandStatement[] {
+  const kindsTaken = [...new Set(measures.map(({ details }) => details.kind))]
+  return kindsTaken.flatMap((kind) => {
+    const [newest] = measures
+      .filter(({ details }) => details.kind === kind)
+      .toSorted((a, b) => compareDays(b.measuredOn, a.measuredOn) || (a.lockedAt < b.lockedAt ? 1 : -1))
+    if (!newest || newest.notDoneReason === null) return []
+    const text = `Not done on ${formatDay(newest.measuredOn)}: ${measureKindLabels[kind]}. Reason given: ${newest.notDoneReason}`
+    return [{ kind: 'open' as const, text, because: null, rowIds: [] }]
+  })
 }
 
 const kinds: HandStatement['kind'][] = ['agrees', 'differs', 'open']
@@ -73,7 +91,8 @@ const kinds: HandStatement['kind'][] = ['agrees', 'differs', 'open']
  * what was recorded, never a diagnosis; the therapist concludes.
  */
 export function handStatements(rows: readonly LateralLineRow[], facts: StatementFacts): HandStatement[] {
-  if (rows.length === 0) return []
+  const notDone = notDoneStatements(facts.measures ?? [])
+  if (rows.length === 0) return notDone
   const { asked, reached } = askedAndReached(rows)
   const young = facts.ageYears !== null && facts.ageYears < crossingExpectedFrom
   const hand = chosenHand(rows)
@@ -83,6 +102,7 @@ export function handStatements(rows: readonly LateralLineRow[], facts: Statement
     ...facts.informants.flatMap(({ title, pairs }) => pairs.map((pair) => informantStatement(title, pair))),
     ...skillStatements(hand, rows),
     ...sideStatements(hand, rows),
+    ...notDone,
     young
       ? {
           kind: 'open' as const,

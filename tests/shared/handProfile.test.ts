@@ -187,6 +187,15 @@ describe('the whole profile', () => {
     })
   })
 
+  it('says which part was not done and why, until it is done', () => {
+    const notDone = measured(pegsDetails([14], [16]), { notDoneReason: 'Wanted to stop.' })
+    const said = (...taken: typeof measures) =>
+      handProfileOf(responses, taken, '2018-05-04').statements.map(({ text }) => text)
+    expect(said(notDone)).toContain('Not done on 3 Mar 2026: Moving pegs. Reason given: Wanted to stop.')
+    const later = measured(pegsDetails([14, 15], [16, 17]), { measuredOn: '2026-03-10' })
+    expect(said(notDone, later).join(' ')).not.toContain('Not done')
+  })
+
   it('leaves what a row opens to away where only the line is shown', () => {
     const [row] = handProfileRows(responses, measures)
     expect(row && 'opens' in withoutDetails(row)).toBe(false)
