@@ -4,7 +4,7 @@ import { answerStep, askedStep } from '../../src/composables/useConfirmStep.ts'
 import type { MeasureView, ReachingDetails } from '../../shared/measures.ts'
 import { reachOrder } from '../../shared/reaching.ts'
 import { measureDraft, measureServer, openMeasure } from '../support/measurePages.ts'
-import { fakeWire } from '../support/wire.ts'
+import { fakeWire, refusal } from '../support/wire.ts'
 
 beforeEach(() => {
   vi.useFakeTimers()
@@ -193,6 +193,24 @@ describe('reaches when saving fails', () => {
     await pass(1_000)
     await page.keys('x')
     expect(reachesOf(page.stored).map(({ hand }) => hand)).toEqual(['right', null])
+  })
+})
+
+describe('a measure that somebody else locked meanwhile', () => {
+  it('says so, keeps what was tapped on the page, and opens the locked one only when told to', async () => {
+    fakeWire(refusal(409, 'closed'))
+    const page = await openMeasure(measureDraft('reaching'))
+    await page.keys('l')
+    expect(page.wrapper.text()).toContain('Somebody locked this measure while you were recording')
+    expect(page.wrapper.text()).toContain('1 of 21')
+    await page.button('Open the locked measure').trigger('click')
+    answerStep(false)
+    await pass(0)
+    expect(page.wrapper.emitted('reload')).toBeUndefined()
+    await page.button('Open the locked measure').trigger('click')
+    answerStep(true)
+    await pass(0)
+    expect(page.wrapper.emitted('reload')).toHaveLength(1)
   })
 })
 
