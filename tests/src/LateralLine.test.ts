@@ -129,18 +129,18 @@ describe('LateralLine', () => {
     const mark = wrapper.get('.track svg')
     expect(mark.attributes('x')).toBe('40%')
     expect(mark.get('.mark').classes()).toContain('left')
-    const whisker = wrapper.get('.whisker .line')
+    const whisker = wrapper.get('.whisker .ink.line')
     expect([whisker.attributes('x1'), whisker.attributes('x2')]).toEqual(['27.5%', '55%'])
-    expect(wrapper.findAll('.whisker .cap').map((cap) => cap.attributes('x1'))).toEqual(['27.5%', '55%'])
+    expect(wrapper.findAll('.whisker .ink.cap').map((cap) => cap.attributes('x1'))).toEqual(['27.5%', '55%'])
     expect(wrapper.get('.band.left').attributes()).toMatchObject({ x: '0', width: '30%' })
     expect(wrapper.get('.band.right').attributes()).toMatchObject({ x: '70%', width: '30%' })
   })
 
   it('leaves the cap off where an interval passes the end of the scale: it does not end there', () => {
     const wrapper = picture([row({ value: -90, interval: { low: -112, high: -68 } })])
-    const whisker = wrapper.get('.whisker .line')
+    const whisker = wrapper.get('.whisker .ink.line')
     expect([whisker.attributes('x1'), whisker.attributes('x2')]).toEqual(['0%', '16%'])
-    expect(wrapper.findAll('.whisker .cap').map((cap) => cap.attributes('x1'))).toEqual(['16%'])
+    expect(wrapper.findAll('.whisker .ink.cap').map((cap) => cap.attributes('x1'))).toEqual(['16%'])
   })
 
   // 21 reaches: 6 to 15 with one hand are within chance (exact sign test), so the index runs from −42.9 to +42.9.
