@@ -283,7 +283,8 @@ export const accessRows: readonly AccessRow[] = [
   // Questionnaires as the clinic asks them belong to its settings: the lead decides, staff see what there is to ask. They
   // name no child and no person.
   area('GET /api/forms', staff, 0),
-  area('POST /api/forms', ['clinicLead']),
+  // The edition that is made and the one it takes the place of are two entries.
+  { ...area('POST /api/forms', ['clinicLead']), entries: 2 },
   within('POST /api/forms/:id/retire', ['clinicLead'], 'clinic', ['L']),
   within('POST /api/forms/:id/restore', ['clinicLead'], 'clinic', ['L']),
 ]
