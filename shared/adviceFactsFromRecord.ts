@@ -17,7 +17,7 @@ export interface AdviceRecord {
   scriptDirection: ScriptDirection | null
   concerns: readonly ReferralConcern[]
   observation: WritingObservationDetails | null
-  /** Answers of the newest locked hand-use questionnaire. */
+  /** Answers of the newest locked questionnaire that asks about writing and cutting. */
   handUse: HandUseAnswers | null
   sample: SampleDetails | null
   /** Activities of the goals that are still open. */
@@ -30,6 +30,9 @@ function handOf(answer: HandUseAnswer | null | undefined): WritingHand | null {
   if (answer === 'strong_right' || answer === 'right') return 'right'
   return answer === 'either' ? 'swaps' : null
 }
+
+/** The clinic's everyday form asks of drawing and writing in one, the forms after published tasks of writing alone. */
+const writes = (answers: HandUseAnswers | null) => answers?.draws_writes ?? answers?.write
 
 const trueOrFalse = (answer: YesNo | null): boolean | null => (answer === null ? null : answer === 'yes')
 
@@ -67,7 +70,7 @@ export const adviceFactsFromRecord = (record: AdviceRecord): AdviceFacts => ({
   ...(record.sample && fromSample(record.sample)),
   ageMonths:
     compareDays(record.today, record.birthDate) < 0 ? null : ageInMonths(record.birthDate, record.today),
-  writingHand: record.writingHand ?? record.observation?.writingHand ?? handOf(record.handUse?.draws_writes),
+  writingHand: record.writingHand ?? record.observation?.writingHand ?? handOf(writes(record.handUse)),
   cuttingHand: handOf(record.handUse?.scissors),
   scriptDirection: record.scriptDirection,
   concerns: record.concerns,

@@ -21,7 +21,10 @@ interface RecordRow {
   sample: string | null
 }
 
-/** The newest observation, locked questionnaire and sample of the child, with what identity says about writing. */
+/**
+ * The newest observation, locked questionnaire that asks about writing and cutting, and sample of the child, with what
+ * identity says about writing.
+ */
 const findNewest = (access: ChildAccess): Promise<RecordRow | null> => {
   const scope = within(access, 'c.id')
   return selectOne<RecordRow>(
@@ -29,6 +32,7 @@ const findNewest = (access: ChildAccess): Promise<RecordRow | null> => {
        (SELECT o.details FROM writing_observations o WHERE o.childId = c.id
          ORDER BY o.observedOn DESC, o.recordedAt DESC, o.id LIMIT 1) AS observation,
        (SELECT q.answers FROM questionnaire_responses q WHERE q.childId = c.id AND q.lockedAt IS NOT NULL
+         AND JSON_CONTAINS_PATH(q.answers, 'one', '$.scissors')
          AND NOT EXISTS (SELECT 1 FROM questionnaire_responses n WHERE n.replacesId = q.id AND n.lockedAt IS NOT NULL)
          ORDER BY q.answeredOn DESC, q.lockedAt DESC, q.id LIMIT 1) AS handUse,
        (SELECT s.details FROM samples s WHERE s.childId = c.id AND s.removedAt IS NULL

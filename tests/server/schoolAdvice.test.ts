@@ -174,6 +174,15 @@ describe('the advice a record calls for', () => {
     expect(await ids()).toEqual(['T01', 'T05', 'X04'])
   })
 
+  it('passes over a newer questionnaire that does not ask about cutting', async () => {
+    await answered('2026-09-01', 'left')
+    await answered('2026-10-01', 'right', {
+      formVersion: 'short-4.v1',
+      answers: { write: 'strong_left', spoon: 'left' },
+    })
+    expect(await ids()).toEqual(['T01', 'T05', 'X04'])
+  })
+
   it('follows the newest sample that was not removed', async () => {
     await written('2026-10-01', 'heavy')
     await written('2026-11-01', 'none', { removedAt: new Date(), removedById: therapist.id })

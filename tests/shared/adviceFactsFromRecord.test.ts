@@ -105,6 +105,7 @@ describe('adviceFactsFromRecord', () => {
       'left',
     ],
     ['the answer when nothing else is known', { handUse: { draws_writes: 'left' } }, 'left'],
+    ['the answer of a form that asks of writing alone', { handUse: { write: 'strong_right' } }, 'right'],
     ['nothing when nothing is known', {}, null],
   ])('takes the writing hand from %s', (_what, known, hand) => {
     expect(facts(known).writingHand).toBe(hand)
