@@ -6,6 +6,9 @@ import { historyQuestions, type HistoryQuestion } from '@shared/historyQuestions
 /** A therapist's page as it is being filled: the day may be empty until it is saved. */
 export type HistoryInWork = Omit<HistoryDraft, 'answeredOn'> & { answeredOn: Day | null }
 
+/** How questions call the child: the first word of the name, for a full name in every sentence reads like a form. */
+export const firstName = (name: string): string => name.split(' ')[0] ?? name
+
 /** Only what may be written. */
 export const draftOf = ({ respondentName, answeredOn, details }: HistoryView): HistoryDraft => ({
   respondentName,

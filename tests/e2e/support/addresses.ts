@@ -60,6 +60,9 @@ const childScreens = async (staff: Person): Promise<Screen[]> => {
   const notes = await get<Listed>(`/children/${childId}/session-notes`)
   const letters = await get<Listed>(`/children/${childId}/letters`)
   add('questionnaire', ...profile.questionnaires.slice(0, 1).map(({ id }) => `questionnaires/${id}`))
+  const histories = await get<{ id: string }[]>(`/children/${childId}/histories`)
+  // One that is written down and one that is not there: either way the page says what to do.
+  add('history', `histories/${histories[0]?.id ?? childId}`)
   const measures = await get<{ id: string; kind: string; lockedAt: string | null }[]>(
     `/children/${childId}/measures`,
   )
