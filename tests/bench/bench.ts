@@ -11,6 +11,7 @@ import { measureAccounts } from './accounts.ts'
 import { childWithConsent, fillClinic } from './data.ts'
 import { median, signIn, startServer } from './servers.ts'
 import { fillHandProfile } from './handProfile.ts'
+import { measureScoring } from './scoring.ts'
 import { measureUploads } from './uploads.ts'
 
 /*
@@ -53,6 +54,11 @@ const measure = async (targets: { name: string; url: string; cookie?: string }[]
     }
   })
 }
+
+const scoring = measureScoring()
+console.table(scoring)
+const slowest = Math.max(...scoring.map(({ firstMs, p99Ms }) => Math.max(firstMs, p99Ms)))
+console.log(`scoring of any form, first time or p99, at most ${slowest.toFixed(2)} ms (bar 5)`)
 
 const folder = mkdtempSync(join(tmpdir(), 'fanflower-bench-'))
 const mariadb = await startMariaDb({
