@@ -182,6 +182,8 @@ export interface AnswerPage {
   requestId: string
   asks: RequestedForm
   childName: string
+  /** What the child is called at home, without the family name: for the questions. */
+  spokenName: string
   askedOf: string
   answerBy: Day
   /** Set for a questionnaire. */

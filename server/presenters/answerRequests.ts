@@ -103,6 +103,7 @@ export const presentAnswerPage = (
   requestId: request.id,
   asks: request.asks,
   childName: request.childName,
+  spokenName: request.spokenName,
   askedOf: request.askedOf,
   answerBy: dayOf(request.expiresAt, clinic.timeZone),
   form: kept.form && presentForm(kept.form),

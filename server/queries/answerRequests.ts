@@ -7,7 +7,7 @@ import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { consentHolds } from './inForce.ts'
-import { calledName } from './names.ts'
+import { calledName, spokenName } from './names.ts'
 import { childScope, ownLink, within } from './scope.ts'
 import { flag, selectOne, selectRows, type SqlParameters } from './sql.ts'
 
@@ -74,6 +74,7 @@ export interface AnswerableRequest {
   userId: string | null
   askedOf: string
   childName: string
+  spokenName: string
   birthDate: Day
   expiresAt: Date
   /** Can be answered: open, and the family still agrees to assessment. */
@@ -81,7 +82,7 @@ export interface AnswerableRequest {
 }
 
 const answerable = `r.id, r.childId, r.asks, r.formId, r.answerer, r.guardianId, COALESCE(g.userId, t.id) AS userId,
-  ${askedOf} AS askedOf, ${calledName('c')} AS childName, c.birthDate, r.expiresAt,
+  ${askedOf} AS askedOf, ${calledName('c')} AS childName, ${spokenName('c')} AS spokenName, c.birthDate, r.expiresAt,
   (${stillOpen('r')} AND ${agreed('assessment_treatment')}) AS open`
 
 type StoredAnswerable = Omit<AnswerableRequest, 'open'> & { open: number }

@@ -5,6 +5,9 @@ export const recordName = (row: string): string => `CONCAT(${row}.givenName, ' '
 export const calledName = (row: string): string =>
   `CONCAT(COALESCE(${row}.preferredName, ${row}.givenName), ' ', ${row}.familyName)`
 
+/** What the child is called when somebody who knows them is asked about them. */
+export const spokenName = (row: string): string => `COALESCE(${row}.preferredName, ${row}.givenName)`
+
 interface ChildNames {
   givenName: string
   preferredName: string | null

@@ -23,7 +23,8 @@ afterEach(() => {
 const pageOf = (given: Partial<HistoryDetails> | null, version = 0): AnswerPage => ({
   requestId: 'a',
   asks: 'history',
-  childName: 'Robin',
+  childName: 'Robin Marsh',
+  spokenName: 'Robin',
   askedOf: 'Maren Holt',
   answerBy: '2026-07-01',
   form: null,

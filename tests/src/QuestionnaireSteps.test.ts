@@ -24,6 +24,7 @@ const pageOf = (given: Partial<AnswerPage> = {}): AnswerPage => ({
   requestId: 'r1',
   asks: 'questionnaire',
   childName: 'Pip Marsh',
+  spokenName: 'Pip',
   askedOf: 'Wren Marsh',
   answerBy: '2026-03-29',
   form: {
