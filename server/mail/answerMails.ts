@@ -19,7 +19,7 @@ const howItOpens = ({ byLink, answerBy }: Questions) =>
 const blocks = (questions: Questions, opening: string) => [
   'Hello,',
   opening,
-  'They take about ten minutes. Your answers are kept as you go, so you can stop and come back.',
+  'They take ten to fifteen minutes. Your answers are kept as you go, so you can stop and come back.',
   { label: 'Answer the questions', link: questions.link },
   howItOpens(questions),
   `If you did not expect this e-mail, please call us on ${oneLine(questions.clinic.clinicPhone)} and do not use the link.`,
