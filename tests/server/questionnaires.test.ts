@@ -4,6 +4,7 @@ import request from 'supertest'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { setClock } from '../../server/clock.ts'
 import { database } from '../../server/dataSource.ts'
+import { AnswerRequest } from '../../server/entities/AnswerRequest.ts'
 import type { Child } from '../../server/entities/Child.ts'
 import type { User } from '../../server/entities/User.ts'
 import { errorHandler } from '../../server/middleware/errorHandler.ts'
@@ -14,6 +15,7 @@ import type { HandProfileView } from '../../shared/handProfile.ts'
 import type { QuestionnaireView } from '../../shared/questionnaires.ts'
 import { signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
 import { buildChild, buildClass, buildGuardian, buildUser, giveConsent } from '../support/factories.ts'
+import { buildQuestionnaire } from '../support/records.ts'
 
 beforeAll(startApp)
 afterAll(async () => {
@@ -338,6 +340,47 @@ describe('a hand-use questionnaire', () => {
     expect(twice.map((response) => response.status)).toEqual([201, 201])
     expect(twice[0]?.body.id).toBe(twice[1]?.body.id)
     expect((await profile()).questionnaires).toHaveLength(1)
+  })
+})
+
+describe('answers that somebody was asked for', () => {
+  it('are seen by the therapist while they come in, and are left to the person who was asked', async () => {
+    const guardian = await buildGuardian(child)
+    const requestId = randomUUID()
+    await database().manager.insert(AnswerRequest, {
+      id: requestId,
+      childId: child.id,
+      asks: 'questionnaire',
+      formId: 'hand-use-10.v1',
+      answerer: 'guardian',
+      guardianId: guardian.id,
+      teacherId: null,
+      tokenHash: null,
+      askedAt: new Date('2026-06-01T09:00:00Z'),
+      askedById: therapist.id,
+      expiresAt: new Date('2026-06-29T09:00:00Z'),
+    })
+    const { id, version } = await buildQuestionnaire(child, therapist, {
+      locked: false,
+      requestId,
+      guardianId: guardian.id,
+      informant: 'guardian',
+      startedById: null,
+    })
+    expect((await anna.get(at(`/${id}`))).body).toMatchObject({
+      requestId,
+      can: { change: false, lock: false, replace: false },
+    })
+    const tried = [
+      await anna
+        .put(at(`/${id}`))
+        .set('If-Match', `"${version}"`)
+        .send(draft(settled)),
+      await lock(id, version),
+      await anna.delete(at(`/${id}`)),
+    ]
+    expect(tried.map(({ status, body }) => [status, body.code])).toEqual(Array(3).fill([409, 'asked']))
+    expect((await anna.get(at(`/${id}`))).body.version).toBe(version)
   })
 })
 
