@@ -68,7 +68,8 @@ const childScreens = async (staff: Person): Promise<Screen[]> => {
   )
   add('measure', ...measures.map(({ id }) => `measures/${id}`))
   const conclusions = await get<{ id: string }[]>(`/children/${childId}/conclusions`)
-  add('conclusion', ...conclusions.slice(0, 1).map(({ id }) => `conclusions/${id}`))
+  // A child without one shows the page that says so.
+  add('conclusion', `conclusions/${conclusions[0]?.id ?? childId}`)
   add('session-note', 'sessions/new', ...notes.rows.slice(0, 1).map(({ id }) => `sessions/${id}`))
   add('letter', ...letters.rows.slice(0, 1).map(({ id }) => `letters/${id}`))
   return screens
