@@ -64,7 +64,9 @@ it.each(visitors)(
     const missing = routesFor(visitor).filter((name) => !screens.some((screen) => screen.name === name))
     // Sections of a record that the server does not offer to an administrator.
     const closed =
-      visitor === 'administrator' ? /^(child-|questionnaire|measure|conclusion|session-note|letter$)/ : /^$/
+      visitor === 'administrator'
+        ? /^(child-|questionnaire|measure|history|conclusion|session-note|letter$)/
+        : /^$/
     expect(
       missing.filter((name) => !closed.test(name)),
       'routes without a page here',
