@@ -29,7 +29,7 @@ describe('the boot', () => {
     expect(() => assertPolicies(appWith(router))).toThrow('GET /api/late')
   })
 
-  it('finds a policy on every route of the app, open ones only where the way in or the state of the server is asked', () => {
+  it('finds a policy on every route of the app, open ones only for the way in, the state of the server and the link of a carer', () => {
     const app = createApp({
       appUrl: 'http://127.0.0.1',
       sessionSecret: 'x'.repeat(40),
@@ -46,11 +46,14 @@ describe('the boot', () => {
     expect(open.sort()).toEqual([
       'GET /api/health',
       'GET /api/session',
+      'POST /api/answer-links/open',
+      'POST /api/answer-links/send',
       'POST /api/invitations/confirm',
       'POST /api/password-resets',
       'POST /api/password-resets/confirm',
       'POST /api/sign-in',
       'POST /api/sign-out',
+      'PUT /api/answer-links',
     ])
     const childRoutes = routes.filter((route) => route.path.includes(':childId'))
     for (const route of childRoutes)

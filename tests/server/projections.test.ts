@@ -173,11 +173,13 @@ const filled = (value: unknown): string[] => {
   ])
 }
 
-/** Where a clinical name means something else: the state of an account, the clinic’s choice of cut-offs. */
+/** Where a clinical name means something else: the state of an account, the clinic’s choice of cut-offs, own answers. */
 const notClinicalHere: Record<string, string[]> = {
   'GET /api/users': ['state'],
   'GET /api/settings': ['cutOffSet'],
   'GET /api/forms': ['cutOffSet'],
+  'GET /api/my/children/:childId/answer-requests/:id': ['answers'],
+  'GET /api/pupils/:childId/answer-requests/:id': ['answers'],
 }
 
 describe('nothing clinical', () => {
