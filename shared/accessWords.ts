@@ -20,6 +20,8 @@ const nouns: Record<string, string> = {
   task: 'Task',
   questionnaire: 'Questionnaire',
   measure: 'Measure',
+  history: 'History',
+  histories: 'History',
   handProfile: 'Hand profile',
   sessionNote: 'Session note',
   writingObservation: 'Writing observation',

@@ -17,6 +17,9 @@ describe('an entry of the access history', () => {
     ['consent.withdrawn', 'Consent: withdrawn', 'Written'],
     ['guardian.contact_changed', 'Carer: contact changed', 'Written'],
     ['child.changeState', 'Record: change state', 'Written'],
+    ['histories.list', 'History: list read', 'Read'],
+    ['history.locked', 'History: locked', 'Written'],
+    ['alert.raised_by_hand', 'Warning sign: raised by hand', 'Written'],
     ['accessHistory.read', 'Access history: read', 'Read'],
     ['seatPlan.moved', 'Seat plan: moved', 'Written'],
   ])('%s reads “%s” and is %s', (action, words, kind) => {
