@@ -1,5 +1,6 @@
 import type { Day } from '../../shared/days.ts'
 import type { DemoEvent } from './demo/timelineTypes.ts'
+import { playAsking, playHistory, playQuestionnaire, playReminders } from './playAnswers.ts'
 import {
   playAcceptance,
   playAllocation,
@@ -9,21 +10,21 @@ import {
   playStep,
   playWithdrawal,
 } from './playCare.ts'
+import { playConclusion, playSecondSignature } from './playConclusions.ts'
 import {
   playGoal,
   playGoalEnd,
   playObservation,
-  playQuestionnaire,
   playRating,
   playSample,
   playSampleRemoval,
 } from './playFindings.ts'
+import { playMeasure } from './playMeasures.ts'
 import { playAddendum, playCountersignature, playNote, playSignature } from './playNotes.ts'
 import type { Scene } from './playScene.ts'
 import {
   playAdvice,
   playAdviceEnd,
-  playAlert,
   playAlertAction,
   playLetter,
   playLetterAct,
@@ -51,7 +52,19 @@ export const playEvent = (scene: Scene, event: DemoEvent, demoToday: Day): Promi
     case 'withdraw':
       return playWithdrawal(scene, child, event)
     case 'questionnaire':
-      return playQuestionnaire(scene, child, event.questionnaire, on)
+      return playQuestionnaire(scene, child, event)
+    case 'ask':
+      return playAsking(scene, child, event)
+    case 'remind':
+      return playReminders(scene)
+    case 'history':
+      return playHistory(scene, child, { ...event, demoToday })
+    case 'measure':
+      return playMeasure(scene, child, event.measure, on)
+    case 'conclusion':
+      return playConclusion(scene, child, event.conclusion, event.index)
+    case 'countersign_conclusion':
+      return playSecondSignature(scene, child, event.index, event.by)
     case 'observation':
       return playObservation(scene, child, event.observation, on)
     case 'sample':
@@ -82,8 +95,6 @@ export const playEvent = (scene: Scene, event: DemoEvent, demoToday: Day): Promi
       return playLetter(scene, child, { ...event, demoToday })
     case 'letter_act':
       return playLetterAct(scene, child, event)
-    case 'alert':
-      return playAlert(scene, child, event.alert, on)
     case 'act_on_alert':
       return playAlertAction(scene, child, event)
     case 'task':

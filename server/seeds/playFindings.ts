@@ -1,39 +1,13 @@
 import { addDays, type Day } from '../../shared/days.ts'
-import { handUseFormV1 } from '../../shared/handUse.ts'
 import { database } from '../dataSource.ts'
 import { Goal } from '../entities/Goal.ts'
-import { QuestionnaireResponse } from '../entities/QuestionnaireResponse.ts'
 import { addObservation } from '../services/writingObservations.ts'
 import { createGoal, endGoal, rateGoal } from '../services/goals.ts'
-import { lockQuestionnaire, saveQuestionnaire, startQuestionnaire } from '../services/questionnaires.ts'
 import { addSample, removeSample } from '../services/samples.ts'
-import type { DemoGoal, DemoObservation, DemoQuestionnaire, DemoSample } from './demo/demoTypes.ts'
+import type { DemoGoal, DemoObservation, DemoSample } from './demo/demoTypes.ts'
 import type { StaffKey } from './demo/people.ts'
 import { drawSample } from './drawSample.ts'
 import { acting, idIn, storyOf, type Scene } from './playScene.ts'
-
-export const playQuestionnaire = async (
-  scene: Scene,
-  number: number,
-  { informant, respondentName, by, answers, comment, locked }: DemoQuestionnaire,
-  on: Day,
-): Promise<void> => {
-  const { actor, access } = await acting(scene, number, by)
-  const start = { formId: handUseFormV1.version, informant, respondentName, answeredOn: on, replacesId: null }
-  const id = await startQuestionnaire(actor, access, start, null)
-  const versionNow = async () =>
-    (await database().manager.findOneByOrFail(QuestionnaireResponse, { id })).version
-  const draft = {
-    informant,
-    respondentName,
-    answeredOn: on,
-    answers,
-    comment,
-    cutOffSet: 'clinic-40' as const,
-  }
-  await saveQuestionnaire(actor, access, id, await versionNow(), draft)
-  if (locked) await lockQuestionnaire(actor, access, id, await versionNow())
-}
 
 export const playObservation = async (
   scene: Scene,

@@ -1,3 +1,4 @@
+import { createTransport } from 'nodemailer'
 import type { Actor, Viewer } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { findChildAccess } from '../queries/childAccess.ts'
@@ -16,6 +17,9 @@ export interface Story {
   noteIds: Map<number, string>
   letterIds: Map<number, string>
   taskIds: Map<number, string>
+  conclusionIds: Map<number, string>
+  /** By the key of what was asked. */
+  requestIds: Map<string, string>
 }
 
 export interface Scene {
@@ -40,6 +44,8 @@ export const newStory = (referralId: string): Story => ({
   noteIds: new Map(),
   letterIds: new Map(),
   taskIds: new Map(),
+  conclusionIds: new Map(),
+  requestIds: new Map(),
 })
 
 export const childOf = (scene: Scene, number: number): DemoChild => {
@@ -54,11 +60,14 @@ export const storyOf = (scene: Scene, number: number): Story => {
   return story
 }
 
-export const idIn = (ids: Map<number, string>, index: number): string => {
+export const idIn = <Key extends string | number>(ids: Map<Key, string>, index: Key): string => {
   const id = ids.get(index)
   if (id === undefined) throw new Error(`The demo refers to something that has not happened yet (${index})`)
   return id
 }
+
+/** Hands the e-mails over without a network: the same worker as in real use, with a receiver that answers at once. */
+export const accepting = createTransport({ streamTransport: true, buffer: true })
 
 export interface Acting {
   actor: Actor

@@ -8,8 +8,7 @@ import { Alert } from '../entities/Alert.ts'
 import { findLetter } from '../queries/letters.ts'
 import { findReceivedLetter } from '../queries/receivedLetters.ts'
 import { SchoolAdvice } from '../entities/SchoolAdvice.ts'
-import { actOnAlert, raiseAlert } from '../services/alerts.ts'
-import { currentTherapist } from '../services/assignments.ts'
+import { actOnAlert } from '../services/alerts.ts'
 import { replyToAdvice } from '../services/classes.ts'
 import { approveLetter } from '../services/letterApproval.ts'
 import { sendLetter } from '../services/letterSending.ts'
@@ -21,14 +20,14 @@ import { addTask, finishTask } from '../services/tasks.ts'
 import { transact } from '../services/transact.ts'
 import type {
   DemoAdvice,
-  DemoAlert,
+  DemoAlertAction,
   DemoLetter,
   DemoLetterAct,
   DemoLetterText,
   DemoTask,
 } from './demo/demoTypes.ts'
 import type { StaffKey } from './demo/people.ts'
-import { acting, childOf, idIn, storyOf, type Scene } from './playScene.ts'
+import { accepting, acting, childOf, idIn, storyOf, type Scene } from './playScene.ts'
 import { actorOf } from './seedPeople.ts'
 
 export const playAdvice = async (
@@ -106,8 +105,6 @@ export const playLetter = async (
   }
 }
 
-/** Hands the e-mails over without a network: the same worker as in real use, with a receiver that answers at once. */
-const accepting = createTransport({ streamTransport: true, buffer: true })
 const refusing = createTransport({
   name: 'refusing',
   version: '1',
@@ -158,31 +155,10 @@ const openLetter = async (scene: Scene, number: number, carer: number, letterId:
   await recordLetterRead(actor, await findReceivedLetter(actor.viewer, letterId), 'text')
 }
 
-/** A sign seen during care; those of a referral are raised when it is accepted. */
-export const playAlert = async (
-  scene: Scene,
-  number: number,
-  { flag, text, level }: DemoAlert,
-  on: Day,
-): Promise<void> => {
-  const { childId } = storyOf(scene, number)
-  await transact(actorOf(scene.people, 'ines'), async (tx, record) => {
-    await raiseAlert(tx, record, {
-      childId,
-      therapistId: await currentTherapist(tx, childId),
-      today: on,
-      flag,
-      text,
-      level,
-      task: 'Look at the warning sign on the record',
-    })
-  })
-}
-
 export const playAlertAction = async (
   scene: Scene,
   number: number,
-  { flag, by, action }: { flag: DemoAlert['flag']; by: StaffKey; action: string },
+  { flag, by, action }: { flag: DemoAlertAction['flag']; by: StaffKey; action: string },
 ): Promise<void> => {
   const { actor, access } = await acting(scene, number, by)
   const alert = await database().manager.findOneByOrFail(Alert, {

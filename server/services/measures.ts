@@ -81,6 +81,7 @@ export const startMeasure = async (
   access: ChildAccess,
   start: MeasureStart,
   key: string | null,
+  drawSeed: () => number = () => randomInt(seedLimit),
 ): Promise<string> => {
   await requirePastDay(access, 'measuredOn', 'The date', start.measuredOn)
   return transact(actor, (tx, record) => {
@@ -97,9 +98,7 @@ export const startMeasure = async (
         kind: start.kind,
         methodVersion: methodVersions[start.kind],
         measuredOn: start.measuredOn,
-        details: earlier
-          ? earlier.details
-          : emptyDetails(start.kind, start.options ?? {}, randomInt(seedLimit)),
+        details: earlier ? earlier.details : emptyDetails(start.kind, start.options ?? {}, drawSeed()),
         score: null,
         notDoneReason: earlier ? earlier.notDoneReason : null,
         comment: earlier ? earlier.comment : null,

@@ -2,14 +2,17 @@ import { describe, expect, it } from 'vitest'
 import type { Schema } from 'yup'
 import { sampleSvg } from '../../server/seeds/drawSample.ts'
 import { adviceGiven } from '../../server/seeds/demo/advice.ts'
-import { alerts } from '../../server/seeds/demo/alerts.ts'
+import { alertActions } from '../../server/seeds/demo/alertActions.ts'
 import { hasOpenEpisode } from '../../server/seeds/demo/childParts.ts'
 import { children, laterReferrals } from '../../server/seeds/demo/children.ts'
 import { clinicSettings } from '../../server/seeds/demo/clinic.ts'
 import { birthDateFor } from '../../server/seeds/demo/demoDays.ts'
 import type { DemoChild, DemoReferral } from '../../server/seeds/demo/demoTypes.ts'
 import { goals } from '../../server/seeds/demo/goals.ts'
+import { histories } from '../../server/seeds/demo/histories.ts'
+import { measures } from '../../server/seeds/demo/measures.ts'
 import { observations } from '../../server/seeds/demo/observations.ts'
+import { moreQuestionnaires } from '../../server/seeds/demo/moreQuestionnaires.ts'
 import { questionnaires } from '../../server/seeds/demo/questionnaires.ts'
 import { samples } from '../../server/seeds/demo/samples.ts'
 import { countLetters } from '../../server/seeds/demo/sampleTexts.ts'
@@ -59,6 +62,7 @@ const referralDetails = (child: DemoChild, referral: DemoReferral) => ({
   carers: child.carers.map((carer) => without(carer, 'account')),
 })
 
+const allQuestionnaires = [...questionnaires, ...moreQuestionnaires]
 const childOf = (number: number) => children.find((child) => child.number === number)!
 
 describe('every record of the demo is one that its form would take', () => {
@@ -77,7 +81,7 @@ describe('every record of the demo is one that its form would take', () => {
   })
 
   it('questionnaires', () => {
-    for (const { answers, informant, respondentName, answeredDay, comment } of questionnaires)
+    for (const { answers, informant, respondentName, answeredDay, comment } of allQuestionnaires)
       expect(
         problemsOf(questionnaireDraftSchema, {
           answers,
@@ -210,21 +214,11 @@ describe('the demo’s stories', () => {
     for (const child of children) {
       const { reason, concerns, birthDate, receivedOn } = referralDetails(child, child.referral)
       const raised = referralFlagsOf({ reason, concerns, birthDate, receivedOn }).map(({ id }) => id)
-      const answered = alerts
-        .filter((alert) => alert.child === child.number && alert.acted)
+      const answered = alertActions
+        .filter(({ child: number, from }) => number === child.number && from === 'referral')
         .map(({ flag }) => flag)
-      expect([child.number, answered]).toEqual([child.number, expect.arrayContaining(raised)])
+      expect([child.number, answered.toSorted()]).toEqual([child.number, raised.toSorted()])
     }
-  })
-
-  it.each([
-    [8, 'preference_before_12_months'],
-    [27, 'change_of_hand'],
-    [39, 'new_weakness'],
-  ])('child %i: %s, acted on', (child, flag) => {
-    const alert = alerts.find((candidate) => candidate.child === child && candidate.flag === flag)!
-    expect(alert.acted!.day).toBeGreaterThanOrEqual(alert.raised.day)
-    expect(alert.acted!.day - alert.raised.day).toBeLessThanOrEqual(1)
   })
 
   it('gather the consent that each record needs before it is made', () => {
@@ -235,8 +229,10 @@ describe('the demo’s stories', () => {
       )
     for (const { child, takenDay } of samples)
       expect([child, given(child, 'store_work_samples', takenDay)]).toEqual([child, true])
-    for (const { child, answeredDay } of questionnaires)
+    for (const { child, answeredDay } of [...allQuestionnaires, ...histories])
       expect([child, given(child, 'assessment_treatment', answeredDay)]).toEqual([child, true])
+    for (const { child, measuredDay } of measures)
+      expect([child, given(child, 'assessment_treatment', measuredDay)]).toEqual([child, true])
     for (const { child, heldDay } of sessionNotes.filter(({ type }) => type !== 'phone'))
       expect([child, given(child, 'assessment_treatment', heldDay)]).toEqual([child, true])
     for (const { child, publishedDay } of adviceGiven)

@@ -69,7 +69,11 @@ export const children06to10: readonly DemoChild[] = [
         'Noor is four and draws with one hand and then the other. Her development is otherwise on track and both hands are strong. Her parents ask which hand they should encourage. Advice for home and nursery class would be welcome.',
     }),
     carers: [carer('hudaAlRashwan', 'mother')],
-    consents: [consent('share_school_seating', -16), consent('email_link', -16)],
+    consents: [
+      consent('assessment_treatment', -16),
+      consent('share_school_seating', -16),
+      consent('email_link', -16),
+    ],
     steps: path({ triaged: -18, waiting: -18 }, null, {
       waiting: 'Waiting. Advice on letting the hand choose has gone to home and school meanwhile.',
     }),
@@ -90,9 +94,8 @@ export const children06to10: readonly DemoChild[] = [
       from: ['Margaret Oduya', 'Health visitor', 'm.oduya@harrowmere-health.example', '01632 960 162'],
       concerns: ['hand_preference_unclear', 'self_care'],
       reason:
-        'Bertie has used only his left hand since about 8 months of age. The right hand is often fisted and he seldom uses it to hold things. His mother asks for help with dressing and with opening his lunch box.',
-      priorityReason:
-        'Left hand only since 8 months and right hand often fisted: a doctor should see him before therapy.',
+        'Bertie does everything with his left hand, and has done for as long as his mother can remember; the right hand does not join in much. She asks for help with dressing and with opening his lunch box. Please ring her: there is more to tell than fits on this form.',
+      priorityReason: 'One hand for everything at four and the other hardly joins in: ring the mother today.',
     }),
     carers: [
       carer('jessicaCoombes', 'mother'),
@@ -158,7 +161,7 @@ export const children06to10: readonly DemoChild[] = [
         'Kofi starts a drawing with one hand and finishes it with the other, often changing at the middle of the page. He seems happy either way. We start letters soon and would like to know how to go about it.',
     }),
     carers: [carer('kwameAdjarey', 'father')],
-    consents: usualConsents(-40),
+    consents: [...usualConsents(-40), consent('share_school_observation', -40)],
     steps: path({ triaged: -71, waiting: -71, consented: -40, assessing: -33 }, 'rohan'),
     nextReviewDay: 30,
   }),

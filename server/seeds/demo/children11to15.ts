@@ -2,6 +2,7 @@ import {
   carer,
   carerWithoutAccount,
   child,
+  consent,
   fromParent,
   fromSchool,
   path,
@@ -142,10 +143,10 @@ export const children11to15: readonly DemoChild[] = [
       from: fromParent('meenaRaghunath'),
       concerns: ['hand_preference_unclear', 'pressure_to_switch'],
       reason:
-        'When Priya was five, a helper at her old school asked her to use her right hand for writing. She now writes with the right but throws, draws at home and opens jars with the left. She says she does not know which hand is hers. We would like to understand.',
+        'When Priya was five, a helper at her old school asked her to use her right hand for writing. In class she writes with the right but throws, draws at home and opens jars with the left. She says she does not know which hand is hers. We would like to understand.',
     }),
     carers: [carer('meenaRaghunath', 'mother')],
-    consents: usualConsents(-112),
+    consents: [...usualConsents(-112), consent('share_school_observation', -112)],
     steps: path(
       { triaged: -135, waiting: -135, consented: -112, assessing: -104, formulated: -86, active: -80 },
       'tomasz',

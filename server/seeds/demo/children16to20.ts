@@ -2,6 +2,7 @@ import {
   carer,
   carerWithoutAccount,
   child,
+  consent,
   fromParent,
   fromSchool,
   path,
@@ -165,7 +166,7 @@ export const children16to20: readonly DemoChild[] = [
         'Zofia writes with her left hand in school but we see her cut, throw and use the computer with the right. Her mother describes it differently. She is getting on well; we would like to know whether this needs any help.',
     }),
     carers: [carer('hannaHalbersztadt', 'mother')],
-    consents: usualConsents(-180),
+    consents: [...usualConsents(-180), consent('share_school_observation', -180)],
     steps: path(
       { triaged: -205, waiting: -205, consented: -180, assessing: -170, formulated: -150, discharged: -120 },
       'tomasz',

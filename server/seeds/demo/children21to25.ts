@@ -185,6 +185,7 @@ export const children21to25: readonly DemoChild[] = [
     consents: [
       consent('assessment_treatment', -90),
       consent('share_school_seating', -90),
+      consent('share_school_observation', -90),
       consent('email_link', -90),
     ],
     steps: path({ triaged: -128, waiting: -128 }, null),

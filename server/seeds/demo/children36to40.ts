@@ -129,18 +129,20 @@ export const children36to40: readonly DemoChild[] = [
       from: fromSchool('brindlemoor'),
       concerns: ['handwriting', 'other'],
       reason:
-        'Thandeka has always been left-handed. For about a week her left hand has been weak and she has had headaches; she now writes with her right hand. She dropped her tray at lunch twice. We are worried and did not know whom to ask.',
+        'Thandeka has always been left-handed. For about a week something has been different: she now writes with her right hand and is not herself. She let her tray fall at lunch twice. We are worried and did not know whom to ask.',
       priorityReason:
-        'New weakness of the left hand with headaches: same-day medical advice before anything else.',
+        'A sudden change of hand at thirteen: ring the family this morning, before anything else.',
     }),
     carers: [carer('leratoMoloi', 'mother')],
     consents: [
-      ...usualConsents(-16),
-      consent('share_doctor', -27, {
-        method: 'phone_witnessed',
-        recordedBy: 'ines',
-        note: 'Witnessed by Pauline Osterby',
-      }),
+      ...(['assessment_treatment', 'share_doctor'] as const).map((purpose) =>
+        consent(purpose, -27, {
+          method: 'phone_witnessed',
+          recordedBy: 'ines',
+          note: 'Witnessed by Pauline Osterby',
+        }),
+      ),
+      ...usualConsents(-16).filter(({ purpose }) => purpose !== 'assessment_treatment'),
     ],
     steps: path({ triaged: -27, consented: -16, assessing: -14 }, 'adaeze', {
       triaged: 'Acted on the same day, see the alert. Therapy begins only when the hospital agrees.',

@@ -5,6 +5,7 @@ import type { GuardianDetails, GuardianRelation } from '../../../shared/guardian
 import type { HandUseAnswer } from '../../../shared/handUse.ts'
 import type { LetterSectionId } from '../../../shared/letters.ts'
 import type { Informant } from '../../../shared/questionnaires.ts'
+import type { RedFlagId } from '../../../shared/redFlagRows.ts'
 import type { ReferralFlagId } from '../../../shared/referralFlags.ts'
 import type { Priority, ReferralDetails } from '../../../shared/referrals.ts'
 import type { Hand, Role } from '../../../shared/roles.ts'
@@ -124,12 +125,20 @@ export interface DemoLaterReferral {
   referral: DemoReferral
 }
 
+/** Whom the clinic asked: a carer by the place among the child's carers, or a teacher. */
+export type Asked = number | TeacherKey
+
 export interface DemoQuestionnaire {
   child: number
+  /** Edition of the form. */
+  formId: string
   informant: Informant
   respondentName: string
   answeredDay: Offset
+  /** Who wrote the answers down, or asked for them. */
   by: StaffKey
+  /** Answered signed in by the one who was asked; null when staff wrote it down. */
+  asked: { day: Offset; of: Asked } | null
   /** By item id of the form; null is "not answered yet". */
   answers: Record<string, HandUseAnswer | null>
   comment: string | null
@@ -216,16 +225,15 @@ export interface DemoLetter {
   acts: DemoLetterAct[]
 }
 
-export interface DemoAlert {
+/** What was done about a red flag. The flag itself comes from the referral, a history or a measure. */
+export interface DemoAlertAction {
   child: number
-  flag: ReferralFlagId
-  /** True when accepting the referral raises it; false when it is noticed later. */
-  fromReferral: boolean
-  text: string
-  level: 'soon' | 'due' | 'overdue'
-  raised: { day: Offset; time: TimeOfDay }
-  /** Null is still open. */
-  acted: { day: Offset; time: TimeOfDay; by: StaffKey; action: string } | null
+  flag: ReferralFlagId | RedFlagId
+  from: 'referral' | 'history' | 'measure'
+  day: Offset
+  time: TimeOfDay
+  by: StaffKey
+  action: string
 }
 
 export interface DemoTask {

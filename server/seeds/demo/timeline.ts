@@ -1,26 +1,19 @@
 import { addDays, type Day } from '../../../shared/days.ts'
 import { isOpen } from '../../../shared/episodes.ts'
 import { adviceGiven } from './advice.ts'
-import { alerts } from './alerts.ts'
+import { alertActions } from './alertActions.ts'
+import { assessmentOf } from './assessmentTimeline.ts'
 import { children, laterReferrals } from './children.ts'
 import { demoDay, demoMoment, demoWorkday } from './demoDays.ts'
-import type { DemoChild, Offset, TimeOfDay } from './demoTypes.ts'
+import type { DemoChild, TimeOfDay } from './demoTypes.ts'
 import { goals } from './goals.ts'
 import { letters } from './letters.ts'
 import { observations } from './observations.ts'
-import { questionnaires } from './questionnaires.ts'
+import { at, of, type Planned } from './planned.ts'
 import { samples } from './samples.ts'
 import { sessionNotes } from './sessionNotes.ts'
 import { tasks } from './tasks.ts'
-import type { DemoEvent, DemoHappening } from './timelineTypes.ts'
-
-interface Planned {
-  day: Offset
-  time: TimeOfDay
-  happening: DemoHappening
-}
-
-const at = (day: Offset, time: TimeOfDay, happening: DemoHappening): Planned => ({ day, time, happening })
+import type { DemoEvent } from './timelineTypes.ts'
 
 const minutesLater = (time: TimeOfDay, minutes: number): TimeOfDay => {
   const total = Number(time.slice(0, 2)) * 60 + Number(time.slice(3)) + minutes
@@ -65,14 +58,8 @@ function careOf(child: DemoChild): Planned[] {
   ]
 }
 
-const of = <T extends { child: number }>(items: readonly T[], child: number) =>
-  items.filter((item) => item.child === child)
-
 function findingsOf(child: number): Planned[] {
   return [
-    ...of(questionnaires, child).map((questionnaire) =>
-      at(questionnaire.answeredDay, '11:20', { kind: 'questionnaire', questionnaire }),
-    ),
     ...of(observations, child).map((observation) =>
       at(observation.observedDay, '11:40', { kind: 'observation', observation }),
     ),
@@ -138,12 +125,9 @@ function sharingOf(child: number): Planned[] {
         }),
       ),
     ]),
-    ...of(alerts, child).flatMap((alert) => [
-      ...(alert.fromReferral ? [] : [at(alert.raised.day, alert.raised.time, { kind: 'alert', alert })]),
-      ...(alert.acted
-        ? [at(alert.acted.day, alert.acted.time, { kind: 'act_on_alert', flag: alert.flag, ...alert.acted })]
-        : []),
-    ]),
+    ...of(alertActions, child).map(({ day, time, flag, by, action }) =>
+      at(day, time, { kind: 'act_on_alert', flag, by, action }),
+    ),
     ...of(tasks, child).flatMap((task, index) => [
       at(task.createdDay, '17:50', { kind: 'task', task, index }),
       ...(task.done ? [at(task.done.day, '17:55', { kind: 'finish_task', index, by: task.done.by })] : []),
@@ -157,6 +141,7 @@ function sharingOf(child: number): Planned[] {
 const plannedOf = (child: DemoChild): Planned[] =>
   [
     ...careOf(child),
+    ...assessmentOf(child.number),
     ...findingsOf(child.number),
     ...notesOf(child.number),
     ...sharingOf(child.number),

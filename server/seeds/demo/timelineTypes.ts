@@ -1,8 +1,9 @@
 import type { Day } from '../../../shared/days.ts'
+import type { DemoConclusion, DemoHistory, DemoMeasure, DemoRequest } from './assessmentTypes.ts'
 import type {
   ActorKey,
   DemoAdvice,
-  DemoAlert,
+  DemoAlertAction,
   DemoConsent,
   DemoGoal,
   DemoLetter,
@@ -28,7 +29,16 @@ export type DemoHappening =
   | { kind: 'care'; by: StaffKey }
   | { kind: 'consent'; consent: DemoConsent; index: number }
   | { kind: 'withdraw'; index: number; reason: string; by: ActorKey }
-  | { kind: 'questionnaire'; questionnaire: DemoQuestionnaire }
+  /** The clinic asks a carer or a teacher; what comes back takes the request's `key`. */
+  | { kind: 'ask'; request: Omit<DemoRequest, 'child' | 'askedDay' | 'remindedDays'>; key: string }
+  /** The clinic's own reminders go out, whoever they are for. */
+  | { kind: 'remind' }
+  /** `key` names the request that is answered; null when staff wrote it down. */
+  | { kind: 'history'; history: DemoHistory; key: string | null }
+  | { kind: 'questionnaire'; questionnaire: DemoQuestionnaire; key: string | null }
+  | { kind: 'measure'; measure: DemoMeasure }
+  | { kind: 'conclusion'; conclusion: DemoConclusion; index: number }
+  | { kind: 'countersign_conclusion'; index: number; by: StaffKey }
   | { kind: 'observation'; observation: DemoObservation }
   | { kind: 'sample'; sample: DemoSample; index: number }
   | { kind: 'remove_sample'; index: number; by: StaffKey }
@@ -44,9 +54,7 @@ export type DemoHappening =
   | { kind: 'end_advice'; advice: DemoAdvice }
   | { kind: 'letter'; letter: DemoLetter; index: number }
   | { kind: 'letter_act'; index: number; act: DemoLetterAct; author: StaffKey }
-  /** Only for those that no referral raises. */
-  | { kind: 'alert'; alert: DemoAlert }
-  | { kind: 'act_on_alert'; flag: DemoAlert['flag']; by: StaffKey; action: string }
+  | { kind: 'act_on_alert'; flag: DemoAlertAction['flag']; by: StaffKey; action: string }
   | { kind: 'task'; task: DemoTask; index: number }
   | { kind: 'finish_task'; index: number; by: StaffKey }
 
