@@ -15,8 +15,8 @@ export interface Agreement {
   /** Null when nothing was compared or chance alone would already agree on everything. */
   kappa: number | null
   /**
-   * Large-sample 95 % interval, kept within −1 and 1. Null without kappa, and at kappa 1, where the large-sample error
-   * is zero and would claim certainty.
+   * Large-sample 95 % interval, kept within −1 and 1. Null without kappa, and where the large-sample error is zero and
+   * would claim certainty: at kappa 1, and when one rater gave the same answer throughout.
    */
   kappaInterval: Interval | null
 }
@@ -61,12 +61,13 @@ export function agreementOf<Category extends string>(
   const centred = (kappa - byChance * (1 - kappa)) ** 2
   const variance = (diagonal + (1 - kappa) ** 2 * elsewhere - centred) / (n * (1 - byChance) ** 2)
   const error = Math.sqrt(Math.max(0, variance))
+  // Not exactly zero by the sums of a computer.
+  const certain = agreed === n || error < 1e-9
   return {
     ...base,
     kappa,
-    kappaInterval:
-      agreed === n
-        ? null
-        : { low: Math.max(-1, kappa - z95 * error), high: Math.min(1, kappa + z95 * error) },
+    kappaInterval: certain
+      ? null
+      : { low: Math.max(-1, kappa - z95 * error), high: Math.min(1, kappa + z95 * error) },
   }
 }

@@ -91,6 +91,16 @@ describe('agreementOf', () => {
     expect(found).toMatchObject({ share: 1, kappa: 1, kappaInterval: null })
   })
 
+  it('gives no interval when one rater always says the same, for the large-sample error would be zero', () => {
+    const found = agreementOf([
+      ['left', 'left'],
+      ['left', 'left'],
+      ['left', 'right'],
+      ['left', 'either'],
+    ])
+    expect(found).toMatchObject({ kappa: 0, kappaInterval: null, share: 0.5 })
+  })
+
   it('is 0 when agreement is what chance gives, and negative below it', () => {
     expect(
       agreementOf(
