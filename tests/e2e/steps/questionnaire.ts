@@ -86,7 +86,8 @@ export const fillQuestionnaire = async (therapist: Person): Promise<void> => {
   await inspect(therapist, 'questionnaire-signed')
 
   await openSection(page, 'Hand profile')
-  const row = page.getByRole('row', { name: /questionnaire/i })
+  await press(page, 'The same as a table')
+  const row = page.getByRole('row', { name: /Hand use in ten everyday activities/ })
   await row.getByRole('cell', { name: '−73.3', exact: true }).waitFor()
   await row.getByRole('cell', { name: 'Left', exact: true }).waitFor()
   const line = page.getByRole('region', { name: 'Lateral line', exact: true })
