@@ -28,6 +28,7 @@ import {
   playAlertAction,
   playLetter,
   playLetterAct,
+  playOwnTasksEnd,
   playReply,
   playTask,
   playTaskEnd,
@@ -101,5 +102,7 @@ export const playEvent = (scene: Scene, event: DemoEvent, demoToday: Day): Promi
       return playTask(scene, child, { ...event, demoToday })
     case 'finish_task':
       return playTaskEnd(scene, child, event.index, event.by)
+    case 'finish_own_tasks':
+      return playOwnTasksEnd(scene, child, event.taskKind, event.by)
   }
 }

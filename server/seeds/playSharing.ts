@@ -8,6 +8,7 @@ import { Alert } from '../entities/Alert.ts'
 import { findLetter } from '../queries/letters.ts'
 import { findReceivedLetter } from '../queries/receivedLetters.ts'
 import { SchoolAdvice } from '../entities/SchoolAdvice.ts'
+import { Task } from '../entities/Task.ts'
 import { actOnAlert } from '../services/alerts.ts'
 import { replyToAdvice } from '../services/classes.ts'
 import { approveLetter } from '../services/letterApproval.ts'
@@ -198,4 +199,16 @@ export const playTaskEnd = async (
 ): Promise<void> => {
   const actor = actorOf(scene.people, by)
   await finishTask(actor, actor.viewer, idIn(storyOf(scene, number).taskIds, index))
+}
+
+export const playOwnTasksEnd = async (
+  scene: Scene,
+  number: number,
+  kind: string,
+  by: StaffKey,
+): Promise<void> => {
+  const actor = actorOf(scene.people, by)
+  const { childId } = storyOf(scene, number)
+  const open = await database().manager.findBy(Task, { childId, kind, doneAt: IsNull() })
+  for (const { id } of open) await finishTask(actor, actor.viewer, id)
 }

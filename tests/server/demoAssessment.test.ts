@@ -78,7 +78,7 @@ describe('the demo’s assessments follow the scenario', () => {
     const withTherapist = children.filter(({ therapist }) => therapist !== null).map(({ number }) => number)
     expect(withTherapist.filter((number) => !told.has(number))).toEqual([])
     const [father] = histories.filter(({ child }) => child === 14)
-    expect([father!.askedDay, childOf(14).carers[father!.carer]!.relation]).toEqual([-20, 'father'])
+    expect([father!.askedDay, childOf(14).carers[father!.carer]!.relation]).toEqual([-10, 'father'])
   })
 
   it.each([

@@ -184,4 +184,14 @@ export const alertActions: readonly DemoAlertAction[] = [
     action:
       'Expected: she was asked to use the right hand at five. Full assessment done; both hands stay free.',
   },
+  {
+    child: 39,
+    flag: 'swaps-within-task',
+    from: 'observation',
+    day: -14,
+    time: '12:30',
+    by: 'adaeze',
+    action:
+      'Part of the illness that the hospital treats: the left tires and the right takes over. Nothing is concluded from it.',
+  },
 ]

@@ -1,10 +1,18 @@
 import { answerRequests } from './answerRequests.ts'
 import { conclusions } from './conclusions.ts'
+import type { Offset } from './demoTypes.ts'
 import { histories } from './histories.ts'
 import { measures } from './measures.ts'
 import { moreQuestionnaires } from './moreQuestionnaires.ts'
+import type { StaffKey } from './people.ts'
 import { at, of, type Planned } from './planned.ts'
 import { questionnaires } from './questionnaires.ts'
+
+/** The therapist looks at what came back the next morning; the newest answers still wait for the lead. */
+const lookedAt = (answeredDay: Offset, by: StaffKey): Planned[] =>
+  by === 'ines'
+    ? []
+    : [at(answeredDay + 1, '09:10', { kind: 'finish_own_tasks', taskKind: 'answers_back', by })]
 
 function historiesOf(child: number): Planned[] {
   return of(histories, child).flatMap((history, index) => {
@@ -15,6 +23,7 @@ function historiesOf(child: number): Planned[] {
     return [
       at(askedDay, '11:00', { kind: 'ask', request, key }),
       at(answeredDay, time, { kind: 'history', history, key }),
+      ...lookedAt(answeredDay, by),
     ]
   })
 }
@@ -28,6 +37,7 @@ function questionnairesOf(child: number): Planned[] {
     return [
       at(asked.day, '11:02', { kind: 'ask', request, key }),
       at(answeredDay, '19:50', { kind: 'questionnaire', questionnaire, key }),
+      ...(questionnaire.locked ? lookedAt(answeredDay, by) : []),
     ]
   })
 }
@@ -40,6 +50,16 @@ export function assessmentOf(child: number): Planned[] {
     ...of(answerRequests, child).flatMap(({ askedDay, remindedDays, child: _child, ...request }, index) => [
       at(askedDay, '11:04', { kind: 'ask', request, key: `request ${index}` }),
       ...remindedDays.map((day) => at(day, '12:30', { kind: 'remind' })),
+      // Asking again is what the software had asked for.
+      ...(index > 0
+        ? [
+            at(askedDay, '11:10', {
+              kind: 'finish_own_tasks',
+              taskKind: 'teacher_unanswered',
+              by: request.by,
+            }),
+          ]
+        : []),
     ]),
     ...of(measures, child).map((measure) => at(measure.measuredDay, '11:50', { kind: 'measure', measure })),
     ...of(conclusions, child).flatMap((conclusion, index) => [

@@ -42,12 +42,13 @@ export const conclusionsAdaeze: readonly DemoConclusion[] = [
       'Home answers, reaching and pegs point to the left hand. The jagged edges come from the scissors: the blades hide the line from a left-hander and push the paper over.',
     plan: ['block', 'Left-handed scissors on loan, four sessions, advice to school on which pairs to buy.'],
   }),
-  concludes(23, -84, 'left_settled', 'high', {
+  concludes(23, -84, 'left_settled', 'medium', {
     matters: 'Labelling his own maps, and getting to the end of a page.',
     because:
-      'Home answers, reaching and pegs agree on the left hand. The page lies almost straight and the hand works from above the line, which takes more effort the longer the text.',
+      'Home answers and pegs agree on the left hand, and so does every sheet he has drawn; reaching alone does not say. The page lies almost straight and the hand works from above the line, which takes more effort the longer the text.',
     plan: ['block', 'Six sessions on page and pace. Each household gets the same letter.'],
-    disagreements: 'Spreading and lids go to the right hand; both are jobs for two hands.',
+    disagreements:
+      'Reaching came out at 14 of 21 with the left, which is within chance: he hurried and used whichever hand was free. Spreading and lids go to the right hand; both are jobs for two hands.',
   }),
   concludes(27, -190, 'left_settled', 'high', {
     matters: 'Reading his own notes again.',

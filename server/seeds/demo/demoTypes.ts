@@ -229,7 +229,7 @@ export interface DemoLetter {
 export interface DemoAlertAction {
   child: number
   flag: ReferralFlagId | RedFlagId
-  from: 'referral' | 'history' | 'measure'
+  from: 'referral' | 'history' | 'measure' | 'observation'
   day: Offset
   time: TimeOfDay
   by: StaffKey

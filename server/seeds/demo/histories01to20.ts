@@ -120,7 +120,7 @@ export const histories01to20: readonly DemoHistory[] = [
     childsWords: 'I look if Granny is there. Then I draw.',
     anythingElse: 'Asked directly: nobody has punished or shamed her. Her mother wants her to use the left.',
   }),
-  answered(14, [-20, -15], 'ines', {
+  answered(14, [-10, -3], 'ines', {
     firstNoticedMonths: 26,
     consistency: 'always',
     family: family('right', 'left', 1, 0),

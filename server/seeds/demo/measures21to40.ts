@@ -58,7 +58,9 @@ export const measures21to40: readonly DemoMeasure[] = [
     },
   ),
 
-  reaching(23, -96, 'adaeze', 'LLL LLL LLL LLR LLL LRL LLL'),
+  reaching(23, -96, 'adaeze', 'LLL LLR LLL LRL LLR LRR RLR', {
+    comment: 'In a hurry: took whichever card came first with whichever hand was free.',
+  }),
   pegs(23, -96, 'adaeze', 'L20.4 R22.9 R23.6 L19.8 L20.9 R23.1'),
 
   reaching(24, -105, 'tomasz', 'LLL LLL LLL LLL LRL LLL LLR'),

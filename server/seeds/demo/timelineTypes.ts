@@ -57,6 +57,8 @@ export type DemoHappening =
   | { kind: 'act_on_alert'; flag: DemoAlertAction['flag']; by: StaffKey; action: string }
   | { kind: 'task'; task: DemoTask; index: number }
   | { kind: 'finish_task'; index: number; by: StaffKey }
+  /** Somebody does what the software had put on their list about the child. */
+  | { kind: 'finish_own_tasks'; taskKind: string; by: StaffKey }
 
 export type DemoEvent = DemoHappening & {
   /** Number of the child. */
