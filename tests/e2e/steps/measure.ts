@@ -27,22 +27,6 @@ export const sideOf = async (person: Person, name: string): Promise<number> => {
   return (box.x + box.width / 2) / width
 }
 
-/** Milliseconds from a press of this button until the page shows the next count, measured in the page itself. */
-export const tapToShown = ({ page }: Person, name: string): Promise<number> =>
-  page.evaluate(async (wanted) => {
-    const button = [...document.querySelectorAll<HTMLElement>('section[aria-label] button')].find((one) =>
-      one.textContent?.trim().startsWith(wanted),
-    )
-    const bar = document.querySelector('progress')
-    if (!button || !bar) throw new Error(`No ${wanted} here`)
-    const before = bar.value
-    const start = performance.now()
-    button.click()
-    while (bar.value === before) await new Promise((next) => requestAnimationFrame(next))
-    await new Promise((painted) => requestAnimationFrame(painted))
-    return performance.now() - start
-  }, name)
-
 /** Locks the measure that is open, after reading what the question says. */
 export const lockMeasure = async ({ page }: Person): Promise<string> => {
   await page.getByRole('button', { name: 'Lock', exact: true }).locator('visible=true').click()
@@ -52,3 +36,110 @@ export const lockMeasure = async ({ page }: Person): Promise<string> => {
   await seeHeading(page, 'As recorded')
   return words
 }
+
+/** What can be done at one moment of reaching. */
+export type ReachAct = 'Left' | 'Right' | 'Lost' | 'Swapped' | 'Undo'
+
+interface Recorded {
+  place: string
+  hand: 'Left' | 'Right' | 'Lost'
+  swapped: boolean
+}
+
+/** What the acts amount to, kept by the test itself with the places the page asked for. */
+export interface ReachTally {
+  reaches: readonly Recorded[]
+  /** Of a hand, all or at one place. */
+  count: (hand: Recorded['hand'], place?: string) => number
+  /** 100 (R − L)/(R + L) as the page writes it. */
+  index: string
+}
+
+const tally = (reaches: readonly Recorded[]): ReachTally => {
+  const count = (hand: Recorded['hand'], place?: string) =>
+    reaches.filter((reach) => reach.hand === hand && (place === undefined || reach.place === place)).length
+  const [left, right] = [count('Left'), count('Right')]
+  const index = (100 * (right - left)) / (right + left)
+  const sign = index > 0 ? '+' : index < 0 ? '−' : ''
+  return { reaches, count, index: `${sign}${Math.abs(index).toFixed(1)}` }
+}
+
+/** Records reaches one after the other, reading before each which place is next and after each how many there are. */
+export const recordReaches = async (
+  { page }: Person,
+  acts: readonly ReachAct[],
+  perform: (act: ReachAct) => Promise<void>,
+): Promise<ReachTally> => {
+  const reaches: Recorded[] = []
+  for (const act of acts) {
+    const last = reaches.at(-1)
+    if (act === 'Undo') reaches.pop()
+    else if (act === 'Swapped' && last) last.swapped = true
+    else if (act === 'Left' || act === 'Right' || act === 'Lost') {
+      const next = await page
+        .getByRole('status')
+        .filter({ hasText: 'Next place' })
+        .locator('strong')
+        .innerText()
+      reaches.push({ place: next, hand: act, swapped: false })
+    }
+    await perform(act)
+    await page.getByText(`${reaches.length} of 21`, { exact: true }).waitFor()
+  }
+  return tally(reaches)
+}
+
+/** The locked page says the same counts, by hand and by place, and the same index. */
+export const seeTally = async ({ page }: Person, { reaches, count, index }: ReachTally): Promise<void> => {
+  const result = page.getByRole('region', { name: 'Result', exact: true })
+  const swapped = reaches.filter((reach) => reach.swapped).length
+  const words = (await result.locator('dl').innerText()).replace(/\s+/g, ' ')
+  expect(words).toContain(
+    `${count('Left')} left, ${count('Right')} right, ${count('Lost')} lost, ${swapped} swapped on the way`,
+  )
+  expect(words).toContain(`${index} on the line`)
+  const rows = await result
+    .getByRole('table', { name: 'Reaches by place, from the child’s side' })
+    .getByRole('row')
+    .allInnerTexts()
+  const places = ['Far left', 'Left', 'Near left', 'Midline', 'Near right', 'Right', 'Far right']
+  expect(rows.slice(1).map((row) => row.split(/\t/))).toEqual(
+    places.map((place) => [
+      place,
+      ...(['Left', 'Right', 'Lost'] as const).map((hand) => String(count(hand, place))),
+    ]),
+  )
+}
+
+/**
+ * From now on the page marks every touch of a button and measures until the frame with the new count is drawn.
+ */
+export const watchTaps = ({ page }: Person): Promise<void> =>
+  page.evaluate(() => {
+    const shown = document.querySelector('progress')?.parentElement
+    if (!shown) throw new Error('Nothing is recorded here')
+    let waiting = false
+    addEventListener(
+      'pointerdown',
+      () => {
+        performance.mark('tap')
+        waiting = true
+      },
+      { capture: true },
+    )
+    new MutationObserver(() => {
+      if (!waiting) return
+      waiting = false
+      // The frame that draws the change begins here; the task after it finds it drawn.
+      requestAnimationFrame(() => setTimeout(() => performance.measure('tap to shown', 'tap')))
+    }).observe(shown, { subtree: true, childList: true, characterData: true, attributes: true })
+  })
+
+/** Milliseconds of every touch measured since, shortest first. */
+export const tapTimes = ({ page }: Person): Promise<number[]> =>
+  page.evaluate(() =>
+    performance
+      .getEntriesByName('tap to shown')
+      .map(({ duration }) => duration)
+      .toSorted((a, b) => a - b),
+  )
