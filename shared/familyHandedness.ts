@@ -16,18 +16,20 @@ export const parentPairLabels: Record<ParentPair, string> = {
 
 export interface PublishedRate {
   pair: ParentPair
-  /** Of a hundred children in such families, how many are left-handed. */
+  /** Of a hundred children in such families, how many are left-handed. Decimals from memory: not to be shown. */
   percent: number
+  /** The same as it was read, at second hand: what is shown. */
+  about: number
 }
 
 export const publishedSource =
-  'McManus & Bryden 1992 (decimals from memory); whole percents, some 70,000 children, read at second hand'
+  'Whole percents of some 70,000 children, after McManus & Bryden 1992, read at second hand'
 
 /** Left-handed children by their parents' hands. */
 export const publishedRates: readonly PublishedRate[] = [
-  { pair: 'both_right', percent: 9.5 },
-  { pair: 'one_left', percent: 19.5 },
-  { pair: 'both_left', percent: 26.1 },
+  { pair: 'both_right', percent: 9.5, about: 9 },
+  { pair: 'one_left', percent: 19.5, about: 19 },
+  { pair: 'both_left', percent: 26.1, about: 26 },
 ]
 
 /** People in general, with the lowest and highest figure by definition used. */
