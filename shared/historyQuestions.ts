@@ -65,7 +65,7 @@ const whichHand: AnswerKind = {
 }
 const text = (max: number, rows: number): AnswerKind => ({ kind: 'text', max, rows })
 
-const oftenOrdinary = 'The answer is often yes or no for quite ordinary reasons. It tells us what to look at.'
+const oftenOrdinary = 'There are often quite ordinary reasons for a yes. It tells us what to look at.'
 const soThatADoctor =
   'We ask everybody, because these are things a doctor should look at soon if they are new.'
 
@@ -267,7 +267,7 @@ export const historyGroups: readonly HistoryGroup[] = [
     questions: [
       { id: 'newWeakness', label: 'Is an arm, a leg or one side newly weak?', answer: yesNo },
       { id: 'numbness', label: 'Is an arm, a leg or one side newly numb or tingling?', answer: yesNo },
-      { id: 'faceDroop', label: 'Does one side of the face hang down, newly?', answer: yesNo },
+      { id: 'faceDroop', label: 'Has one side of the face begun to droop?', answer: yesNo },
       { id: 'newHeadache', label: 'Are there new headaches that keep coming back?', answer: yesNo },
       {
         id: 'seizure',
@@ -304,7 +304,7 @@ export const historyGroups: readonly HistoryGroup[] = [
         answer: yesNo,
       },
       { id: 'otherHandFisted', label: 'Is the other hand often held in a fist?', answer: yesNo },
-      { id: 'dropsThings', label: 'Does {name} often drop things?', answer: yesNo },
+      { id: 'dropsThings', label: 'Do things often drop from the other hand?', answer: yesNo },
       {
         id: 'weakerSide',
         label: 'Is one arm or leg weaker, stiffer or smaller than the other?',

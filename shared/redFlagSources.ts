@@ -31,7 +31,10 @@ const firstPreference = (
 
 /** Flags in the answers of a history. "Not sure" and "not answered" raise nothing. */
 export function redFlagsOfHistory(details: HistoryDetails, child: FlaggedChild): RedFlag[] {
-  const newSigns = [details.newWeakness, details.numbness, details.faceDroop, details.seizure]
+  const newSigns = [
+    ...[details.newWeakness, details.numbness, details.faceDroop, details.seizure],
+    ...[details.newHeadache, details.walkChanged],
+  ]
   return redFlags({
     ...unknownHistory,
     ageMonths: child.ageMonths,
@@ -72,13 +75,19 @@ export function redFlagsOfObservation(
   const pains = [seen.painBefore, seen.painAfter].filter((points) => points !== null)
   const recorded = settled(child.writingHand)
   const shown = settled(seen.writingHand)
-  return redFlags({
+  const flags = redFlags({
     ...unknownHistory,
     ageMonths: child.ageMonths,
     painAfter: pains.length === 0 ? null : Math.max(...pains),
     handChanged: recorded === null || shown === null ? null : recorded !== shown,
     swapsWithinTask: seen.writingHand === 'swaps' ? true : null,
   })
+  // One look at the desk shows the other hand, not that the child changed: the record may be out of date.
+  return flags.map((flag) =>
+    flag.id === 'change-of-hand'
+      ? { ...flag, words: `The child wrote with the ${shown} hand; the record says the ${recorded}.` }
+      : flag,
+  )
 }
 
 /** The flag of a hand that does not write and clearly does better; for measures of skill. */
@@ -105,7 +114,7 @@ export function urgentWordsFor(details: HistoryDetails): string[] {
   if (signs.length === 0) return []
   return [
     `You have told us about ${joined(signs)}. Please get medical help today; do not wait for an appointment with us. ` +
-      'If it is new or getting worse, call the emergency number now, even if it came after a fall.',
+      'If it came suddenly or is getting worse, call the emergency number now, even if it came after a fall.',
     'This does not mean that we know what it is: it means that a doctor should look at it today. The clinic sees your answer as well, but nobody may be reading it at this moment.',
   ]
 }

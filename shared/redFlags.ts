@@ -109,7 +109,7 @@ const otherHand: Rule = (history) => {
   const signs = reported([
     history.otherHandHardlyUsed === true && 'the other hand is hardly used',
     history.otherHandFisted === true && 'the other hand is often held in a fist',
-    history.dropsThings === true && 'things are dropped',
+    history.dropsThings === true && 'things often drop from the other hand',
     history.weakerSide === true && 'one side is weaker, stiffer or smaller',
     lossOfSkillFlag(history.lostSkill) === 'refer' && 'a skill has been lost',
   ])
@@ -119,13 +119,17 @@ const otherHand: Rule = (history) => {
 
 const changeOfHand: Rule = (history) => {
   if (history.handChanged !== true || suddenChange(history) !== null) return null
-  const cause = history.armInjury === true ? ' after pain, an injury or a plaster' : ''
-  return raise('change-of-hand', `The child has changed hands${cause}.`)
+  // Which came first is for the dates to tell.
+  const besides =
+    history.armInjury === true
+      ? ' An injury, a plaster or an illness of arm, hand or head is reported too: compare the dates.'
+      : ''
+  return raise('change-of-hand', `The child has changed hands.${besides}`)
 }
 
 const punished: Rule = ({ punishedForHand }) =>
   punishedForHand === true
-    ? raise('punished-for-hand', 'The child has been punished or shamed for using a hand.')
+    ? raise('punished-for-hand', 'The child has been told off, punished or shamed for using a hand.')
     : null
 
 /** Times in six months from which "was not brought" is looked at (clinic rule). */

@@ -65,6 +65,8 @@ describe('flags of a history', () => {
     [{ tremor: 'yes' }, ['tremor']],
     [{ tremor: 'yes', tremorSudden: 'yes' }, ['sudden-tremor']],
     [{ tremor: 'yes', numbness: 'yes' }, ['new-neurological-signs', 'sudden-tremor']],
+    // NG127 as summarised: a tremor with other neurological signs is urgent.
+    [{ tremor: 'yes', newHeadache: 'yes' }, ['sudden-tremor']],
     [{ tremor: 'no', tremorSudden: 'yes' }, []],
     // Milestones, from the due date
     [{ satInTime: 'no' }, ['late-milestones']],
@@ -132,6 +134,18 @@ describe('flags of a writing observation', () => {
     [{ writingHand: 'swaps' }, { ageMonths: 71, writingHand: 'left' }, []],
   ] as const)('%j of %j raise %j', (seen, child, expected) => {
     expect(ids(redFlagsOfObservation({ ...nothing, ...seen }, child))).toEqual(expected)
+  })
+})
+
+describe('the words of a change of hand', () => {
+  it('say what was seen and told, and no cause that nobody gave', () => {
+    const seen = { writingHand: 'right', painBefore: null, painAfter: null } as const
+    expect(redFlagsOfObservation(seen, eight)[0]?.words).toBe(
+      'The child wrote with the right hand; the record says the left.',
+    )
+    const told = redFlagsOfHistory(history({ handChanged: 'yes', injury: 'yes' }), eight)[0]?.words
+    expect(told).toContain('compare the dates')
+    expect(told).not.toMatch(/after (pain|an injury)/)
   })
 })
 
@@ -224,7 +238,9 @@ describe('the words for the family', () => {
     const words = urgentWordsFor(history({ newWeakness: 'yes', faceDroop: 'yes' })).join(' ')
     expect(words).toContain('new weakness and a drooping face')
     expect(words).toMatch(/medical help today/)
-    expect(words).toMatch(/even if it came after a fall/)
+    expect(words).toMatch(
+      /came suddenly or is getting worse, call the emergency number now, even if it came after a fall/,
+    )
     expect(words).not.toMatch(/palsy|stroke|epilep|tumou?r/i)
     for (const given of [{}, { lostSkill: 'yes' }, { pain: 9 }, { punishedForHand: 'yes' }] as const)
       expect(urgentWordsFor(history(given))).toEqual([])

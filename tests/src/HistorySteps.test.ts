@@ -123,14 +123,14 @@ describe('the history on a phone', () => {
     const { view, choose, press } = await steps(pageOf({}, 0))
     for (let part = 0; part < partOf('new-signs'); part += 1) await press('Next')
     expect(view.text()).not.toContain('Please get help today')
-    await choose('Does one side of the face hang down', 'Yes')
+    await choose('Has one side of the face begun to droop', 'Yes')
     const note = view
       .findAll('[role="alert"]')
       .find((found) => found.text().includes('Please get help today'))
     expect(note?.text()).toContain('a drooping face')
     expect(note?.text()).toContain('Call the emergency number at once.')
     const questions = view.findAll('.question')
-    const asked = questions.findIndex((found) => found.text().includes('Does one side of the face'))
+    const asked = questions.findIndex((found) => found.text().includes('Has one side of the face'))
     expect(questions[asked]?.element.nextElementSibling).toBe(note?.element)
 
     await press('Next')
