@@ -109,7 +109,13 @@ export const insertAlert = async (
   })
 }
 
-/** One open task is enough for all signs of a child, as long as it is due early enough for the newest. */
+const sameDayTask =
+  'Today: a sign that needs medical help the same day was reported. Reach the family and write down what was done'
+
+/**
+ * One open task is enough for all signs of a child, as long as it is due early enough for the newest. A sign for the same
+ * day has a task that says so, whatever else is open.
+ */
 export const askToLook = async (
   tx: Tx,
   childId: string,
@@ -118,18 +124,19 @@ export const askToLook = async (
   const today = clinicToday(await readSettings(tx))
   const pressing = flags.some(({ urgency }) => attentionOf[urgency] === 'overdue')
   const dueOn: Day = pressing ? today : addWorkingDays(today, daysToLook)
-  const open = await selectRows<{ dueOn: Day | null }>(
-    `SELECT t.dueOn FROM tasks t WHERE t.childId = :childId AND t.kind = :alertTask AND t.doneAt IS NULL`,
+  const sameDay = flags.some(({ urgency }) => urgency === 'same_day')
+  const open = await selectRows<{ dueOn: Day | null; text: string }>(
+    `SELECT t.dueOn, t.text FROM tasks t WHERE t.childId = :childId AND t.kind = :alertTask AND t.doneAt IS NULL`,
     { childId, alertTask },
     tx,
   )
-  if (open.some((task) => task.dueOn !== null && compareDays(task.dueOn, dueOn) <= 0)) return
-  const sameDay = flags.some(({ urgency }) => urgency === 'same_day')
+  const enough = sameDay ? open.filter(({ text }) => text === sameDayTask) : open
+  if (enough.some((task) => task.dueOn !== null && compareDays(task.dueOn, dueOn) <= 0)) return
   await addTask(tx, {
     childId,
     kind: alertTask,
     text: sameDay
-      ? 'Today: a sign that needs medical help the same day was reported. Reach the family and write down what was done'
+      ? sameDayTask
       : 'A warning sign was reported: look at the record and write down what was done',
     dueOn,
     assigneeId: await currentTherapist(tx, childId),

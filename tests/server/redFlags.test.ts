@@ -169,6 +169,20 @@ describe('a red flag of a history', () => {
     expect(await tasks()).toHaveLength(1)
   })
 
+  it('has a task of its own when it is for the same day, though an ordinary one is due today already', async () => {
+    const { save } = await told()
+    await save({ lostSkill: 'yes' })
+    await save({ lostSkill: 'yes', faceDroop: 'yes' })
+    expect(
+      (await tasks()).map(({ text, dueOn }) => [dueOn, text.includes('the same day')]).toSorted(),
+    ).toEqual([
+      ['2026-06-10', false],
+      ['2026-06-10', true],
+    ])
+    await save({ lostSkill: 'yes', faceDroop: 'yes', walkChanged: 'yes' })
+    expect(await tasks()).toHaveLength(2)
+  })
+
   it('goes to the lead while nobody holds the child', async () => {
     const lead = await buildUser('clinicLead')
     child = await buildChild({ birthDate: '2018-05-04' })
