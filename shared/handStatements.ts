@@ -46,19 +46,27 @@ function informantStatement(title: string, pair: InformantPair): HandStatement |
   if (pair.compared === 0) return null
   const who = `The ${whoSaid[pair.one]} and the ${whoSaid[pair.other]}`
   const figures = `agreement ${per(pair.share)}${kappaWords(pair)}`
-  return pair.discrepancies === 0
+  const activities = `${pair.compared} ${pair.compared === 1 ? 'activity' : 'activities'}`
+  if (pair.discrepancies === 0)
+    return {
+      kind: 'agrees',
+      text: `${who} answer alike for all of the ${activities} that both answered (${title}).`,
+      because: null,
+      rowIds: [],
+    }
+  // Two of two is few and yet all: it must not stand under what agrees.
+  return pair.pointedOut || pair.discrepancies >= pair.agreed
     ? {
-        kind: 'agrees',
-        text: `${who} name the same side for all ${pair.compared} activities that both answered (${title}).`,
-        because: null,
+        kind: 'differs',
+        text: `${who} answer differently for ${pair.discrepancies} of ${activities} (${title}; ${figures}).`,
+        because:
+          'A child may do things differently at home and at school. Ask about those activities, or watch them.',
         rowIds: [],
       }
     : {
-        kind: pair.pointedOut ? 'differs' : 'agrees',
-        text: `${who} name different sides for ${pair.discrepancies} of ${pair.compared} activities (${title}; ${figures}).`,
-        because: pair.pointedOut
-          ? 'A child may do things differently at home and at school. Ask about those activities, or watch them.'
-          : null,
+        kind: 'agrees',
+        text: `${who} answer alike for ${pair.agreed} of ${activities} (${title}; ${figures}).`,
+        because: null,
         rowIds: [],
       }
 }

@@ -38,13 +38,14 @@ export function askedStatement(asked: readonly Sided[]): HandStatement | null {
     return { kind: 'open', text: 'No questionnaire has been scored yet.', because: null, rowIds: [] }
   if (asked.length < 2) return null
   const rowIds = idsOf(asked)
+  const all = asked.length === 2 ? 'Both' : `All ${asked.length}`
   if (asked.every((row) => row.side === first.side))
     return {
       kind: 'agrees',
       text:
         first.side === 'middle'
-          ? `All ${asked.length} questionnaires lie between the cut-offs.`
-          : `All ${asked.length} questionnaires point to the ${first.side} hand.`,
+          ? `${all} questionnaires lie between the cut-offs.`
+          : `${all} questionnaires point to the ${first.side} hand.`,
       because: null,
       rowIds,
     }

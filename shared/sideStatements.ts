@@ -3,7 +3,7 @@ import { neverAveraged } from './handSkill.ts'
 import { formatQuotient } from './laterality.ts'
 import { rowName, type LateralLineRow } from './lateralLine.ts'
 import type { Hand } from './roles.ts'
-import { crossedCaution, expectedRates } from './sides.ts'
+import { areCrossed, crossedCaution, expectedRates } from './sides.ts'
 
 export interface HandStatement {
   /** `open` is what cannot be told yet. */
@@ -140,7 +140,9 @@ export function sideStatements(hand: Hand | null, rows: readonly LateralLineRow[
   )
   const far = found.find(({ part }) => part.aspect === 'eye_far')?.row
   const near = found.find(({ part }) => part.aspect === 'eye_near')?.row
-  if (far && near && far.side !== near.side)
+  const sighting = (row: LateralLineRow | undefined) =>
+    row?.side === 'middle' ? 'mixed' : (row?.side ?? null)
+  if (far && near && areCrossed(sighting(far), sighting(near)) === true)
     statements.push({
       kind: 'differs',
       text: `Another eye is used for near than for far things (far ${formatQuotient(far.value)}, near ${formatQuotient(near.value)}).`,

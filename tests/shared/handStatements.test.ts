@@ -39,7 +39,7 @@ describe('handStatements', () => {
     )
     expect(of(statements, 'differs')).toEqual([])
     const agrees = of(statements, 'agrees').join(' ')
-    expect(agrees).toContain('All 2 questionnaires point to the left hand.')
+    expect(agrees).toContain('Both questionnaires point to the left hand.')
     expect(agrees).toContain('point to the same hand, the left')
     expect(agrees).toContain('also does better at Moving pegs')
     expect(agrees).toContain('Hand and foot are on the same side')
@@ -87,8 +87,19 @@ describe('handStatements', () => {
   it('says how informants differ, with percentage and kappa, and points out three or more', () => {
     const statements = say([answered('L'), answered('R R R L L L L L B B', { informant: 'teacher' })], [])
     const text = of(statements, 'differs').join(' ')
-    expect(text).toContain('The parent or carer and the teacher name different sides for 5 of 10 activities')
+    expect(text).toContain('The parent or carer and the teacher answer differently for 5 of 10 activities')
     expect(text).toContain('agreement 50 %')
+  })
+
+  it('never puts a pair that mostly differs under what agrees, however few activities both answered', () => {
+    const pair = (one: string, other: string) =>
+      say([answered(one), answered(other, { informant: 'teacher' })], [])
+    const few = pair('L L N N N N N N N N', 'R R N N N N N N N N')
+    expect(of(few, 'differs').join(' ')).toContain('answer differently for 2 of 2 activities')
+    expect(of(few, 'agrees').join(' ')).not.toContain('2 of 2')
+    expect(of(pair('L', 'R L L L L L L L L L'), 'agrees').join(' ')).toContain(
+      'answer alike for 9 of 10 activities',
+    )
   })
 
   it('keeps to the words the clinic uses: nothing that its own letters would refuse', () => {
