@@ -9,7 +9,8 @@ import type { MeasureTrend } from './trends.ts'
 
 /**
  * What became of an activity between two occasions. `firmer` keeps the side and changes always/mostly; `newly` was not
- * answered with a side before, `no_longer` was.
+ * answered with a side before, `no_longer` was. "Does not do this yet" is an answer without a hand: the labels must hold
+ * for it as for a blank.
  */
 export const itemChanges = ['same', 'firmer', 'changed', 'newly', 'no_longer', 'neither'] as const
 export type ItemChange = (typeof itemChanges)[number]
@@ -17,9 +18,9 @@ export const itemChangeLabels: Record<ItemChange, string> = {
   same: 'Same',
   firmer: 'Same side, more or less often',
   changed: 'Another answer',
-  newly: 'Newly answered',
-  no_longer: 'Answered only before',
-  neither: 'Not answered on either',
+  newly: 'With a hand only now',
+  no_longer: 'With a hand only before',
+  neither: 'With no hand on either day',
 }
 
 export interface FormComparison {
