@@ -69,7 +69,7 @@ const measureResult = (score: MeasureScore): string => {
     case 'seating':
       if (score.marks === null) return 'size not measured'
       return score.marks.length === 0
-        ? 'no furniture size fits'
+        ? 'outside the table of furniture sizes'
         : `furniture size ${score.marks.join(' or ')}`
   }
 }

@@ -13,10 +13,10 @@ const key = (rows: readonly LateralLineRow[]): string => {
     'The flat edge of a half petal stands on the value; its round side points to the hand.',
     rows.some(({ interval }) => interval) ? 'A bar under a mark is its 95\u00a0% interval.' : null,
     rows.some(({ chance }) => chance) ? 'Inside a hatched band the choice of hand may be chance.' : null,
-    ...[...sets.values()].map(
-      (set) =>
-        `Tinted ends: ${set.name} (left up to ${formatQuotient(set.left)}, right from ${formatQuotient(set.right)}).`,
-    ),
+    ...[...sets.values()].map(({ name, left, right, inclusive }) => {
+      const [up, from] = inclusive ? ['up to', 'from'] : ['below', 'above']
+      return `Tinted ends: ${name} (left ${up} ${formatQuotient(left)}, right ${from} ${formatQuotient(right)}).`
+    }),
     rows.some(({ latest }) => !latest) ? 'Dashed marks are earlier occasions.' : null,
   ]
   return parts.filter((part) => part !== null).join(' ')

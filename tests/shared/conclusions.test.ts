@@ -329,7 +329,7 @@ describe('evidenceWords', () => {
     [{ what: 'seating', score: seating }, 'Seating measurements, 3 Mar 2026: size not measured'],
     [
       { what: 'seating', score: { ...seating, marks: [] } },
-      'Seating measurements, 3 Mar 2026: no furniture size fits',
+      'Seating measurements, 3 Mar 2026: outside the table of furniture sizes',
     ],
     [
       { what: 'seating', score: { ...seating, marks: [3, 4] } },
