@@ -28,6 +28,14 @@ const linkEnded = () =>
       'replaced by a newer e-mail, or is too old. Please call the clinic: they can send a new one.',
   )
 
+// Somebody has the questions before them: the same words for every reason, and none about a date they gave already.
+const answersRefused = () =>
+  gone(
+    'link_ended',
+    'These questions are closed: they were sent or withdrawn, their time is over, a newer e-mail took their place, or ' +
+      'somebody else has signed in in this browser. Please call the clinic: they can send a new link.',
+  )
+
 /**
  * Runs one act on the request of a link, under its lock. Throws 410 alike for every link that is used, expired,
  * withdrawn, replaced or unknown, for a wrong birth date and for a browser in which somebody else is signed in. Wrong
@@ -36,6 +44,7 @@ const linkEnded = () =>
 const withLink = async <T>(
   { actor, link, address }: LinkCall,
   act: (tx: Tx, record: (fact: AuditFact) => void, request: AnswerableRequest) => Promise<T>,
+  ended = answersRefused,
 ): Promise<T> => {
   const tokenHash = hashToken(link.token)
   const guesses = `answer-link:${tokenHash.toString('hex')}`
@@ -60,17 +69,21 @@ const withLink = async <T>(
     }
     return { value: await act(tx, record, request) }
   })
-  if (done === null) throw linkEnded()
+  if (done === null) throw ended()
   await Promise.all([clearAttempts(guesses), forgiveHit(`answer-link-address:${address}`)])
   return done.value
 }
 
 /** The request behind a link; opening does not use it up. */
 export const openLink = (call: LinkCall): Promise<AnswerableRequest> =>
-  withLink(call, (_tx, record, request) => {
-    record(requestFact(request, 'answerLink.opened', null))
-    return Promise.resolve(request)
-  })
+  withLink(
+    call,
+    (_tx, record, request) => {
+      record(requestFact(request, 'answerLink.opened', null))
+      return Promise.resolve(request)
+    },
+    linkEnded,
+  )
 
 /** Keeps answers given through a link. Throws StaleWrite when another device was quicker. */
 export const saveByLink = async (

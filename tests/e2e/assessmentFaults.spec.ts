@@ -113,7 +113,7 @@ it('shows nothing through a link that was withdrawn, replaced or meant for someb
   await inspect(therapist, 'asked-withdrawn')
   await press(father.page, 'Begin')
   await father.page.getByRole('radio', { name: 'Left, always', exact: true }).check()
-  await seeText(father.page.getByRole('status'), /^Not saved: .*call the clinic/)
+  await seeText(father.page.getByRole('status'), /^Not saved: These questions are closed.*call the clinic/)
   await inspect(father, 'link-withdrawn-while-open')
   await father.page.goto('about:blank')
   await father.page.goto(newer)
