@@ -1,5 +1,12 @@
 import { publishedForms, type StartForm } from './1764580000000-publishedForms.ts'
 
+/** What stands beside an activity that can hurt; for the child who shows it as for the adult who tries it at home. */
+const cautionOf: Partial<Record<string, string>> = {
+  scissors:
+    'If the child shows it: round-ended scissors, the child seated, an adult beside. Put a left-handed and a right-handed pair equally near.',
+  spreads: 'If the child shows it: a blunt knife and dough or soft food only, with an adult watching.',
+}
+
 /** The clinic's own form. */
 const handUse: StartForm = {
   key: 'hand-use-10',
@@ -19,7 +26,12 @@ const handUse: StartForm = {
       ['picks_up', 'Picks up something small', 'Pick up one of these beads.'],
       ['eraser', 'Rubs out with an eraser', 'Rub out this line.'],
       ['taps_screen', 'Taps a touch screen', 'Tap the picture on the screen.'],
-    ].map(([id = '', label = '', childLabel = null]) => ({ id, label, childLabel, caution: null })),
+    ].map(([id = '', label = '', childLabel = null]) => ({
+      id,
+      label,
+      childLabel,
+      caution: cautionOf[id] ?? null,
+    })),
     options: ['strong_left', 'left', 'either', 'right', 'strong_right', 'does_not_do'],
     informants: ['guardian', 'teacher', 'child_demonstrated', 'therapist'],
     citation:

@@ -69,7 +69,7 @@ const shownRatherThanAsked =
 const twoMarksSource =
   'Oldfield 1971, Neuropsychologia 9:97-113. Read: its first page and abstract; the formula and the second mark as ' +
   'restated on a public page of common data elements; the list of tasks at second hand. From memory: a mark to each ' +
-  'hand for either, and the deciles of adults. Wording and the safe stand-ins are this clinic’s own.'
+  'hand for either, a blank only without experience, and the deciles of adults. Wording and the safe stand-ins are this clinic’s own.'
 
 const tenTask: FormDefinition = {
   title: 'Ten tasks, two marks',
@@ -105,7 +105,7 @@ const tenTaskCount: FormDefinition = {
 
 const shortFour: FormDefinition = {
   title: 'Four tasks, short form',
-  purpose: 'A first look in a minute: four tasks that most people answer steadily.',
+  purpose: 'A first look in a minute: four everyday tasks.',
   scoring: 'mean_of_five',
   items: [writing, throwing, toothbrush, spoon],
   options: fiveAnswers,

@@ -399,7 +399,8 @@ describe('the forms the clinic starts with', () => {
     const items = formsOfTheStart.flatMap(({ definition }) => definition.items)
     for (const { id, label, childLabel, caution } of items) {
       expect(`${label} ${childLabel}`).not.toMatch(/match|sharp|burn|flame/i)
-      if (/knife/.test(label) && id !== 'spreads') expect(caution).toMatch(/blunt.*adult/i)
+      if (/knife/.test(label)) expect(caution).toMatch(/blunt.*adult/i)
+      if (/scissors/i.test(label)) expect(caution).toMatch(/round-ended.*adult/i)
       if (id === 'match') expect(caution).toMatch(/no child is asked/)
     }
   })
