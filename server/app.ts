@@ -4,6 +4,7 @@ import compression from 'compression'
 import express, { type Express } from 'express'
 import type { SessionView } from '../shared/users.ts'
 import { notFound } from './errors.ts'
+import { boundedBody } from './middleware/bodyBounds.ts'
 import { assertPolicies } from './middleware/checkPolicies.ts'
 import { errorHandler } from './middleware/errorHandler.ts'
 import { requestContext } from './middleware/requestContext.ts'
@@ -39,6 +40,7 @@ export const createApp = (settings: AppSettings): Express => {
     neverStored,
     sameSiteOnly(settings.appUrl),
     express.json({ limit: '256kb' }),
+    boundedBody,
     signIn.sessions,
     signIn.authenticate,
     signIn.viewer,

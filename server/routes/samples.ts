@@ -2,6 +2,7 @@ import { Router, type Request, type Response } from 'express'
 import { sampleDetailsSchema, type SampleType } from '../../shared/samples.ts'
 import { invalid } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
+import { checkBounds } from '../middleware/bodyBounds.ts'
 import { idempotencyKeyOf, parseBody } from '../middleware/requestBody.ts'
 import { accessOf } from '../middleware/requestContext.ts'
 import { samplePolicies } from '../policies/samples.ts'
@@ -29,7 +30,9 @@ const detailsOf = (req: Request) => {
   const { details, ...others } = (req.body ?? {}) as Record<string, unknown>
   const unknown = Object.keys(others)[0]
   if (unknown !== undefined) throw invalid({ form: `This form sent a field that is not known: ${unknown}` })
-  return parseBody(sampleDetailsSchema, fromText(details))
+  const given = fromText(details)
+  checkBounds(given)
+  return parseBody(sampleDetailsSchema, given)
 }
 
 const endings: Record<SampleType, string> = {
