@@ -7,7 +7,7 @@ import { hashToken } from './accounts.ts'
 import { closeAnswers, keepAnswers, requestFact } from './answers.ts'
 import type { AuditFact } from './audit.ts'
 import { readSettings } from './settings.ts'
-import { clearAttempts, countAttempt, countHit, forgiveHit, refuseWhileBlocked } from './throttles.ts'
+import { countAttempt, countHit, forgiveHit, refuseWhileBlocked } from './throttles.ts'
 import { transact } from './transact.ts'
 
 /** What a link and a birth date come with, wherever they come from. */
@@ -39,7 +39,8 @@ const answersRefused = () =>
 /**
  * Runs one act on the request of a link, under its lock. Throws 410 alike for every link that is used, expired,
  * withdrawn, replaced or unknown, for a wrong birth date and for a browser in which somebody else is signed in. Wrong
- * dates are counted in the same transaction, so that parallel guesses cannot slip through; right ones never count.
+ * dates are counted in the same transaction, so that parallel guesses cannot slip through. Right ones never count and
+ * give none back: each save of the carer would otherwise hand somebody else who has the link five new guesses.
  */
 const withLink = async <T>(
   { actor, link, address }: LinkCall,
@@ -70,7 +71,7 @@ const withLink = async <T>(
     return { value: await act(tx, record, request) }
   })
   if (done === null) throw ended()
-  await Promise.all([clearAttempts(guesses), forgiveHit(`answer-link-address:${address}`)])
+  await forgiveHit(`answer-link-address:${address}`)
   return done.value
 }
 

@@ -146,6 +146,14 @@ describe('a link', () => {
     expect((await byLink.open(scene.token)).status).toBe(200)
   })
 
+  it('gives no guesses back when the carer opens it in between', async () => {
+    const scene = await linkScene()
+    const guess = async (day: number) => (await byLink.open(scene.token, `2017-04-${day}`)).status
+    for (const day of [10, 11, 12, 13, 14]) expect(await guess(day)).toBe(410)
+    expect((await byLink.open(scene.token)).status).toBe(200)
+    expect([await guess(15), await guess(16)]).toEqual([410, 429])
+  })
+
   it.each([0, true, [], {}, null])('answers 422 when the token is %j', async (token) => {
     for (const call of [
       client().post('/api/answer-links/open').send({ token, birthDate }),
