@@ -218,27 +218,25 @@ const scene = async () => {
   return cases
 }
 
-/** How many of the bodies are sent: all of them (1) take two minutes, and were sent when this was written. */
-const everyNth = 31
-
-/** Answers outside 2xx to 4xx, by route and value. */
+/**
+ * Answers of 5xx, by route and value. One body for each route and value is sent, another part of it each time; all
+ * 8,086 of them take two minutes, and were sent when this was written.
+ */
 const faultsOf = async (cases: readonly Case[], values: readonly string[]): Promise<string[]> => {
   const faults: string[] = []
-  for (const { who, method, path, body, version } of cases)
-    for (const text of values) {
-      // Guesses are held back, which would leave the rest of the route untried.
-      await database().query('UPDATE throttles SET failures = 0, blockedUntil = NULL')
+  for (const [at, { who, method, path, body, version }] of cases.entries()) {
+    // Guesses are held back, which would leave the rest of the route untried.
+    await database().query('UPDATE throttles SET failures = 0, blockedUntil = NULL')
+    for (const [index, text] of values.entries()) {
       const bodies = bodiesWith(body as Json, text)
-      for (const raw of bodies.filter(
-        (_, index) => index % everyNth === (text.length + path.length) % everyNth,
-      )) {
-        const call = who[method](path).type('json')
-        if (version !== undefined) void call.set('If-Match', `"${version}"`)
-        const { status } = await call.send(raw)
-        if (status >= 500)
-          faults.push(`${status} ${method} ${path} ${text.slice(0, 40)} in ${raw.slice(0, 200)}`)
-      }
+      const raw = bodies[(at + index * 7) % bodies.length]
+      const call = who[method](path).type('json')
+      if (version !== undefined) void call.set('If-Match', `"${version}"`)
+      const { status } = await call.send(raw)
+      if (status >= 500)
+        faults.push(`${status} ${method} ${path} ${text.slice(0, 40)} in ${raw?.slice(0, 200)}`)
     }
+  }
   return faults
 }
 
@@ -246,7 +244,7 @@ const nest = (depth: number) => `${'['.repeat(depth)}${']'.repeat(depth)}`
 const nestOfObjects = (depth: number) => `${'{"a":'.repeat(depth)}1${'}'.repeat(depth)}`
 
 describe('hostile input at the routes of the assessment', () => {
-  it('is never answered with 5xx', { timeout: 300_000 }, async () => {
+  it('is never answered with 5xx', { timeout: 120_000 }, async () => {
     expect(await faultsOf(await scene(), hostile)).toEqual([])
   })
 })
