@@ -1,10 +1,16 @@
 import { compareDays } from './days.ts'
 import { formatQuotient } from './laterality.ts'
 import type { LockedMeasure } from './measureRows.ts'
-import { measureKindLabels, type MeasureScore, type SideSummary, type SkillScore } from './measures.ts'
+import {
+  measureKindLabels,
+  type MeasureDetails,
+  type MeasureScore,
+  type SideSummary,
+  type SkillScore,
+} from './measures.ts'
 import type { MeasureComparison } from './occasions.ts'
 import { reliabilitiesRead, reliableChangeCautions, type ReliableChangeNote } from './reliableChange.ts'
-import { skillTrends } from './trends.ts'
+import { isTakenAlike, skillTrends } from './trends.ts'
 
 const newestFirst = (a: LockedMeasure, b: LockedMeasure) =>
   compareDays(b.measuredOn, a.measuredOn) || (a.lockedAt < b.lockedAt ? 1 : -1)
@@ -35,6 +41,30 @@ const sideLine = (label: string, { side, sum, answered }: SideSummary): Lines[nu
   label,
   value: side === null ? 'Not done' : `${side}, sum ${String(sum).replace('-', '−')} of ${answered}`,
 })
+
+/** How the measure was taken, where that is a choice: figures of two ways of taking it are not alike. */
+function takenLines(details: MeasureDetails): Lines {
+  switch (details.kind) {
+    case 'reaching':
+      return [{ label: 'Cards a place', value: String(details.cardsPerPlace) }]
+    case 'pegs':
+      return [{ label: 'Pegs in one trial', value: String(details.pegs ?? 'None') }]
+    case 'tapping':
+    case 'dots':
+      return [
+        { label: 'Length of one trial', value: details.seconds === null ? 'None' : `${details.seconds} s` },
+      ]
+    case 'sides':
+      return [
+        {
+          label: 'Far target at',
+          value: details.eyeFarMetres === null ? 'Not noted' : `${details.eyeFarMetres} m`,
+        },
+      ]
+    case 'seating':
+      return []
+  }
+}
 
 function linesOf(score: MeasureScore): Lines {
   switch (score.kind) {
@@ -98,8 +128,12 @@ function reliabilityOf(kind: MeasureComparison['kind']): ReliableChangeNote | nu
   return null
 }
 
-function meansOf(before: MeasureScore, after: MeasureScore): MeasureComparison['means'] {
-  if (!('unit' in before) || !('unit' in after)) return []
+const takenOtherwise =
+  'The two occasions were not taken in the same way (see the last line), so the figures are not alike.'
+
+function meansOf(earlier: LockedMeasure, later: LockedMeasure): MeasureComparison['means'] {
+  const [before, after] = [earlier.score, later.score]
+  if (!('unit' in before) || !('unit' in after) || !isTakenAlike(earlier.details, later.details)) return []
   return [
     { label: 'Left hand', before: before.left.mean, after: after.left.mean },
     { label: 'Right hand', before: before.right.mean, after: after.right.mean },
@@ -115,20 +149,21 @@ export function compareMeasureOccasions(measures: readonly LockedMeasure[]): Mea
       .filter(({ details, notDoneReason }) => details.kind === kind && notDoneReason === null)
       .toSorted(newestFirst)
     if (!after || !before) return []
-    const was = linesOf(before.score)
+    const was = [...linesOf(before.score), ...takenLines(before.details)]
     return [
       {
         kind,
         title: measureKindLabels[kind],
         before: { measureId: before.id, on: before.measuredOn },
         after: { measureId: after.id, on: after.measuredOn },
-        lines: linesOf(after.score).map(({ label, value }, index) => ({
+        lines: [...linesOf(after.score), ...takenLines(after.details)].map(({ label, value }, index) => ({
           label,
           before: was[index]?.value ?? 'None',
           after: value,
         })),
+        caution: isTakenAlike(before.details, after.details) ? null : takenOtherwise,
         reliable: reliabilityOf(kind),
-        means: meansOf(before.score, after.score),
+        means: meansOf(before, after),
         trends: trends.filter((trend) => trend.kind === kind),
       },
     ]

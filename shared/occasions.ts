@@ -49,6 +49,8 @@ export interface MeasureComparison {
   before: { measureId: string; on: Day }
   after: { measureId: string; on: Day }
   lines: { label: string; before: string; after: string }[]
+  /** Says so when the two occasions were taken in different ways; null otherwise. */
+  caution: string | null
   reliable: ReliableChangeNote | null
   /** Means of each hand for `reliableChange`, where somebody has a published SD and coefficient at hand. Else empty. */
   means: { label: string; before: number | null; after: number | null }[]

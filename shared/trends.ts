@@ -3,7 +3,7 @@ import { compareDays, type Day } from './days.ts'
 import { leastSquaresSlope } from './leastSquares.ts'
 import { mannKendall } from './mannKendall.ts'
 import type { LockedMeasure } from './measureRows.ts'
-import { measureKindLabels, type MeasureKind, type SkillScore } from './measures.ts'
+import { measureKindLabels, type MeasureDetails, type MeasureKind, type SkillScore } from './measures.ts'
 import { theilSenSlope } from './theilSen.ts'
 
 /** How a figure went over at least three different days. A description of one child, never a test of a treatment. */
@@ -61,16 +61,43 @@ function trendOf(kind: MeasureKind, label: string, series: readonly DatedValue[]
   }
 }
 
+const wayOf = (details: MeasureDetails): number | null => {
+  switch (details.kind) {
+    case 'reaching':
+      return details.cardsPerPlace
+    case 'pegs':
+      return details.pegs
+    case 'tapping':
+    case 'dots':
+      return details.seconds
+    case 'sides':
+      return details.eyeFarMetres
+    case 'seating':
+      return null
+  }
+}
+
+/** Two measures of one kind with the same cards, pegs, seconds or far distance: only then are their figures alike. */
+export const isTakenAlike = (one: MeasureDetails, other: MeasureDetails): boolean =>
+  wayOf(one) === wayOf(other)
+
 const isSkill = (score: LockedMeasure['score']): score is SkillScore => 'unit' in score
 
-/** Trends of each hand's mean in pegs, tapping and dots, wherever it was taken on three different days or more. */
+/**
+ * Trends of each hand's mean in pegs, tapping and dots, wherever it was taken on three different days or more in the way
+ * of the newest: a longer trial counts more taps, and that is no gain.
+ */
 export function skillTrends(measures: readonly LockedMeasure[]): MeasureTrend[] {
   const kinds = [...new Set(measures.map(({ details }) => details.kind))]
   return kinds.flatMap((kind) =>
     (['left', 'right'] as const).flatMap((hand) => {
-      const taken = measures.flatMap(({ score, measuredOn, notDoneReason }) =>
-        score.kind === kind && isSkill(score) && notDoneReason === null ? [{ score, measuredOn }] : [],
+      const done = measures.flatMap(({ score, details, measuredOn, notDoneReason }) =>
+        score.kind === kind && isSkill(score) && notDoneReason === null
+          ? [{ score, details, measuredOn }]
+          : [],
       )
+      const newest = done.toSorted((a, b) => compareDays(b.measuredOn, a.measuredOn))[0]
+      const taken = done.filter(({ details }) => newest && isTakenAlike(details, newest.details))
       const series = taken.flatMap(({ score, measuredOn }) => {
         const { mean } = score[hand]
         return mean === null ? [] : [{ on: measuredOn, value: mean }]

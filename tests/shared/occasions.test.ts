@@ -87,6 +87,22 @@ describe('compareMeasureOccasions', () => {
     expect(pegs?.reliable?.cautions.join(' ')).toContain('practice')
   })
 
+  it('warns when the occasions were taken in different ways, and gives no means to compare', () => {
+    const twenty = { ...pegsDetails([28, 28], [32, 32]), pegs: 20 } as ReturnType<typeof pegsDetails>
+    const [apart] = compareMeasureOccasions([
+      measured(twenty),
+      measured(pegsDetails([18, 18], [20, 20]), { measuredOn: '2025-03-03' }),
+    ])
+    expect(apart?.caution).toContain('not taken in the same way')
+    expect(apart?.lines.at(-1)).toEqual({ label: 'Pegs in one trial', before: '10', after: '20' })
+    expect(apart?.means).toEqual([])
+    const [alike] = compareMeasureOccasions([
+      measured(pegsDetails([14, 14], [16, 16])),
+      measured(pegsDetails([18, 18], [20, 20]), { measuredOn: '2025-03-03' }),
+    ])
+    expect(alike?.caution).toBeNull()
+  })
+
   it('leaves out a part that was not done', () => {
     expect(
       compareMeasureOccasions([
@@ -116,6 +132,14 @@ describe('skillTrends', () => {
     expect(trends[0]?.p).toBeCloseTo(1 / 3, 9)
     expect(trends[1]).toMatchObject({ per30Days: 0, p: null })
     expect(trends[0]?.words).toContain('−2.0 in 30 days')
+  })
+
+  it('take in only what was taken in the way of the newest', () => {
+    const twenty = { ...pegsDetails([40, 40], [44, 44]), pegs: 20 } as ReturnType<typeof pegsDetails>
+    const earlier = [pegs('2026-01-01', 20, 20), pegs('2026-01-31', 18, 20), pegs('2026-03-01', 16, 20)]
+    expect(skillTrends([...earlier, measured(twenty, { measuredOn: '2026-04-01' })])).toEqual([])
+    const [left] = skillTrends([...earlier, measured(twenty, { measuredOn: '2025-12-01' })])
+    expect(left).toMatchObject({ occasions: 3, from: '2026-01-01' })
   })
 
   it('stand with the comparison of their measure', () => {
