@@ -67,6 +67,15 @@ const details = ({ form: { definition }, answers, score }: LockedResponse): Late
 const sideOf = ({ direction }: FormScore): LateralSide | null =>
   direction === 'mixed' ? 'middle' : direction
 
+/** What the value rests on. "Does not do this yet" and a blank both give no marks and are told apart. */
+function basisOf({ answered, doesNotDo, unanswered }: FormScore): string {
+  const open = [
+    doesNotDo > 0 ? `, ${doesNotDo} not done yet` : '',
+    unanswered > 0 ? `, ${unanswered} left open` : '',
+  ].join('')
+  return `${answered} of ${answered + doesNotDo + unanswered} activities answered${open}`
+}
+
 /** Same form in any edition, same kind of informant. */
 const trackOf = ({ form, informant }: LockedResponse) => `${form.key}|${informant}`
 
@@ -94,7 +103,7 @@ export function questionnaireRows(responses: readonly LockedResponse[]): HandPro
       side: sideOf(score),
       interval: null,
       chance: null,
-      basis: `${score.answered} of ${score.answered + score.doesNotDo + score.unanswered} activities answered`,
+      basis: basisOf(score),
       caution: standingWords(score),
       cutOffs: {
         name: score.cutOffs.label,

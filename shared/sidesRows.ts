@@ -10,12 +10,18 @@ const triesWords = (tries: Tries) =>
 
 const sidesSource = 'Foot, eye and ear by actions shown, after Coren and Porac & Coren (from memory).'
 
+/** Three tries are asked for: fewer may agree by luck. Actions without any try were not done. */
+function fewTries(actions: readonly Tries[]): string | null {
+  const short = actions.some((tries) => tries.includes(null) && tries.some((side) => side !== null))
+  return short ? 'Fewer than three tries of an action' : null
+}
+
 function sidesRow(
   part: string,
   aspect: LateralAspect,
   measure: string,
   summary: SideSummary,
-  raw: LateralDetails['raw'],
+  { raw, tries }: { raw: LateralDetails['raw']; tries: readonly Tries[] },
   cautions: string[],
 ): MeasurePart | null {
   if (summary.answered === 0) return null
@@ -28,7 +34,7 @@ function sidesRow(
     interval: null,
     chance: null,
     basis: `${summary.answered} ${summary.answered === 1 ? 'action' : 'actions'} shown`,
-    caution: null,
+    caution: fewTries(tries),
     cutOffs: null,
     opens: {
       formula: '100 × sum ÷ actions, where each action gives +1 for right, −1 for left and 0 for mixed.',
@@ -44,18 +50,23 @@ function sidesRow(
   }
 }
 
-const triesOf = <Action extends string>(tries: Record<Action, Tries>, words: Record<Action, string>) =>
-  (Object.keys(words) as Action[]).map((action) => ({
-    label: words[action],
-    value: triesWords(tries[action]),
-  }))
+const shownBy = <Action extends string>(tries: Record<Action, Tries>, words: Record<Action, string>) => {
+  const actions = Object.keys(words) as Action[]
+  return {
+    raw: actions.map((action) => ({ label: words[action], value: triesWords(tries[action]) })),
+    tries: actions.map((action) => tries[action]),
+  }
+}
 
 /** Rows of foot, eye far, eye near and ear; none for a part without an action shown. */
 export function sidesRows(details: SidesDetails, score: SidesScore): MeasurePart[] {
   const metres = details.eyeFarMetres === null ? '' : `, target at ${details.eyeFarMetres} m`
-  const eye = (action: EyeAction, label: string) => [{ label, value: triesWords(details.eye[action]) }]
+  const eye = (action: EyeAction, label: string) => ({
+    raw: [{ label, value: triesWords(details.eye[action]) }],
+    tries: [details.eye[action]],
+  })
   return [
-    sidesRow('foot', 'foot', 'Foot', score.foot, triesOf(details.foot, footActionLabels), [
+    sidesRow('foot', 'foot', 'Foot', score.foot, shownBy(details.foot, footActionLabels), [
       expectedRates.foot,
     ]),
     sidesRow('eyeFar', 'eye_far', 'Eye, far', score.eyeFar, eye('far', `Sights far away${metres}`), [
@@ -66,6 +77,6 @@ export function sidesRows(details: SidesDetails, score: SidesScore): MeasurePart
       expectedRates.eye,
       expectedRates.eyeDistance,
     ]),
-    sidesRow('ear', 'ear', 'Ear', score.ear, triesOf(details.ear, earActionLabels), []),
+    sidesRow('ear', 'ear', 'Ear', score.ear, shownBy(details.ear, earActionLabels), []),
   ].filter((row) => row !== null)
 }

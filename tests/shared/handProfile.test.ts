@@ -50,9 +50,21 @@ describe('rows of questionnaires', () => {
   })
 
   it.each([
-    ['7 answered', `${'L '.repeat(7)}N N N`, '7 of 10 activities answered', /^Provisional/, false],
-    ['5 answered', `${'L '.repeat(5)}N N N N N`, '5 of 10 activities answered', /^Not scorable/, true],
-    ['none done yet', 'N', '0 of 10 activities answered', /^Not scorable/, true],
+    [
+      '7 answered',
+      `${'L '.repeat(7)}N N N`,
+      '7 of 10 activities answered, 3 not done yet',
+      /^Provisional/,
+      false,
+    ],
+    [
+      '5 answered',
+      `${'L '.repeat(5)}N N N N N`,
+      '5 of 10 activities answered, 5 not done yet',
+      /^Not scorable/,
+      true,
+    ],
+    ['none done yet', 'N', '0 of 10 activities answered, 10 not done yet', /^Not scorable/, true],
   ])('warn when only some were answered: %s', (_what, text, basis, caution, empty) => {
     const [row] = questionnaireRows([answered(text)])
     expect(row?.basis).toBe(basis)
@@ -138,6 +150,22 @@ describe('rows of measures', () => {
       basis: '1 trial left, 1 right, 1 interrupted',
     })
     expect(row?.opens.raw.at(-1)?.value).toBe('30 s, interrupted and left out')
+  })
+
+  it('warn of a side that rests on fewer than three tries', () => {
+    const whole = sidesDetails('left', 'right', null)
+    if (whole.kind !== 'sides') throw new Error('Not sides')
+    const once = { ...whole, eye: { ...whole.eye, far: ['right', null, null] } } as typeof whole
+    const cautions = (details: typeof whole) =>
+      measureRows([measured(details)]).map(({ aspect, caution }) => [aspect, caution])
+    expect(cautions(once)).toEqual([
+      ['foot', null],
+      ['eye_far', 'Fewer than three tries of an action'],
+    ])
+    expect(cautions(whole)).toEqual([
+      ['foot', null],
+      ['eye_far', null],
+    ])
   })
 
   it('give foot, both eyes and ear a row each, and none for what was not done', () => {
