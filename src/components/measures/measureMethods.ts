@@ -28,7 +28,7 @@ export const measureMethods: Record<MeasureKind, MeasureMethod> = {
     formulas: [
       'Index = 100 × (right − left) ÷ (right + left). Lost reaches are left out.',
       'Crossing, own side and middle: reaches of the hand used more, of all reaches counted at those places.',
-      'Chance: two-sided exact sign test at 5 %. Of 21 reaches, 15 with one hand may be chance (p .078); 16 may not (p .027).',
+      'Chance: two-sided exact sign test at 5 %. Of 21 reaches, 15 with one hand are within chance (p .078), 16 are beyond it (p .027).',
     ],
     sources: [
       'Bishop, Ross, Daniels and Bright (1996), British Journal of Psychology 87:269–285 (abstract).',
@@ -81,7 +81,7 @@ export const measureMethods: Record<MeasureKind, MeasureMethod> = {
       'Desk between seat + E and seat + 0.8517 × E + 0.1483 × A; E elbow and A shoulder above the seat.',
     ],
     sources: [
-      'Size marks of EN 1729-1: marks 1 to 6 from two sizing pages of the 2006 edition; the outer limits of mark 0 and mark 7 from memory. Check against the edition in force.',
+      'Size marks of EN 1729-1: marks 1 to 6 from two sizing pages of the 2006 edition; the outer limits of mark 0 and mark 7 and the table height of mark 0 from memory. Check against the edition in force.',
       'Match equations: from memory. Two common seat rules give quite different answers: Castellucci and colleagues (2014), Applied Ergonomics 45:1123–1132.',
       'Fewer than one in five of 74 pupils had an acceptable chair and desk: Parcells and colleagues (1999), Journal of Adolescent Health 24:265–273.',
     ],
