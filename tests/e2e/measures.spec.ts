@@ -129,11 +129,32 @@ it('records reaches and times by keyboard alone, and loses nothing while the net
   await question.waitFor({ state: 'hidden' })
   const field = page.getByLabel('Or type the time')
   await expect.poll(() => field.evaluate((one) => one === document.activeElement)).toBe(true)
+  // 0 s is asked about and not kept; an hour is asked about and kept on purpose.
+  await field.fill('0')
+  await keyboard.press('Enter')
+  await seeText(question, /^0 s for 10 pegs is unusual/)
+  await inspect(therapist, 'pegs-impossible-time')
+  await keyboard.press('Enter')
+  await question.waitFor({ state: 'hidden' })
+  const trials = async () => {
+    const rows = await page.getByRole('table', { name: 'Figures of each hand' }).getByRole('row').all()
+    const counts = await Promise.all(
+      rows.slice(1).map(async (row) => Number(await row.getByRole('cell').first().innerText())),
+    )
+    return counts.reduce((sum, count) => sum + count, 0)
+  }
+  expect(await trials()).toBe(0)
+  await field.fill('3600')
+  await keyboard.press('Enter')
+  await seeText(question, /^3600 s for 10 pegs is unusual/)
+  await press(question, 'Keep 3600.0 s')
+  await seeText(page, '3600.0 s kept')
   for (const seconds of ['12.4', '13.1', '13.4', '12.0']) {
     await field.fill(seconds)
     await keyboard.press('Enter')
     await seeText(page, `${seconds} s kept`)
   }
+  expect(await trials()).toBe(5)
   await inspect(therapist, 'pegs')
   expectNoFaults()
 })

@@ -120,6 +120,6 @@ export const seeNothingShown = async (person: Person, child: FreshChild, where: 
   await seeText(page, /We could not open this/)
   await inspect(person, where)
   const words = await page.locator('body').innerText()
-  for (const secret of [...child.name.split(' '), 'Draws', 'activities'])
+  for (const secret of [...child.name.split(' '), 'Osric', 'Four tasks', 'Before you begin', 'Left, always'])
     expect(words, `what ${where} shows`).not.toContain(secret)
 }
