@@ -61,7 +61,9 @@ export const historyRoutes = (): Router => {
   })
 
   router.delete(one, allow(historyPolicies.discard), async (req, res) => {
-    await discardHistory(req.actor, accessOf(req), idOf(req))
+    const id = idOf(req)
+    const version = ifMatchOf(req)
+    await answerStale(discardHistory(req.actor, accessOf(req), id, version), () => viewForReading(req, id))
     res.status(204).end()
   })
 

@@ -58,7 +58,9 @@ export const measureRoutes = (): Router => {
   })
 
   router.delete(one, allow(measurePolicies.discard), async (req, res) => {
-    await discardMeasure(req.actor, accessOf(req), idOf(req))
+    const id = idOf(req)
+    const version = ifMatchOf(req)
+    await answerStale(discardMeasure(req.actor, accessOf(req), id, version), () => viewForReading(req, id))
     res.status(204).end()
   })
 

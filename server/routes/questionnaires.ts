@@ -61,7 +61,11 @@ export const questionnaireRoutes = (): Router => {
   })
 
   router.delete(`${base}/:questionnaireId`, allow(questionnairePolicies.discard), async (req, res) => {
-    await discardQuestionnaire(req.actor, accessOf(req), idOf(req))
+    const id = idOf(req)
+    const version = ifMatchOf(req)
+    await answerStale(discardQuestionnaire(req.actor, accessOf(req), id, version), () =>
+      viewForReading(req, id),
+    )
     res.status(204).end()
   })
 

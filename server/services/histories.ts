@@ -10,7 +10,7 @@ import {
   type HistoryStart,
 } from '../../shared/histories.ts'
 import { newlyRaised } from '../../shared/redFlags.ts'
-import { redFlagsOfHistory, urgentWordsFor } from '../../shared/redFlagSources.ts'
+import { redFlagsOfHistory } from '../../shared/redFlagSources.ts'
 import type { ChildRelation } from '../../shared/roles.ts'
 import type { Actor } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
@@ -27,7 +27,7 @@ import { requireConsent, requirePastDay } from './recordRules.ts'
 import { raiseFlags } from './redFlags.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { transact } from './transact.ts'
-import { updateIfCurrent } from './versions.ts'
+import { StaleWrite, updateIfCurrent } from './versions.ts'
 
 type Record = (fact: AuditFact) => void
 
@@ -151,9 +151,6 @@ export const lockHistory = async (
   })
 }
 
-/** What the family reads at once when an answer calls for medical help on the same day; empty when none does. */
-export const urgentWords = (details: HistoryDetails): string[] => urgentWordsFor(details)
-
 interface KnownChild {
   birthDate: Day
   today: Day
@@ -264,10 +261,19 @@ export const closeHistory = (actor: Actor, access: ChildAccess, id: string, vers
     await lockHistory(tx, record, { history, version, lockedById: access.viewer.id })
   })
 
-/** Removes a history that a therapist began and never closed. What it raised stays on the record. */
-export const discardHistory = (actor: Actor, access: ChildAccess, id: string): Promise<void> =>
+/**
+ * Removes a history that a therapist began and never closed. What it raised stays on the record. Throws StaleWrite when
+ * somebody wrote in it in between.
+ */
+export const discardHistory = (
+  actor: Actor,
+  access: ChildAccess,
+  id: string,
+  version: number,
+): Promise<void> =>
   transact(actor, async (tx, record) => {
     const history = await openHistory(tx, access, id)
+    if (history.version !== version) throw new StaleWrite()
     await tx.delete(History, id)
     record(historyFact(history, 'discarded'))
   })

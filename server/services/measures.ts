@@ -20,7 +20,7 @@ import { createOnce } from './once.ts'
 import { raiseFlags } from './redFlags.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { transact } from './transact.ts'
-import { updateIfCurrent } from './versions.ts'
+import { StaleWrite, updateIfCurrent } from './versions.ts'
 
 const fact = (access: ChildAccess, action: string, id: string): AuditFact => ({
   action: `measure.${action}`,
@@ -174,13 +174,20 @@ export const lockMeasure = (actor: Actor, access: ChildAccess, id: string, versi
       flags,
       fresh: flags.map((flag) => flag.id),
       raisedById: viewer.id,
+      relation: access.relation,
     })
   })
 
-/** Removes a measure that was begun and never locked. */
-export const discardMeasure = (actor: Actor, access: ChildAccess, id: string): Promise<void> =>
+/** Removes a measure that was begun and never locked. Throws StaleWrite when somebody recorded in it in between. */
+export const discardMeasure = (
+  actor: Actor,
+  access: ChildAccess,
+  id: string,
+  version: number,
+): Promise<void> =>
   transact(actor, async (tx, record) => {
-    await openMeasure(tx, access, id)
+    const measure = await openMeasure(tx, access, id)
+    if (measure.version !== version) throw new StaleWrite()
     await tx.delete(Measure, id)
     record(fact(access, 'discarded', id))
   })

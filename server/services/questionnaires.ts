@@ -19,7 +19,7 @@ import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { readSettings } from './settings.ts'
 import { transact } from './transact.ts'
-import { updateIfCurrent } from './versions.ts'
+import { StaleWrite, updateIfCurrent } from './versions.ts'
 
 const fact = (access: ChildAccess, action: string, id: string): AuditFact => ({
   action: `questionnaire.${action}`,
@@ -261,10 +261,16 @@ export const lockQuestionnaire = (
     record(fact(access, 'locked', id))
   })
 
-/** Removes a response that was begun and never locked. */
-export const discardQuestionnaire = (actor: Actor, access: ChildAccess, id: string): Promise<void> =>
+/** Removes a response that was begun and never locked. Throws StaleWrite when somebody answered in it in between. */
+export const discardQuestionnaire = (
+  actor: Actor,
+  access: ChildAccess,
+  id: string,
+  version: number,
+): Promise<void> =>
   transact(actor, async (tx, record) => {
-    await openResponse(tx, access, id)
+    const response = await openResponse(tx, access, id)
+    if (response.version !== version) throw new StaleWrite()
     await tx.delete(QuestionnaireResponse, id)
     record(fact(access, 'discarded', id))
   })

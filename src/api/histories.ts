@@ -10,7 +10,8 @@ export const historiesApi = {
   one: (childId: string, id: string) => http.get<HistoryView>(`${path(childId)}/${id}`),
   save: (childId: string, id: string, draft: HistoryDraft, version: number) =>
     http.put<HistoryView>(`${path(childId)}/${id}`, draft, { ifMatch: version }),
-  discard: (childId: string, id: string) => http.delete<void>(`${path(childId)}/${id}`),
+  discard: (childId: string, id: string, version: number) =>
+    http.delete<void>(`${path(childId)}/${id}`, undefined, { ifMatch: version }),
   lock: (childId: string, id: string, version: number) =>
     http.post<HistoryView>(`${path(childId)}/${id}/lock`, {}, { ifMatch: version }),
 }

@@ -11,7 +11,8 @@ export const measuresApi = {
   one: (childId: string, id: string) => http.get<MeasureView>(`${path(childId)}/${id}`),
   save: (childId: string, id: string, draft: MeasureDraft, version: number) =>
     http.put<MeasureView>(`${path(childId)}/${id}`, draft, { ifMatch: version }),
-  discard: (childId: string, id: string) => http.delete<void>(`${path(childId)}/${id}`),
+  discard: (childId: string, id: string, version: number) =>
+    http.delete<void>(`${path(childId)}/${id}`, undefined, { ifMatch: version }),
   lock: (childId: string, id: string, version: number) =>
     http.post<MeasureView>(`${path(childId)}/${id}/lock`, {}, { ifMatch: version }),
 }

@@ -9,7 +9,8 @@ export const questionnairesApi = {
   one: (childId: string, id: string) => http.get<QuestionnaireView>(`${path(childId)}/${id}`),
   save: (childId: string, id: string, draft: QuestionnaireDraft, version: number) =>
     http.put<QuestionnaireView>(`${path(childId)}/${id}`, draft, { ifMatch: version }),
-  discard: (childId: string, id: string) => http.delete<void>(`${path(childId)}/${id}`),
+  discard: (childId: string, id: string, version: number) =>
+    http.delete<void>(`${path(childId)}/${id}`, undefined, { ifMatch: version }),
   lock: (childId: string, id: string, version: number) =>
     http.post<QuestionnaireView>(`${path(childId)}/${id}/lock`, {}, { ifMatch: version }),
 }

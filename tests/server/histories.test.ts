@@ -30,6 +30,7 @@ beforeEach(async () => {
 })
 
 const at = (path = '', of: Pick<Child, 'id'> = child) => `/api/children/${of.id}/histories${path}`
+const discard = (id: string, version: number) => anna.delete(at(`/${id}`)).set('If-Match', `"${version}"`)
 const start = { respondentName: 'Mother', answeredOn: '2026-06-09', replacesId: null }
 const begun = async (given: object = {}): Promise<HistoryView> => {
   const response = await anna.post(at()).send({ ...start, ...given })
@@ -137,7 +138,7 @@ describe('a history', () => {
     const { id } = await buildHistory(child, therapist, { locked: true, details: { enjoys: 'Dens' } })
     expect((await save(id, 1, { enjoys: 'Other' })).body.code).toBe('closed')
     expect((await lock(id, 1)).body.code).toBe('closed')
-    expect((await anna.delete(at(`/${id}`))).body.code).toBe('closed')
+    expect((await discard(id, 1)).body.code).toBe('closed')
     for (const attempt of [
       "UPDATE histories SET details = '{}' WHERE id = ?",
       'DELETE FROM histories WHERE id = ?',
@@ -163,8 +164,16 @@ describe('a history', () => {
     const key = randomUUID()
     const twice = await Promise.all([1, 2].map(() => anna.post(at()).set('Idempotency-Key', key).send(start)))
     expect(twice[0]?.body.id).toBe(twice[1]?.body.id)
-    expect((await anna.delete(at(`/${twice[0]?.body.id}`))).status).toBe(204)
+    expect((await discard(twice[0]?.body.id, 1)).status).toBe(204)
     expect((await anna.get(at())).body).toEqual([])
+  })
+
+  it('is not thrown away from a page older than what a colleague wrote', async () => {
+    const { id } = await begun()
+    await save(id, 1, { pain: 1 })
+    expect((await anna.delete(at(`/${id}`))).status).toBe(428)
+    const stale = await discard(id, 1)
+    expect([stale.status, stale.body.code, stale.body.current.details.pain]).toEqual([409, 'stale', 1])
   })
 
   it('needs consent to assessment in force', async () => {
@@ -187,11 +196,7 @@ describe('a history', () => {
       'Maren Holt',
       { change: false, lock: false, replace: false },
     ])
-    for (const refused of [
-      await save(id, 1, { pain: 1 }),
-      await lock(id, 1),
-      await anna.delete(at(`/${id}`)),
-    ])
+    for (const refused of [await save(id, 1, { pain: 1 }), await lock(id, 1), await discard(id, 1)])
       expect([refused.status, refused.body.code]).toEqual([409, 'family_answers'])
   })
 })
@@ -221,7 +226,7 @@ describe('who may see and write histories', () => {
     }
     const second = await buildChild({ therapist })
     expect((await anna.get(at(`/${id}`, second))).status).toBe(404)
-    expect((await anna.delete(at(`/${id}`, second))).status).toBe(404)
+    expect((await anna.delete(at(`/${id}`, second)).set('If-Match', '"1"')).status).toBe(404)
   })
 })
 

@@ -38,6 +38,7 @@ beforeEach(async () => {
 })
 
 const at = (path = '', of: Pick<Child, 'id'> = child) => `/api/children/${of.id}/measures${path}`
+const discard = (id: string, version: number) => anna.delete(at(`/${id}`)).set('If-Match', `"${version}"`)
 const start = (given: Partial<MeasureStart> = {}): MeasureStart => ({
   kind: 'reaching',
   measuredOn: '2026-06-09',
@@ -214,11 +215,7 @@ describe('a measure', () => {
 
   it('that is locked is neither saved, locked again nor discarded, by the server or in the database', async () => {
     const { id, version } = await lockedPegs()
-    const refused = [
-      await put(id, version, draft(pegs)),
-      await lock(id, version),
-      await anna.delete(at(`/${id}`)),
-    ]
+    const refused = [await put(id, version, draft(pegs)), await lock(id, version), await discard(id, version)]
     expect(refused.map((answer) => [answer.status, answer.body.code])).toEqual(Array(3).fill([409, 'closed']))
     for (const attempt of [
       "UPDATE measures SET comment = 'x' WHERE id = ?",
@@ -260,8 +257,17 @@ describe('a measure', () => {
 
   it('that was begun and never locked can be discarded', async () => {
     const { id } = await begun()
-    expect((await anna.delete(at(`/${id}`))).status).toBe(204)
+    expect((await discard(id, 1)).status).toBe(204)
     expect(await list()).toEqual([])
+  })
+
+  it('is not discarded from a page older than what a colleague recorded', async () => {
+    const { id } = await begun({ kind: 'pegs' })
+    await put(id, 1, draft(pegs))
+    expect((await anna.delete(at(`/${id}`))).status).toBe(428)
+    const stale = await discard(id, 1)
+    expect([stale.status, stale.body.code, stale.body.current.version]).toEqual([409, 'stale', 2])
+    expect((await list()).map((measure) => measure.id)).toEqual([id])
   })
 
   it('is made once for one key', async () => {
@@ -540,7 +546,7 @@ describe('who may see and take measures', () => {
         .post(away(`/${id}/lock`))
         .set('If-Match', '"1"')
         .send({}),
-      await anna.delete(away(`/${id}`)),
+      await anna.delete(away(`/${id}`)).set('If-Match', '"1"'),
       await anna.get(at('/not-an-id')),
     ]
     expect(answers.map((answer) => answer.status)).toEqual([404, 404, 404, 404, 404])

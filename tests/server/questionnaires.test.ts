@@ -39,6 +39,7 @@ beforeEach(async () => {
 })
 
 const at = (path = '', of: Pick<Child, 'id'> = child) => `/api/children/${of.id}/questionnaires${path}`
+const discard = (id: string, version: number) => anna.delete(at(`/${id}`)).set('If-Match', `"${version}"`)
 const start = {
   formId: 'hand-use-10.v1',
   informant: 'guardian',
@@ -269,7 +270,7 @@ describe('a hand-use questionnaire', () => {
       .send(draft(Array(10).fill('right')))
     expect([put.status, put.body.code]).toEqual([409, 'closed'])
     expect((await lock(id, version)).body.code).toBe('closed')
-    expect((await anna.delete(at(`/${id}`))).body.code).toBe('closed')
+    expect((await discard(id, version)).body.code).toBe('closed')
     await expect(
       database().query("UPDATE questionnaire_responses SET comment = 'x' WHERE id = ?", [id]),
     ).rejects.toThrow(/locked response is closed/)
@@ -320,9 +321,17 @@ describe('a hand-use questionnaire', () => {
 
   it('is discarded without a trace on the page while it is unlocked', async () => {
     const { id } = await begun()
-    expect((await anna.delete(at(`/${id}`))).status).toBe(204)
+    expect((await discard(id, 1)).status).toBe(204)
     expect((await anna.get(at(`/${id}`))).status).toBe(404)
     expect((await profile()).questionnaires).toEqual([])
+  })
+
+  it('is not discarded from a page older than what a colleague answered', async () => {
+    const { id } = await begun()
+    const { version } = await saved(id)
+    expect((await anna.delete(at(`/${id}`))).status).toBe(428)
+    const stale = await discard(id, 1)
+    expect([stale.status, stale.body.code, stale.body.current.version]).toEqual([409, 'stale', version])
   })
 
   it('shows the newest occasion as the latest and keeps the earlier one', async () => {
@@ -377,7 +386,7 @@ describe('answers that somebody was asked for', () => {
         .set('If-Match', `"${version}"`)
         .send(draft(settled)),
       await lock(id, version),
-      await anna.delete(at(`/${id}`)),
+      await discard(id, version),
     ]
     expect(tried.map(({ status, body }) => [status, body.code])).toEqual(Array(3).fill([409, 'asked']))
     expect((await anna.get(at(`/${id}`))).body.version).toBe(version)
@@ -512,7 +521,7 @@ describe('who may see and change hand-use responses', () => {
         .post(at(`/${id}/lock`, other))
         .set('If-Match', '"1"')
         .send({}),
-      await anna.delete(at(`/${id}`, other)),
+      await anna.delete(at(`/${id}`, other)).set('If-Match', '"1"'),
       await anna.get(at('/not-an-id')),
     ]
     expect(answers.map((answer) => answer.status)).toEqual([404, 404, 404, 404, 404])
