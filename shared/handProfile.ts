@@ -56,10 +56,14 @@ export function handProfileOf(
     .map(({ occasion }) => occasion)
     .toSorted()
     .at(-1)
-  const ageYears = newest === undefined ? null : ageInYears(birthDate, newest)
+  const ageOn = (day: Day | undefined) => (day === undefined ? null : ageInYears(birthDate, day))
+  const ageYears = ageOn(newest)
+  const ageYearsAtReaching = ageOn(
+    lateralLine.find(({ aspect, latest }) => aspect === 'reaching' && latest)?.occasion,
+  )
   return {
     lateralLine,
-    statements: handStatements(lateralLine, { ageYears, informants, measures }),
+    statements: handStatements(lateralLine, { ageYears, ageYearsAtReaching, informants, measures }),
     informants,
     occasions: { forms: compareFormOccasions(responses), measures: compareMeasureOccasions(measures) },
   }

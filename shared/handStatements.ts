@@ -74,6 +74,8 @@ function informantStatement(title: string, pair: InformantPair): HandStatement |
 export interface StatementFacts {
   /** Whole years at the newest occasion; null when nothing was recorded yet. */
   ageYears: number | null
+  /** Whole years on the day of the newest reaching; left out, `ageYears` stands for it. */
+  ageYearsAtReaching?: number | null
   informants: readonly InformantComparison[]
   /** Locked measures, for the parts that were not done and why. */
   measures?: readonly LockedMeasure[]
@@ -102,11 +104,14 @@ export function handStatements(rows: readonly LateralLineRow[], facts: Statement
   const notDone = notDoneStatements(facts.measures ?? [])
   if (rows.length === 0) return notDone
   const { asked, reached } = askedAndReached(rows)
-  const young = facts.ageYears !== null && facts.ageYears < crossingExpectedFrom
+  const isYoung = (years: number | null) => years !== null && years < crossingExpectedFrom
+  const young = isYoung(facts.ageYears)
+  // A child who was five then is not six for what was seen then.
+  const youngThen = isYoung(facts.ageYearsAtReaching ?? facts.ageYears)
   const hand = chosenHand(rows)
   const statements = [
     askedStatement(asked),
-    reachedStatement(asked, reached, young),
+    reachedStatement(asked, reached, youngThen),
     ...facts.informants.flatMap(({ title, pairs }) => pairs.map((pair) => informantStatement(title, pair))),
     ...skillStatements(hand, rows),
     ...sideStatements(hand, rows),

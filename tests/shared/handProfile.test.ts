@@ -206,6 +206,20 @@ describe('the whole profile', () => {
     ])
   })
 
+  it('reads reaching at the age of the day it was taken, not of the newest answer', () => {
+    const evenly = measured(
+      reachingDetails((place) => (place > 4 ? 'right' : 'left')),
+      { measuredOn: '2024-04-01' },
+    )
+    const because = (birthDate: string) =>
+      handProfileOf([answered('L', { answeredOn: '2024-06-01' })], [evenly], birthDate).statements.find(
+        ({ text }) => text.startsWith('Reaching points to neither hand'),
+      )?.because
+    // Five on the day of reaching, six on the day of the answers.
+    expect(because('2018-05-04')).toContain('Under six')
+    expect(because('2018-03-04')).not.toContain('Under six')
+  })
+
   it('is empty, and says nothing, for an empty record', () => {
     expect(handProfileOf([], [], '2018-05-04')).toEqual({
       lateralLine: [],
