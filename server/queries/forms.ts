@@ -29,14 +29,16 @@ export const listForms = async (tx?: Tx): Promise<FormRecord[]> => {
   return rows.map(toRecord)
 }
 
-/** One edition; null when there is none of that name. */
+// The database takes 'A' for 'a' and 'a ' for 'a'; a name that differs at all is another name.
+
+/** One edition; null when there is none of exactly that name. */
 export const findForm = async (id: string, tx?: Tx): Promise<FormRecord | null> => {
   const row = await selectOne<StoredForm>(
     `SELECT ${columns} FROM questionnaire_forms f WHERE f.id = :id`,
     { id },
     tx,
   )
-  return row && toRecord(row)
+  return row?.id === id ? toRecord(row) : null
 }
 
 /** Every edition of a form, the newest first, held until the transaction ends. */
@@ -46,5 +48,5 @@ export const lockEditions = async (key: string, tx: Tx): Promise<FormRecord[]> =
     { key },
     tx,
   )
-  return rows.map(toRecord)
+  return rows.filter((row) => row.key === key).map(toRecord)
 }

@@ -255,6 +255,21 @@ describe('a new edition', () => {
     expect((await publish('short-4', wordsOf('short-4'))).body.code).toBe('duplicate')
   })
 
+  it('belongs to a form of exactly that name, though the database takes one for the other', async () => {
+    const alike = ['SHORT-4', 'short-4 ', 'Shört-4']
+    for (const key of alike) {
+      const [found] = await database().query(
+        'SELECT COUNT(*) AS n FROM questionnaire_forms WHERE formKey = ?',
+        [key],
+      )
+      expect(Number(found.n), key).toBeGreaterThan(0)
+      const refused = await publish(key, reworded('short-4'))
+      expect([refused.status, refused.body.fields], key).toEqual([422, { key: expect.any(String) }])
+      expect((await start(`${key}.v1`)).body.fields, key).toHaveProperty('formId')
+    }
+    expect((await all()).map((form) => form.key)).not.toContain('SHORT-4')
+  })
+
   it('is kept by the database: no edition is changed or removed', async () => {
     await expect(
       database().query("UPDATE questionnaire_forms SET definition = '{}' WHERE id = 'ten-task.v1'"),
