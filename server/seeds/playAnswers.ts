@@ -1,6 +1,6 @@
 import { addDays, type Day } from '../../shared/days.ts'
 import type { AnswerDraft } from '../../shared/answerRequests.ts'
-import { cutOffSetById } from '../../shared/handUse.ts'
+import { cutOffSets } from '../../shared/handUse.ts'
 import { database } from '../dataSource.ts'
 import { History } from '../entities/History.ts'
 import { QuestionnaireResponse } from '../entities/QuestionnaireResponse.ts'
@@ -72,7 +72,7 @@ export const playQuestionnaire = async (
   const start = { formId, informant, respondentName, answeredOn: on, replacesId: null }
   const id = await startQuestionnaire(actor, access, start, null)
   const { version, cutOffSet } = await database().manager.findOneByOrFail(QuestionnaireResponse, { id })
-  const cutOffs = cutOffSetById(cutOffSet)
+  const cutOffs = cutOffSets.find((set) => set.id === cutOffSet)
   if (!cutOffs) throw new Error(`The response was begun with unknown cut-offs (${cutOffSet})`)
   const draft = { informant, respondentName, answeredOn: on, answers, comment, cutOffSet: cutOffs.id }
   const saved = await saveQuestionnaire(actor, access, id, version, draft)

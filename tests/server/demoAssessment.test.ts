@@ -15,7 +15,7 @@ import { addDays, ageInMonths } from '../../shared/days.ts'
 import { historyDayProblems, historyDetailsSchema, type HistoryDetails } from '../../shared/histories.ts'
 import { measureDetailsSchema } from '../../shared/measureSchemas.ts'
 import { lockProblems, scoreMeasure } from '../../shared/measureScores.ts'
-import type { MeasureKind, MeasureScore } from '../../shared/measures.ts'
+import type { MeasureScore } from '../../shared/measures.ts'
 import { redFlagsOfHistory } from '../../shared/redFlagSources.ts'
 
 const today = '2026-12-01'
@@ -34,10 +34,14 @@ const flagsOf = (history: DemoHistory) =>
     writingHand: childOf(history.child).writingHand,
   }).map(({ id }) => id)
 
-const scoresOf = <Kind extends MeasureKind>(child: number, kind: Kind) =>
+const scoresOf = <Kind extends MeasureScore['kind']>(
+  child: number,
+  kind: Kind,
+): (MeasureScore & { kind: Kind })[] =>
   measures
-    .filter((measure) => measure.child === child && measure.details.kind === kind)
-    .map(({ details }) => scoreMeasure(measured(details)) as Extract<MeasureScore, { kind: Kind }>)
+    .filter((measure) => measure.child === child)
+    .map(({ details }) => scoreMeasure(measured(details)))
+    .filter((score): score is MeasureScore & { kind: Kind } => score.kind === kind)
 
 describe('every part of the demo’s assessments is one that its form would take', () => {
   it.each(histories)('history of child $child on day $answeredDay', (history) => {
