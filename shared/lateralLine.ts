@@ -1,4 +1,4 @@
-import type { Day } from './days.ts'
+import { compareDays, type Day } from './days.ts'
 
 /** What a row is about. Preference and skill are different things and never merged. */
 export const lateralAspects = [
@@ -71,6 +71,32 @@ export interface HandProfileRow extends LateralLineRow {
 /** How a row is named in a sentence: measure, and who answered where somebody did. */
 export const rowName = ({ measure, informant }: Pick<LateralLineRow, 'measure' | 'informant'>): string =>
   informant === null ? measure : `${measure} (${informant.toLowerCase()})`
+
+export interface LateralTrack<Row extends LateralLineRow = LateralLineRow> {
+  id: string
+  aspect: LateralAspect
+  measure: string
+  informant: string | null
+  /** Newest first. */
+  rows: Row[]
+}
+
+/**
+ * One track for each measure and informant, in the order in which each first comes: what a parent said is never drawn as
+ * what a teacher said.
+ */
+export function tracksOf<Row extends LateralLineRow>(rows: readonly Row[]): LateralTrack<Row>[] {
+  const tracks = new Map<string, LateralTrack<Row>>()
+  for (const row of rows) {
+    const { track: id, aspect, measure, informant } = row
+    const track = tracks.get(id) ?? { id, aspect, measure, informant, rows: [] }
+    track.rows.push(row)
+    tracks.set(id, track)
+  }
+  for (const track of tracks.values())
+    track.rows.sort((a, b) => Number(b.latest) - Number(a.latest) || compareDays(b.occasion, a.occasion))
+  return [...tracks.values()]
+}
 
 /** A row before it is known which measure of which day it belongs to; `part` is its track. */
 export type MeasurePart = Omit<

@@ -1,6 +1,6 @@
 import { formatDay } from '../../shared/days.ts'
 import { formatQuotient } from '../../shared/laterality.ts'
-import { rowName, type LateralLineRow, type LateralSide } from '../../shared/lateralLine.ts'
+import { rowName, tracksOf, type LateralLineRow, type LateralSide } from '../../shared/lateralLine.ts'
 import { breakIntoLines, drawLine, type Line, type TextStyle } from './letterLayout.ts'
 import type { Pages, Place } from './letterPages.ts'
 import { colours, styles } from './reportStyles.ts'
@@ -29,26 +29,15 @@ const at = (value: number) =>
   columns.lineFrom +
   ((Math.min(100, Math.max(-100, value)) + 100) / 200) * (columns.lineTo - columns.lineFrom)
 
-/** Rows of one measure by one informant stand together, in the order in which each first comes. */
-export function occasionsByTrack(rows: readonly LateralLineRow[]): LateralLineRow[][] {
-  const tracks = new Map<string, LateralLineRow[]>()
-  for (const row of rows) tracks.set(row.track, [...(tracks.get(row.track) ?? []), row])
-  return [...tracks.values()]
-}
-
-function tracksOf(pdf: PDFKit.PDFDocument, rows: readonly LateralLineRow[]): Track[] {
-  return occasionsByTrack(rows).map((found) => {
-    const newest = found.toSorted(
-      (a, b) => Number(b.latest) - Number(a.latest) || (a.occasion < b.occasion ? 1 : -1),
-    )
-    const [first] = newest
+const laidOut = (pdf: PDFKit.PDFDocument, rows: readonly LateralLineRow[]): Track[] =>
+  tracksOf(rows).map((track) => {
     const names = [
-      ...breakIntoLines(pdf, first?.measure ?? '', styles.cellStrong, columns.name),
-      ...(first?.informant ? breakIntoLines(pdf, first.informant, styles.cell, columns.name) : []),
+      ...breakIntoLines(pdf, track.measure, styles.cellStrong, columns.name),
+      ...(track.informant ? breakIntoLines(pdf, track.informant, styles.cell, columns.name) : []),
     ]
-    return { names, rows: newest, height: Math.max(shortestTrack, names.length * styles.cell.leading + 8) }
+    const height = Math.max(shortestTrack, names.length * styles.cell.leading + 8)
+    return { names, rows: track.rows, height }
   })
-}
 
 const inWords = (row: LateralLineRow): string => {
   if (row.value === null) return `${rowName(row)}, ${formatDay(row.occasion)}: not scorable`
@@ -89,7 +78,7 @@ export function printLateralLine(
   rows: readonly LateralLineRow[],
   heading: { height: number; print: () => void },
 ): void {
-  const pictures = inPictures(tracksOf(pdf, rows))
+  const pictures = inPictures(laidOut(pdf, rows))
   const [first] = pictures
   pages.keepTogether(heading.height + (first ? heightOf(first) + 8 : 0))
   heading.print()

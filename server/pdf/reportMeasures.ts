@@ -1,7 +1,7 @@
 import { formatDay } from '../../shared/days.ts'
 import { formatQuotient } from '../../shared/laterality.ts'
-import { rowName, type LateralLineRow } from '../../shared/lateralLine.ts'
-import { occasionsByTrack, printLateralLine, sideWords } from './lateralPicture.ts'
+import { rowName, tracksOf, type LateralLineRow } from '../../shared/lateralLine.ts'
+import { printLateralLine, sideWords } from './lateralPicture.ts'
 import { heightOf } from './letterLayout.ts'
 import type { Pages } from './letterPages.ts'
 import { pieceOf, styles } from './reportStyles.ts'
@@ -72,6 +72,6 @@ export function printMeasures(pdf: PDFKit.PDFDocument, pages: Pages, rows: reado
       { title: 'Interval', share: 0.17 },
       { title: 'Rests on', share: 0.24 },
     ],
-    rows: occasionsByTrack(rows).flat().map(rowOf),
+    rows: tracksOf(rows).flatMap((track) => track.rows.map(rowOf)),
   })
 }

@@ -8,7 +8,6 @@ import {
   lateralGroups,
   sideOf,
   sideWords,
-  tracksOf,
   type OpeningRow,
 } from '@/components/handProfile/lateralAxis.ts'
 
@@ -72,20 +71,6 @@ describe('the axis', () => {
 
   it('points a mark by the sign alone and gives zero no side', () => {
     expect([-0.1, 0, 0.1].map(sideOf)).toEqual(['left', 'neither', 'right'])
-  })
-})
-
-describe('tracksOf', () => {
-  it('keeps what a parent and what a teacher answered apart, newest occasion first', () => {
-    const tracks = tracksOf([
-      row({ id: 'old', occasion: '2025-09-01', latest: false }),
-      row({ id: 'teacher', track: 'hand-use-10|teacher', informant: 'Teacher' }),
-      row({ id: 'new' }),
-    ])
-    expect(tracks.map((track) => [track.informant, track.rows.map(({ id }) => id)])).toEqual([
-      ['Parent or carer', ['new', 'old']],
-      ['Teacher', ['teacher']],
-    ])
   })
 })
 

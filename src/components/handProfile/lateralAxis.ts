@@ -1,4 +1,10 @@
-import type { LateralAspect, LateralDetails, LateralLineRow } from '@shared/lateralLine.ts'
+import {
+  tracksOf,
+  type LateralAspect,
+  type LateralDetails,
+  type LateralLineRow,
+  type LateralTrack,
+} from '@shared/lateralLine.ts'
 
 export type Side = 'left' | 'right' | 'neither'
 
@@ -39,32 +45,9 @@ export function sideWords({
   return aspect === 'skill' ? `${word} hand ahead` : word
 }
 
-export interface LateralTrack {
-  id: string
-  aspect: LateralAspect
-  measure: string
-  informant: string | null
-  /** Newest first. */
-  rows: OpeningRow[]
-}
-
-/** One track for each measure and informant: what a parent said is never drawn as what a teacher said. */
-export function tracksOf(rows: readonly OpeningRow[]): LateralTrack[] {
-  const tracks = new Map<string, LateralTrack>()
-  for (const row of rows) {
-    const { track: id, aspect, measure, informant } = row
-    const track = tracks.get(id) ?? { id, aspect, measure, informant, rows: [] }
-    track.rows.push(row)
-    tracks.set(id, track)
-  }
-  for (const track of tracks.values())
-    track.rows.sort((a, b) => Number(b.latest) - Number(a.latest) || b.occasion.localeCompare(a.occasion))
-  return [...tracks.values()]
-}
-
 export interface LateralGroup {
   label: string
-  tracks: LateralTrack[]
+  tracks: LateralTrack<OpeningRow>[]
 }
 
 const groupsInOrder: { label: string; aspects: readonly LateralAspect[] }[] = [
