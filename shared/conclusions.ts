@@ -181,6 +181,8 @@ export interface ConclusionCheck {
   missing: Record<string, string>
   findings: ConclusionFinding[]
   unfinished: Unfinished[]
+  /** Words of the open warning signs that come first, oldest first. They stand on the record and in no report. */
+  warningSigns: string[]
 }
 
 /** As it stood when signed. */

@@ -19,6 +19,7 @@ import { AppError, conflict, forbidden, invalid } from '../errors.ts'
 import { textsOfReport, type ReportForPrint } from '../pdf/assessmentReport.ts'
 import { unprintableIn } from '../pdf/letterFonts.ts'
 import { canChangeConclusion, mayCountersignConclusion } from '../policies/conclusions.ts'
+import { listBookingHolds } from '../queries/alerts.ts'
 import { listEvidence, listUnfinished } from '../queries/conclusionEvidence.ts'
 import { findReportChild, type ConclusionRecord } from '../queries/conclusions.ts'
 import { lockChild } from '../queries/lockChild.ts'
@@ -39,10 +40,11 @@ export const checkConclusion = async (
   access: ChildAccess,
   { content }: Pick<ConclusionRecord, 'content'>,
 ): Promise<ConclusionCheck> => {
-  const [rows, findings, unfinished] = await Promise.all([
+  const [rows, findings, unfinished, signs] = await Promise.all([
     listEvidence(access),
     readHandFindings(access),
     listUnfinished(access),
+    listBookingHolds(access),
   ])
   const contradictions = contradictionsOf(findings, content)
   return {
@@ -51,6 +53,7 @@ export const checkConclusion = async (
     missing: missingForSigning(content, contradictions),
     findings: conclusionFindings(content),
     unfinished,
+    warningSigns: signs.map(({ text }) => text),
   }
 }
 
@@ -60,6 +63,18 @@ const unfinishedProblem = (unfinished: readonly Unfinished[]): Record<string, st
     : {
         unfinished: `Lock or discard first what was begun: ${unfinished.map(({ words }) => words).join('; ')}`,
       }
+
+/** Signs that hold a routine block back come before a signature too: whoever reads it takes the child to be looked after. */
+const warningSignProblem = async (tx: Tx, access: ChildAccess): Promise<Record<string, string>> => {
+  const signs = await listBookingHolds(access, tx)
+  return signs.length === 0
+    ? {}
+    : {
+        warningSigns:
+          `Something comes first: ${signs.map(({ text }) => text).join(' · ')} ` +
+          'Write down what was done about it under “Warning signs”, then sign.',
+      }
+}
 
 /** Everything the report is drawn from, as it stands now. */
 const snapshot = async (
@@ -104,7 +119,8 @@ const requirePrintable = (report: ReportForPrint): void => {
 /**
  * Signs a draft in one transaction. The evidence is kept as it stands at that moment, so that the report stays the same;
  * the conclusion is then closed. One by a newly qualified person waits for a countersignature; any other ends the
- * assessment. 422 while something is missing, unfinished, blocked or unanswered; throws StaleWrite.
+ * assessment. 422 while something is missing, unfinished, blocked or unanswered, or a pressing warning sign
+ * waits for somebody; throws StaleWrite.
  */
 export const signConclusion = async (
   actor: Actor,
@@ -123,6 +139,7 @@ export const signConclusion = async (
     const problems = {
       ...signingProblems(content, evidence.contradictions),
       ...unfinishedProblem(await listUnfinished(access, tx)),
+      ...(await warningSignProblem(tx, access)),
     }
     if (Object.keys(problems).length > 0) throw invalid(problems)
     const signedAt = now()
@@ -155,7 +172,10 @@ const closeTask = async (tx: Tx, { childId, viewer }: ChildAccess): Promise<void
   )
 }
 
-/** The second signature under a newly qualified person's conclusion. It ends the assessment. Throws StaleWrite. */
+/**
+ * The second signature under a newly qualified person's conclusion. It ends the assessment. 422 while a pressing warning
+ * sign waits for somebody; throws StaleWrite.
+ */
 export const countersignConclusion = async (
   actor: Actor,
   access: ChildAccess,
@@ -171,6 +191,8 @@ export const countersignConclusion = async (
     if (!mayCountersignConclusion(access, conclusion))
       throw forbidden('A second, experienced person countersigns: never the author.')
     if (conclusion.version !== version) throw new StaleWrite()
+    const problems = await warningSignProblem(tx, access)
+    if (Object.keys(problems).length > 0) throw invalid(problems)
     const { content, evidence, signedAt } = conclusion
     if (evidence === null || signedAt === null)
       throw new Error('A conclusion waits for its countersignature without what was signed')

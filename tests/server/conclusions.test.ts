@@ -196,11 +196,25 @@ describe('a conclusion', () => {
     expect(await one(first.id)).toMatchObject({ state: 'signed', content: full() })
   })
 
-  it('closes the assessment though a warning sign that holds booking is open', async () => {
-    await buildAlert(child, 'A sudden change of hand')
-    await database().query('UPDATE alerts SET holdsBooking = 1 WHERE childId = ?', [child.id])
-    await signed()
+  it('waits while a warning sign that holds booking is open, names it, and prints none of it', async () => {
+    const { id, version } = await written()
+    await buildAlert(child, 'Spoonword is told')
+    const pressing = await buildAlert(child, 'The other hand is often held in a fist.')
+    await database().query('UPDATE alerts SET holdsBooking = 1 WHERE id = ?', [pressing.id])
+    expect((await check(id)).warningSigns).toEqual(['The other hand is often held in a fist.'])
+    const refused = await act('sign', id, version)
+    expect(refused.status).toBe(422)
+    expect(Object.keys(refused.body.fields)).toEqual(['warningSigns'])
+    expect(refused.body.fields.warningSigns).toMatch(/comes first.*held in a fist.*what was done/)
+    expect(await one(id)).toMatchObject({ state: 'draft', version })
+
+    const done = { action: 'The paediatrician sees the child on Friday' }
+    await anna.post(`/api/children/${child.id}/alerts/${pressing.id}/action`).send(done)
+    expect((await check(id)).warningSigns).toEqual([])
+    expect((await act('sign', id, version)).status).toBe(200)
     expect(await stateOf()).toBe('formulated')
+    const printed = pdfText((await bytesOf(anna, id)).body as Buffer)
+    for (const words of ['fist', 'Spoonword', 'paediatrician']) expect(printed).not.toContain(words)
   })
 
   it.each(['active', 'consented', 'discharged'] as const)(
@@ -575,6 +589,20 @@ describe('a conclusion by a newly qualified therapist', () => {
     expect((await act('countersign', waiting.id, waiting.version, anna)).body).toMatchObject({
       state: 'signed',
     })
+  })
+
+  it('is not countersigned while a pressing warning sign that came since waits for somebody', async () => {
+    const waiting = await handedIn()
+    const raised = await anna
+      .post(`/api/children/${child.id}/alerts`)
+      .send({ flag: 'walk-changed', words: 'Drags the left foot since Monday' })
+    expect(raised.status, raised.text).toBe(201)
+    const refused = await act('countersign', waiting.id, waiting.version, lead)
+    expect([refused.status, Object.keys(refused.body.fields)]).toEqual([422, ['warningSigns']])
+    await anna
+      .post(`/api/children/${child.id}/alerts/${raised.body.id}/action`)
+      .send({ action: 'Seen at the hospital the same day' })
+    expect((await act('countersign', waiting.id, waiting.version, lead)).body.state).toBe('signed')
   })
 
   it('is not countersigned before it is signed', async () => {

@@ -96,6 +96,7 @@ const checked = (given: Partial<ConclusionCheck> = {}): ConclusionCheck => ({
   missing: {},
   findings: [],
   unfinished: [],
+  warningSigns: [],
   ...given,
 })
 
@@ -194,6 +195,17 @@ describe('a conclusion before it is signed', () => {
     await press('Sign')
     expect(page.get('[role="alert"]').text()).toContain('begun and is not signed yet')
     expect(page.get('a[href="/children/kit/measures/pegs"]').text()).toBe('Moving pegs, begun for 3 Mar 2026')
+    expect(titles(page)).not.toContain('Sign the conclusion')
+  })
+
+  it('does not open the signature while a warning sign waits, and leads to where it is acted on', async () => {
+    const sign = 'It is reported that a skill has been lost.'
+    const { page, press } = await openDraft(written, () => checked({ warningSigns: [sign] }))
+    await press('Sign')
+    expect(page.get('[role="alert"]').text()).toContain('A warning sign comes first')
+    const first = page.get('section[aria-labelledby="signs-title"]')
+    expect(first.text()).toContain(sign)
+    expect(first.get('a').attributes('href')).toBe('/children/kit/glance')
     expect(titles(page)).not.toContain('Sign the conclusion')
   })
 
