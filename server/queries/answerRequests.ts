@@ -8,7 +8,7 @@ import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { consentHolds } from './inForce.ts'
 import { calledName, spokenName } from './names.ts'
-import { childScope, ownLink, within } from './scope.ts'
+import { ageOfMajority, childScope, ownLink, within } from './scope.ts'
 import { flag, selectOne, selectRows, type SqlParameters } from './sql.ts'
 
 // The purposes are words of ours; parameters of their own would clash with those of a teacher's scope.
@@ -115,7 +115,7 @@ export const findOwnRequest = async (
 }
 
 /** The child is of age and this carer is not the young person. Alias `g` and `c`, parameter :scopeNow, as below. */
-export const comesOfAge = `(g.relation <> 'self' AND c.birthDate <= DATE_SUB(DATE(:scopeNow), INTERVAL 18 YEAR))`
+export const comesOfAge = `(g.relation <> 'self' AND c.birthDate <= DATE_SUB(DATE(:scopeNow), INTERVAL ${ageOfMajority} YEAR))`
 /** A restriction on one link closes every other link of the same person to the child. */
 export const restricted = `(g.restricted = 1 OR EXISTS (SELECT 1 FROM guardians gr WHERE gr.childId = g.childId
   AND gr.userId = g.userId AND gr.restricted = 1))`

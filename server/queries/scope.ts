@@ -25,7 +25,7 @@ export const ownLink = (row: string) => `${row}.userId = :scopeViewer AND ${row}
   AND ${row}.verifiedAt <= :scopeNow AND (${row}.endedAt IS NULL OR ${row}.endedAt > :scopeNow)`
 
 /** Years at which a young person's record stops being open to those who cared for them. */
-const comesOfAge = 18
+export const ageOfMajority = 18
 
 /** Is the viewer a carer of this child to whom its record was closed? */
 export const restrictedFrom = (column: string): string =>
@@ -35,7 +35,7 @@ export const restrictedFrom = (column: string): string =>
 // A restriction on one link closes every other link of the same person to the child.
 const linkedGuardian = (column: string) => `(EXISTS (SELECT 1 FROM guardians sg
     JOIN children sy ON sy.id = sg.childId WHERE sg.childId = ${column} AND ${ownLink('sg')}
-    AND (sg.relation = 'self' OR sy.birthDate > DATE_SUB(DATE(:scopeNow), INTERVAL ${comesOfAge} YEAR)))
+    AND (sg.relation = 'self' OR sy.birthDate > DATE_SUB(DATE(:scopeNow), INTERVAL ${ageOfMajority} YEAR)))
   AND NOT ${restrictedFrom(column)})`
 
 /** People meet their own child as family only, never as the child's teacher. */

@@ -351,6 +351,11 @@ describe('skill on the other side than the writing hand', () => {
     expect((await lock(id, 2)).status).toBe(200)
     const raised = await alerts()
     expect(raised).toEqual([expect.objectContaining({ origin: 'measure', originId: id })])
+    const [trail] = await database().query(
+      "SELECT relation FROM audit_entries WHERE childId = ? AND action = 'alert.raised'",
+      [child.id],
+    )
+    expect(trail.relation).toBe('assignedTherapist')
     expect(raised[0]?.text).toContain('the right hand did clearly better at: Moving pegs')
   })
 
