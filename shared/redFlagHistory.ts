@@ -11,6 +11,8 @@ export interface RedFlagHistory {
   /** Completed weeks; the corrected age is used when known. */
   gestationWeeks: number | null
   handChanged: boolean | null
+  /** The family is not sure whether the hand changed: it raises nothing by itself, and counts beside headaches. */
+  handMayHaveChanged: boolean | null
   newWeakness: boolean | null
   numbness: boolean | null
   faceDroop: boolean | null
@@ -49,6 +51,7 @@ export const unknownHistory: RedFlagHistory = {
   preferenceConsistent: null,
   gestationWeeks: null,
   handChanged: null,
+  handMayHaveChanged: null,
   newWeakness: null,
   numbness: null,
   faceDroop: null,

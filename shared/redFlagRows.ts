@@ -28,6 +28,7 @@ export const redFlagIds = [
   'new-neurological-signs',
   'sudden-tremor',
   'walk-changed',
+  'new-headaches',
   'preference-before-12-months',
   'preference-12-to-18-months',
   'other-hand-or-lost-skill',
@@ -64,7 +65,7 @@ const consensus = 'Clinical consensus, from memory'
 export const redFlagRows: Record<RedFlagId, RedFlagRow> = {
   'new-neurological-signs': {
     id: 'new-neurological-signs',
-    title: 'New weakness, numbness, drooping face, headaches with a change of hand, or a new seizure',
+    title: 'New weakness, numbness, drooping face, a new seizure, or new headaches with another sign',
     urgency: 'same_day',
     action: emergency,
     holdsBooking: true,
@@ -85,6 +86,15 @@ export const redFlagRows: Record<RedFlagId, RedFlagRow> = {
     action: emergency,
     holdsBooking: true,
     source: guideline,
+  },
+  'new-headaches': {
+    id: 'new-headaches',
+    title: 'New headaches that keep coming back, with no other sign',
+    urgency: 'medical_review',
+    action:
+      'Ask the family to have a doctor look at the headaches soon; with any other new sign it is the same day.',
+    holdsBooking: false,
+    source: consensus,
   },
   'preference-before-12-months': {
     id: 'preference-before-12-months',

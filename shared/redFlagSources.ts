@@ -43,6 +43,7 @@ export function redFlagsOfHistory(details: HistoryDetails, child: FlaggedChild):
     preferenceConsistent: saidYes(details.earlySteady),
     gestationWeeks: details.gestationWeeks,
     handChanged: saidYes(details.handChanged),
+    handMayHaveChanged: details.handChanged === null ? null : details.handChanged === 'unsure',
     newWeakness: saidYes(details.newWeakness),
     numbness: saidYes(details.numbness),
     faceDroop: saidYes(details.faceDroop),

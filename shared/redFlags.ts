@@ -59,25 +59,50 @@ type Rule = (history: RedFlagHistory) => RedFlag | null
 const listed = (signs: readonly string[]): string => signs.join(', ')
 const reported = (parts: (string | false)[]): string[] => parts.filter((part) => part !== false)
 
-const newSigns = (history: RedFlagHistory): string[] =>
+const signsWithoutHeadache = (history: RedFlagHistory): string[] =>
   reported([
     history.newWeakness === true && 'new weakness',
     history.numbness === true && 'numbness',
     history.faceDroop === true && 'a drooping face',
-    history.newHeadache === true && history.handChanged === true && 'headaches',
     history.seizure === true && 'a seizure',
   ])
 
+/** What makes new headaches a matter for the same day, beside the signs that are one by themselves. */
+const besideHeadache = (history: RedFlagHistory): string[] =>
+  reported([
+    history.lostSkill === true && 'a lost skill',
+    history.weakerSide === true && 'a weaker or stiffer side',
+    history.tremor === true && 'a tremor',
+    history.walkChanged === true && 'a change in the way of walking',
+  ])
+
 const suddenChange: Rule = (history) => {
-  const signs = newSigns(history)
+  const others = signsWithoutHeadache(history)
+  const beside = besideHeadache(history)
+  const change =
+    history.handChanged === true
+      ? 'The child has changed hands, with'
+      : history.handMayHaveChanged === true
+        ? 'The child may have changed hands, with'
+        : null
+  const headache = history.newHeadache === true && (others.length > 0 || beside.length > 0 || change !== null)
+  const signs = headache ? [...others, 'headaches'] : others
   if (signs.length === 0) return null
-  const change = history.handChanged === true ? 'The child has changed hands, with' : 'There is'
+  const there = others.length > 0 ? 'There is' : 'There are'
+  const together =
+    headache && beside.length > 0 ? ` Told together with the headaches: ${listed(beside)}.` : ''
   return raise(
     'new-neurological-signs',
-    `${change} ${listed(signs)}. New one-sided weakness is urgent even after a fall.`,
+    `${change ?? there} ${listed(signs)}.${together} New one-sided weakness is urgent even after a fall.`,
     signs,
   )
 }
+
+/** Alone they are no emergency and no matter for therapy either: a doctor looks. */
+const headachesAlone: Rule = (history) =>
+  history.newHeadache === true && suddenChange(history) === null
+    ? raise('new-headaches', 'There are new headaches that keep coming back.')
+    : null
 
 const tremorRule: Rule = ({ tremor, tremorSudden, otherNeurologicalSigns }) => {
   const flag = tremorFlag(tremor, tremorSudden, otherNeurologicalSigns)
@@ -181,7 +206,7 @@ const lateMilestones: Rule = ({ satInTime, walkedInTime }) => {
 }
 
 const rules: readonly Rule[] = [
-  ...[suddenChange, tremorRule, changedWalk, earlyPreference, otherHand, changeOfHand],
+  ...[suddenChange, tremorRule, changedWalk, headachesAlone, earlyPreference, otherHand, changeOfHand],
   ...[punished, pain, notBrought, swapping, oppositeSkill, wideDifficulty, lateMilestones],
 ]
 

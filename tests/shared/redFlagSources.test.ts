@@ -46,7 +46,15 @@ describe('flags of a history', () => {
     [{ faceDroop: 'yes' }, ['new-neurological-signs']],
     [{ seizure: 'yes' }, ['new-neurological-signs']],
     [{ handChanged: 'yes', newHeadache: 'yes' }, ['new-neurological-signs']],
-    [{ newHeadache: 'yes' }, []],
+    // Headaches: a doctor looks; with another sign, or a change of hand nobody is sure of, on the same day
+    [{ newHeadache: 'yes' }, ['new-headaches']],
+    [{ newHeadache: 'unsure' }, []],
+    [{ newHeadache: 'unsure', handChanged: 'unsure' }, []],
+    [{ newHeadache: 'yes', handChanged: 'no' }, ['new-headaches']],
+    [{ newHeadache: 'yes', handChanged: 'unsure' }, ['new-neurological-signs']],
+    [{ newHeadache: 'yes', lostSkill: 'yes' }, ['new-neurological-signs', 'other-hand-or-lost-skill']],
+    [{ newHeadache: 'yes', weakerSide: 'yes' }, ['new-neurological-signs', 'other-hand-or-lost-skill']],
+    [{ newHeadache: 'yes', lostSkill: 'no', weakerSide: 'unsure' }, ['new-headaches']],
     [{ newWeakness: 'yes', injury: 'yes' }, ['new-neurological-signs']],
     [{ newWeakness: 'unsure', numbness: 'unsure', faceDroop: 'unsure', seizure: 'unsure' }, []],
     [{ walkChanged: 'yes' }, ['walk-changed']],
@@ -66,7 +74,7 @@ describe('flags of a history', () => {
     [{ tremor: 'yes', tremorSudden: 'yes' }, ['sudden-tremor']],
     [{ tremor: 'yes', numbness: 'yes' }, ['new-neurological-signs', 'sudden-tremor']],
     // NG127 as summarised: a tremor with other neurological signs is urgent.
-    [{ tremor: 'yes', newHeadache: 'yes' }, ['sudden-tremor']],
+    [{ tremor: 'yes', newHeadache: 'yes' }, ['new-neurological-signs', 'sudden-tremor']],
     [{ tremor: 'no', tremorSudden: 'yes' }, []],
     // Milestones, from the due date
     [{ satInTime: 'no' }, ['late-milestones']],
@@ -134,6 +142,26 @@ describe('flags of a writing observation', () => {
     [{ writingHand: 'swaps' }, { ageMonths: 71, writingHand: 'left' }, []],
   ] as const)('%j of %j raise %j', (seen, child, expected) => {
     expect(ids(redFlagsOfObservation({ ...nothing, ...seen }, child))).toEqual(expected)
+  })
+})
+
+describe('the words of new headaches', () => {
+  const words = (given: Partial<HistoryDetails>) => redFlagsOfHistory(history(given), eight)[0]?.words
+  it('name what was told with them, and say where nobody is sure of the change of hand', () => {
+    expect(words({ newHeadache: 'yes', handChanged: 'unsure' })).toMatch(
+      /^The child may have changed hands, with headaches\./,
+    )
+    expect(words({ newHeadache: 'yes', tremor: 'yes', lostSkill: 'yes' })).toMatch(
+      /^There are headaches\. Told together with the headaches: a lost skill, a tremor\./,
+    )
+    expect(words({ newHeadache: 'yes', newWeakness: 'yes' })).toMatch(/^There is new weakness, headaches\./)
+  })
+
+  it('reach the family as a call for help today only beside another sign', () => {
+    expect(urgentWordsFor(history({ newHeadache: 'yes' }))).toEqual([])
+    expect(urgentWordsFor(history({ newHeadache: 'yes', handChanged: 'unsure' })).join(' ')).toContain(
+      'told us about headaches. Please get medical help today',
+    )
   })
 })
 
