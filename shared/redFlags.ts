@@ -168,9 +168,13 @@ const notBrought: Rule = ({ notBroughtInSixMonths }) =>
 /** Points out of 10 from which pain is looked at (clinic rule). */
 const painToLookAt = 4
 
+/** Each point from there up is a sign of its own, so that worse pain is something new and less pain is not. */
+const painSigns = (points: number): string[] =>
+  Array.from({ length: points - painToLookAt + 1 }, (_, step) => `pain of ${painToLookAt + step}`)
+
 const pain: Rule = ({ painAfter }) =>
   painAfter !== null && painAfter >= painToLookAt
-    ? raise('pain', `Writing hurts (${painAfter} out of 10).`)
+    ? raise('pain', `Writing hurts (${painAfter} out of 10).`, painSigns(painAfter))
     : null
 
 /** Six years. */

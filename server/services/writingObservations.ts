@@ -1,4 +1,5 @@
 import { ageInMonths } from '../../shared/days.ts'
+import { newlyRaised } from '../../shared/redFlags.ts'
 import { redFlagsOfObservation } from '../../shared/redFlagSources.ts'
 import type { WritingObservationDetails } from '../../shared/writingObservations.ts'
 import type { Actor } from '../access/actor.ts'
@@ -7,6 +8,7 @@ import { now } from '../clock.ts'
 import { WritingObservation } from '../entities/WritingObservation.ts'
 import { invalid } from '../errors.ts'
 import { findChildFacts } from '../queries/childFacts.ts'
+import { findObservationBefore } from '../queries/writingObservations.ts'
 import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
 import { raiseFlags } from './redFlags.ts'
@@ -45,14 +47,17 @@ export const addObservation = async (
         recordedAt: now(),
       })
       const { birthDate, writingHand } = await findChildFacts(access, tx)
+      const flagsOf = (seen: WritingObservationDetails) =>
+        redFlagsOfObservation(seen, { ageMonths: ageInMonths(birthDate, seen.observedOn), writingHand })
+      const flags = flagsOf(details)
+      const before = await findObservationBefore(access, observationId, tx)
       await raiseFlags(tx, record, {
         childId: access.childId,
         origin: 'observation',
         originId: observationId,
-        flags: redFlagsOfObservation(details, {
-          ageMonths: ageInMonths(birthDate, details.observedOn),
-          writingHand,
-        }),
+        flags,
+        // Worse pain than last time is added to a sign that stands already.
+        fresh: newlyRaised(before === null ? [] : flagsOf(before.details), flags).map(({ id }) => id),
         raisedById: access.viewer.id,
         relation: access.relation,
       })

@@ -5,7 +5,7 @@ import { database } from '../../server/dataSource.ts'
 import type { Child } from '../../server/entities/Child.ts'
 import { History } from '../../server/entities/History.ts'
 import type { User } from '../../server/entities/User.ts'
-import { beginHistory, saveHistory } from '../../server/services/histories.ts'
+import { beginHistory, saveHistory } from '../../server/services/historyStore.ts'
 import { transact } from '../../server/services/transact.ts'
 import type { AlertView } from '../../shared/alerts.ts'
 import type { HistoryDetails } from '../../shared/histories.ts'
@@ -204,23 +204,24 @@ describe('a red flag of a history', () => {
   })
 })
 
+const nothing = {
+  paperOffsetCm: null,
+  paperTiltDegrees: null,
+  otherHandSteadies: null,
+  wristPosture: null,
+  grip: null,
+  fingerToTipMm: null,
+  pressure: null,
+  deskType: null,
+  elbowClash: null,
+  leftClearanceCm: null,
+  lightSide: null,
+  feetFlat: null,
+  deskAboveElbowCm: null,
+  note: null,
+}
+
 describe('a red flag of a writing observation', () => {
-  const nothing = {
-    paperOffsetCm: null,
-    paperTiltDegrees: null,
-    otherHandSteadies: null,
-    wristPosture: null,
-    grip: null,
-    fingerToTipMm: null,
-    pressure: null,
-    deskType: null,
-    elbowClash: null,
-    leftClearanceCm: null,
-    lightSide: null,
-    feetFlat: null,
-    deskAboveElbowCm: null,
-    note: null,
-  }
   const observe = (given: object) =>
     anna.post(record('/writing-observations')).send({
       ...nothing,
@@ -251,6 +252,44 @@ describe('a red flag of a writing observation', () => {
       true,
     ])
     expect(await alerts()).toHaveLength(2)
+  })
+})
+
+describe('worse pain', () => {
+  const pains = async () =>
+    (await alerts()).filter(({ flag }) => flag === 'pain').map(({ text }) => text.match(/\d+ out of 10/g))
+  const seen = (painAfter: number, observedOn: string) =>
+    anna
+      .post(record('/writing-observations'))
+      .send({ ...nothing, observedOn, writingHand: null, painBefore: null, painAfter })
+
+  it('told at home is added to the sign that stands; less pain is not', async () => {
+    const { save } = await told()
+    await save({ pain: 4 })
+    await save({ pain: 9 })
+    expect(await pains()).toEqual([['4 out of 10', '9 out of 10']])
+    await save({ pain: 5 })
+    expect(await pains()).toEqual([['4 out of 10', '9 out of 10']])
+  })
+
+  it('seen at the desk is added to the sign that stands, told or seen; less pain and the same pain are not', async () => {
+    const { save } = await told()
+    await save({ pain: 4 })
+    await seen(6, '2026-06-01')
+    await seen(6, '2026-06-02')
+    await seen(9, '2026-06-03')
+    await seen(5, '2026-06-04')
+    expect(await pains()).toEqual([['4 out of 10', '6 out of 10', '9 out of 10']])
+  })
+
+  it('told after the first was acted on comes back; less pain does not', async () => {
+    const { save } = await told()
+    await save({ pain: 6 })
+    await act((await alerts())[0]!.id)
+    await save({ pain: 5 })
+    expect(await alerts()).toHaveLength(1)
+    await save({ pain: 8 })
+    expect(await pains()).toHaveLength(2)
   })
 })
 

@@ -259,6 +259,17 @@ describe('what is new since the last save', () => {
     expect(newlyRaised(of({ seizure: 'yes', numbness: 'yes' }), of({ seizure: 'yes' }))).toEqual([])
     expect(newlyRaised(of({ seizure: 'yes' }), of({}))).toEqual([])
   })
+
+  it.each([
+    [3, 4, ['pain']],
+    [4, 9, ['pain']],
+    [9, 10, ['pain']],
+    [9, 9, []],
+    [9, 4, []],
+    [10, 3, []],
+  ])('pain of %d, then %d: %j', (before, after, expected) => {
+    expect(ids(newlyRaised(of({ pain: before }), of({ pain: after })))).toEqual(expected)
+  })
 })
 
 describe('the words for the family', () => {
