@@ -1,179 +1,22 @@
-import { randomUUID } from 'node:crypto'
-import { ageInMonths, type Day } from '../../shared/days.ts'
-import type { WritingHand } from '../../shared/children.ts'
 import {
   emptyHistory,
-  historyDayProblems,
   type HistoryDetails,
   type HistoryDraft,
-  type HistoryInformant,
   type HistoryStart,
 } from '../../shared/histories.ts'
-import { newlyRaised } from '../../shared/redFlags.ts'
-import { redFlagsOfHistory } from '../../shared/redFlagSources.ts'
-import type { ChildRelation } from '../../shared/roles.ts'
 import type { Actor } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
-import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { History } from '../entities/History.ts'
-import { conflict, invalid, notFound } from '../errors.ts'
+import { conflict } from '../errors.ts'
 import { findHistory, type HistoryRecord } from '../queries/histories.ts'
 import { findForChild } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
-import type { AuditFact } from './audit.ts'
+import { historyClosed, historyFact, insertHistory, lockHistory, saveHistory } from './historyStore.ts'
 import { createOnce } from './once.ts'
 import { requireConsent, requirePastDay } from './recordRules.ts'
-import { raiseFlags } from './redFlags.ts'
-import { clinicToday, readSettings } from './settings.ts'
 import { transact } from './transact.ts'
-import { StaleWrite, updateIfCurrent } from './versions.ts'
-
-type Record = (fact: AuditFact) => void
-
-export interface NewHistory {
-  childId: string
-  informant: HistoryInformant
-  respondentName: string | null
-  answeredOn: Day
-  /** Set when a carer answers what the clinic asked for. */
-  requestId: string | null
-  guardianId: string | null
-  /** Null when a carer without an account answers. */
-  startedById: string | null
-  replacesId: string | null
-}
-
-/** Families answer their own histories and therapists write down theirs; nobody else changes either. */
-const relationTo = ({ informant }: { informant: HistoryInformant }): ChildRelation =>
-  informant === 'guardian' ? 'guardian' : 'assignedTherapist'
-
-const historyFact = (
-  history: { id: string; childId: string; informant: HistoryInformant },
-  action: string,
-): AuditFact => ({
-  action: `history.${action}`,
-  objectType: 'history',
-  objectId: history.id,
-  childId: history.childId,
-  relation: relationTo(history),
-})
-
-const insertHistory = async (tx: Tx, id: string, details: HistoryDetails, begun: NewHistory) => {
-  await tx.insert(History, { ...begun, id, details, lockedAt: null, lockedById: null, createdAt: now() })
-}
-
-/** Begins a history in which nothing is answered. Answers its id; its version is 1. The caller checks consent. */
-export const beginHistory = async (tx: Tx, record: Record, begun: NewHistory): Promise<string> => {
-  const id = randomUUID()
-  await insertHistory(tx, id, emptyHistory, begun)
-  record(historyFact({ ...begun, id }, 'started'))
-  return id
-}
-
-export interface HistorySave {
-  /** Locked by the caller (FOR UPDATE). */
-  history: History
-  /** The version the page was made from. */
-  version: number
-  details: HistoryDetails
-  respondentName?: string | null
-  answeredOn?: Day
-  /** Null when a carer without an account answers. */
-  byId: string | null
-  /** Name of the part of the request body that holds the details, for messages beside a field. */
-  part?: string
-}
-
-/**
- * Saves the answers so far and raises the red flags that they show, at once and in the same transaction. Refuses (422)
- * days that cannot be and (409 `closed`) a history that was sent; throws StaleWrite.
- */
-export const saveHistory = async (
-  tx: Tx,
-  record: Record,
-  { history, version, details, respondentName, answeredOn, byId, part = 'details' }: HistorySave,
-): Promise<void> => {
-  if (history.lockedAt !== null) throw closed()
-  const child = await childOf(tx, history.childId)
-  const problems = historyDayProblems(details, child)
-  if (Object.keys(problems).length > 0)
-    throw invalid(
-      Object.fromEntries(Object.entries(problems).map(([field, problem]) => [`${part}.${field}`, problem])),
-    )
-  await updateIfCurrent(tx, History, history.id, version, {
-    details,
-    ...(respondentName !== undefined && { respondentName }),
-    ...(answeredOn !== undefined && { answeredOn }),
-  })
-  record(historyFact(history, 'changed'))
-  const flags = redFlagsOfHistory(details, child)
-  const fresh = newlyRaised(redFlagsOfHistory(history.details, child), flags).map(({ id }) => id)
-  await raiseFlags(tx, record, {
-    childId: history.childId,
-    origin: 'history',
-    originId: history.id,
-    flags,
-    fresh,
-    raisedById: byId,
-    relation: relationTo(history),
-  })
-}
-
-/**
- * Closes a history for good. What is not answered may stay so; what the child enjoys may not (422), and a history
- * without any answer is none. Throws StaleWrite when `version` is not the stored one.
- */
-export const lockHistory = async (
-  tx: Tx,
-  record: Record,
-  {
-    history,
-    version,
-    lockedById,
-    part = 'details',
-  }: { history: History; version: number; lockedById: string | null; part?: string },
-): Promise<void> => {
-  if (history.lockedAt !== null) throw closed()
-  if (history.details.enjoys === null)
-    throw invalid({
-      [`${part}.enjoys`]: 'Write what the child enjoys first: letters and goals begin with it',
-    })
-  await updateIfCurrent(tx, History, history.id, version, { lockedAt: now(), lockedById })
-  record(historyFact(history, 'locked'))
-  await raiseFlags(tx, record, {
-    childId: history.childId,
-    origin: 'history',
-    originId: history.id,
-    flags: redFlagsOfHistory(history.details, await childOf(tx, history.childId)),
-    raisedById: lockedById,
-    relation: relationTo(history),
-  })
-}
-
-interface KnownChild {
-  birthDate: Day
-  today: Day
-  ageMonths: number
-  writingHand: WritingHand | null
-}
-
-const childOf = async (tx: Tx, childId: string): Promise<KnownChild> => {
-  const child = await selectOne<{ birthDate: Day; writingHand: WritingHand | null }>(
-    'SELECT c.birthDate, c.writingHand FROM children c WHERE c.id = :childId',
-    { childId },
-    tx,
-  )
-  if (!child) throw notFound()
-  const today = clinicToday(await readSettings(tx))
-  return { ...child, today, ageMonths: ageInMonths(child.birthDate, today) }
-}
-
-const closed = () =>
-  conflict(
-    'closed',
-    'This history was sent and stays as it is. To correct it, start a new one that replaces it.',
-  )
+import { StaleWrite } from './versions.ts'
 
 const checkReplaced = async (tx: Tx, access: ChildAccess, replacesId: string): Promise<HistoryDetails> => {
   const earlier = await findForChild(access, History, replacesId, tx, { lock: true })
@@ -221,7 +64,7 @@ export const startHistory = async (
 /** The therapist's own page: a history that a carer is still answering is read only here. */
 const openHistory = async (tx: Tx, access: ChildAccess, id: string): Promise<History> => {
   const history = await findForChild(access, History, id, tx, { lock: true })
-  if (history.lockedAt !== null) throw closed()
+  if (history.lockedAt !== null) throw historyClosed()
   if (history.informant === 'guardian')
     throw conflict(
       'family_answers',
