@@ -39,12 +39,17 @@ export const countedTrials = (
 
 /**
  * Mean, standard deviation (n − 1) and 95 % interval of the mean by Student's t with n − 1 degrees of freedom, in the
- * unit of the values. Values are sorted first, so that their order changes not even the last digit.
+ * unit of the values. Values are sorted first, so that their order changes not even the last digit. Trials that do not
+ * differ at all say nothing about the spread, so they have no interval: one of no width would claim certainty.
  */
 export function summariseTrials(values: readonly number[]): HandSummary {
   const n = values.length
   if (n === 0) return { trials: 0, mean: null, sd: null, interval: null }
   const sorted = values.toSorted((a, b) => a - b)
+  const least = sorted[0]
+  // Asked of the values, not of the deviation: adding up 20.1 three times does not give 60.3 to the last digit.
+  if (n > 1 && least !== undefined && least === sorted.at(-1))
+    return { trials: n, mean: least, sd: 0, interval: null }
   const mean = sorted.reduce((sum, value) => sum + value, 0) / n
   if (n === 1) return { trials: 1, mean, sd: null, interval: null }
   const sd = Math.sqrt(sorted.reduce((sum, value) => sum + (value - mean) ** 2, 0) / (n - 1))
@@ -56,7 +61,8 @@ export function summariseTrials(values: readonly number[]): HandSummary {
  * Approximate 95 % interval of the index by the delta method. For I = 100 (R − L)/(R + L) of two independent means,
  * Var I ≈ (200/(R + L)²)² (L² s²R/nR + R² s²L/nL), the same for times; half-width t × √Var with the degrees of freedom of
  * Welch and Satterthwaite, held within −100 … +100. Rough for few trials, and trials of one sitting are not quite
- * independent. Null with fewer than two trials a hand. Formula derived here; methods from memory.
+ * independent. Null with fewer than two trials a hand, and when no trial differs: the spread is then not known, and an
+ * interval of no width would claim certainty. Formula derived here; methods from memory.
  */
 export function skillIndexInterval(
   index: number | null,
@@ -68,7 +74,7 @@ export function skillIndexInterval(
   const fromRight = (slope * left.mean * right.sd) ** 2 / right.trials
   const fromLeft = (slope * right.mean * left.sd) ** 2 / left.trials
   const variance = fromRight + fromLeft
-  if (variance === 0) return { low: index, high: index }
+  if (variance === 0) return null
   const freedom = variance ** 2 / (fromRight ** 2 / (right.trials - 1) + fromLeft ** 2 / (left.trials - 1))
   const half = studentTFactor(freedom) * Math.sqrt(variance)
   return { low: Math.max(-100, index - half), high: Math.min(100, index + half) }
@@ -99,6 +105,10 @@ const cautionOf: Record<SkillKind, string> = {
   dots: 'From 4 to 18 years the hands do not fall into two groups on dots (conference abstract, n 274): nobody is classed by them.',
 }
 
+/** There is an index and trials enough, and still no interval: they are too alike to say how far they spread. */
+export const tooAlike = ({ index, interval, left, right }: SkillScore): boolean =>
+  index !== null && interval === null && left.trials > 1 && right.trials > 1
+
 /** What must be read with the figures, the weakest point first. */
 export function skillCautions(score: SkillScore): string[] {
   const few = Math.min(score.left.trials, score.right.trials)
@@ -106,6 +116,11 @@ export function skillCautions(score: SkillScore): string[] {
     ...(few === 0 ? ['One hand has no counted trial, so there is no index.'] : []),
     ...(few > 0 && few < leastTrials
       ? [`Fewer than ${leastTrials} counted trials with one hand: take more before you lean on this.`]
+      : []),
+    ...(tooAlike(score)
+      ? [
+          'The trials are too alike to say how sure the gap is, so there is no interval. Take more, or read the watch to a tenth.',
+        ]
       : []),
     ...(score.interval === null ? [] : ['The interval of the index is approximate.']),
     cautionOf[score.kind],

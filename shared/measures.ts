@@ -131,7 +131,7 @@ export interface HandSummary {
   mean: number | null
   /** Standard deviation of the trials (n − 1); null with fewer than two. */
   sd: number | null
-  /** 95 % interval of the mean by Student's t; null with fewer than two trials. */
+  /** 95 % interval of the mean by Student's t; null with fewer than two trials and when none differs. */
   interval: Interval | null
 }
 
@@ -143,7 +143,7 @@ export interface SkillScore {
   interrupted: number
   /** Positive when the right hand is better, for times as for counts; null when a hand has no trial. */
   index: number | null
-  /** Approximate 95 % interval of the index; null with fewer than two trials a hand. */
+  /** Approximate 95 % interval of the index; null with fewer than two trials a hand and when none differs. */
   interval: Interval | null
 }
 

@@ -1,4 +1,4 @@
-import { neverAveraged, skillCautions } from './handSkill.ts'
+import { neverAveraged, skillCautions, tooAlike } from './handSkill.ts'
 import { formatQuotient } from './laterality.ts'
 import type { LateralDetails, LateralSide, MeasurePart } from './lateralLine.ts'
 import {
@@ -69,6 +69,13 @@ function skillRaw({ trials }: SkillDetails, score: SkillScore): LateralDetails['
   ]
 }
 
+function noInterval(score: SkillScore): string | null {
+  if (score.index === null || score.interval !== null) return null
+  return tooAlike(score)
+    ? 'The trials are too alike: no interval'
+    : 'Fewer than two trials a hand: no interval'
+}
+
 /** The row of one task done with each hand, with the interval of its index and every trial. */
 export const skillRow = (details: SkillDetails, score: SkillScore): MeasurePart => ({
   part: score.kind,
@@ -81,8 +88,7 @@ export const skillRow = (details: SkillDetails, score: SkillScore): MeasurePart 
   basis:
     `${score.left.trials} ${score.left.trials === 1 ? 'trial' : 'trials'} left, ${score.right.trials} right` +
     (score.interrupted > 0 ? `, ${score.interrupted} interrupted` : ''),
-  caution:
-    score.index !== null && score.interval === null ? 'Fewer than two trials a hand: no interval' : null,
+  caution: noInterval(score),
   cutOffs: null,
   opens: {
     formula:
@@ -93,7 +99,7 @@ export const skillRow = (details: SkillDetails, score: SkillScore): MeasurePart 
     raw: skillRaw(details, score),
     sideRule:
       'A side is told when the approximate 95 % interval of the index keeps clear of zero. With fewer than two trials a ' +
-      'hand there is no interval and no side.',
+      'hand, or when no trial differs, there is no interval and no side.',
     citation: skillCitations[score.kind],
     cautions: [...skillCautions(score), ...everySkill],
   },

@@ -108,9 +108,32 @@ describe('scoreSkill', () => {
     })
   })
 
-  it('has an interval of one point when no trial differs', () => {
-    const { index, interval } = scoreSkill({ kind: 'pegs', trials: trials([20, 20, 20], [25, 25, 25]) })
-    expect(interval).toEqual({ low: index, high: index })
+  // A standard deviation of 0 says nothing about the spread, so no interval can be given (methods, caution on SD = 0).
+  it('has no interval when no trial differs, and says so, for an interval of one point claims certainty', () => {
+    const score = scoreSkill({ kind: 'pegs', trials: trials([20, 20, 20], [25, 25, 25]) })
+    expect(score.index).toBeCloseTo(-100 / 9, 9)
+    expect([score.interval, score.left.interval, score.right.interval]).toEqual([null, null, null])
+    expect(skillCautions(score).join(' ')).toContain('too alike to say how sure the gap is')
+    expect(skillCautions(score).join(' ')).not.toContain('approximate')
+  })
+
+  // 20.1 + 20.1 + 20.1 is not 60.3 to the last digit in binary, and the deviation then not quite 0.
+  it.each([
+    ['tenths', 'pegs', [20.1, 20.1, 20.1], [25.7, 25.7, 25.7]],
+    ['counts', 'tapping', [80, 80], [95, 95]],
+    ['one hand that does nothing', 'dots', [0, 0, 0], [31, 33, 35]],
+  ] as const)('has no interval for trials alike: %s', (_what, kind, left, right) => {
+    const score = scoreSkill({ kind, trials: trials([...left], [...right]) })
+    expect(score.index).not.toBeNull()
+    expect(score.interval).toBeNull()
+    expect(skillCautions(score).join(' ')).toContain('too alike')
+  })
+
+  it('keeps its interval when the trials of one hand alone differ', () => {
+    const score = scoreSkill({ kind: 'pegs', trials: trials([20, 20, 20], [24, 25, 26]) })
+    expect(score.left.interval).toBeNull()
+    expect(score.interval!.high).toBeGreaterThan(score.interval!.low)
+    expect(skillCautions(score).join(' ')).not.toContain('too alike')
   })
 
   it('keeps interrupted and untaken trials out of every figure', () => {
