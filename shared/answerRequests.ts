@@ -126,7 +126,7 @@ export type AnswerLink = InferType<typeof answerLinkSchema>
 export const answerLinkDraftSchema = body({ ...proof, version: savedVersion, ...draftFields })
 export const answerLinkSendSchema = body({ ...proof, version: savedVersion })
 
-/** Whom a therapist can ask, and what for. */
+/** Whom the clinic can ask about a child, and what for. */
 export interface AnswerChoices {
   /** Why nothing can be asked now, in words; null when it can. */
   blocked: string | null
@@ -144,7 +144,7 @@ export interface AnswerChoices {
   teachersRefused: string | null
 }
 
-/** A request as the therapist sees it. */
+/** A request as therapist and lead see it. */
 export interface AnswerRequestView {
   id: string
   asks: RequestedForm

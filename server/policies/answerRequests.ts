@@ -2,7 +2,8 @@ import type { AnswererKind, RequestState } from '../../shared/answerRequests.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { childPolicy, isRelation, openPolicy, rolePolicy } from './policy.ts'
 
-const write = (name: string) => childPolicy(name, ['assignedTherapist'], 'write', ['clinicLead'])
+// The lead asks too: a child who waits has no therapist yet, and answers from home take their time.
+const write = (name: string) => childPolicy(name, ['assignedTherapist', 'clinicLead'], 'write')
 
 const noSignIn = 'a carer without a sign-in answers; the secret of the link and the birth date are the proof'
 
@@ -28,7 +29,7 @@ export const answerRequestPolicies = {
   sendByLink: openPolicy('answerLink.send', noSignIn, 'write'),
 }
 
-export const canAsk = (access: ChildAccess) => isRelation(access, 'assignedTherapist')
+export const canAsk = (access: ChildAccess) => isRelation(access, 'assignedTherapist', 'clinicLead')
 
 /** Only what is still to come back can be withdrawn or asked for again. */
 export const canChangeRequest = (access: ChildAccess, state: RequestState) =>

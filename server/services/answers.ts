@@ -65,7 +65,7 @@ export const keepAnswers = async (
   })
 }
 
-/** Closes the answers and the request with them, and tells the therapist. Once: the lock makes a twin wait and then fail. */
+/** Closes the answers and the request with them, and tells the therapist, else the lead. Once: the lock makes a twin wait and then fail. */
 export const closeAnswers = async (
   tx: Tx,
   record: Record,

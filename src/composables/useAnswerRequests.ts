@@ -7,8 +7,8 @@ import { childKey } from '@/composables/useChild.ts'
 import { useConfirmStep } from '@/composables/useConfirmStep.ts'
 import type { AnswerRequestDetails, AnswerRequestView } from '@shared/answerRequests.ts'
 
-/** What was asked about a child, and the acts of the therapist who asks. */
-export function useAnswerRequests(child: MaybeRefOrGetter<string>, mayAsk: MaybeRefOrGetter<boolean>) {
+/** What was asked about a child, and the acts of whoever asks. */
+export function useAnswerRequests(child: MaybeRefOrGetter<string>) {
   const childId = () => toValue(child)
   const confirm = useConfirmStep()
   const requests = useQuery({
@@ -18,7 +18,6 @@ export function useAnswerRequests(child: MaybeRefOrGetter<string>, mayAsk: Maybe
   const choices = useQuery({
     key: () => childKey(childId(), 'answer-choices'),
     query: () => answerRequestsApi.choices(childId()),
-    enabled: () => toValue(mayAsk),
   })
   const asking = ref<boolean>(false)
   let key = newIdempotencyKey()

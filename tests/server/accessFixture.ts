@@ -243,13 +243,13 @@ export const accessRows: readonly AccessRow[] = [
   within('GET /api/my/letters/:id/pdf', ['guardian'], 'letter', ['G1']),
   within('GET /api/my/deliveries/:id', ['guardian'], 'letter', ['G1']),
 
-  // Own forms of carers and teachers, signed in: a request belongs to the one person who was asked. The therapist asks and
-  // the lead reads what was asked (their row of questionnaire responses).
+  // Own forms of carers and teachers, signed in: a request belongs to the one person who was asked. The therapist asks, and
+  // the lead for a child who waits for one; what came back is read as the row of questionnaire responses says.
   child('GET …/answer-requests', ['T1', 'L']),
-  child('GET …/answer-choices', ['T1'], ['L']),
-  child('POST …/answer-requests', ['T1'], ['L']),
-  child('POST …/answer-requests/:id/cancel', ['T1'], ['L']),
-  child('POST …/answer-requests/:id/remind', ['T1'], ['L']),
+  child('GET …/answer-choices', ['T1', 'L']),
+  child('POST …/answer-requests', ['T1', 'L']),
+  child('POST …/answer-requests/:id/cancel', ['T1', 'L']),
+  child('POST …/answer-requests/:id/remind', ['T1', 'L']),
   area('GET /api/my/to-answer', ['guardian']),
   child('GET /api/my/children/:childId/answer-requests/:id', ['G1']),
   child('PUT /api/my/children/:childId/answer-requests/:id', ['G1']),

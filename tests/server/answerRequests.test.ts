@@ -117,19 +117,46 @@ describe('asking for answers', () => {
     expect((await toTeacher()).status).toBe(201)
   })
 
-  it('is for the therapist alone: the lead reads, everybody else finds nothing', async () => {
+  it('is for the therapist and the lead: everybody else finds nothing', async () => {
     const scene = await askingScene()
     await askMother(scene)
     const body = asked({ guardianId: scene.mother.id })
     const lead = await signedInAs(await buildUser('clinicLead'))
-    expect((await lead.get(requestsPath(scene.child))).body[0].can).toEqual({ cancel: false, remind: false })
-    expect((await lead.post(requestsPath(scene.child)).send(body)).status).toBe(403)
+    expect((await lead.get(requestsPath(scene.child))).body[0].can).toEqual({ cancel: true, remind: true })
     for (const role of ['therapist', 'administrator'] as const) {
       const other = await signedInAs(await buildUser(role))
       expect((await other.get(requestsPath(scene.child))).status).toBe(404)
       expect((await other.post(requestsPath(scene.child)).send(body)).status).toBe(404)
     }
     expect((await scene.asCarer.get(requestsPath(scene.child))).status).toBe(404)
+  })
+
+  it('is the lead’s where no therapist holds the child yet: asked, reminded, withdrawn, and back to the lead', async () => {
+    const scene = await askingScene(true, { waiting: true })
+    const lead = await signedInAs(await buildUser('clinicLead'))
+    const choices = await lead.get(`/api/children/${scene.child.id}/answer-choices`)
+    expect(choices.body.guardians).toHaveLength(2)
+    const byLead = { ...scene, therapist: lead }
+    const ofMother = await askMother(byLead)
+    const ofTeacher = await askTeacher(byLead)
+    expect((await lead.post(requestsPath(scene.child, `/${ofTeacher.id}/remind`)).send({})).status).toBe(204)
+    const { version } = await seenRequest(byLead, ofTeacher.id)
+    const withdrawn = await lead
+      .post(requestsPath(scene.child, `/${ofTeacher.id}/cancel`))
+      .set('If-Match', `"${version}"`)
+      .send({})
+    expect(withdrawn.status).toBe(204)
+    await saveAndSend(scene.asCarer, ownPage(scene.child, ofMother.id), {
+      answers: someAnswers(),
+      comment: null,
+    })
+    const { answerId } = await seenRequest(byLead, ofMother.id)
+    expect((await lead.get(`/api/children/${scene.child.id}/questionnaires/${answerId}`)).status).toBe(200)
+    expect(
+      await database().query('SELECT kind, assigneeId, forRole FROM tasks WHERE childId = ?', [
+        scene.child.id,
+      ]),
+    ).toEqual([{ kind: 'answers_back', assigneeId: null, forRole: 'clinicLead' }])
   })
 
   it('offers whom one can ask, with the reason beside those one cannot', async () => {

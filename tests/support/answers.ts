@@ -17,13 +17,20 @@ import { allAnswers } from './records.ts'
 export const formId = 'hand-use-10.v1'
 export const birthDate = '2018-05-04'
 
-/** A child with consents, a carer with and one without an account, and a teacher of the present class. */
-export const askingScene = async (consents = true) => {
+/**
+ * A child with consents, a carer with and one without an account, and a teacher of the present class. A waiting child has
+ * no therapist: `therapist` then finds nothing.
+ */
+export const askingScene = async (consents = true, { waiting = false } = {}) => {
   const holder = await buildUser('therapist')
   const teacher = await buildUser('teacher')
   const carer = await buildUser('guardian')
   const schoolClass = await buildClass(teacher)
-  const child = await buildChild({ therapist: holder, schoolClassId: schoolClass.id, birthDate })
+  const child = await buildChild({
+    ...(!waiting && { therapist: holder }),
+    schoolClassId: schoolClass.id,
+    birthDate,
+  })
   const mother = await buildGuardian(child, carer)
   const grandfather = await buildGuardian(child, null, {
     name: 'Ambrose Tilling',
