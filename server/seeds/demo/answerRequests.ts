@@ -8,6 +8,17 @@ const formId = handUseFormV1.version
  * histories*.ts).
  */
 export const answerRequests: readonly DemoRequest[] = [
+  // For the review to come; Lucía finds it at the top of My child.
+  {
+    child: 1,
+    by: 'adaeze',
+    askedDay: -2,
+    asks: 'questionnaire',
+    formId: 'short-4.v1',
+    of: 0,
+    byLink: false,
+    remindedDays: [],
+  },
   // A week old on the demo day: the first reminder is due.
   {
     child: 7,
