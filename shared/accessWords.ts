@@ -23,6 +23,9 @@ const nouns: Record<string, string> = {
   history: 'History',
   histories: 'History',
   handProfile: 'Hand profile',
+  conclusion: 'Conclusion',
+  answerRequest: 'Questions to family or school',
+  answerLink: 'Questions by e-mail link',
   sessionNote: 'Session note',
   writingObservation: 'Writing observation',
   sample: 'Handwriting sample',
@@ -46,6 +49,8 @@ const readings: Record<string, string> = {
   pdf: 'PDF read',
   revisions: 'earlier texts read',
   child: 'read',
+  page: 'read',
+  choices: 'whom to ask read',
   children: 'list read',
 }
 
@@ -66,7 +71,7 @@ export function accessActionWords(action: string): string {
 
 // A create asked for a second time writes nothing, and a file found damaged was only looked at.
 const readingVerbs =
-  /(?:^|_)(?:read|list|looked|opened|followed|pdf|file|thumbnail|damaged|revisions|child|asked_again)/
+  /(?:^|_)(?:read|list|looked|opened|followed|pdf|file|thumbnail|damaged|revisions|child|page|choices|asked_again)/
 
 /** Only whether something was read or written, for those who see no more than that. */
 export const accessKindWords = (action: string): string =>
