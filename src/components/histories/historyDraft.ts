@@ -16,6 +16,8 @@ export const draftOf = ({ respondentName, answeredOn, details }: HistoryView): H
   details: { ...details, family: { ...details.family } },
 })
 
+const single: Record<string, string> = { months: 'month', years: 'year', children: 'child', weeks: 'week' }
+
 /** What is answered to a question, in words; null while nothing is. */
 export function answerWords(details: HistoryDetails, question: HistoryQuestion): string | null {
   if (saysUnsure(details, question)) return 'Not sure'
@@ -26,7 +28,7 @@ export function answerWords(details: HistoryDetails, question: HistoryQuestion):
     case 'choice':
       return answer.options.find(({ value }) => value === given)?.label ?? String(given)
     case 'number':
-      return `${given} ${answer.unit}`
+      return `${given} ${given === 1 ? (single[answer.unit] ?? answer.unit) : answer.unit}`
     case 'scale':
       return `${given} out of 10`
     case 'day':
