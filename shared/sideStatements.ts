@@ -74,7 +74,7 @@ export function skillStatements(hand: Hand | null, rows: readonly LateralLineRow
   if (few.length > 0)
     statements.push({
       kind: 'open',
-      text: `Too few trials to tell the hands apart at ${namedRows(few)}.`,
+      text: `Too few trials, or trials too alike, to tell the hands apart at ${namedRows(few)}.`,
       because: null,
       rowIds: idsOf(few),
     })

@@ -1,9 +1,15 @@
 import { randomInt } from 'node:crypto'
-import { formatDay } from '../../shared/days.ts'
+import { daysBetween, formatDay, type Day } from '../../shared/days.ts'
 import { seedLimit, type MeasureDraft, type MeasureStart } from '../../shared/measureSchemas.ts'
 import { emptyDetails, lockProblems, methodVersions, scoreMeasure } from '../../shared/measureScores.ts'
-import { measureKindLabels, type MeasureDetails, type MeasureScore } from '../../shared/measures.ts'
+import {
+  measureKindLabels,
+  type MeasureDetails,
+  type MeasureScore,
+  type SkillScore,
+} from '../../shared/measures.ts'
 import { redFlagsOfSkill } from '../../shared/redFlagSources.ts'
+import type { HandSkill } from '../../shared/skillGap.ts'
 import type { Actor } from '../access/actor.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
@@ -13,6 +19,7 @@ import { conflict, invalid } from '../errors.ts'
 import { lockChild } from '../queries/lockChild.ts'
 import { findMeasure, openMeasureOf, type MeasureRecord } from '../queries/measures.ts'
 import { findChildFacts } from '../queries/childFacts.ts'
+import { listLockedHandEvidence } from '../queries/handEvidence.ts'
 import { findForChild } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
@@ -139,12 +146,41 @@ export const saveMeasure = async (
   })
 }
 
-/** A hand that does not write and clearly does better asks for a full look; nothing else here is a warning sign. */
-const flagsOf = async (access: ChildAccess, score: MeasureScore, tx: Tx) => {
-  if (score.kind !== 'pegs' && score.kind !== 'tapping' && score.kind !== 'dots') return []
+/** Days within which tasks of skill are taken together (clinic rule): hands of a child change. */
+const daysTogether = 183
+
+const isSkill = (score: MeasureScore): score is SkillScore =>
+  score.kind === 'pegs' || score.kind === 'tapping' || score.kind === 'dots'
+
+const skillOf = ({ kind, index, interval, left, right }: SkillScore): HandSkill => {
+  const trials = Math.min(left.trials, right.trials)
+  return { kind, task: measureKindLabels[kind], trials, index, interval }
+}
+
+/**
+ * A hand that does not write and clearly does better asks for a full look; nothing else here is a warning sign. Read with
+ * the newest of the other tasks of skill, as some count only together; a gap that this task is no part of stands already.
+ */
+const flagsOf = async (
+  access: ChildAccess,
+  { score, measuredOn }: { score: MeasureScore; measuredOn: Day },
+  tx: Tx,
+) => {
+  if (!isSkill(score)) return []
   const { writingHand } = await findChildFacts(access, tx)
-  const { index, interval } = score
-  return redFlagsOfSkill([{ task: measureKindLabels[score.kind], index, interval }], writingHand)
+  const { measures } = await listLockedHandEvidence(access, tx)
+  const others = measures.flatMap((measure) =>
+    isSkill(measure.score) &&
+    measure.score.kind !== score.kind &&
+    measure.notDoneReason === null &&
+    Math.abs(daysBetween(measure.measuredOn, measuredOn)) <= daysTogether
+      ? [skillOf(measure.score)]
+      : [],
+  )
+  // The list begins with the newest.
+  const newest = others.filter(({ kind }, at) => others.findIndex((other) => other.kind === kind) === at)
+  const own = skillOf(score)
+  return redFlagsOfSkill([own, ...newest], writingHand).filter(({ signs }) => signs.includes(own.task))
 }
 
 /**
@@ -153,7 +189,7 @@ const flagsOf = async (access: ChildAccess, score: MeasureScore, tx: Tx) => {
  */
 export const lockMeasure = (actor: Actor, access: ChildAccess, id: string, version: number): Promise<void> =>
   transact(actor, async (tx, record) => {
-    const { kind, details, notDoneReason } = await openMeasure(tx, access, id)
+    const { kind, details, notDoneReason, measuredOn } = await openMeasure(tx, access, id)
     await requireConsent(tx, access, 'assessment_treatment')
     const problems = lockProblems(details, notDoneReason)
     if (Object.keys(problems).length > 0) throw invalid(problems)
@@ -166,7 +202,7 @@ export const lockMeasure = (actor: Actor, access: ChildAccess, id: string, versi
     })
     record(fact(access, 'locked', id))
     const { childId, viewer } = access
-    const flags = await flagsOf(access, score, tx)
+    const flags = await flagsOf(access, { score, measuredOn }, tx)
     await raiseFlags(tx, record, {
       childId,
       origin: 'measure',

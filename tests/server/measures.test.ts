@@ -359,15 +359,53 @@ describe('skill on the other side than the writing hand', () => {
     expect(raised[0]?.text).toContain('the right hand did clearly better at: Moving pegs')
   })
 
+  const lockedCounts = async (kind: 'tapping' | 'dots', measuredOn?: string) => {
+    const { id, details } = await begun({ kind, ...(measuredOn !== undefined && { measuredOn }) })
+    const trials = [30, 31, 30]
+      .map((n) => trial('left', n))
+      .concat([50, 51, 50].map((n) => trial('right', n)))
+    const given = { ...draft({ ...details, trials }), ...(measuredOn !== undefined && { measuredOn }) }
+    expect((await put(id, 1, given)).status).toBe(200)
+    expect((await lock(id, 2)).status).toBe(200)
+  }
+
+  it('asks for nothing by dots or by tapping alone, and for a look once the two agree', async () => {
+    await writes('left')
+    await lockedCounts('dots')
+    expect(await alerts()).toEqual([])
+    await lockedCounts('tapping')
+    const [raised, ...more] = await alerts()
+    expect(more).toEqual([])
+    expect(raised?.text).toMatch(/right hand did clearly better at: Tapping, .*[Dd]ots/)
+  })
+
+  it('does not take two tasks together that lie more than half a year apart', async () => {
+    await writes('left')
+    await lockedCounts('dots', '2025-06-09')
+    await lockedCounts('tapping')
+    expect(await alerts()).toEqual([])
+  })
+
+  it('does not bring back what was acted on when a task of another result is locked', async () => {
+    await writes('left')
+    await lockedPegs(rightQuicker)
+    await database().query('UPDATE alerts SET actedAt = ?, actedById = ?, action = ? WHERE childId = ?', [
+      new Date(),
+      therapist.id,
+      'Full look planned',
+      child.id,
+    ])
+    const { id, details } = await begun({ kind: 'dots' })
+    const trials = [30, 35, 32].flatMap((n) => [trial('left', n), trial('right', n + 1)])
+    await put(id, 1, draft({ ...details, trials }))
+    expect((await lock(id, 2)).status).toBe(200)
+    expect(await alerts()).toHaveLength(1)
+  })
+
   it('adds a second task to the sign that stands already', async () => {
     await writes('left')
     await lockedPegs(rightQuicker)
-    const { id, details } = await begun({ kind: 'tapping' })
-    const counts = [30, 31, 30]
-      .map((n) => trial('left', n))
-      .concat([50, 51, 50].map((n) => trial('right', n)))
-    await put(id, 1, draft({ ...details, trials: counts }))
-    expect((await lock(id, 2)).status).toBe(200)
+    await lockedCounts('tapping')
     const raised = await alerts()
     expect(raised).toHaveLength(1)
     expect(raised[0]?.text).toMatch(/Moving pegs.*Tapping/)
@@ -378,6 +416,7 @@ describe('skill on the other side than the writing hand', () => {
     ['the writing hand is not known', null, rightQuicker],
     ['the hands differ no more than their trials', 'left', pegsDetails([22, 26, 24], [23, 25, 22])],
     ['there is one trial a hand and no interval', 'left', pegsDetails([30], [20])],
+    ['there are two trials a hand', 'left', pegsDetails([30.1, 30.2], [20.2, 20.3])],
   ])('asks for nothing when %s', async (_when, hand, details) => {
     await writes(hand)
     await lockedPegs(details)
