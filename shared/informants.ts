@@ -61,12 +61,16 @@ export interface InformantComparison {
 const newest = (responses: readonly LockedResponse[]) =>
   responses.toSorted((a, b) => compareDays(b.answeredOn, a.answeredOn) || (a.lockedAt < b.lockedAt ? 1 : -1))
 
-function noteOf({ compared, kappa, kappaInterval }: Agreement): string {
+/** Kappa without an interval: all told alike, or none, or else one of the two gave one answer throughout (kappa 0). */
+function noteOf({ compared, agreed, kappa, kappaInterval }: Agreement): string {
   if (compared === 0) return 'No activity was answered with a side by both, so nothing is compared.'
   if (kappa === null)
     return 'Both gave one and the same answer throughout: kappa asks for at least two kinds of answers.'
-  if (kappaInterval === null)
+  if (kappaInterval === null && agreed === compared)
     return `Agreement on all ${compared} activities; the large-sample interval of kappa says nothing here.`
+  if (kappaInterval === null && agreed === 0)
+    return 'They agree on none of the activities that both answered; kappa and its interval add nothing.'
+  if (kappaInterval === null) return 'One of the two gave the same answer throughout, so kappa tells nothing.'
   return `Kappa from ${compared} activities: its large-sample interval is rough.`
 }
 

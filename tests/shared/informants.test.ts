@@ -48,6 +48,27 @@ describe('compareInformants', () => {
     expect(found?.pairs[0]?.note).toContain('one and the same answer throughout')
   })
 
+  // Kappa without an interval by hand: all alike is 1; one constant answer makes observed and by chance the same, 0;
+  // two answers exactly exchanged is (0 − 1/2) ÷ (1 − 1/2) = −1. All of it follows from Cohen 1960.
+  it.each([
+    ['all alike', 'L L L L L L R R R R', 'L L L L L L R R R R', 1, /^Agreement on all 10 activities;/],
+    ['none alike, each one answer', 'L', 'R', 0, /^They agree on none/],
+    ['none alike, one of them one answer', 'L', 'R R R R R B B B B B', 0, /^They agree on none/],
+    ['none alike, exchanged', 'L L L L L R R R R R', 'R R R R R L L L L L', -1, /^They agree on none/],
+    [
+      'some alike, one answer throughout',
+      'L',
+      'L L L L L L R R R R',
+      0,
+      /^One of the two gave the same answer/,
+    ],
+  ])('says why kappa has no interval: %s', (_, one, other, kappa, note) => {
+    const [found] = compareInformants([answered(one), answered(other, { informant: 'teacher' })])
+    expect(found?.pairs[0]?.kappa).toBeCloseTo(kappa, 12)
+    expect(found?.pairs[0]?.kappaInterval).toBeNull()
+    expect(found?.pairs[0]?.note).toMatch(note)
+  })
+
   it('makes a pair of each two of three informants', () => {
     const [found] = compareInformants([
       answered('L'),
