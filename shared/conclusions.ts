@@ -1,6 +1,6 @@
-import { array, boolean, string, type InferType } from 'yup'
+import { array, boolean, type InferType } from 'yup'
 import type { Day } from './days.ts'
-import { body, choice, id, optionalChoice, optionalText } from './fields.ts'
+import { body, choice, id, optionalChoice, optionalId, optionalText } from './fields.ts'
 import type { LateralLineRow } from './lateralLine.ts'
 import type { ClinicSettings } from './settings.ts'
 import type { WordingLevel } from './wordingRules.ts'
@@ -120,9 +120,7 @@ export const emptyConclusion: ConclusionContent = {
 
 /** Begins a conclusion; with `replacesId` it starts from the signed text that it takes the place of. */
 export const conclusionStartSchema = body({
-  replacesId: string()
-    .nullable()
-    .matches(/^[0-9a-f-]{36}$/, { message: 'The earlier conclusion is not a valid reference' }),
+  replacesId: optionalId('The earlier conclusion').optional(),
 })
 export type ConclusionStart = InferType<typeof conclusionStartSchema>
 

@@ -249,6 +249,74 @@ describe('hostile input at the routes of the assessment', () => {
   })
 })
 
+describe('an id in an address of the assessment', () => {
+  const ids = [
+    '0',
+    '1abc',
+    'a%00b',
+    '%F0%9F%98%80',
+    '%ED%A0%80',
+    "'%20OR%201=1--",
+    'x'.repeat(3000),
+    '-'.repeat(36),
+  ]
+
+  it('that is none is answered like one that is absent', { timeout: 60_000 }, async () => {
+    const { child, therapist, asCarer, asTeacher } = await askingScene()
+    const answered = new Set<number>()
+    for (const id of ids)
+      for (const [who, path] of [
+        [therapist, `/api/children/${child.id}/measures/${id}`],
+        [therapist, `/api/children/${child.id}/histories/${id}`],
+        [therapist, `/api/children/${child.id}/questionnaires/${id}`],
+        [therapist, `/api/children/${child.id}/conclusions/${id}`],
+        [therapist, `/api/children/${id}/hand-profile`],
+        [asCarer, ownPage(child, id)],
+        [asTeacher, pupilPage(child, id)],
+      ] as const) {
+        const version = ['If-Match', '"1"'] as const
+        for (const call of [
+          who.get(path),
+          who
+            .put(path)
+            .set(...version)
+            .send({ answers: someAnswers(), comment: null }),
+          who
+            .post(`${path}/send`)
+            .set(...version)
+            .send({}),
+          who
+            .post(`${path}/lock`)
+            .set(...version)
+            .send({}),
+          who
+            .post(`${path}/sign`)
+            .set(...version)
+            .send({ confirmed: true }),
+          who.delete(path).set(...version),
+        ])
+          answered.add((await call).status)
+      }
+    // 400 where the address is no text at all, 422 where the body is looked at first.
+    expect([...answered].sort()).toEqual([400, 404, 422])
+  })
+
+  it('that is none is answered like one that is absent where the clinic asks', async () => {
+    const { child, therapist } = await askingScene()
+    for (const id of ids) {
+      const answers = [
+        await therapist
+          .post(requestsPath(child, `/${id}/cancel`))
+          .set('If-Match', '"1"')
+          .send({}),
+        await therapist.post(requestsPath(child, `/${id}/remind`)).send({}),
+        await therapist.post(`/api/children/${child.id}/alerts/${id}/action`).send({ action: 'Called them' }),
+      ]
+      for (const { status } of answers) expect([400, 404]).toContain(status)
+    }
+  })
+})
+
 describe('a body', () => {
   const send = (raw: string) => client().post('/api/answer-links/open').type('json').send(raw)
 
