@@ -61,8 +61,8 @@ export function agreementOf<Category extends string>(
   const centred = (kappa - byChance * (1 - kappa)) ** 2
   const variance = (diagonal + (1 - kappa) ** 2 * elsewhere - centred) / (n * (1 - byChance) ** 2)
   const error = Math.sqrt(Math.max(0, variance))
-  // Not exactly zero by the sums of a computer.
-  const certain = agreed === n || error < 1e-9
+  // Zero, but by the sums of a computer its square is off by some 1e-17, and the root of that is a few billionths.
+  const certain = agreed === n || error < 1e-6
   return {
     ...base,
     kappa,
