@@ -1,5 +1,3 @@
-import type { FamilyHands } from './histories.ts'
-
 /*
  * How often left-handedness is found, as context for parents. Groups, never this child: early-life factors together
  * predict one person's hand hardly at all (de Kovel et al. 2019, about 500,000 people). Figures with a source and figures
@@ -69,14 +67,6 @@ export const commonPracticeRates: readonly { label: string; percent: number }[] 
 /** Whether the mother's or the father's hand counts for more is contested: studies find either, or both. */
 export const contested =
   'Studies disagree on whether the mother’s or the father’s hand matters more, so the rates name no parent.'
-
-/** The families a child's parents belong to; null while a hand is not known or a parent uses both. */
-export function parentPairOf({ mother, father }: Pick<FamilyHands, 'mother' | 'father'>): ParentPair | null {
-  const known = [mother, father].filter((hand) => hand === 'left' || hand === 'right')
-  if (known.length < 2) return null
-  const left = known.filter((hand) => hand === 'left').length
-  return left === 0 ? 'both_right' : left === 1 ? 'one_left' : 'both_left'
-}
 
 /**
  * The probability that goes with another one through an odds ratio. Probabilities lie between 0 and 1.

@@ -5,7 +5,6 @@ import {
   expectedInGroup,
   generalRate,
   maleOddsRatio,
-  parentPairOf,
   publishedRates,
   throughOdds,
 } from '../../shared/familyHandedness.ts'
@@ -51,20 +50,5 @@ describe('odds', () => {
     const { expected, atLeastOne } = expectedInGroup(generalRate.percent / 100, 30)
     expect(expected).toBeCloseTo(3.18, 6)
     expect(atLeastOne).toBeCloseTo(0.9653162885971305, 6)
-  })
-})
-
-describe('the parents of a child', () => {
-  it.each([
-    ['right', 'right', 'both_right'],
-    ['left', 'right', 'one_left'],
-    ['right', 'left', 'one_left'],
-    ['left', 'left', 'both_left'],
-    ['both', 'right', null],
-    ['unsure', 'left', null],
-    [null, 'right', null],
-    [null, null, null],
-  ] as const)('mother %s and father %s: %s', (mother, father, expected) => {
-    expect(parentPairOf({ mother, father })).toBe(expected)
   })
 })
