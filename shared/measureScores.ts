@@ -38,8 +38,8 @@ export function scoreMeasure(details: MeasureDetails): MeasureScore {
   }
 }
 
-/** Usual set-up where nothing else is asked for: clinic rules after the published tasks. */
-export const usualOptions = { cardsPerPlace: 3, pegs: 10, tappingSeconds: 10, dotsSeconds: 20 } as const
+/** Usual set-up where nothing else is asked for: clinic rules after the published tasks, 20 to 30 s for counts. */
+export const usualOptions = { cardsPerPlace: 3, pegs: 10, tappingSeconds: 20, dotsSeconds: 20 } as const
 
 const noTries = (): Tries => [null, null, null]
 

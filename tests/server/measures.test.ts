@@ -154,7 +154,7 @@ describe('a measure', () => {
   it.each([
     ['reaching', { cardsPerPlace: 6 }, { cardsPerPlace: 6 }],
     ['pegs', { startHand: 'right', pegs: 9 }, { startHand: 'right', pegs: 9, seconds: null }],
-    ['tapping', { startHand: 'left' }, { startHand: 'left', pegs: null, seconds: 10 }],
+    ['tapping', { startHand: 'left' }, { startHand: 'left', pegs: null, seconds: 20 }],
     ['dots', {}, { pegs: null, seconds: 20 }],
     ['sides', {}, { eyeFarMetres: null }],
     ['seating', {}, { poplitealCm: null }],

@@ -69,7 +69,7 @@ describe('measureDraftSchema', () => {
       { kind: 'reaching', seed: 1, cardsPerPlace: 3, reaches: [null, 4, {}] },
       { kind: 'reaching', seed: '1', cardsPerPlace: 3, reaches: {} },
       { kind: 'pegs', trials: [null] },
-      { kind: 'tapping', seconds: 10, pegs: null, startHand: 'left', trials: null },
+      { kind: 'tapping', seconds: 20, pegs: null, startHand: 'left', trials: null },
       { kind: 'sides', foot: null, eye: [], ear: 'left' },
       { kind: 'seating', elbowHeightCm: '20', shoulderHeightCm: {} },
     ])

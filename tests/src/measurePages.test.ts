@@ -49,7 +49,7 @@ describe('starting a measure', () => {
   it.each([
     ['reaching', { cardsPerPlace: 3 }],
     ['pegs', { startHand: null, pegs: 10 }],
-    ['tapping', { startHand: null, seconds: 10 }],
+    ['tapping', { startHand: null, seconds: 20 }],
     ['dots', { startHand: null, seconds: 20 }],
     ['sides', {}],
     ['seating', {}],

@@ -90,7 +90,7 @@ const skill =
 
 /** Ten pegs, in seconds. */
 export const pegs = skill('pegs')
-/** Taps in ten seconds. */
+/** Taps in twenty seconds. */
 export const tapping = skill('tapping')
 /** Dots in twenty seconds. */
 export const dots = skill('dots')

@@ -33,7 +33,7 @@ export const measures01to20: readonly DemoMeasure[] = [
 
   reaching(3, -98, 'rohan', 'LLL LLL LLL LLL LLL LRL LLR'),
   pegs(3, -98, 'rohan', 'L18.8 R21.4 R20.6 L18.1 L18.5 R21.0'),
-  tapping(3, -98, 'rohan', 'L41 R40 R39 L37 L35 R40', {
+  tapping(3, -98, 'rohan', 'L83 R80 R78 L74 L70 R80', {
     comment: 'The left slows from trial to trial; he shook the hand out.',
   }),
   seating(3, -98, 'rohan', {
@@ -48,7 +48,7 @@ export const measures01to20: readonly DemoMeasure[] = [
     neighbourHand: 'right',
     lightSide: 'above',
   }),
-  tapping(3, -24, 'rohan', 'R41 L44 L43 R40 R42 L43'),
+  tapping(3, -24, 'rohan', 'R83 L88 L86 R81 R85 L87'),
 
   reaching(4, -125, 'mairi', 'LLL LLL LLL LLR LLL LLR LRL'),
   pegs(4, -125, 'mairi', 'L19.6 R21.2 R22.0 L18.9 L19.1 R20.8'),

@@ -8,7 +8,7 @@ const eitherFooted = { kick: 'RRR', hop: 'LLR', step_up: 'LRL', pebble: 'RR-' }
 export const measures21to40: readonly DemoMeasure[] = [
   reaching(21, -90, 'rohan', 'LLL LLL LLL LLL LLL LRL LLR'),
   pegs(21, -90, 'rohan', 'R26.1 L22.9 L23.8 R27.3 R25.6 L22.4'),
-  tapping(21, -90, 'rohan', 'L36 R33 R31 L38 L35 R32'),
+  tapping(21, -90, 'rohan', 'L72 R67 R62 L77 L70 R64'),
 
   reaching(22, -160, 'mairi', 'LLL LLL LLL LLL LLL LLL LRL'),
   pegs(22, -160, 'mairi', 'L21.2 R24.8 R25.5 L20.6 L21.8 R24.1'),
@@ -94,7 +94,7 @@ export const measures21to40: readonly DemoMeasure[] = [
 
   reaching(32, -27, 'rohan', 'LLL LLL LLR LLL LLL LRL LRL'),
   pegs(32, -27, 'rohan', 'L15.2 R16.9 R16.4 L14.8 L15.5 R17.2'),
-  tapping(32, -27, 'rohan', 'R46 L49 L51 R45 R47 L50'),
+  tapping(32, -27, 'rohan', 'R92 L99 L102 R90 R94 L100'),
   sides(32, -27, 'rohan', leftFooted, { far: 'RRR', near: 'RRR' }),
 
   reaching(33, -360, 'tomasz', 'LLL LLL LLL LLL LLL LLL LLL', {
@@ -103,7 +103,7 @@ export const measures21to40: readonly DemoMeasure[] = [
   pegs(33, -360, 'tomasz', 'L15.8 L15.1 L15.4', {
     comment: 'Left hand only. The right was not asked for: its weakness is known since birth.',
   }),
-  tapping(33, -94, 'tomasz', 'L52 R13 R11 L54 L51 R14', {
+  tapping(33, -94, 'tomasz', 'L104 R27 R22 L109 L102 R28', {
     comment: 'She wished to see what the right hand does. No change from the figures of the hospital.',
   }),
   seating(
@@ -122,7 +122,7 @@ export const measures21to40: readonly DemoMeasure[] = [
   ),
 
   reaching(34, -92, 'mairi', 'LLL LLL LLL LLL LLR LLL LLL'),
-  tapping(34, -92, 'mairi', 'L53 R47 R49 L55 L52 R46'),
+  tapping(34, -92, 'mairi', 'L107 R95 R98 L110 L105 R92'),
 
   reaching(35, -21, 'adaeze', 'LLL LLL LLL LLR LLL LRL LLL'),
   pegs(35, -21, 'adaeze', 'L13.6 R15.2 R14.8 L13.9 L13.3 R15.5'),
@@ -141,7 +141,7 @@ export const measures21to40: readonly DemoMeasure[] = [
 
   reaching(37, -78, 'rohan', 'LLL LLL LLL LLL LLL LLL LLR'),
   pegs(37, -78, 'rohan', 'L12.9 R14.4 R14.0 L13.3 L13.1 R14.7'),
-  tapping(37, -78, 'rohan', 'L54 R50 R51 L49* L50 L45 R49', {
+  tapping(37, -78, 'rohan', 'L108 R100 R102 L98* L101 L91 R99', {
     comment: 'She stopped the third one and asked for a rest. The left falls off as it goes on.',
   }),
 
