@@ -41,7 +41,7 @@ interface FlaggedReferral {
 const texts: Record<ReferralFlagId, { text: string; level: Attention; urgency: RedFlagUrgency }> = {
   // New one-sided weakness in a child is an emergency even after a fall: Bhate & Ganesan 2015 (acute hemiparesis).
   new_weakness: {
-    text: 'Possible new weakness, numbness, drooping face, headache or seizure. Do not wait for an appointment: same-day medical advice, or the emergency number if it is new or getting worse, even after a fall.',
+    text: 'Possible new weakness, numbness, drooping face, headache or seizure. Do not wait for an appointment: same-day medical advice, or the emergency number if it came suddenly or is getting worse, even after a fall.',
     level: 'overdue',
     urgency: 'same_day',
   },

@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest'
+import { emptyHistory } from '../../shared/histories.ts'
+import { urgentWordsFor } from '../../shared/redFlagSources.ts'
 import type { ReferralConcern } from '../../shared/referrals.ts'
 import { referralFlagsOf } from '../../shared/referralFlags.ts'
 
@@ -64,6 +66,13 @@ describe('warning signs in a referral', () => {
 
   it('says nothing about age while the date is still being typed', () => {
     expect(ids('Uses either hand for drawing.', ['hand_preference_unclear'], '-03-')).toEqual([])
+  })
+
+  it('names the emergency number in the words that the family reads', () => {
+    const [sign] = flags('Sudden weakness of the left hand.')
+    const [family = ''] = urgentWordsFor({ ...emptyHistory, newWeakness: 'yes' })
+    for (const words of [sign?.text, family])
+      expect(words).toMatch(/it came suddenly or is getting worse.*even (?:if it came )?after a fall/i)
   })
 
   it('quotes the words that raised a sign and marks new weakness as the most pressing', () => {
