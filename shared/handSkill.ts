@@ -162,9 +162,9 @@ export function unlikelyTrial(
   const shown = fewestSteps(value)
   const limits = `${fewestSteps(least)} to ${fewestSteps(most)}`
   if (kind === 'pegs')
-    return `${shown} s for ${amount} ${amount === 1 ? 'peg' : 'pegs'} is unusual (${limits} s is likely). Is it right?`
+    return `${shown} s for ${amount} ${amount === 1 ? 'peg' : 'pegs'} is unusual (${limits} s is likely). Is that the value?`
   const things = kind === 'tapping' ? 'taps' : 'dots'
-  return `${shown} ${things} in ${amount} s is unusual (${limits} is likely). Is it right?`
+  return `${shown} ${things} in ${amount} s is unusual (${limits} is likely). Is that the value?`
 }
 
 /** Positions of trials that count, are unlikely, and were not confirmed. */

@@ -16,7 +16,7 @@ interface SkillTrials {
 
 /**
  * The trials of one task: whose turn it is, keeping, taking back, marking as interrupted. An unlikely value is kept
- * only after the therapist has said so; refused, it waits in the field to be put right, so nothing measured is lost.
+ * only after the therapist has said so; refused, it waits in the field to be corrected, so nothing measured is lost.
  */
 export function useSkillTrials({ details, change, words }: SkillTrials) {
   const confirm = useConfirmStep()
@@ -58,7 +58,7 @@ export function useSkillTrials({ details, change, words }: SkillTrials) {
     if (doubt !== null) {
       typed.value = value
       if (!(await mayKeep(value, doubt))) {
-        said.value = `${words(value)} waits in the field: put it right, or measure again.`
+        said.value = `${words(value)} waits in the field: correct it, or measure again.`
         return false
       }
     }

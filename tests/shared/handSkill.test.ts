@@ -224,7 +224,7 @@ describe('unlikelyTrial', () => {
     ['no tap in 10 s', 'tapping', 0, null, 10],
     ['200 dots in 20 s', 'dots', 200, null, 20],
   ] as const)('asks about %s', (_what, kind, value, pegs, seconds) => {
-    expect(unlikelyTrial(kind, value, { pegs, seconds })).toMatch(/Is it right\?$/)
+    expect(unlikelyTrial(kind, value, { pegs, seconds })).toMatch(/Is that the value\?$/)
   })
 
   it.each([
@@ -240,10 +240,10 @@ describe('unlikelyTrial', () => {
 
   it('names the value, the task and what is likely', () => {
     expect(unlikelyTrial('pegs', 3600, { pegs: 10, seconds: null })).toBe(
-      '3600 s for 10 pegs is unusual (5 to 120 s is likely). Is it right?',
+      '3600 s for 10 pegs is unusual (5 to 120 s is likely). Is that the value?',
     )
     expect(unlikelyTrial('tapping', 400, { pegs: null, seconds: 10 })).toBe(
-      '400 taps in 10 s is unusual (5 to 100 is likely). Is it right?',
+      '400 taps in 10 s is unusual (5 to 100 is likely). Is that the value?',
     )
   })
 

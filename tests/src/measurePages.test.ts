@@ -85,7 +85,7 @@ describe('starting a measure', () => {
     expect(pegs?.element.checked).toBe(true)
   })
 
-  it('takes kind and options over when a locked measure is put right', async () => {
+  it('takes kind and options over when a locked measure is corrected', async () => {
     const earlier = measureDraft('reaching', { cardsPerPlace: 6 })
     const wrapper = form({ ...earlier, id: '0b2b6f6e-3d1f-4b0e-9a59-0d9f2f6a1c11' })
     expect(wrapper.find('input[name="kind"]').exists()).toBe(false)
@@ -127,7 +127,7 @@ describe('a locked measure', () => {
     expect(wrapper.findAll('input')).toEqual([])
   })
 
-  it('offers to put it right, and leads to the later one once there is one', async () => {
+  it('offers to correct it, and leads to the later one once there is one', async () => {
     const wrapper = open(MeasureFinishedPage, { measure: locked, childId: 'child', problem: null })
     await wrapper.get('section.edge button').trigger('click')
     expect(wrapper.emitted('replace')).toHaveLength(1)

@@ -94,7 +94,7 @@ describe('timing pegs', () => {
     expect(trialsOf(page.stored)).toEqual([trial('left', 0, { confirmed: true })])
   })
 
-  it('keeps nothing when told not to, and leaves the value in the field to be put right', async () => {
+  it('keeps nothing when told not to, and leaves the value in the field to be corrected', async () => {
     const page = await open('pegs')
     await run(page, 400_000)
     expect(askedStep.value?.title).toBe('Keep 400.0 s?')

@@ -79,8 +79,8 @@ export const fillQuestionnaire = async (therapist: Person): Promise<void> => {
 
   await press(page, 'Sign')
   await seeHeading(page, 'Sign this questionnaire?')
-  await press(page, 'Sign it')
-  await page.getByRole('button', { name: 'Put right' }).waitFor()
+  await press(page, 'Sign the questionnaire')
+  await page.getByRole('button', { name: 'Correct this' }).waitFor()
   expect(await page.getByRole('radio', { disabled: false }).count()).toBe(0)
   await expect.poll(shown).toContain('−73.3')
   await inspect(therapist, 'questionnaire-signed')
