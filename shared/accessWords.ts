@@ -37,10 +37,11 @@ const nouns: Record<string, string> = {
   accessHistory: 'Access history',
 }
 
-/** What was read, where the stored word is not one people use. */
-const readings: Record<string, string> = {
+/** What was done, where the stored word is not one people use. */
+const knownVerbs: Record<string, string> = {
   header_read: 'name and details read',
   glance_read: 'at a glance read',
+  locked: 'signed or sent',
   list: 'list read',
   listed: 'list read',
   listOfChild: 'list read',
@@ -66,7 +67,7 @@ export function accessActionWords(action: string): string {
   const [noun = '', verb = ''] = action.split('.')
   const known = nouns[noun] ?? nouns[noun.replace(/s$/, '')]
   const first = spoken(noun)
-  return `${known ?? first.charAt(0).toUpperCase() + first.slice(1)}: ${readings[verb] ?? spoken(verb)}`
+  return `${known ?? first.charAt(0).toUpperCase() + first.slice(1)}: ${knownVerbs[verb] ?? spoken(verb)}`
 }
 
 // A create asked for a second time writes nothing, and a file found damaged was only looked at.

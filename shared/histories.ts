@@ -258,6 +258,12 @@ export function historyDayProblems(
   return found
 }
 
+/** The word for a finished history: a therapist signs, a family sends. */
+export const historyFinishedLabels: Record<HistoryInformant, string> = {
+  guardian: 'Sent',
+  therapist: 'Signed',
+}
+
 export interface HistoryView {
   id: string
   childId: string

@@ -44,6 +44,10 @@ export const questionnaireDraftSchema = body({
 })
 export type QuestionnaireDraft = InferType<typeof questionnaireDraftSchema>
 
+/** The word for a finished response: a therapist signs, a family or teacher who was asked sends. */
+export const responseFinishedLabel = ({ requestId }: { requestId: string | null }) =>
+  requestId === null ? 'Signed' : 'Sent'
+
 export interface QuestionnaireView {
   id: string
   childId: string

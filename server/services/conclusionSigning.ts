@@ -61,7 +61,7 @@ const unfinishedProblem = (unfinished: readonly Unfinished[]): Record<string, st
   unfinished.length === 0
     ? {}
     : {
-        unfinished: `Lock or discard first what was begun: ${unfinished.map(({ words }) => words).join('; ')}`,
+        unfinished: `Sign or discard first what was begun: ${unfinished.map(({ words }) => words).join('; ')}`,
       }
 
 /** Signs that hold a routine block back come before a signature too: whoever reads it takes the child to be looked after. */

@@ -46,7 +46,7 @@ export const requireEvidence = async (
   if (found === null)
     throw invalid({
       evidence:
-        'A piece of evidence is not on this record, or is not locked or signed. Choose the evidence again.',
+        'A piece of evidence is not on this record, or is not signed or sent. Choose the evidence again.',
     })
   return found
 }

@@ -21,7 +21,10 @@ import { StaleWrite } from './versions.ts'
 const checkReplaced = async (tx: Tx, access: ChildAccess, replacesId: string): Promise<HistoryDetails> => {
   const earlier = await findForChild(access, History, replacesId, tx, { lock: true })
   if (earlier.lockedAt === null)
-    throw conflict('not_locked', 'Only a history that was closed is replaced. This one can still be changed.')
+    throw conflict(
+      'not_locked',
+      'Only a history that was signed or sent is replaced. This one can still be changed.',
+    )
   // A locking read: the newest row counts, not the one this transaction saw first.
   const newer = await selectOne(
     'SELECT id FROM histories WHERE replacesId = :replacesId FOR UPDATE',

@@ -165,5 +165,5 @@ const childOf = async (tx: Tx, childId: string): Promise<KnownChild> => {
 export const historyClosed = () =>
   conflict(
     'closed',
-    'This history was sent and stays as it is. To correct it, start a new one that replaces it.',
+    'This history was signed or sent and stays as it is. To correct it, start a new one that replaces it.',
   )

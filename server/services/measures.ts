@@ -40,7 +40,7 @@ const fact = (access: ChildAccess, action: string, id: string): AuditFact => ({
 const closed = () =>
   conflict(
     'closed',
-    'This measure is locked and stays as it is. To correct it, start a new version that replaces it.',
+    'This measure is signed and stays as it is. To correct it, start a new version that replaces it.',
   )
 
 /** The measure for writing; locked ones are refused here and, should this ever fail, by a trigger. */
@@ -57,7 +57,7 @@ const replacedBy = async (tx: Tx, access: ChildAccess, { kind, replacesId }: Mea
   if (earlier.kind !== kind)
     throw invalid({ replacesId: 'The earlier measure is of another kind, so it cannot be replaced by this.' })
   if (earlier.lockedAt === null)
-    throw conflict('not_locked', 'Only a locked measure is replaced. This one can still be changed.')
+    throw conflict('not_locked', 'Only a signed measure is replaced. This one can still be changed.')
   // A locking read: the newest row counts, not the one this transaction saw first.
   const newer = await selectOne(
     'SELECT id FROM measures WHERE replacesId = :replacesId FOR UPDATE',

@@ -16,7 +16,7 @@ import { updateIfCurrent } from './versions.ts'
 export const responseClosed = () =>
   conflict(
     'closed',
-    'This response is locked and stays as it is. To correct it, start a new one that replaces it.',
+    'This response was signed or sent and stays as it is. To correct it, start a new one that replaces it.',
   )
 
 /** The edition a response was begun with; it stays answerable after it was retired. */

@@ -63,7 +63,10 @@ const checkReplaced = async (
 ): Promise<void> => {
   const earlier = await findForChild(access, QuestionnaireResponse, replacesId, tx, { lock: true })
   if (earlier.lockedAt === null)
-    throw conflict('not_locked', 'Only a locked response is replaced. This one can still be changed.')
+    throw conflict(
+      'not_locked',
+      'Only a response that was signed or sent is replaced. This one can still be changed.',
+    )
   if ((await formOf(tx, earlier)).key !== form.key)
     throw invalid({
       formId: 'A response is replaced by one to the same form. Another form is a new response.',

@@ -1,7 +1,7 @@
 import { expect, it } from 'vitest'
 import {
   edgeOf,
-  lockMeasure,
+  signMeasure,
   recordReaches,
   seeTally,
   sideOf,
@@ -71,9 +71,9 @@ it.each([
 
     // Of 20 counted reaches 15 left, 5 right: 100 (5 − 15) / 20 = −50.0.
     expect([recorded.count('Left'), recorded.count('Right'), recorded.index]).toEqual([15, 5, '−50.0'])
-    expect(await lockMeasure(therapist)).toContain('1 reach was lost')
+    expect(await signMeasure(therapist)).toContain('1 reach was lost')
     await seeTally(therapist, recorded)
-    await inspect(therapist, `reaching-${hand}-locked`)
+    await inspect(therapist, `reaching-${hand}-signed`)
     expectNoFaults()
   },
 )
@@ -93,9 +93,9 @@ it('records and locks 21 reaches with the keyboard alone', async () => {
   const recorded = await recordReaches(therapist, acts, (act) => page.keyboard.press(keys[act]))
   await seeText(page, 'All 21 reaches are recorded')
   await saved(therapist)
-  await enterOn(therapist, page.getByRole('button', { name: 'Lock', exact: true }).locator('visible=true'))
-  const question = page.getByRole('alertdialog', { name: 'Lock this measure?' })
-  await enterOn(therapist, question.getByRole('button', { name: 'Lock it', exact: true }))
+  await enterOn(therapist, page.getByRole('button', { name: 'Sign', exact: true }).locator('visible=true'))
+  const question = page.getByRole('alertdialog', { name: 'Sign this measure?' })
+  await enterOn(therapist, question.getByRole('button', { name: 'Sign the measure', exact: true }))
   await seeHeading(page, 'As recorded')
   await seeTally(therapist, recorded)
   expectNoFaults()

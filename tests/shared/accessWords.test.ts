@@ -18,7 +18,7 @@ describe('an entry of the access history', () => {
     ['guardian.contact_changed', 'Carer: contact changed', 'Written'],
     ['child.changeState', 'Record: change state', 'Written'],
     ['histories.list', 'History: list read', 'Read'],
-    ['history.locked', 'History: locked', 'Written'],
+    ['history.locked', 'History: signed or sent', 'Written'],
     ['answerRequest.page', 'Questions to family or school: read', 'Read'],
     ['answerRequest.choices', 'Questions to family or school: whom to ask read', 'Read'],
     ['answerRequest.listed', 'Questions to family or school: list read', 'Read'],

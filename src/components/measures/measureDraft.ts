@@ -139,7 +139,7 @@ const seatingGaps = (details: SeatingDetails): string[] => {
   return names.length === 0 ? [] : [`Not measured: ${names.join(', ')}.`]
 }
 
-/** What is still open, for the person who is about to lock. Nothing here stands in the way. */
+/** What is still open, for the person who is about to sign. Nothing here stands in the way. */
 export function gapsOf(details: MeasureDetails): string[] {
   switch (details.kind) {
     case 'reaching': {

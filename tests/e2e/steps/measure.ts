@@ -27,12 +27,12 @@ export const sideOf = async (person: Person, name: string): Promise<number> => {
   return (box.x + box.width / 2) / width
 }
 
-/** Locks the measure that is open, after reading what the question says. */
-export const lockMeasure = async ({ page }: Person): Promise<string> => {
-  await page.getByRole('button', { name: 'Lock', exact: true }).locator('visible=true').click()
-  const question = page.getByRole('alertdialog', { name: 'Lock this measure?' })
+/** Signs the measure that is open, after reading what the question says. */
+export const signMeasure = async ({ page }: Person): Promise<string> => {
+  await page.getByRole('button', { name: 'Sign', exact: true }).locator('visible=true').click()
+  const question = page.getByRole('alertdialog', { name: 'Sign this measure?' })
   const words = await question.innerText()
-  await press(question, 'Lock it')
+  await press(question, 'Sign the measure')
   await seeHeading(page, 'As recorded')
   return words
 }
@@ -89,7 +89,7 @@ export const recordReaches = async (
   return tally(reaches)
 }
 
-/** The locked page says the same counts, by hand and by place, and the same index. */
+/** The signed page says the same counts, by hand and by place, and the same index. */
 export const seeTally = async ({ page }: Person, { reaches, count, index }: ReachTally): Promise<void> => {
   const result = page.getByRole('region', { name: 'Result', exact: true })
   const swapped = reaches.filter((reach) => reach.swapped).length
