@@ -180,13 +180,27 @@ function contradictionsOfHand(rows: readonly LateralLineRow[], hand: Hand, settl
   return found
 }
 
+/** From this age in years on, a settled label needs no word of its own. */
+const settledFrom = 6
+
+/** A settled label for a young child is a question to answer, not a mistake. Nothing is asked while the age is unknown. */
+const settledEarly = (settled: boolean, ageYears: number | null): string[] =>
+  settled && ageYears !== null && ageYears < settledFrom
+    ? [
+        `The label says settled at ${ageYears} years of age. Preference is weak at 3 to 5 and settles later (Scharoun & ` +
+          'Bryden 2014, Front Psychol 5:82): say why it is called settled.',
+      ]
+    : []
+
 /**
  * What a therapist is shown before signing a conclusion: measures that point opposite ways, and a label that does not
- * fit them or rests on one source only. Nothing here decides; an empty list means that nothing of this kind was found.
+ * fit them, rests on one source only or comes early (`ageYears`, whole years on the day it is given). Nothing here
+ * decides; an empty list means that nothing of this kind was found.
  */
 export function handContradictions(
   rows: readonly LateralLineRow[],
   preference: HandPreference | null,
+  ageYears: number | null = null,
 ): string[] {
   const chosen = preferenceRows(rows)
   const found = contradictionsAmong(chosen)
@@ -210,5 +224,5 @@ export function handContradictions(
         .map((row) => `${rowName(row)}: ${row.caution}`)
         .join('; ')}.`,
     )
-  return found
+  return [...found, ...settledEarly(label?.settled === true, ageYears)]
 }

@@ -13,6 +13,8 @@ export interface RedFlagHistory {
   handChanged: boolean | null
   /** The family is not sure whether the hand changed: it raises nothing by itself, and counts beside headaches. */
   handMayHaveChanged: boolean | null
+  /** Somebody asked the child to use another hand. It raises nothing by itself. */
+  askedToSwitch: boolean | null
   newWeakness: boolean | null
   numbness: boolean | null
   faceDroop: boolean | null
@@ -52,6 +54,7 @@ export const unknownHistory: RedFlagHistory = {
   gestationWeeks: null,
   handChanged: null,
   handMayHaveChanged: null,
+  askedToSwitch: null,
   newWeakness: null,
   numbness: null,
   faceDroop: null,

@@ -44,6 +44,7 @@ export function redFlagsOfHistory(details: HistoryDetails, child: FlaggedChild):
     gestationWeeks: details.gestationWeeks,
     handChanged: saidYes(details.handChanged),
     handMayHaveChanged: details.handChanged === null ? null : details.handChanged === 'unsure',
+    askedToSwitch: saidYes(details.askedToSwitch),
     newWeakness: saidYes(details.newWeakness),
     numbness: saidYes(details.numbness),
     faceDroop: saidYes(details.faceDroop),

@@ -149,7 +149,14 @@ const changeOfHand: Rule = (history) => {
     history.armInjury === true
       ? ' An injury, a plaster or an illness of arm, hand or head is reported too: compare the dates.'
       : ''
-  return raise('change-of-hand', `The child has changed hands.${besides}`)
+  const asked = history.askedToSwitch === true
+  const pressure = asked
+    ? ' Somebody has asked the child to use the other hand: ask kindly by whom and when, and leave the hand as it is.'
+    : ''
+  return raise('change-of-hand', `The child has changed hands.${besides}${pressure}`, [
+    'change-of-hand',
+    ...(asked ? ['asked to switch'] : []),
+  ])
 }
 
 const punished: Rule = ({ punishedForHand }) =>

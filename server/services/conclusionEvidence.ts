@@ -1,5 +1,6 @@
 import { evidenceChoice, reportCautions, type EvidenceRow } from '../../shared/conclusionEvidence.ts'
 import type { ConclusionContent, EvidenceChoice, EvidenceLink } from '../../shared/conclusions.ts'
+import { ageInYears } from '../../shared/days.ts'
 import { handProfileOf, withoutDetails } from '../../shared/handProfile.ts'
 import { handContradictions, statementText } from '../../shared/handStatements.ts'
 import type { LateralLineRow } from '../../shared/lateralLine.ts'
@@ -7,6 +8,7 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import type { Tx } from '../dataSource.ts'
 import { findChildFacts } from '../queries/childFacts.ts'
 import { listLockedHandEvidence } from '../queries/handEvidence.ts'
+import { clinicToday, readSettings } from './settings.ts'
 
 /** What the measures of a child say, side by side. */
 export interface HandFindings {
@@ -14,6 +16,8 @@ export interface HandFindings {
   statements: string[]
   citations: string[]
   cautions: string[]
+  /** Whole years today. */
+  ageYears: number
 }
 
 const each = (texts: readonly string[]) => [...new Set(texts)]
@@ -26,7 +30,9 @@ export const readHandFindings = async (access: ChildAccess, tx?: Tx): Promise<Ha
   const { birthDate } = await findChildFacts(access, tx)
   const { responses, measures } = await listLockedHandEvidence(access, tx)
   const { lateralLine, statements } = handProfileOf(responses, measures, birthDate)
+  const today = clinicToday(await readSettings(tx))
   return {
+    ageYears: ageInYears(birthDate, today),
     lateralLine: lateralLine.map(withoutDetails),
     statements: statements.map(statementText),
     citations: each(lateralLine.map(({ opens }) => opens.citation)),
@@ -36,9 +42,9 @@ export const readHandFindings = async (access: ChildAccess, tx?: Tx): Promise<Ha
 
 /** What does not agree, as the therapist is shown it before the signature. */
 export const contradictionsOf = (
-  { lateralLine }: Pick<HandFindings, 'lateralLine'>,
+  { lateralLine, ageYears }: Pick<HandFindings, 'lateralLine' | 'ageYears'>,
   { handPreference }: Pick<ConclusionContent, 'handPreference'>,
-): string[] => handContradictions(lateralLine, handPreference)
+): string[] => handContradictions(lateralLine, handPreference, ageYears)
 
 const isSame = (a: EvidenceLink, b: EvidenceLink) => a.kind === b.kind && a.id === b.id
 

@@ -311,6 +311,27 @@ describe('a conclusion', () => {
   })
 })
 
+describe('a settled label under six', () => {
+  it.each([
+    ['2020-06-11', 1],
+    ['2020-06-10', 0],
+  ])(
+    'of a child born on %s asks %d question that must be answered before it is signed',
+    async (born, asked) => {
+      await database().query('UPDATE children SET birthDate = ? WHERE id = ?', [born, child.id])
+      const { id, version } = await written()
+      const questions = (await check(id)).contradictions.filter((words) =>
+        words.includes('Scharoun & Bryden 2014'),
+      )
+      expect(questions).toHaveLength(asked)
+      const answer = await act('sign', id, version)
+      expect([answer.status, Object.keys(answer.body.fields ?? {})]).toEqual(
+        asked === 1 ? [422, ['aboutDisagreements']] : [200, []],
+      )
+    },
+  )
+})
+
 describe('evidence', () => {
   it('is offered in words: what is locked or signed, newest first, without drafts and replaced ones', async () => {
     const { id } = await started()

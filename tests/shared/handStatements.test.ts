@@ -185,6 +185,26 @@ describe('handContradictions', () => {
     expect(against([thin], [reachedWith('left')], 'left_settled').join(' ')).toContain('Provisional')
   })
 
+  // Scharoun & Bryden 2014 (abstract read): preference is weak at 3 to 5 and stronger by 7 to 10; six is the clinic's line.
+  it.each([
+    ['left_settled', 5, true],
+    ['left_settled', 3, true],
+    ['left_settled', 6, false],
+    ['left_settled', null, false],
+    ['left_emerging', 5, false],
+    ['unclear', 5, false],
+    [null, 5, false],
+  ] as const)('asks why %s is called settled at %j: %j', (label, ageYears, asked) => {
+    const rows = handProfileRows([answered('L')], [reachedWith('left')])
+    const question = handContradictions(rows, label, ageYears).filter((words) => words.includes('Scharoun'))
+    expect(question).toHaveLength(asked ? 1 : 0)
+    if (asked) {
+      expect(question[0]).toContain(`settled at ${ageYears} years`)
+      expect(question[0]).toContain('say why it is called settled')
+      expect(checkWording(question[0]!)).toEqual([])
+    }
+  })
+
   it('looks at the newest occasion only', () => {
     const earlier = answered('R', { answeredOn: '2024-03-03' })
     expect(against([answered('L'), earlier], [reachedWith('left')], 'left_settled')).toEqual([])

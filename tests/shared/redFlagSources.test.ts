@@ -178,6 +178,24 @@ describe('the words of a change of hand', () => {
   })
 })
 
+describe('a change of hand in a child who was asked to switch', () => {
+  const flag = (given: Partial<HistoryDetails>) => redFlagsOfHistory(history(given), eight)[0]
+  it('stays a medical review, whose words name the pressure too', () => {
+    const both = flag({ handChanged: 'yes', askedToSwitch: 'yes' })
+    expect([both?.id, both?.urgency]).toEqual(['change-of-hand', 'medical_review'])
+    expect(both?.words).toContain('Somebody has asked the child to use the other hand')
+    expect(checkWording(both?.words ?? '')).toEqual([])
+    for (const askedToSwitch of ['no', 'unsure', null] as const)
+      expect(flag({ handChanged: 'yes', askedToSwitch })?.words).toBe('The child has changed hands.')
+  })
+
+  it('adds the pressure to a sign that stands once it is told', () => {
+    const before = redFlagsOfHistory(history({ handChanged: 'yes' }), eight)
+    const after = redFlagsOfHistory(history({ handChanged: 'yes', askedToSwitch: 'yes' }), eight)
+    expect(ids(newlyRaised(before, after))).toEqual(['change-of-hand'])
+  })
+})
+
 describe('the flag of skill', () => {
   const skill = (low: number, high: number, given: Partial<HandSkill> = {}): HandSkill => ({
     kind: 'pegs',
