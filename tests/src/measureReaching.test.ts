@@ -214,11 +214,11 @@ describe('a measure that somebody else locked meanwhile', () => {
   })
 })
 
-describe('locking a measure', () => {
-  it('lists what is incomplete before it locks', async () => {
+describe('signing a measure', () => {
+  it('lists what is incomplete before it is signed', async () => {
     const page = await open()
     await page.keys('l', 'x')
-    await page.wrapper.get('.lock-edge').trigger('click')
+    await page.wrapper.get('.sign-edge').trigger('click')
     await flushPromises()
     expect(askedStep.value?.text).toContain('19 of 21 reaches are not recorded.')
     expect(askedStep.value?.text).toContain('1 reach was lost and stays out.')
@@ -227,9 +227,9 @@ describe('locking a measure', () => {
     expect(page.sent.at(-1)).toMatchObject({ method: 'POST', path: '/api/measures/measure/lock' })
   })
 
-  it('does not lock an empty measure without a reason, and says why beside the button', async () => {
+  it('does not sign an empty measure without a reason, and says why beside the button', async () => {
     const page = await open()
-    await page.wrapper.get('.lock-edge').trigger('click')
+    await page.wrapper.get('.sign-edge').trigger('click')
     await flushPromises()
     expect(askedStep.value).toBeNull()
     expect(page.wrapper.get('.finish').text()).toContain('Nothing is recorded yet')
