@@ -1,5 +1,6 @@
 import { flushPromises } from '@vue/test-utils'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
+import { measureHeadline } from '../../src/components/measures/measureWords.ts'
 import { answerStep, askedStep } from '../../src/composables/useConfirmStep.ts'
 import { emptyDetails } from '../../shared/measureScores.ts'
 import type { MeasureOptions } from '../../shared/measureSchemas.ts'
@@ -146,16 +147,43 @@ describe('timing pegs', () => {
     expect(trialsOf(page.stored)).toEqual([trial('right', 14)])
   })
 
-  // 12 and 14 s left, 15 and 15 s right: 100 (13 − 15)/(13 + 15) = −7.142…, minus is left faster (methods C).
+  // Means 12.2 s left, 15.2 s right: 100 (12.2 − 15.2)/(12.2 + 15.2) = −10.948…, minus is left faster (methods C).
   it('shows the index with its sign in words', async () => {
     const page = await open('pegs', {}, [
-      trial('left', 12),
-      trial('right', 15),
-      trial('right', 15),
-      trial('left', 14),
+      ...[12, 12.2, 12.4].map((value) => trial('left', value)),
+      ...[15, 15.2, 15.4].map((value) => trial('right', value)),
     ])
-    expect(page.wrapper.text()).toContain('−7.1, left faster')
+    expect(page.wrapper.text()).toContain('−10.9, left faster')
     expect(page.wrapper.text()).toContain('Compared with the child only')
+  })
+
+  // 12 and 14 s left, 15 and 15 s right: 100 (13 − 15)/(13 + 15) = −7.142…, but one degree of freedom (t 12.7) makes the
+  // interval reach far over zero.
+  it('names no hand where the interval of the index reaches zero', async () => {
+    const page = await open('pegs', {}, [
+      ...[12, 14].map((value) => trial('left', value)),
+      ...[15, 15].map((value) => trial('right', value)),
+    ])
+    expect(page.wrapper.text()).toContain('−7.1, no clear difference, 95% interval about')
+    expect(page.wrapper.text()).not.toContain('left faster')
+  })
+
+  // Signs by methods C. Each row: seconds or counts of the left and of the right hand.
+  it.each<[SkillKind, number[], number[], string]>([
+    ['pegs', [20, 22, 24], [21.9, 22, 21.9], 'no clear difference (+0.2)'],
+    ['pegs', [12, 12.2, 12.4], [15, 15.2, 15.4], 'left faster, −10.9'],
+    ['tapping', [60, 61, 62], [90, 91, 92], 'right did more, +19.7'],
+    ['dots', [40, 50], [44, 46], 'no clear difference (0.0)'],
+    ['dots', [40], [40], 'both hands alike, 0.0'],
+    ['pegs', [12], [15], 'left faster, −11.1'],
+    ['pegs', [12], [], '1 trial left, 0 right'],
+  ])('lists %s of %j left and %j right as “%s”', (kind, left, right, words) => {
+    const empty = emptyDetails(kind, {}, 1) as SkillDetails
+    const trials = [
+      ...left.map((value) => trial('left', value)),
+      ...right.map((value) => trial('right', value)),
+    ]
+    expect(measureHeadline(measureDraft(kind, {}, { ...empty, trials }))).toBe(words)
   })
 
   it('warns before leaving while the watch runs', async () => {

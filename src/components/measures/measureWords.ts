@@ -54,8 +54,14 @@ export const figureWords = (kind: SkillKind, value: number): string =>
 export const rangeWords = ({ low, high }: Interval, decimals = 1): string =>
   `${low.toFixed(decimals).replace('-', '−')} to ${high.toFixed(decimals).replace('-', '−')}`
 
-/** Which hand did better, in words that fit the task; the sign alone is easily misread. */
-export function betterHand(kind: SkillKind, index: number): string {
+const noClearDifference = 'no clear difference'
+
+/**
+ * Which hand did better, in words that fit the task; the sign alone is easily misread. No hand is named where the interval
+ * of the index reaches zero.
+ */
+export function betterHand({ kind, interval }: Pick<SkillScore, 'kind' | 'interval'>, index: number): string {
+  if (interval !== null && interval.low <= 0 && interval.high >= 0) return noClearDifference
   if (index === 0) return 'both hands alike'
   const hand = index < 0 ? 'left' : 'right'
   return kind === 'pegs' ? `${hand} faster` : `${hand} did more`
@@ -66,10 +72,12 @@ const reachingHeadline = (score: Extract<MeasureScore, { kind: 'reaching' }>) =>
   const counts = `${score.left} left, ${score.right} right`
   return score.lost > 0 ? `${counts}, ${score.lost} lost` : counts
 }
-const skillHeadline = (score: SkillScore) =>
-  score.index === null
-    ? `${score.left.trials} trials left, ${score.right.trials} right`
-    : `${betterHand(score.kind, score.index)}, ${formatQuotient(score.index)}`
+const skillHeadline = (score: SkillScore) => {
+  if (score.index === null) return `${plural(score.left.trials, 'trial', 'trials')} left, ${score.right.trials} right`
+  const words = betterHand(score, score.index)
+  const value = formatQuotient(score.index)
+  return words === noClearDifference ? `${words} (${value})` : `${words}, ${value}`
+}
 
 const sidesHeadline = ({ foot, eyeFar, ear }: SidesScore) => {
   const parts = [
