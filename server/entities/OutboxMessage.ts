@@ -5,7 +5,10 @@ import { User } from './User.ts'
 export type OutboxKind =
   'letter' | 'invitation' | 'password_reset' | 'password_changed' | 'delivery_failed' | 'answer_request'
 
-/** An e-mail, frozen when it was decided on; written in the transaction of the act. Message-ID and bytes never change. */
+/**
+ * An e-mail, frozen when it was decided on; written in the transaction of the act. Message-ID and bytes never change, but
+ * one that brought a link loses its bytes once it is sent, given up or cancelled.
+ */
 @Entity('outbox_messages')
 @Index(['state', 'nextAttemptAt'])
 export class OutboxMessage {

@@ -111,6 +111,24 @@ const guards: [name: string, moment: string, condition: string | null, why: stri
   ],
 ]
 
+const frozenMail = changed('kind', 'mimeSha256', 'messageId', 'recipient')
+const isOver = "NEW.state IN ('sent', 'failed', 'cancelled')"
+const bringsLink = "OLD.kind IN ('answer_request', 'invitation', 'password_reset')"
+
+/**
+ * An e-mail that brought a link forgets its bytes once it will not be sent (again): of the link's secret only the hash
+ * stays. Nothing else of an e-mail changes, and one without bytes is never queued again.
+ */
+const forgettingMailGuard = `CREATE TRIGGER outbox_messages_keep BEFORE UPDATE ON outbox_messages FOR EACH ROW
+  IF ${frozenMail}
+    OR (NOT (NEW.mime <=> OLD.mime) AND NOT (NEW.mime = '' AND ${bringsLink} AND ${isOver}))
+    OR (NEW.mime = '' AND NOT ${isOver})
+  THEN ${refuse('a queued e-mail is never changed')}; END IF`
+
+const unchangingMailGuard = `CREATE TRIGGER outbox_messages_keep BEFORE UPDATE ON outbox_messages FOR EACH ROW
+  IF ${changed('mime', 'mimeSha256', 'messageId', 'recipient')}
+  THEN ${refuse('a queued e-mail is never changed')}; END IF`
+
 /** Names of the triggers; the boot checks that each is there. */
 export const assessmentGuardNames = guards.map(([name]) => name)
 
@@ -135,9 +153,13 @@ export class AddAssessment1764580000000 implements MigrationInterface {
       const body = condition === null ? refuse(why) : `IF ${condition} THEN ${refuse(why)}; END IF`
       await runner.query(`CREATE TRIGGER ${name} ${moment} FOR EACH ROW ${body}`)
     }
+    await runner.query('DROP TRIGGER outbox_messages_keep')
+    await runner.query(forgettingMailGuard)
   }
 
   async down(runner: QueryRunner): Promise<void> {
+    await runner.query('DROP TRIGGER outbox_messages_keep')
+    await runner.query(unchangingMailGuard)
     for (const name of assessmentGuardNames) await runner.query(`DROP TRIGGER ${name}`)
     for (const [table, ...names] of dropped)
       for (const name of names) await runner.query(`ALTER TABLE ${table} DROP FOREIGN KEY ${name}`)

@@ -21,6 +21,7 @@ import { hashToken, newToken } from './accounts.ts'
 import { sendAnswerMail } from './answerMail.ts'
 import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
+import { forgetLink } from './outbox.ts'
 import { requireConsent } from './recordRules.ts'
 import { readSettings } from './settings.ts'
 import { countHit } from './throttles.ts'
@@ -149,7 +150,7 @@ export const cancelRequest = (
     await updateIfCurrent(tx, AnswerRequest, id, version, { cancelledAt: now() })
     await execute(
       tx,
-      `UPDATE outbox_messages SET state = 'cancelled', problem = 'The request was withdrawn'
+      `UPDATE outbox_messages SET state = 'cancelled', problem = 'The request was withdrawn', ${forgetLink}
        WHERE id = :mailId AND state = 'queued'`,
       { mailId: request.mailId },
     )

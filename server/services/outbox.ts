@@ -29,6 +29,12 @@ export const setMailSender = (next: MailSender): void => {
 }
 
 /**
+ * Part of the UPDATE that ends an e-mail (sent, failed or cancelled): one that brought a link forgets its bytes, so that
+ * only the hash of the link's secret stays. A trigger refuses it earlier and for other kinds.
+ */
+export const forgetLink = "mime = IF(kind IN ('answer_request', 'invitation', 'password_reset'), '', mime)"
+
+/**
  * Puts an e-mail into the outbox in the caller's transaction: no act, no mail. Message-ID and bytes are fixed here,
  * so that a repeated attempt is recognised by the receiver. Throws when the address is not one mailbox.
  */

@@ -12,7 +12,7 @@ import { execute, selectOne } from '../queries/sql.ts'
 import { reasonNotToAsk, tellRequestFailed } from './answerMail.ts'
 import { sendDueReminders } from './answerReminders.ts'
 import { reasonNotToDeliver, setDeliveryState } from './letterDeliveries.ts'
-import { enqueueMail } from './outbox.ts'
+import { enqueueMail, forgetLink } from './outbox.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { addTask, type NewTask } from './tasks.ts'
 import { transact } from './transact.ts'
@@ -135,7 +135,7 @@ const settle = async (message: Claimed, owner: string, outcome: Outcome, appUrl:
     const changed = await execute(
       tx,
       `UPDATE outbox_messages SET state = :state, leaseOwner = NULL, leaseUntil = NULL, problem = :problem,
-         nextAttemptAt = :next, sentAt = :sentAt WHERE id = :id AND leaseOwner = :owner`,
+         nextAttemptAt = :next, sentAt = :sentAt${outcome.state === 'queued' ? '' : `, ${forgetLink}`} WHERE id = :id AND leaseOwner = :owner`,
       {
         state: outcome.state,
         problem: outcome.state === 'sent' ? null : outcome.problem,

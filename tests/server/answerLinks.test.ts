@@ -16,6 +16,7 @@ import {
   tasksOf,
 } from '../support/answers.ts'
 import { buildGuardian, giveConsent } from '../support/factories.ts'
+import { startMail } from '../support/mail.ts'
 
 beforeAll(startApp)
 afterAll(stopApp)
@@ -63,6 +64,35 @@ describe('a link', () => {
       [`%${scene.token}%`],
     )
     expect(Number(dump.n)).toBe(0)
+  })
+
+  it('is in no row of the outbox once its e-mail was delivered, withdrawn or replaced', async () => {
+    const delivered = await linkScene()
+    const withdrawn = await linkScene()
+    const replaced = await linkScene()
+    const cancel = await withdrawn.therapist
+      .post(requestsPath(withdrawn.child, `/${withdrawn.request.id}/cancel`))
+      .set('If-Match', `"${withdrawn.request.version}"`)
+      .send({})
+    expect(cancel.status).toBe(204)
+    await database().query('UPDATE answer_requests SET mailId = NULL WHERE id = ?', [replaced.request.id])
+    const mail = await startMail()
+    try {
+      await mail.deliver()
+      expect((await mail.messages(delivered.email))[0]?.text).toContain(delivered.token)
+      expect(await mail.messages(withdrawn.email)).toEqual([])
+      expect(await mail.messages(replaced.email)).toEqual([])
+    } finally {
+      await mail.stop()
+    }
+    for (const { email } of [delivered, withdrawn, replaced]) {
+      const rows = await database().query(
+        'SELECT LENGTH(mime) AS bytes FROM outbox_messages WHERE recipient = ?',
+        [email],
+      )
+      expect(rows.map(({ bytes }: { bytes: unknown }) => Number(bytes))).toEqual([0])
+    }
+    expect((await byLink.open(delivered.token)).status).toBe(200)
   })
 
   it('opens as often as one likes, keeps answers, is sent once and then closed', async () => {

@@ -229,6 +229,73 @@ describe('the outbox', () => {
   })
 })
 
+describe('the bytes of an e-mail that brings a link', () => {
+  const kept = async (id: string) => {
+    const [row] = await database().query(
+      'SELECT LENGTH(mime) AS bytes, LENGTH(mimeSha256) AS hash, state FROM outbox_messages WHERE id = ?',
+      [id],
+    )
+    return { bytes: Number(row.bytes), hash: Number(row.hash), state: row.state as string }
+  }
+  const bytesOf = async (id: string): Promise<Buffer> =>
+    (await database().query('SELECT mime FROM outbox_messages WHERE id = ?', [id]))[0].mime
+
+  it('stay for the next try, the same ones, and are gone once it is sent; the hash stays', async () => {
+    const id = await enqueue(address())
+    const before = await bytesOf(id)
+    await mail.failNext(451, 1)
+    await mail.deliver()
+    expect(await stateOf(id)).toMatchObject({ state: 'queued' })
+    expect((await bytesOf(id)).equals(before)).toBe(true)
+    minutesLater(2)
+    await mail.deliver()
+    expect(await kept(id)).toEqual({ bytes: 0, hash: 32, state: 'sent' })
+  })
+
+  it('are gone when it was refused for good', async () => {
+    const id = await enqueue(address())
+    await mail.failNext(550, 1)
+    await mail.deliver()
+    expect(await kept(id)).toEqual({ bytes: 0, hash: 32, state: 'failed' })
+  })
+
+  it('stay when it was a letter’s notice, which brings no secret', async () => {
+    const scene = await letterScene()
+    const letter = await queuedLetter(scene)
+    await mail.deliver()
+    const [row] = await database().query(
+      `SELECT LENGTH(m.mime) AS bytes FROM outbox_messages m JOIN letter_deliveries d ON d.outboxMessageId = m.id
+       WHERE d.id = ?`,
+      [letter.deliveries[0]?.id],
+    )
+    expect(Number(row.bytes)).toBeGreaterThan(100)
+  })
+
+  it.each([
+    ['emptying it while it waits', "mime = ''"],
+    ['other bytes', "state = 'sent', mime = 'other'"],
+    ['another hash', "state = 'sent', mime = '', mimeSha256 = REPEAT('a', 32)"],
+    ['another kind', "kind = 'letter'"],
+    ['another recipient', "state = 'sent', mime = '', recipient = 'other@harrowmere.example'"],
+  ])('are kept by the database: %s is refused', async (_what, change) => {
+    const id = await enqueue(address())
+    await expect(database().query(`UPDATE outbox_messages SET ${change} WHERE id = ?`, [id])).rejects.toThrow(
+      'a queued e-mail is never changed',
+    )
+    // Nothing of this test is left for the next delivery.
+    await mail.deliver()
+  })
+
+  it('are not given back: an e-mail without bytes is never queued again', async () => {
+    const id = await enqueue(address())
+    await mail.deliver()
+    for (const change of ["state = 'queued'", "mime = 'again'"])
+      await expect(
+        database().query(`UPDATE outbox_messages SET ${change} WHERE id = ?`, [id]),
+      ).rejects.toThrow('a queued e-mail is never changed')
+  })
+})
+
 describe('just before an e-mail leaves', () => {
   it.each([
     ['consent to e-mail was withdrawn', 'email_link'],
