@@ -18,6 +18,7 @@ import { crossingExpectedFrom } from './reaching.ts'
 import type { Hand } from './roles.ts'
 import {
   namedRows,
+  once,
   otherHand,
   sideStatements,
   skillStatements,
@@ -42,6 +43,9 @@ const whoSaid: Record<Informant, string> = {
   therapist: 'therapist watching',
 }
 
+const elsewhereDifferent =
+  'A child may do things differently at home and at school. Ask about those activities, or watch them.'
+
 function informantStatement(title: string, pair: InformantPair): HandStatement | null {
   if (pair.compared === 0) return null
   const who = `The ${whoSaid[pair.one]} and the ${whoSaid[pair.other]}`
@@ -59,8 +63,7 @@ function informantStatement(title: string, pair: InformantPair): HandStatement |
     ? {
         kind: 'differs',
         text: `${who} answer differently for ${pair.discrepancies} of ${activities} (${title}; ${figures}).`,
-        because:
-          'A child may do things differently at home and at school. Ask about those activities, or watch them.',
+        because: elsewhereDifferent,
         rowIds: [],
       }
     : {
@@ -112,7 +115,12 @@ export function handStatements(rows: readonly LateralLineRow[], facts: Statement
   const statements = [
     askedStatement(asked),
     reachedStatement(asked, reached, youngThen),
-    ...facts.informants.flatMap(({ title, pairs }) => pairs.map((pair) => informantStatement(title, pair))),
+    ...once(
+      elsewhereDifferent,
+      facts.informants
+        .flatMap(({ title, pairs }) => pairs.map((pair) => informantStatement(title, pair)))
+        .filter((statement) => statement !== null),
+    ),
     ...skillStatements(hand, rows),
     ...sideStatements(hand, rows),
     ...notDone,

@@ -119,7 +119,7 @@ function partStatement(
 }
 
 /** Leaves a caution with the first statement that carries it: read three times over, it is not read at all. */
-function once(caution: string, statements: readonly HandStatement[]): HandStatement[] {
+export function once(caution: string, statements: readonly HandStatement[]): HandStatement[] {
   const first = statements.findIndex(({ because }) => because?.includes(caution))
   return statements.map((statement, index) => {
     if (index === first || !statement.because?.includes(caution)) return statement

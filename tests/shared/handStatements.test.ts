@@ -91,6 +91,26 @@ describe('handStatements', () => {
     expect(text).toContain('agreement 50 %')
   })
 
+  it('says once why home and school may differ, however many pairs do', () => {
+    const differs = of(
+      say(
+        [
+          answered('L'),
+          answered('R', { informant: 'teacher' }),
+          answered('R R R R R L L L L L', { informant: 'therapist' }),
+          answered('B', { informant: 'child_demonstrated' }),
+        ],
+        [],
+      ),
+      'differs',
+    ).filter((text) => text.includes('answer differently'))
+    expect(differs).toHaveLength(6)
+    expect(differs.map((text) => text.includes('differently at home and at school'))).toEqual([
+      true,
+      ...Array.from({ length: 5 }, () => false),
+    ])
+  })
+
   it('never puts a pair that mostly differs under what agrees, however few activities both answered', () => {
     const pair = (one: string, other: string) =>
       say([answered(one), answered(other, { informant: 'teacher' })], [])
