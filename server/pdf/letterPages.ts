@@ -114,7 +114,9 @@ export function createPages(pdf: PDFKit.PDFDocument): Pages {
     }
   }
 
-  const startOf = (piece: Piece) => piece.before + Math.min(piece.lines.length, 2) * piece.style.leading
+  /** The least that begins a piece, as `linesThatFit` breaks it: three lines stay together, more begin with two. */
+  const startOf = ({ before, lines, style }: Piece) =>
+    before + (lines.length > 3 ? 2 : lines.length) * style.leading
 
   /** What must not be torn from the piece at `index`: a heading's text, an opening line's list when it is short. */
   const heldTogether = (pieces: Piece[], index: number): number => {

@@ -163,6 +163,33 @@ describe('renderAssessmentReport', () => {
       expect(printed.join(' ')).toContain(`Page ${page} of ${pages}`)
   })
 
+  it.each([0, 1, 2, 3, 4])(
+    'leaves no bullet and no heading behind at the foot of a page, %i lines further down',
+    async (down) => {
+      // Three lines each: the place on the page moves by 50 points from item to item and from section to section.
+      const item = (n: number) => `item${n} ${Array.from({ length: 44 }, (_, at) => `w${at}`).join(' ')}`
+      const statements = Array.from({ length: 45 }, (_, n) => item(n))
+      const planDetail = Array.from({ length: 45 }, (_, n) => `- ${item(100 + n)}`).join('\n')
+      const matters = Array.from({ length: down + 1 }, (_, n) => `line${n}`).join('\n')
+      const long = {
+        ...report,
+        content: reportContent({ planDetail, mattersToChild: matters }),
+        evidence: { ...report.evidence, statements, lateralLine: [] },
+      }
+      const pages = (await read(long, 'pdftotext', '-layout'))
+        .split('\f')
+        .filter((page) => page.trim() !== '')
+      expect(pages.length).toBeGreaterThan(5)
+      const headings = /^(What|Conclusion|How|Methods)[a-z ]*$/
+      for (const page of pages) {
+        const lines = page.split('\n').filter((line) => line.trim() !== '')
+        const last = lines.at(-2)?.trim() ?? ''
+        expect(last).not.toBe('•')
+        expect(last).not.toMatch(headings)
+      }
+    },
+  )
+
   it('goes on with picture and table on further pages, headings repeated, when there are many measures', async () => {
     const many = Array.from({ length: 60 }, (_, n) =>
       lateralRow({
