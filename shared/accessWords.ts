@@ -9,6 +9,9 @@ export const childRelationLabels: Record<ChildRelation, string> = {
   administrator: 'Administrator',
 }
 
+/** A carer without a sign-in: nobody is signed in, but the link and the date of birth were theirs. */
+export const carerByLinkWords = 'Parent or carer, by e-mail link'
+
 const nouns: Record<string, string> = {
   child: 'Record',
   children: 'Record',

@@ -80,7 +80,7 @@ export const openLink = (call: LinkCall): Promise<AnswerableRequest> =>
   withLink(
     call,
     (_tx, record, request) => {
-      record(requestFact(request, 'answerLink.opened', null))
+      record(requestFact(request, 'answerLink.opened', 'guardian'))
       return Promise.resolve(request)
     },
     linkEnded,
@@ -94,7 +94,7 @@ export const saveByLink = async (
   const settings = await readSettings()
   return withLink(call, async (tx, record, request) => {
     await keepAnswers(tx, record, request, { ...given, settings })
-    record(requestFact(request, 'answerLink.saved', null))
+    record(requestFact(request, 'answerLink.saved', 'guardian'))
     return request
   })
 }
@@ -104,6 +104,6 @@ export const sendByLink = async (call: LinkCall, version: number): Promise<void>
   const settings = await readSettings()
   await withLink(call, async (tx, record, request) => {
     await closeAnswers(tx, record, request, { version, settings })
-    record(requestFact(request, 'answerLink.sent', null))
+    record(requestFact(request, 'answerLink.sent', 'guardian'))
   })
 }

@@ -56,7 +56,8 @@ const storeResponse = async (tx: Tx, request: AnswerableRequest, given: Given) =
   })
   await saveAnswers(tx, kept, kept.version, {
     answers: draft.answers,
-    comment: draft.comment ?? null,
+    // A save that names no comment leaves the stored one: null takes it away, absence does not.
+    comment: draft.comment === undefined ? kept.comment : draft.comment,
     answeredOn: clinicToday(settings),
   })
 }
@@ -108,7 +109,7 @@ export const storeAnswers = (
 const nothingAnswered = () =>
   invalid({ answers: 'Nothing is answered yet. “Does not do this yet” is an answer too.' })
 
-/** Closes the answers for good. Throws StaleWrite, and 422 when nothing was answered. */
+/** Closes the answers for good, with an entry of its own. Throws StaleWrite, and 422 when nothing was answered. */
 export const lockAnswers = async (
   tx: Tx,
   record: Record,
@@ -123,4 +124,11 @@ export const lockAnswers = async (
   const kept = await rowOf(QuestionnaireResponse, request, tx)
   if (!kept) throw nothingAnswered()
   await lockResponse(tx, kept, version, request.userId)
+  record({
+    action: 'questionnaire.locked',
+    objectType: 'questionnaire',
+    objectId: kept.id,
+    childId: request.childId,
+    relation: request.answerer,
+  })
 }

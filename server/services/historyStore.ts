@@ -56,11 +56,14 @@ export const insertHistory = async (tx: Tx, id: string, details: HistoryDetails,
   await tx.insert(History, { ...begun, id, details, lockedAt: null, lockedById: null, createdAt: now() })
 }
 
-/** Begins a history in which nothing is answered. Answers its id; its version is 1. The caller checks consent. */
+/**
+ * Begins a history in which nothing is answered. Answers its id; its version is 1. The caller checks consent and, of one
+ * that the clinic asked for, records who answered.
+ */
 export const beginHistory = async (tx: Tx, record: Record, begun: NewHistory): Promise<string> => {
   const id = randomUUID()
   await insertHistory(tx, id, emptyHistory, begun)
-  record(historyFact({ ...begun, id }, 'started'))
+  if (begun.requestId === null) record(historyFact({ ...begun, id }, 'started'))
   return id
 }
 
@@ -80,7 +83,8 @@ export interface HistorySave {
 
 /**
  * Saves the answers so far and raises the red flags that they show, at once and in the same transaction. Refuses (422)
- * days that cannot be and (409 `closed`) a history that was sent; throws StaleWrite.
+ * days that cannot be and (409 `closed`) a history that was sent; throws StaleWrite. Of one that the clinic asked for the
+ * caller records who saved: the entry of the request, or of its link, says it.
  */
 export const saveHistory = async (
   tx: Tx,
@@ -99,7 +103,7 @@ export const saveHistory = async (
     ...(respondentName !== undefined && { respondentName }),
     ...(answeredOn !== undefined && { answeredOn }),
   })
-  record(historyFact(history, 'changed'))
+  if (history.requestId === null) record(historyFact(history, 'changed'))
   const flags = redFlagsOfHistory(details, child)
   const fresh = newlyRaised(redFlagsOfHistory(history.details, child), flags).map(({ id }) => id)
   await raiseFlags(tx, record, {

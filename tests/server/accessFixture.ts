@@ -253,11 +253,12 @@ export const accessRows: readonly AccessRow[] = [
   area('GET /api/my/to-answer', ['guardian']),
   child('GET /api/my/children/:childId/answer-requests/:id', ['G1']),
   child('PUT /api/my/children/:childId/answer-requests/:id', ['G1']),
-  child('POST /api/my/children/:childId/answer-requests/:id/send', ['G1']),
+  // That the request came back and that the answers are closed are two entries.
+  { ...child('POST /api/my/children/:childId/answer-requests/:id/send', ['G1']), entries: 2 },
   area('GET /api/pupils/to-answer', ['teacher']),
   child('GET /api/pupils/:childId/answer-requests/:id', ['E1']),
   child('PUT /api/pupils/:childId/answer-requests/:id', ['E1']),
-  child('POST /api/pupils/:childId/answer-requests/:id/send', ['E1']),
+  { ...child('POST /api/pupils/:childId/answer-requests/:id/send', ['E1']), entries: 2 },
   // A carer without a sign-in: the link's secret and the child's birth date are the proof, checked in answerLinks.test.ts.
   open('POST /api/answer-links/open'),
   open('PUT /api/answer-links'),

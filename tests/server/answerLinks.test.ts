@@ -1,4 +1,5 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
+import type { AccessPage } from '../../shared/auditEntries.ts'
 import { emptyHistory } from '../../shared/histories.ts'
 import { setClock } from '../../server/clock.ts'
 import { database } from '../../server/dataSource.ts'
@@ -42,6 +43,16 @@ const saved = async (scene: LinkScene, given: object = {}): Promise<number> => {
   expect(response.status, response.text).toBe(200)
   return response.body.version
 }
+
+/** What the answers of a family left in the trail, apart from what the clinic did. */
+const trailOf = ({ child }: Pick<LinkScene, 'child'>) =>
+  database().query(
+    `SELECT action, result, actorId, relation FROM audit_entries
+     WHERE childId = ? AND (action LIKE 'answerLink.%' OR action LIKE 'history.%' OR action LIKE 'questionnaire.%'
+       OR action LIKE 'alert.%')
+     ORDER BY position`,
+    [child.id],
+  ) as Promise<{ action: string; result: string; actorId: string | null; relation: string | null }[]>
 
 /** Words that a refusal may not hold. */
 const tells = (scene: LinkScene, text: string) =>
@@ -126,6 +137,15 @@ describe('a link', () => {
     expect(stored.lockedAt).not.toBeNull()
     expect(await seenRequest(scene, scene.request.id)).toMatchObject({ state: 'answered', byLink: true })
     expect(await tasksOf(scene.child)).toContainEqual({ kind: 'answers_back', assigneeId: scene.holder.id })
+  })
+
+  it('keeps the comment when a save names none, and takes it away when told to', async () => {
+    const scene = await linkScene()
+    const first = await saved(scene, { comment: 'Half way' })
+    const second = await byLink.save(scene.token, first, { answers: someAnswers() })
+    expect([second.status, second.body.comment]).toEqual([200, 'Half way'])
+    const third = await byLink.save(scene.token, second.body.version, answers())
+    expect([third.status, third.body.comment]).toEqual([200, null])
   })
 
   it('takes one of twenty sends that arrive together: one 204, nineteen 410', async () => {
@@ -306,17 +326,38 @@ describe('a link', () => {
     await byLink.open(scene.token)
     await byLink.open(scene.token, '2011-01-01')
     await byLink.send(scene.token, await saved(scene))
-    const rows = (await database().query(
-      `SELECT action, result, actorId FROM audit_entries WHERE childId = ? AND action LIKE 'answerLink.%'
-       ORDER BY position`,
-      [scene.child.id],
-    )) as { action: string; result: string; actorId: string | null }[]
-    expect(rows).toEqual([
-      { action: 'answerLink.opened', result: 'allowed', actorId: null },
-      { action: 'answerLink.refused', result: 'denied', actorId: null },
-      { action: 'answerLink.saved', result: 'allowed', actorId: null },
-      { action: 'answerLink.sent', result: 'allowed', actorId: null },
+    expect(await trailOf(scene)).toEqual([
+      { action: 'answerLink.opened', result: 'allowed', actorId: null, relation: 'guardian' },
+      { action: 'answerLink.refused', result: 'denied', actorId: null, relation: null },
+      { action: 'answerLink.saved', result: 'allowed', actorId: null, relation: 'guardian' },
+      { action: 'questionnaire.locked', result: 'allowed', actorId: null, relation: 'guardian' },
+      { action: 'answerLink.sent', result: 'allowed', actorId: null, relation: 'guardian' },
     ])
+  })
+
+  it('leaves one entry for each save of a history, beside the signs it raises, and says who answered', async () => {
+    const scene = await askingScene()
+    await askByLink(scene, { asks: 'history' })
+    const token = await linkToken(scene.grandfather.email ?? '')
+    const history = { ...emptyHistory, enjoys: 'Digging in the garden', dropsThings: 'yes' as const }
+    const first = await byLink.save(token, 0, { history })
+    const second = await byLink.save(token, first.body.version, { history })
+    expect((await byLink.send(token, second.body.version)).status).toBe(204)
+    expect((await trailOf(scene)).map(({ action }) => action)).toEqual([
+      'alert.raised',
+      'answerLink.saved',
+      'answerLink.saved',
+      'history.locked',
+      'answerLink.sent',
+    ])
+    const seen = await scene.therapist.get(`/api/children/${scene.child.id}/access-history?size=100`)
+    const lines = (seen.body as AccessPage).rows.map(({ who, action }) => `${who} · ${action}`)
+    expect(lines).toContain('Parent or carer, by e-mail link · Questions by e-mail link: saved')
+    expect(lines).toContain('Parent or carer, by e-mail link · History: signed or sent')
+    // The mother sees nothing of what another carer did.
+    const { body: hers } = await scene.asCarer.get(`/api/children/${scene.child.id}/access-history?size=100`)
+    expect((hers as AccessPage).rows.map(({ who }) => who)).not.toContain('Parent or carer, by e-mail link')
+    expect((hers as AccessPage).rows.length).toBeGreaterThan(0)
   })
 
   it('of one child opens nothing of another, even with that child’s birth date', async () => {

@@ -410,6 +410,21 @@ describe('a history answered at home', () => {
     ])
     expect(stored.informant).toBe('guardian')
     expect(stored.lockedAt).not.toBeNull()
+    const trail = await database().query(
+      `SELECT action, relation, actorId FROM audit_entries
+       WHERE childId = ? AND (action LIKE 'history.%' OR action IN ('answerRequest.saved', 'answerRequest.answered'))
+       ORDER BY position`,
+      [scene.child.id],
+    )
+    expect(trail).toEqual(
+      ['answerRequest.saved', 'answerRequest.saved', 'history.locked', 'answerRequest.answered'].map(
+        (action) => ({
+          action,
+          relation: 'guardian',
+          actorId: scene.carer.id,
+        }),
+      ),
+    )
   })
 })
 
