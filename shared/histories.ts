@@ -279,6 +279,8 @@ export interface HistoryView {
   lockedBy: string | null
   replacesId: string | null
   replacedById: string | null
+  /** Begun for a request that ended before it was sent: nobody can finish it, and the therapist may discard it. */
+  leftOver: boolean
   version: number
-  can: { change: boolean; lock: boolean; replace: boolean }
+  can: { change: boolean; lock: boolean; discard: boolean; replace: boolean }
 }

@@ -67,6 +67,8 @@ export interface QuestionnaireView {
   requestId: string | null
   replacesId: string | null
   replacedById: string | null
+  /** Begun for a request that ended before it was sent: nobody can finish it, and the therapist may discard it. */
+  leftOver: boolean
   version: number
-  can: { change: boolean; lock: boolean; replace: boolean }
+  can: { change: boolean; lock: boolean; discard: boolean; replace: boolean }
 }

@@ -19,11 +19,17 @@ interface Stored {
   informant: HistoryInformant
   lockedAt: Date | null
   replacedById: string | null
+  /** Begun for a request that ended before the answers were sent. */
+  leftOver: boolean
 }
 
 /** What a family is still answering is theirs alone. */
 export const canChangeHistory = (access: ChildAccess, { informant, lockedAt }: Stored) =>
   isRelation(access, 'assignedTherapist') && lockedAt === null && informant === 'therapist'
+
+/** What a family can no longer send may be cleared away. */
+export const canDiscardHistory = (access: ChildAccess, { informant, lockedAt, leftOver }: Stored) =>
+  isRelation(access, 'assignedTherapist') && lockedAt === null && (informant === 'therapist' || leftOver)
 
 export const canReplaceHistory = (access: ChildAccess, { lockedAt, replacedById }: Stored) =>
   isRelation(access, 'assignedTherapist') && lockedAt !== null && replacedById === null

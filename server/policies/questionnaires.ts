@@ -15,6 +15,8 @@ interface Response {
   lockedAt: Date | null
   /** Set while a carer or teacher answers for themselves. */
   requestId: string | null
+  /** That request ended before the answers were sent. */
+  leftOver: boolean
   replacedById: string | null
 }
 
@@ -23,6 +25,10 @@ export const canAddQuestionnaire = (access: ChildAccess, consented: boolean) =>
 
 export const canChangeQuestionnaire = (access: ChildAccess, { lockedAt, requestId }: Response) =>
   isRelation(access, 'assignedTherapist') && lockedAt === null && requestId === null
+
+/** What nobody can finish any more may be cleared away; while somebody may still answer, it is theirs. */
+export const canDiscardQuestionnaire = (access: ChildAccess, { lockedAt, requestId, leftOver }: Response) =>
+  isRelation(access, 'assignedTherapist') && lockedAt === null && (requestId === null || leftOver)
 
 export const canReplaceQuestionnaire = (access: ChildAccess, { lockedAt, replacedById }: Response) =>
   isRelation(access, 'assignedTherapist') && lockedAt !== null && replacedById === null

@@ -1,7 +1,7 @@
 import type { HistoryView } from '../../shared/histories.ts'
 import { missingAnswers } from '../../shared/historyAnswers.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
-import { canChangeHistory, canReplaceHistory } from '../policies/histories.ts'
+import { canChangeHistory, canDiscardHistory, canReplaceHistory } from '../policies/histories.ts'
 import type { HistoryRecord } from '../queries/histories.ts'
 
 export const presentHistory = (
@@ -21,10 +21,12 @@ export const presentHistory = (
   lockedBy: history.lockedBy,
   replacesId: history.replacesId,
   replacedById: history.replacedById,
+  leftOver: history.leftOver,
   version: history.version,
   can: {
     change: canChangeHistory(access, history),
     lock: canChangeHistory(access, history),
+    discard: canDiscardHistory(access, history),
     replace: canReplaceHistory(access, history),
   },
 })

@@ -1,6 +1,10 @@
 import type { QuestionnaireView } from '../../shared/questionnaires.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
-import { canChangeQuestionnaire, canReplaceQuestionnaire } from '../policies/questionnaires.ts'
+import {
+  canChangeQuestionnaire,
+  canDiscardQuestionnaire,
+  canReplaceQuestionnaire,
+} from '../policies/questionnaires.ts'
 import type { QuestionnaireRecord } from '../queries/questionnaires.ts'
 import { presentForm } from './forms.ts'
 
@@ -23,10 +27,12 @@ export const presentQuestionnaire = (
   requestId: response.requestId,
   replacesId: response.replacesId,
   replacedById: response.replacedById,
+  leftOver: response.leftOver,
   version: response.version,
   can: {
     change: canChangeQuestionnaire(access, response),
     lock: canChangeQuestionnaire(access, response),
+    discard: canDiscardQuestionnaire(access, response),
     replace: canReplaceQuestionnaire(access, response),
   },
 })

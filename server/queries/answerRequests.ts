@@ -20,6 +20,24 @@ export const agreed = (purpose: 'assessment_treatment' | 'share_school_observati
 export const stillOpen = (row: string) =>
   `${row}.answeredAt IS NULL AND ${row}.cancelledAt IS NULL AND ${row}.expiresAt > :scopeNow`
 
+/**
+ * Answers begun for a request that was withdrawn or ran out before they were sent: nobody can finish them any more.
+ * `row` is the request, joined from the left. Parameter :requestNow.
+ */
+export const leftOver = (row: string) =>
+  `(${row}.id IS NOT NULL AND ${row}.answeredAt IS NULL
+    AND (${row}.cancelledAt IS NOT NULL OR ${row}.expiresAt <= :requestNow))`
+
+/** Has this request ended without being answered? It never opens again. */
+export const hasRequestEnded = async (id: string, tx: Tx): Promise<boolean> => {
+  const found = await selectOne<{ ended: number }>(
+    `SELECT ${leftOver('r')} AS ended FROM answer_requests r WHERE r.id = :id`,
+    { id, requestNow: now() },
+    tx,
+  )
+  return found !== null && flag(found.ended)
+}
+
 const answerId = 'COALESCE(q.id, h.id)'
 const withAnswers = `LEFT JOIN questionnaire_responses q ON q.requestId = r.id
   LEFT JOIN histories h ON h.requestId = r.id`

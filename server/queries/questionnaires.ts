@@ -5,8 +5,10 @@ import type { FormAnswers, FormDefinition, FormScore } from '../../shared/forms.
 import { cutOffSetById, defaultCutOffSet, type HandUseScore } from '../../shared/handUse.ts'
 import type { Informant } from '../../shared/questionnaires.ts'
 import type { ChildAccess } from '../access/childAccess.ts'
+import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
+import { leftOver } from './answerRequests.ts'
 import type { FormRecord } from './forms.ts'
 import { within } from './scope.ts'
 import { flag, fromJson, selectRows } from './sql.ts'
@@ -32,10 +34,20 @@ interface StoredResponse {
   replacesId: string | null
   replacedById: string | null
   superseded: number
+  leftOver: number
   version: number
 }
 
-type Read = 'answers' | 'score' | 'superseded' | 'formId' | 'formKey' | 'edition' | 'definition' | 'retiredAt'
+type Read =
+  | 'answers'
+  | 'score'
+  | 'superseded'
+  | 'leftOver'
+  | 'formId'
+  | 'formKey'
+  | 'edition'
+  | 'definition'
+  | 'retiredAt'
 
 export interface QuestionnaireRecord extends Omit<StoredResponse, Read> {
   /** The edition that is answered, which stays though a newer one was made. */
@@ -45,10 +57,23 @@ export interface QuestionnaireRecord extends Omit<StoredResponse, Read> {
   score: FormScore
   /** A locked newer version took its place. */
   superseded: boolean
+  /** Begun for a request that ended before the answers were sent. */
+  leftOver: boolean
 }
 
 const toRecord = (stored: StoredResponse): QuestionnaireRecord => {
-  const { formId, formKey, edition, definition, retiredAt, answers, score, superseded, ...rest } = stored
+  const {
+    formId,
+    formKey,
+    edition,
+    definition,
+    retiredAt,
+    answers,
+    score,
+    superseded,
+    leftOver: over,
+    ...rest
+  } = stored
   const form = {
     id: formId,
     key: formKey,
@@ -67,6 +92,7 @@ const toRecord = (stored: StoredResponse): QuestionnaireRecord => {
         : // Scores stored while there was one form only name neither method nor total.
           { method: form.definition.scoring, total: null, ...fromJson<HandUseScore | FormScore>(score) },
     superseded: flag(superseded),
+    leftOver: flag(over),
   }
 }
 
@@ -81,13 +107,14 @@ const selectResponses = async (
     `SELECT q.id, q.childId, f.id AS formId, f.formKey, f.edition, f.definition, f.retiredAt, q.informant,
        q.respondentName, q.answeredOn, q.answers, q.comment, q.cutOffSet, q.score, q.lockedAt,
        u.displayName AS lockedBy, q.requestId, q.replacesId, n.id AS replacedById,
-       (n.lockedAt IS NOT NULL) AS superseded, q.version
+       (n.lockedAt IS NOT NULL) AS superseded, ${leftOver('r')} AS leftOver, q.version
      FROM questionnaire_responses q
      JOIN questionnaire_forms f ON f.id = q.formVersion
      LEFT JOIN users u ON u.id = q.lockedById
      LEFT JOIN questionnaire_responses n ON n.replacesId = q.id
+     LEFT JOIN answer_requests r ON r.id = q.requestId
      WHERE ${scope.sql} AND ${condition} ORDER BY q.answeredOn DESC, q.createdAt DESC, q.id`,
-    { ...scope.parameters, ...parameters },
+    { ...scope.parameters, ...parameters, requestNow: now() },
     tx,
   )
   return rows.map(toRecord)

@@ -9,12 +9,13 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import type { Tx } from '../dataSource.ts'
 import { History } from '../entities/History.ts'
 import { conflict } from '../errors.ts'
+import { hasRequestEnded } from '../queries/answerRequests.ts'
 import { findHistory, type HistoryRecord } from '../queries/histories.ts'
 import { findForChild } from '../queries/scope.ts'
 import { selectOne } from '../queries/sql.ts'
 import { historyClosed, historyFact, insertHistory, lockHistory, saveHistory } from './historyStore.ts'
 import { createOnce } from './once.ts'
-import { requireConsent, requirePastDay } from './recordRules.ts'
+import { requestEnded, requireConsent, requirePastDay } from './recordRules.ts'
 import { transact } from './transact.ts'
 import { StaleWrite } from './versions.ts'
 
@@ -64,15 +65,33 @@ export const startHistory = async (
   })
 }
 
-/** The therapist's own page: a history that a carer is still answering is read only here. */
-const openHistory = async (tx: Tx, access: ChildAccess, id: string): Promise<History> => {
+const unlockedHistory = async (tx: Tx, access: ChildAccess, id: string): Promise<History> => {
   const history = await findForChild(access, History, id, tx, { lock: true })
   if (history.lockedAt !== null) throw historyClosed()
-  if (history.informant === 'guardian')
-    throw conflict(
-      'family_answers',
-      'The family is answering this history. It can be changed by them alone until it is sent.',
-    )
+  return history
+}
+
+const isLeftOver = async ({ requestId }: History, tx: Tx): Promise<boolean> =>
+  requestId !== null && (await hasRequestEnded(requestId, tx))
+
+const familyAnswers = () =>
+  conflict(
+    'family_answers',
+    'The family is answering this history. It can be changed by them alone until it is sent.',
+  )
+
+/** The therapist's own page: a history that a carer is still answering is read only here. */
+const openHistory = async (tx: Tx, access: ChildAccess, id: string): Promise<History> => {
+  const history = await unlockedHistory(tx, access, id)
+  if (history.informant !== 'guardian') return history
+  if (await isLeftOver(history, tx)) throw requestEnded()
+  throw familyAnswers()
+}
+
+/** The history to throw away: begun by a therapist, or left over from a request that ended. */
+const discardableHistory = async (tx: Tx, access: ChildAccess, id: string): Promise<History> => {
+  const history = await unlockedHistory(tx, access, id)
+  if (history.informant === 'guardian' && !(await isLeftOver(history, tx))) throw familyAnswers()
   return history
 }
 
@@ -108,8 +127,8 @@ export const closeHistory = (actor: Actor, access: ChildAccess, id: string, vers
   })
 
 /**
- * Removes a history that a therapist began and never closed. What it raised stays on the record. Throws StaleWrite when
- * somebody wrote in it in between.
+ * Removes a history that a therapist began and never closed, or that a family can no longer send. What it raised stays on
+ * the record. Throws StaleWrite when somebody wrote in it in between.
  */
 export const discardHistory = (
   actor: Actor,
@@ -118,8 +137,8 @@ export const discardHistory = (
   version: number,
 ): Promise<void> =>
   transact(actor, async (tx, record) => {
-    const history = await openHistory(tx, access, id)
+    const history = await discardableHistory(tx, access, id)
     if (history.version !== version) throw new StaleWrite()
     await tx.delete(History, id)
-    record(historyFact(history, 'discarded'))
+    record({ ...historyFact(history, 'discarded'), relation: access.relation })
   })

@@ -4,6 +4,7 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import type { Tx } from '../dataSource.ts'
 import { QuestionnaireResponse } from '../entities/QuestionnaireResponse.ts'
 import { conflict, invalid } from '../errors.ts'
+import { hasRequestEnded } from '../queries/answerRequests.ts'
 import { findForm, type FormRecord } from '../queries/forms.ts'
 import { findQuestionnaire, type QuestionnaireRecord } from '../queries/questionnaires.ts'
 import { findForChild } from '../queries/scope.ts'
@@ -18,7 +19,7 @@ import {
   responseClosed,
   saveAnswers,
 } from './questionnaireStore.ts'
-import { requireConsent, requirePastDay } from './recordRules.ts'
+import { requestEnded, requireConsent, requirePastDay } from './recordRules.ts'
 import { readSettings } from './settings.ts'
 import { transact } from './transact.ts'
 import { StaleWrite } from './versions.ts'
@@ -31,15 +32,32 @@ const fact = (access: ChildAccess, action: string, id: string): AuditFact => ({
   relation: access.relation,
 })
 
-/** The response for writing by staff; locked ones are refused here and, should this ever fail, by a trigger. */
-const openResponse = async (tx: Tx, access: ChildAccess, id: string): Promise<QuestionnaireResponse> => {
+/** Locked ones are refused here and, should this ever fail, by a trigger. */
+const unlockedResponse = async (tx: Tx, access: ChildAccess, id: string): Promise<QuestionnaireResponse> => {
   const response = await findForChild(access, QuestionnaireResponse, id, tx, { lock: true })
   if (response.lockedAt !== null) throw responseClosed()
-  if (response.requestId !== null)
-    throw conflict(
-      'asked',
-      'These are the answers of the person who was asked. They alone can change and send them.',
-    )
+  return response
+}
+
+const asked = () =>
+  conflict('asked', 'These are the answers of the person who was asked. They alone can change and send them.')
+
+/** The response for writing by staff: the words of somebody who was asked are never changed by them. */
+const openResponse = async (tx: Tx, access: ChildAccess, id: string): Promise<QuestionnaireResponse> => {
+  const response = await unlockedResponse(tx, access, id)
+  if (response.requestId === null) return response
+  if (await hasRequestEnded(response.requestId, tx)) throw requestEnded()
+  throw asked()
+}
+
+/** The response to throw away: begun by staff, or left over from a request that ended. */
+const discardableResponse = async (
+  tx: Tx,
+  access: ChildAccess,
+  id: string,
+): Promise<QuestionnaireResponse> => {
+  const response = await unlockedResponse(tx, access, id)
+  if (response.requestId !== null && !(await hasRequestEnded(response.requestId, tx))) throw asked()
   return response
 }
 
@@ -146,7 +164,10 @@ export const lockQuestionnaire = (
     record(fact(access, 'locked', id))
   })
 
-/** Removes a response that was begun and never locked. Throws StaleWrite when somebody answered in it in between. */
+/**
+ * Removes a response that was begun and never locked, also one of a request that ended before it was sent. Throws
+ * StaleWrite when somebody answered in it in between.
+ */
 export const discardQuestionnaire = (
   actor: Actor,
   access: ChildAccess,
@@ -154,7 +175,7 @@ export const discardQuestionnaire = (
   version: number,
 ): Promise<void> =>
   transact(actor, async (tx, record) => {
-    const response = await openResponse(tx, access, id)
+    const response = await discardableResponse(tx, access, id)
     if (response.version !== version) throw new StaleWrite()
     await tx.delete(QuestionnaireResponse, id)
     record(fact(access, 'discarded', id))

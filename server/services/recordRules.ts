@@ -28,3 +28,10 @@ export const requirePastDay = async (
   const problem = pastDayProblem(label, day, { birthDate, today: clinicToday(await readSettings()) })
   if (problem !== null) throw invalid({ [field]: problem })
 }
+
+/** Answers that were begun for a request and never sent stay in the words of who was asked, also once it has ended. */
+export const requestEnded = () =>
+  conflict(
+    'request_ended',
+    'These answers were never sent, and the request has ended. They can be discarded; nobody else changes or signs them.',
+  )

@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { setClock } from '../../server/clock.ts'
 import { database } from '../../server/dataSource.ts'
+import { AnswerRequest } from '../../server/entities/AnswerRequest.ts'
 import type { Child } from '../../server/entities/Child.ts'
 import type { User } from '../../server/entities/User.ts'
 import type { AlertView } from '../../shared/alerts.ts'
@@ -9,6 +10,7 @@ import { emptyHistory, type HistoryDetails, type HistoryView } from '../../share
 import { signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
 import { buildChild, buildGuardian, buildUser, giveConsent } from '../support/factories.ts'
 import { buildHistory, historyDetails } from '../support/histories.ts'
+import { insertRow } from '../support/insertRow.ts'
 
 let therapist: User
 let anna: Client
@@ -58,7 +60,7 @@ describe('a history', () => {
       version: 1,
       lockedAt: null,
       correctedUntilMonths: 24,
-      can: { change: true, lock: true, replace: false },
+      can: { change: true, lock: true, discard: true, replace: false },
     })
     expect(fresh.details).toEqual(emptyHistory)
     expect(fresh.missing).toContain('family.mother')
@@ -194,10 +196,51 @@ describe('a history', () => {
     const seen = (await anna.get(at(`/${id}`))).body
     expect([seen.respondentName, seen.can]).toEqual([
       'Maren Holt',
-      { change: false, lock: false, replace: false },
+      { change: false, lock: false, discard: false, replace: false },
     ])
     for (const refused of [await save(id, 1, { pain: 1 }), await lock(id, 1), await discard(id, 1)])
       expect([refused.status, refused.body.code]).toEqual([409, 'family_answers'])
+  })
+
+  it('of a family is theirs while it is asked for, and can only be discarded once the request was withdrawn', async () => {
+    const carer = await buildGuardian(child)
+    const request = await insertRow(AnswerRequest, {
+      id: randomUUID(),
+      childId: child.id,
+      asks: 'history',
+      formId: null,
+      answerer: 'guardian',
+      guardianId: carer.id,
+      teacherId: null,
+      tokenHash: null,
+      askedAt: new Date('2026-06-09T09:00:00Z'),
+      askedById: therapist.id,
+      expiresAt: new Date('2099-06-29T09:00:00Z'),
+    })
+    const { id } = await buildHistory(child, therapist, {
+      locked: false,
+      informant: 'guardian',
+      guardianId: carer.id,
+      requestId: request.id,
+      startedById: null,
+    })
+    const seen = async () => (await anna.get(at(`/${id}`))).body
+    expect([(await seen()).leftOver, (await seen()).can.discard]).toEqual([false, false])
+    expect((await discard(id, 1)).body.code).toBe('family_answers')
+    const ended = ['UPDATE answer_requests SET cancelledAt = NOW() WHERE id = ?', [request.id]] as const
+    await database().query(ended[0], [...ended[1]])
+    expect(await seen()).toMatchObject({
+      leftOver: true,
+      can: { change: false, lock: false, discard: true, replace: false },
+    })
+    for (const refused of [await save(id, 1, { pain: 1 }), await lock(id, 1)])
+      expect([refused.status, refused.body.code]).toEqual([409, 'request_ended'])
+    expect((await discard(id, 1)).status).toBe(204)
+    const [trail] = await database().query(
+      "SELECT relation, actorId FROM audit_entries WHERE objectId = ? AND action = 'history.discarded'",
+      [id],
+    )
+    expect(trail).toEqual({ relation: 'assignedTherapist', actorId: therapist.id })
   })
 })
 
@@ -205,7 +248,12 @@ describe('who may see and write histories', () => {
   it('lets the lead read and refuses the lead’s writing', async () => {
     const { id } = await begun()
     const lead = await signedInAs(await buildUser('clinicLead'))
-    expect((await lead.get(at(`/${id}`))).body.can).toEqual({ change: false, lock: false, replace: false })
+    expect((await lead.get(at(`/${id}`))).body.can).toEqual({
+      change: false,
+      lock: false,
+      discard: false,
+      replace: false,
+    })
     expect((await lead.post(at()).send(start)).status).toBe(403)
     expect((await lead.delete(at(`/${id}`))).status).toBe(403)
   })

@@ -107,7 +107,7 @@ describe('a hand-use questionnaire', () => {
       cutOffSet: 'clinic-40',
       version: 1,
       lockedAt: null,
-      can: { change: true, lock: true, replace: false },
+      can: { change: true, lock: true, discard: true, replace: false },
     })
     expect(Object.values(fresh.answers)).toEqual(Array(10).fill(null))
     expect(fresh.score).toMatchObject({ answered: 0, unanswered: 10, quotient: null, direction: null })
@@ -378,7 +378,7 @@ describe('answers that somebody was asked for', () => {
     })
     expect((await anna.get(at(`/${id}`))).body).toMatchObject({
       requestId,
-      can: { change: false, lock: false, replace: false },
+      can: { change: false, lock: false, discard: false, replace: false },
     })
     const tried = [
       await anna
@@ -390,6 +390,53 @@ describe('answers that somebody was asked for', () => {
     ]
     expect(tried.map(({ status, body }) => [status, body.code])).toEqual(Array(3).fill([409, 'asked']))
     expect((await anna.get(at(`/${id}`))).body.version).toBe(version)
+  })
+
+  it.each([
+    ['was withdrawn', { cancelledAt: new Date('2026-06-02T09:00:00Z') }],
+    ['ran out', { expiresAt: new Date('2026-06-02T09:00:00Z') }],
+  ])('can only be discarded, by the therapist, once the request %s', async (_how, ended) => {
+    const guardian = await buildGuardian(child)
+    const requestId = randomUUID()
+    await database().manager.insert(AnswerRequest, {
+      id: requestId,
+      childId: child.id,
+      asks: 'questionnaire',
+      formId: 'hand-use-10.v1',
+      answerer: 'guardian',
+      guardianId: guardian.id,
+      teacherId: null,
+      tokenHash: null,
+      askedAt: new Date('2026-06-01T09:00:00Z'),
+      askedById: therapist.id,
+      expiresAt: new Date('2026-06-29T09:00:00Z'),
+      ...ended,
+    })
+    const { id, version } = await buildQuestionnaire(child, therapist, {
+      locked: false,
+      requestId,
+      guardianId: guardian.id,
+      informant: 'guardian',
+      startedById: null,
+    })
+    expect((await anna.get(at(`/${id}`))).body).toMatchObject({
+      leftOver: true,
+      can: { change: false, lock: false, discard: true, replace: false },
+    })
+    const saved = await anna
+      .put(at(`/${id}`))
+      .set('If-Match', `"${version}"`)
+      .send(draft(settled))
+    const tried = [saved, await lock(id, version)]
+    expect(tried.map(({ status, body }) => [status, body.code])).toEqual(
+      Array(2).fill([409, 'request_ended']),
+    )
+    const lead = await signedInAs(await buildUser('clinicLead'))
+    expect((await lead.get(at(`/${id}`))).body.can.discard).toBe(false)
+    expect((await lead.delete(at(`/${id}`)).set('If-Match', `"${version}"`)).status).toBe(403)
+    expect((await discard(id, version + 1)).body.code).toBe('stale')
+    expect((await discard(id, version)).status).toBe(204)
+    expect((await anna.get(at(`/${id}`))).status).toBe(404)
   })
 })
 
@@ -456,7 +503,7 @@ describe('who may see and change hand-use responses', () => {
     const { id } = await begun()
     const lead = await signedInAs(await buildUser('clinicLead'))
     const seen = await lead.get(at(`/${id}`))
-    expect(seen.body.can).toEqual({ change: false, lock: false, replace: false })
+    expect(seen.body.can).toEqual({ change: false, lock: false, discard: false, replace: false })
     expect((await lead.get(`/api/children/${child.id}/hand-profile`)).body.can.add).toBe(false)
     const attempts = [
       lead.post(at()).send(start),

@@ -17,8 +17,9 @@ const kept = {
   lockedBy: 'Ada Test',
   replacesId: null,
   replacedById: null,
+  leftOver: false,
   version: 2,
-  can: { change: false, lock: false, replace: true },
+  can: { change: false, lock: false, discard: false, replace: true },
 }
 const response = (requestId: string | null): QuestionnaireView => ({
   ...answered('L'),
