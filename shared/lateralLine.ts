@@ -72,6 +72,29 @@ export interface HandProfileRow extends LateralLineRow {
 export const rowName = ({ measure, informant }: Pick<LateralLineRow, 'measure' | 'informant'>): string =>
   informant === null ? measure : `${measure} (${informant.toLowerCase()})`
 
+const middleWords: Record<LateralAspect, string> = {
+  preference: 'Mixed',
+  reaching: 'Within chance',
+  skill: 'No clear difference',
+  foot: 'Mixed',
+  eye_far: 'Mixed',
+  eye_near: 'Mixed',
+  ear: 'Mixed',
+}
+
+/** The value in words, by the measure's own rule. Preference and skill are told in words of their own. */
+export function sideWords({
+  value,
+  side,
+  aspect,
+}: Pick<LateralLineRow, 'value' | 'side' | 'aspect'>): string {
+  if (value === null) return 'Not scorable'
+  if (side === null) return 'No side told'
+  if (side === 'middle') return middleWords[aspect]
+  const word = side === 'left' ? 'Left' : 'Right'
+  return aspect === 'skill' ? `${word} hand ahead` : word
+}
+
 export interface LateralTrack<Row extends LateralLineRow = LateralLineRow> {
   id: string
   aspect: LateralAspect

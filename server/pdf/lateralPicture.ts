@@ -1,33 +1,38 @@
 import { formatDay } from '../../shared/days.ts'
 import { formatQuotient } from '../../shared/laterality.ts'
-import { rowName, tracksOf, type LateralLineRow, type LateralSide } from '../../shared/lateralLine.ts'
+import { rowName, sideWords, tracksOf, type LateralLineRow } from '../../shared/lateralLine.ts'
 import { breakIntoLines, drawLine, type Line, type TextStyle } from './letterLayout.ts'
 import type { Pages, Place } from './letterPages.ts'
 import { colours, styles } from './reportStyles.ts'
 
 interface Track {
   names: Line[]
+  /** The newest value and its side in words. */
+  values: { line: Line; style: TextStyle }[]
   /** The newest occasion first. */
   rows: LateralLineRow[]
   height: number
 }
 
-/** Columns within the page's text column, in points: names, the line itself, values. */
-const columns = { name: 124, lineFrom: 142, lineTo: 362, value: 378 }
+/** Columns within the page's text column, in points: names, the line itself, values and their width. */
+const columns = { name: 124, lineFrom: 142, lineTo: 362, value: 378, valueWidth: 57 }
 const axisHeight = 30
 const shortestTrack = 34
 const pictureLimit = 560
-
-export const sideWords: Record<LateralSide, string> = {
-  left: 'to the left',
-  middle: 'to neither side',
-  right: 'to the right',
-}
 
 /** Position of −100 … +100 along the line, in points from the left of the text column. */
 const at = (value: number) =>
   columns.lineFrom +
   ((Math.min(100, Math.max(-100, value)) + 100) / 200) * (columns.lineTo - columns.lineFrom)
+
+const valueLines = (pdf: PDFKit.PDFDocument, row: LateralLineRow): Track['values'] => {
+  const set = (text: string, style: TextStyle) =>
+    breakIntoLines(pdf, text, style, columns.valueWidth).map((line) => ({ line, style }))
+  return [
+    ...(row.value === null ? [] : set(formatQuotient(row.value), styles.cellStrong)),
+    ...set(sideWords(row), styles.cell),
+  ]
+}
 
 const laidOut = (pdf: PDFKit.PDFDocument, rows: readonly LateralLineRow[]): Track[] =>
   tracksOf(rows).map((track) => {
@@ -35,15 +40,24 @@ const laidOut = (pdf: PDFKit.PDFDocument, rows: readonly LateralLineRow[]): Trac
       ...breakIntoLines(pdf, track.measure, styles.cellStrong, columns.name),
       ...(track.informant ? breakIntoLines(pdf, track.informant, styles.cell, columns.name) : []),
     ]
-    const height = Math.max(shortestTrack, names.length * styles.cell.leading + 8)
-    return { names, rows: track.rows, height }
+    const values = track.rows.slice(0, 1).flatMap((newest) => valueLines(pdf, newest))
+    const most = Math.max(names.length, values.length)
+    return {
+      names,
+      values,
+      rows: track.rows,
+      height: Math.max(shortestTrack, most * styles.cell.leading + 8),
+    }
   })
 
-const inWords = (row: LateralLineRow): string => {
-  if (row.value === null) return `${rowName(row)}, ${formatDay(row.occasion)}: not scorable`
-  const side = row.side === null ? '' : `, ${sideWords[row.side]}`
-  return `${rowName(row)}, ${formatDay(row.occasion)}: ${formatQuotient(row.value)}${side}`
-}
+/** '−88.2, left', or 'not scorable'. */
+export const valueInWords = (row: LateralLineRow): string =>
+  [row.value === null ? null : formatQuotient(row.value), sideWords(row).toLowerCase()]
+    .filter((part) => part !== null)
+    .join(', ')
+
+const inWords = (row: LateralLineRow): string =>
+  `${rowName(row)}, ${formatDay(row.occasion)}: ${valueInWords(row)}`
 
 /** The picture in words, for those who do not see it. The table under it has every figure. */
 const alternative = (tracks: readonly Track[]): string => {
@@ -120,11 +134,11 @@ function drawAxis(pdf: PDFKit.PDFDocument, { x, top }: Place) {
   }
 }
 
-function drawTrack(pdf: PDFKit.PDFDocument, { names, rows, height }: Track, { x, top }: Place) {
+function drawTrack(pdf: PDFKit.PDFDocument, { names, values, rows, height }: Track, { x, top }: Place) {
   const [newest] = rows
   if (!newest) return
   const middle = top + height / 2
-  pdf.moveTo(x, top).lineTo(x + columns.value + 57, top)
+  pdf.moveTo(x, top).lineTo(x + columns.value + columns.valueWidth, top)
   pdf.lineWidth(0.5).strokeColor(colours.lineSoft).stroke()
   const namesTop = middle - (names.length * styles.cell.leading) / 2
   const measureLines = names.length - (newest.informant ? 1 : 0)
@@ -143,7 +157,9 @@ function drawTrack(pdf: PDFKit.PDFDocument, { names, rows, height }: Track, { x,
   pdf.moveTo(x + at(-100), middle).lineTo(x + at(100), middle)
   pdf.lineWidth(0.5).strokeColor(colours.line).stroke()
   for (const row of rows.toReversed()) drawRow(pdf, row, x, middle)
-  drawValue(pdf, newest, x + columns.value, middle)
+  const valuesTop = middle - (values.length * styles.cell.leading) / 2
+  for (const [index, { line, style }] of values.entries())
+    drawLine(pdf, line, { x: x + columns.value, top: valuesTop + index * style.leading }, style)
 }
 
 function drawBands(
@@ -200,16 +216,4 @@ function drawPetal(pdf: PDFKit.PDFDocument, value: number, x: number, y: number,
   if (!latest) pdf.dash(1.8, { space: 1.4 })
   pdf.fillAndStroke(fill, latest ? colours.ink : colours.inkSoft)
   pdf.restore()
-}
-
-function drawValue(pdf: PDFKit.PDFDocument, { value, side }: LateralLineRow, x: number, middle: number) {
-  const words =
-    value === null ? ['Not', 'scorable'] : [formatQuotient(value), side === null ? '' : sideWords[side]]
-  const filled = words.filter((word) => word !== '')
-  for (const [index, word] of filled.entries()) {
-    const style = index === 0 && value !== null ? styles.cellStrong : styles.cell
-    const [line] = breakIntoLines(pdf, word, style, 100)
-    const top = middle - (filled.length * style.leading) / 2 + index * style.leading
-    if (line) drawLine(pdf, line, { x, top }, style)
-  }
 }

@@ -1,7 +1,7 @@
 import { formatDay } from '../../shared/days.ts'
 import { formatQuotient } from '../../shared/laterality.ts'
-import { rowName, tracksOf, type LateralLineRow } from '../../shared/lateralLine.ts'
-import { printLateralLine, sideWords } from './lateralPicture.ts'
+import { rowName, sideWords, tracksOf, type LateralLineRow } from '../../shared/lateralLine.ts'
+import { printLateralLine, valueInWords } from './lateralPicture.ts'
 import { heightOf } from './letterLayout.ts'
 import type { Pages } from './letterPages.ts'
 import { pieceOf, styles } from './reportStyles.ts'
@@ -28,9 +28,7 @@ const span = ({ low, high }: { low: number; high: number }) =>
 const rowOf = (row: LateralLineRow): string[] => [
   rowName(row),
   formatDay(row.occasion),
-  row.value === null
-    ? 'Not scorable'
-    : `${formatQuotient(row.value)}${row.side === null ? '' : `, ${sideWords[row.side]}`}`,
+  row.value === null ? sideWords(row) : valueInWords(row),
   [
     row.interval ? span(row.interval) : null,
     row.chance ? `By chance ${span(row.chance)}` : null,

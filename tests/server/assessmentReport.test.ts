@@ -116,11 +116,9 @@ describe('renderAssessmentReport', () => {
     expect(stored).toHaveLength(1)
     const text = stored[0]?.subarray(2).swap16().toString('utf16le') ?? ''
     expect(text).toContain('from −100, always the left hand, to +100, always the right hand')
-    expect(text).toContain(
-      'Hand use in ten everyday activities (parent or carer), 3 Mar 2026: −88.2, to the left',
-    )
+    expect(text).toContain('Hand use in ten everyday activities (parent or carer), 3 Mar 2026: −88.2, left')
     expect(text).toContain('Hand use in ten everyday activities (teacher), 3 Mar 2026: not scorable')
-    expect(text).toContain('Reaching across the midline, 3 Mar 2026: −33.3, to neither side')
+    expect(text).toContain('Reaching across the midline, 3 Mar 2026: −33.3, within chance')
     expect(text).toContain('Earlier occasions drawn lighter: 1.')
   })
 

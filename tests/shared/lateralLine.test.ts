@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { tracksOf, type LateralLineRow } from '../../shared/lateralLine.ts'
+import { sideWords, tracksOf, type LateralLineRow } from '../../shared/lateralLine.ts'
 
 const row = (given: Partial<LateralLineRow>): LateralLineRow => ({
   id: 'a',
@@ -31,5 +31,23 @@ describe('tracksOf', () => {
       ['Parent or carer', ['new', 'old']],
       ['Teacher', ['teacher']],
     ])
+  })
+})
+
+describe('sideWords', () => {
+  it.each([
+    ['preference', 'middle', 'Mixed'],
+    ['preference', 'left', 'Left'],
+    ['reaching', 'middle', 'Within chance'],
+    ['skill', 'left', 'Left hand ahead'],
+    ['skill', 'middle', 'No clear difference'],
+    ['skill', null, 'No side told'],
+    ['eye_far', 'right', 'Right'],
+  ] as const)('says of %s to the %s: %s', (aspect, side, words) => {
+    expect(sideWords({ value: -3, side, aspect })).toBe(words)
+  })
+
+  it('says that there is nothing to tell where nothing was scored', () => {
+    expect(sideWords({ value: null, side: null, aspect: 'preference' })).toBe('Not scorable')
   })
 })

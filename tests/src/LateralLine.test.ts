@@ -7,7 +7,6 @@ import {
   chanceWordsAt,
   lateralGroups,
   sideOf,
-  sideWords,
   type OpeningRow,
 } from '@/components/handProfile/lateralAxis.ts'
 
@@ -87,24 +86,6 @@ describe('lateralGroups', () => {
       ['How well each hand does', ['Moving pegs']],
       ['Foot, eye and ear', ['Foot']],
     ])
-  })
-})
-
-describe('sideWords', () => {
-  it.each([
-    ['preference', 'middle', 'Mixed'],
-    ['preference', 'left', 'Left'],
-    ['reaching', 'middle', 'Within chance'],
-    ['skill', 'left', 'Left hand ahead'],
-    ['skill', 'middle', 'No clear difference'],
-    ['skill', null, 'No side told'],
-    ['eye_far', 'right', 'Right'],
-  ] as const)('says of %s to the %s: %s', (aspect, side, words) => {
-    expect(sideWords({ value: -3, side, aspect })).toBe(words)
-  })
-
-  it('says that there is nothing to tell where nothing was scored', () => {
-    expect(sideWords({ value: null, side: null, aspect: 'preference' })).toBe('Not scorable')
   })
 })
 

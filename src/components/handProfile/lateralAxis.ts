@@ -22,29 +22,6 @@ export const axisWidth = (low: number, high: number): number =>
 /** Which way the half-petal points: by sign only, so the mark never hides a value between the cut-offs. */
 export const sideOf = (value: number): Side => (value < 0 ? 'left' : value > 0 ? 'right' : 'neither')
 
-const middleWords: Record<LateralAspect, string> = {
-  preference: 'Mixed',
-  reaching: 'Within chance',
-  skill: 'No clear difference',
-  foot: 'Mixed',
-  eye_far: 'Mixed',
-  eye_near: 'Mixed',
-  ear: 'Mixed',
-}
-
-/** The value in words, by the measure's own rule. Preference and skill are told in words of their own. */
-export function sideWords({
-  value,
-  side,
-  aspect,
-}: Pick<LateralLineRow, 'value' | 'side' | 'aspect'>): string {
-  if (value === null) return 'Not scorable'
-  if (side === null) return 'No side told'
-  if (side === 'middle') return middleWords[aspect]
-  const word = side === 'left' ? 'Left' : 'Right'
-  return aspect === 'skill' ? `${word} hand ahead` : word
-}
-
 export interface LateralGroup {
   label: string
   tracks: LateralTrack<OpeningRow>[]
