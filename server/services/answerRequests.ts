@@ -4,6 +4,7 @@ import type { ChildAccess } from '../access/childAccess.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
 import { AnswerRequest } from '../entities/AnswerRequest.ts'
+import type { OutboxMessage } from '../entities/OutboxMessage.ts'
 import { conflict, invalid } from '../errors.ts'
 import {
   carerRefusal,
@@ -11,7 +12,12 @@ import {
   notThisTeacher,
   reasonNotToWrite,
 } from '../policies/answerRequests.ts'
-import { findRequestToWriteAbout, listCarersToAsk, listTeachersToAsk } from '../queries/answerAddressees.ts'
+import {
+  findRequestToWriteAbout,
+  listCarersToAsk,
+  listTeachersToAsk,
+  type RequestToWriteAbout,
+} from '../queries/answerAddressees.ts'
 import { isConsentGiven } from '../queries/childFacts.ts'
 import { findForm } from '../queries/forms.ts'
 import { lockChild } from '../queries/lockChild.ts'
@@ -158,8 +164,26 @@ export const cancelRequest = (
   })
 
 const remindersAnHour = 3
+const restMs = 86_400_000
 
-/** Writes once more to the person who was asked. Refused (409) when they may not be written to any more. */
+/** Was an e-mail sent, or something saved, in the last day? One that could not be delivered reached nobody. */
+const heardLately = async (tx: Tx, request: RequestToWriteAbout): Promise<boolean> => {
+  const since = now().getTime() - restMs
+  if (request.savedAt !== null && request.savedAt.getTime() > since) return true
+  const lastMailAt = request.remindedAt ?? request.askedAt
+  if (request.mailId === null || lastMailAt.getTime() <= since) return false
+  const mail = await selectOne<{ state: OutboxMessage['state'] }>(
+    'SELECT m.state FROM outbox_messages m WHERE m.id = :mailId',
+    { mailId: request.mailId },
+    tx,
+  )
+  return mail !== null && mail.state !== 'failed' && mail.state !== 'cancelled'
+}
+
+/**
+ * Writes once more to the person who was asked. Refused (409) when they may not be written to any more, and while an
+ * e-mail or an answer of theirs is less than a day old: the link they have goes on working.
+ */
 export const remindByHand = async (
   actor: Actor,
   access: ChildAccess,
@@ -174,6 +198,12 @@ export const remindByHand = async (
     const request = await standingOf(tx, id)
     const refusal = reasonNotToWrite(request)
     if (refusal !== null) throw conflict('closed', refusal)
+    if (await heardLately(tx, request))
+      throw conflict(
+        'reminded_lately',
+        'They had an e-mail, or saved answers, less than a day ago. What they have still works: give them a day ' +
+          'before you remind them.',
+      )
     await sendAnswerMail(tx, request, { kind: 'remind', settings, appUrl, sentById: access.viewer.id })
     record(fact(access, 'reminded', id))
   })

@@ -6,6 +6,7 @@ import { database } from '../../server/dataSource.ts'
 import { hashToken } from '../../server/services/accounts.ts'
 import { client, signedInAs, startApp, stopApp } from '../support/app.ts'
 import {
+  aDayPasses,
   askByLink,
   askingScene,
   birthDate,
@@ -312,6 +313,7 @@ describe('a link', () => {
   it('is replaced by the one of a reminder, and keeps what was answered', async () => {
     const scene = await linkScene()
     const version = await saved(scene, { comment: 'Half way' })
+    await aDayPasses(scene.request.id)
     const remind = await scene.therapist
       .post(requestsPath(scene.child, `/${scene.request.id}/remind`))
       .send({})

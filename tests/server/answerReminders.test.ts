@@ -4,6 +4,7 @@ import { database } from '../../server/dataSource.ts'
 import { sendDueReminders } from '../../server/services/answerReminders.ts'
 import { startApp, stopApp, testAppUrl } from '../support/app.ts'
 import {
+  aDayPasses,
   ask,
   askByLink,
   askingScene,
@@ -194,14 +195,18 @@ describe('reminders', () => {
     expect(await tasksOf(scene.child)).toEqual([{ kind: 'teacher_unanswered', assigneeId: scene.holder.id }])
   })
 
-  it('by hand go out at once, never four times an hour, and not after the answers came', async () => {
+  it('by hand go out once a day, and not after the answers came', async () => {
     const scene = await askingScene()
     const request = await askMother(scene)
     const byHand = () => scene.therapist.post(requestsPath(scene.child, `/${request.id}/remind`)).send({})
+    const tooSoon = await byHand()
+    expect([tooSoon.status, tooSoon.body.code]).toEqual([409, 'reminded_lately'])
+    await aDayPasses(request.id)
     expect((await byHand()).status).toBe(204)
     expect((await requestRow(request.id)).reminders).toBe(1)
-    await byHand()
-    await byHand()
+    expect((await byHand()).status).toBe(409)
+    expect((await requestRow(request.id)).reminders).toBe(1)
+    expect(await mailsTo(scene.mother.email ?? '')).toHaveLength(2)
     expect((await byHand()).status).toBe(429)
     const path = ownPage(scene.child, request.id)
     await saveAndSend(scene.asCarer, path, { answers: someAnswers(), comment: null })
@@ -209,14 +214,40 @@ describe('reminders', () => {
     expect((await byHand()).body.code).toBe('closed')
   })
 
+  it('by hand leave the first link and a carer who is at it alone', async () => {
+    const scene = await askingScene()
+    const request = await askByLink(scene)
+    const token = await linkToken(scene.grandfather.email ?? '')
+    await aDayPasses(request.id)
+    await byLink.save(token, 0, { answers: someAnswers(), comment: null })
+    const byHand = () => scene.therapist.post(requestsPath(scene.child, `/${request.id}/remind`)).send({})
+    expect((await byHand()).body.code).toBe('reminded_lately')
+    expect((await byLink.open(token)).status).toBe(200)
+    await aDayPasses(request.id)
+    expect((await byHand()).status).toBe(204)
+  })
+
+  it('by hand go out at once when the last e-mail could not be delivered', async () => {
+    const scene = await askingScene()
+    const request = await askByLink(scene)
+    await mail.failNext(550, 1, scene.grandfather.email ?? '')
+    await mail.deliver()
+    const again = await scene.therapist.post(requestsPath(scene.child, `/${request.id}/remind`)).send({})
+    expect(again.status).toBe(204)
+    await mail.deliver()
+    expect(await mail.messages(scene.grandfather.email ?? '')).toHaveLength(1)
+  })
+
   it('leave a queued e-mail behind that a newer one replaced, so that only the working link arrives', async () => {
     const scene = await askingScene()
     const request = await askByLink(scene)
+    await aDayPasses(request.id)
     await scene.therapist.post(requestsPath(scene.child, `/${request.id}/remind`)).send({})
+    const token = await linkToken(scene.grandfather.email ?? '')
     await mail.deliver()
     const messages = await mail.messages(scene.grandfather.email ?? '')
     expect(messages).toHaveLength(1)
-    expect(messages[0]?.text).toContain(await linkToken(scene.grandfather.email ?? ''))
+    expect(messages[0]?.text).toContain(token)
   })
 
   it('give the therapist a task when the address is refused', async () => {

@@ -7,6 +7,7 @@ import { database } from '../../server/dataSource.ts'
 import { fromJson } from '../../server/queries/sql.ts'
 import { signedInAs, startApp, stopApp } from '../support/app.ts'
 import {
+  aDayPasses,
   ask,
   asked,
   askByLink,
@@ -139,6 +140,7 @@ describe('asking for answers', () => {
     const byLead = { ...scene, therapist: lead }
     const ofMother = await askMother(byLead)
     const ofTeacher = await askTeacher(byLead)
+    await aDayPasses(ofTeacher.id)
     expect((await lead.post(requestsPath(scene.child, `/${ofTeacher.id}/remind`)).send({})).status).toBe(204)
     const { version } = await seenRequest(byLead, ofTeacher.id)
     const withdrawn = await lead

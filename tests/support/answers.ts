@@ -97,6 +97,15 @@ export const linkToken = async (recipient: string): Promise<string> => {
   return token
 }
 
+/** As if this request had been sent, reminded of and answered in part a day and an hour earlier. */
+export const aDayPasses = async (id: string): Promise<void> => {
+  await database().query(
+    `UPDATE answer_requests SET askedAt = askedAt - INTERVAL 25 HOUR, remindedAt = remindedAt - INTERVAL 25 HOUR,
+       savedAt = savedAt - INTERVAL 25 HOUR WHERE id = ?`,
+    [id],
+  )
+}
+
 export const someAnswers = (): FormAnswers => allAnswers('left')
 export const ownPage = (child: Pick<Child, 'id'>, id: string, rest = '') =>
   `/api/my/children/${child.id}/answer-requests/${id}${rest}`
