@@ -128,6 +128,21 @@ const checkSame = (before: MeasureDetails, after: MeasureDetails): void => {
     throw invalid({ details: 'The cards of this occasion were drawn in another order. Reload the page.' })
 }
 
+/** One occasion has one record: a measure does not move onto a day on which another of its kind is open. */
+const refuseTakenDay = async (
+  tx: Tx,
+  access: ChildAccess,
+  { kind, measuredOn: before }: Pick<Measure, 'kind' | 'measuredOn'>,
+  measuredOn: Day,
+) => {
+  if (measuredOn === before) return
+  const open = await openMeasureOf(access, kind, measuredOn, tx)
+  if (open)
+    throw invalid({
+      measuredOn: `${measureKindLabels[kind]} of ${formatDay(measuredOn)} was begun by ${open.startedBy} and is open. Choose another day, or go on there.`,
+    })
+}
+
 /** Saves the trials so far and answers them as this save left them. Throws StaleWrite when somebody saved in between. */
 export const saveMeasure = async (
   actor: Actor,
@@ -138,8 +153,11 @@ export const saveMeasure = async (
 ): Promise<MeasureRecord> => {
   await requirePastDay(access, 'measuredOn', 'The date', measuredOn)
   return transact(actor, async (tx, record) => {
+    // As where one is begun: the child first, so that nobody takes the day in between.
+    await lockChild(access, tx)
     const measure = await openMeasure(tx, access, id)
     checkSame(measure.details, details)
+    await refuseTakenDay(tx, access, measure, measuredOn)
     await updateIfCurrent(tx, Measure, id, version, { measuredOn, details, notDoneReason, comment })
     record(fact(access, 'changed', id))
     return findMeasure(access, id, tx)

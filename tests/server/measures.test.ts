@@ -331,6 +331,27 @@ describe('two people at one occasion', () => {
     expect(both.map((answer) => answer.status).sort()).toEqual([200, 409])
     expect((await anna.get(at(`/${id}`))).body.version).toBe(2)
   })
+
+  it('may not move an open measure onto a day that has another open one of its kind', async () => {
+    const first = await begun({ kind: 'pegs', measuredOn: '2026-06-08' })
+    const second = await begun({ kind: 'pegs' })
+    const moved = draft(second.details, { measuredOn: '2026-06-08' })
+    const refused = await put(second.id, 1, moved)
+    expect([refused.status, refused.body.fields.measuredOn]).toEqual([
+      422,
+      `Moving pegs of 8 Jun 2026 was begun by ${first.startedBy} and is open. Choose another day, or go on there.`,
+    ])
+    expect((await anna.get(at(`/${second.id}`))).body).toMatchObject({ measuredOn: '2026-06-09', version: 1 })
+    // A free day is fine, and so is the same one again.
+    expect((await put(second.id, 1, draft(second.details, { measuredOn: '2026-06-07' }))).status).toBe(200)
+    expect((await put(second.id, 2, draft(second.details, { measuredOn: '2026-06-07' }))).status).toBe(200)
+    // Two that move onto one free day at once: one does.
+    const both = await Promise.all([
+      put(first.id, 1, draft(first.details, { measuredOn: '2026-06-05' })),
+      put(second.id, 3, draft(second.details, { measuredOn: '2026-06-05' }), ben),
+    ])
+    expect(both.map(({ status }) => status).sort()).toEqual([200, 422])
+  })
 })
 
 describe('skill on the other side than the writing hand', () => {
