@@ -91,7 +91,7 @@ const texts: Record<ReferralFlagId, { text: string; level: Attention; urgency: R
 
 const patterns: Partial<Record<ReferralFlagId, RegExp>> = {
   new_weakness:
-    /\b(?:(?:new|sudden|suddenly|recent|growing)\s+(?:[\w'’-]+\s+){0,3}?weak(?:ness|er)?|(?:one|left|right)[\s-]sided\s+weakness|weak(?:ness)?\s+(?:in|of|on)\s+(?:(?:the|his|her|their|one)\s+)?(?:left|right|arm|hand|side|leg)|numb(?:ness)?|facial? droop\w*|droop\w*\s+(?:face|mouth|eye)|(?:face|mouth)\s+droop\w*|headaches?|seizures?|convulsions?|epilep\w+)/iu,
+    /\b(?:(?:new|sudden|suddenly|recent|growing)\s+(?:[\w'’-]+\s+){0,3}?weak(?:ness|er)?|(?:one|left|right)[\s-]sided\s+weakness|weak(?:ness)?\s+(?:in|of|on)\s+(?:(?:the|his|her|their|one)\s+)?(?:left|right|arm|hand|side|leg)|numb(?:ness)?\b|facial? droop\w*|droop\w*\s+(?:face|mouth|eye)|(?:face|mouth)\s+droop\w*|headaches?|seizures?|convulsions?|epilep\w+)/iu,
   other_hand_little_used:
     /\b(?:fist(?:ed|s|ing)?|(?:hardly|never|rarely|barely|does\s+not|doesn['’]t|stopped)\s+us(?:es?|ing)\s+(?:(?:the|his|her|their)\s+)?(?:left|right|other)|drop(?:s|ping)\s+things|(?:lost|losing)\s+(?:\w+\s+){0,2}?skills?|used\s+to\s+be\s+able)/iu,
   change_of_hand:
@@ -104,29 +104,67 @@ const patterns: Partial<Record<ReferralFlagId, RegExp>> = {
 const early =
   /\b(?:since|from|at|by|before|around|when)\b[^.;,]{0,24}?\b(\d{1,2})\s*(?:-|\s)?(?:months?|mths?|mo)\b|\bbefore\s+(?:the|his|her|their)\s+first\s+birthday\b/iu
 const aboutPreference = /\b(?:hand(?:ed|edness)?|left|right|prefer\w*)\b/iu
-const denied = /\b(?:no|not|never\s+(?:had|any)|without|denies|nor)\s+(?:[\w'’]+\s+){0,2}$/iu
+/** Up to two words between a denial and what it denies; "but", "and" and the like begin something that is not denied. */
+const between = String.raw`(?:(?!(?:but|and|however|yet|though|although|except|only|then|now|since)\b)[\w'’]+\s+){0,2}$`
+const denied = new RegExp(
+  String.raw`\b(?:no|not|never\s+(?:had|has|have|any|gets?|felt|feels?|complain\w*)|without|denies|nor|` +
+    String.raw`(?:has|have|had|is|are|was|were|does|do|did)n['’]t)` +
+    // "Does not stop hurting", "not only headaches", "not sure whether it is numb", "no idea why it hurts".
+    String.raw`\s+(?!(?:stop\w*|only|just|sure|know\w*|idea|doubt)\b)${between}`,
+  'iu',
+)
+const deniedAfter = /^\s*[?:–-]\s*(?:no|none|never|not)\b/iu
+const orBefore = new RegExp(String.raw`\b(?:or|nor)\s+${between}`, 'iu')
+const anySign = new RegExp(
+  Object.values(patterns)
+    .map(({ source }) => source)
+    .join('|'),
+  'giu',
+)
 
-/** The matched words, unless the sentence says that it is not so ("no pain", "without any headache"). */
-function found(pattern: RegExp, reason: string): string | null {
+/** "No headaches, seizures or numbness" denies all three: the signs named before are taken out of the list. */
+function withoutListed(before: string, after: string): string {
+  const inList = /^\s*(?:,|or\b|nor\b)/iu.test(after) || orBefore.test(before)
+  return inList ? before.replace(anySign, '').replace(/\s*(?:,|\bor\b|\bnor\b)\s*/giu, ' ') : before
+}
+
+/** Every match in words, but where the sentence says that it is not so ("no pain", "without any headache"). */
+function everyMatch(pattern: RegExp, text: string): string[] {
   const every = new RegExp(pattern.source, `g${pattern.flags}`)
-  for (const match of reason.matchAll(every)) {
+  return [...text.matchAll(every)].flatMap((match) => {
     const before =
-      reason
+      text
         .slice(0, match.index)
         .split(/[.;!?\n]/u)
         .at(-1) ?? ''
-    if (!denied.test(before)) return match[0].trim()
-  }
-  return null
+    const after = text.slice(match.index + match[0].length)
+    if (denied.test(before) || denied.test(withoutListed(before, after)) || deniedAfter.test(after)) return []
+    return [match[0].trim()]
+  })
 }
 
-/** Age in months at which a preference was seen, where the referral says so. */
-function preferenceSince(reason: string): { months: number; words: string } | null {
+/** The sign of an age in months at which a preference was seen, where the words name one. */
+function preferenceSince(reason: string): { id: ReferralFlagId | null; words: string } | null {
   const match = early.exec(reason)
   if (!match) return null
   const sentence = reason.slice(Math.max(0, match.index - 120), match.index + match[0].length + 60)
   if (!aboutPreference.test(sentence)) return null
-  return { months: match[1] === undefined ? 11 : Number(match[1]), words: match[0].trim() }
+  const months = match[1] === undefined ? 11 : Number(match[1])
+  const id = months < 12 ? 'preference_before_12_months' : months < 18 ? 'preference_12_to_18_months' : null
+  return { id, words: match[0].trim() }
+}
+
+/**
+ * Signs that stand in words somebody wrote, in the order of `referralFlagIds`, every match by itself. Signs that rest on
+ * an age, a date or a ticked concern are for the caller.
+ */
+export function flagsInWords(text: string): { id: ReferralFlagId; words: string }[] {
+  const since = preferenceSince(text)
+  return referralFlagIds.flatMap((id) => {
+    const pattern = patterns[id]
+    if (pattern) return everyMatch(pattern, text).map((words) => ({ id, words }))
+    return since?.id === id ? [{ id, words: since.words }] : []
+  })
 }
 
 /** Warning signs in the order of `referralFlagIds`; each names the words that raised it. */
@@ -137,23 +175,17 @@ export function referralFlagsOf({
   receivedOn,
 }: FlaggedReferral): ReferralFlag[] {
   const raised = new Map<ReferralFlagId, string | null>()
-  for (const [id, pattern] of Object.entries(patterns) as [ReferralFlagId, RegExp][]) {
-    const words = found(pattern, reason)
-    if (words !== null) raised.set(id, words)
-  }
+  for (const { id, words } of flagsInWords(reason)) if (!raised.has(id)) raised.set(id, words)
   if (concerns.includes('pain_fatigue') && !raised.has('pain')) raised.set('pain', null)
   if (concerns.includes('pressure_to_switch') && !raised.has('pressure_to_switch'))
     raised.set('pressure_to_switch', null)
-
-  const since = preferenceSince(reason)
-  if (since && since.months < 12) raised.set('preference_before_12_months', since.words)
-  else if (since && since.months < 18) raised.set('preference_12_to_18_months', since.words)
 
   // A date still being typed says nothing about age.
   if (isDay(birthDate) && isDay(receivedOn) && birthDate <= receivedOn) {
     const unclear = concerns.includes('hand_preference_unclear')
     if (unclear && ageInYears(birthDate, receivedOn) >= 6) raised.set('swaps_from_six', null)
-    const noticed = since === null && ageInMonths(birthDate, receivedOn) < 12 && concerns.length > 0
+    const noticed =
+      preferenceSince(reason) === null && ageInMonths(birthDate, receivedOn) < 12 && concerns.length > 0
     if (noticed) raised.set('preference_before_12_months', null)
   }
   return referralFlagIds.flatMap((id) => {

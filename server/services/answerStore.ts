@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import type { AnswerDraft } from '../../shared/answerRequests.ts'
 import { historyDetailsSchema, type HistoryDetails } from '../../shared/histories.ts'
+import { flagsInComment, type QuotedFlag } from '../../shared/redFlagWords.ts'
 import type { ClinicSettings } from '../../shared/settings.ts'
 import type { Tx } from '../dataSource.ts'
 import { History } from '../entities/History.ts'
@@ -10,6 +11,7 @@ import type { AnswerableRequest } from '../queries/answerRequests.ts'
 import type { AuditFact } from './audit.ts'
 import { beginHistory, lockHistory, saveHistory } from './historyStore.ts'
 import { beginRequestedResponse, lockResponse, saveAnswers } from './questionnaireStore.ts'
+import { raiseWrittenFlags } from './redFlagWords.ts'
 import { clinicToday } from './settings.ts'
 import { StaleWrite } from './versions.ts'
 
@@ -35,7 +37,7 @@ interface Given {
   settings: ClinicSettings
 }
 
-const storeResponse = async (tx: Tx, request: AnswerableRequest, given: Given) => {
+const storeResponse = async (tx: Tx, record: Record, request: AnswerableRequest, given: Given) => {
   const { version, draft, settings } = given
   const { formId } = request
   if (formId === null) throw new Error('A request for a questionnaire names no form')
@@ -54,13 +56,32 @@ const storeResponse = async (tx: Tx, request: AnswerableRequest, given: Given) =
     guardianId: request.guardianId,
     startedById: request.userId,
   })
+  // A save that names no comment leaves the stored one: null takes it away, absence does not.
+  const comment = draft.comment === undefined ? kept.comment : draft.comment
   await saveAnswers(tx, kept, kept.version, {
     answers: draft.answers,
-    // A save that names no comment leaves the stored one: null takes it away, absence does not.
-    comment: draft.comment === undefined ? kept.comment : draft.comment,
+    comment,
     answeredOn: clinicToday(settings),
   })
+  await raiseInComment(tx, record, request, kept.id, flagsInComment(comment, kept.comment))
 }
+
+const raiseInComment = (
+  tx: Tx,
+  record: Record,
+  request: AnswerableRequest,
+  originId: string,
+  found: readonly QuotedFlag[],
+): Promise<void> =>
+  raiseWrittenFlags(tx, record, {
+    childId: request.childId,
+    origin: 'questionnaire',
+    originId,
+    found,
+    writer: request.answerer === 'teacher' ? 'teacher' : 'family',
+    raisedById: request.userId,
+    relation: request.answerer,
+  })
 
 const storeHistory = async (tx: Tx, record: Record, request: AnswerableRequest, given: Given) => {
   const { draft, version, settings } = given
@@ -104,7 +125,9 @@ export const storeAnswers = (
   request: AnswerableRequest,
   given: Given,
 ): Promise<void> =>
-  request.asks === 'history' ? storeHistory(tx, record, request, given) : storeResponse(tx, request, given)
+  request.asks === 'history'
+    ? storeHistory(tx, record, request, given)
+    : storeResponse(tx, record, request, given)
 
 const nothingAnswered = () =>
   invalid({ answers: 'Nothing is answered yet. “Does not do this yet” is an answer too.' })
@@ -131,4 +154,5 @@ export const lockAnswers = async (
     childId: request.childId,
     relation: request.answerer,
   })
+  await raiseInComment(tx, record, request, kept.id, flagsInComment(kept.comment))
 }

@@ -9,6 +9,7 @@ import {
 } from '../../shared/histories.ts'
 import { newlyRaised } from '../../shared/redFlags.ts'
 import { redFlagsOfHistory } from '../../shared/redFlagSources.ts'
+import { flagsInHistoryWords, type QuotedFlag } from '../../shared/redFlagWords.ts'
 import type { ChildRelation } from '../../shared/roles.ts'
 import { now } from '../clock.ts'
 import type { Tx } from '../dataSource.ts'
@@ -17,6 +18,7 @@ import { conflict, invalid, notFound } from '../errors.ts'
 import { selectOne } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
 import { raiseFlags } from './redFlags.ts'
+import { raiseWrittenFlags } from './redFlagWords.ts'
 import { clinicToday, readSettings } from './settings.ts'
 import { updateIfCurrent } from './versions.ts'
 
@@ -115,6 +117,29 @@ export const saveHistory = async (
     raisedById: byId,
     relation: relationTo(history),
   })
+  await raiseInWords(tx, record, history, flagsInHistoryWords(details, history.details), byId)
+}
+
+/** A therapist writes down what was told and raises signs by hand; only a family's own words are read for them. */
+const raiseInWords = async (
+  tx: Tx,
+  record: Record,
+  history: History,
+  found: readonly QuotedFlag[],
+  raisedById: string | null,
+): Promise<void> => {
+  if (history.informant !== 'guardian') return
+  const { childId, id: originId } = history
+  const relation = relationTo(history)
+  await raiseWrittenFlags(tx, record, {
+    childId,
+    origin: 'history',
+    originId,
+    found,
+    writer: 'family',
+    raisedById,
+    relation,
+  })
 }
 
 /**
@@ -146,6 +171,7 @@ export const lockHistory = async (
     raisedById: lockedById,
     relation: relationTo(history),
   })
+  await raiseInWords(tx, record, history, flagsInHistoryWords(history.details), lockedById)
 }
 
 interface KnownChild {

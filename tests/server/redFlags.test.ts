@@ -5,11 +5,27 @@ import { database } from '../../server/dataSource.ts'
 import type { Child } from '../../server/entities/Child.ts'
 import { History } from '../../server/entities/History.ts'
 import type { User } from '../../server/entities/User.ts'
-import { beginHistory, saveHistory } from '../../server/services/historyStore.ts'
+import { raiseReferralFlags } from '../../server/services/alerts.ts'
+import { beginHistory, lockHistory, saveHistory } from '../../server/services/historyStore.ts'
 import { transact } from '../../server/services/transact.ts'
 import type { AlertView } from '../../shared/alerts.ts'
+import { referralFlagsOf } from '../../shared/referralFlags.ts'
 import type { HistoryDetails } from '../../shared/histories.ts'
 import { signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
+import {
+  askByLink,
+  askingScene,
+  askMother,
+  askTeacher,
+  byLink,
+  linkToken,
+  ownPage,
+  pupilPage,
+  put,
+  saveAndSend,
+  someAnswers,
+  type AskingScene,
+} from '../support/answers.ts'
 import { buildChild, buildGuardian, buildUser, giveConsent } from '../support/factories.ts'
 import { buildHistory, historyDetails } from '../support/histories.ts'
 
@@ -221,6 +237,48 @@ const nothing = {
   note: null,
 }
 
+describe('a sign that a referral told first', () => {
+  const referred = (reason: string) =>
+    transact(systemActor('test'), (tx, note) =>
+      raiseReferralFlags(
+        tx,
+        note,
+        { childId: child.id, therapistId: therapist.id, today: '2026-06-10' },
+        referralFlagsOf({
+          reason,
+          concerns: ['handwriting'],
+          birthDate: '2018-05-04',
+          receivedOn: '2026-06-10',
+        }),
+      ),
+    )
+
+  it('stands once when a history tells it too, and has a task for today when it is for the same day', async () => {
+    await referred('Sudden weakness of the left hand.')
+    const { save } = await told()
+    await save({ numbness: 'yes' })
+    const [alert, ...more] = await alerts()
+    expect(more).toEqual([])
+    expect(alert).toMatchObject({ flag: 'new-neurological-signs', origin: 'referral', urgency: 'same_day' })
+    expect(alert?.text).toMatch(/“Sudden weakness”.*Reported since: .*numbness/)
+    expect((await tasks()).some(({ text }) => text.startsWith('Today:'))).toBe(true)
+  })
+
+  it('stands once when a later referral tells it again, and comes back once it was acted on', async () => {
+    await referred('He broke his left arm in May.')
+    await referred('He broke his left arm in May.')
+    expect(await flags()).toEqual(['change-of-hand'])
+    await referred('Fractured the left wrist.')
+    const [alert, ...more] = await alerts()
+    expect(more).toEqual([])
+    expect(alert?.text).toMatch(/broke his left arm.*Reported since.*Fractured/)
+    expect(await tasks()).toHaveLength(1)
+    await act(alert!.id)
+    await referred('Fractured the left wrist.')
+    expect(await flags()).toEqual(['change-of-hand', 'change-of-hand'])
+  })
+})
+
 describe('a red flag of a writing observation', () => {
   const observe = (given: object) =>
     anna.post(record('/writing-observations')).send({
@@ -290,6 +348,138 @@ describe('worse pain', () => {
     expect(await alerts()).toHaveLength(1)
     await save({ pain: 8 })
     expect(await pains()).toHaveLength(2)
+  })
+})
+
+describe('signs in the words of a family', () => {
+  const answering = async () => {
+    const carer = await buildGuardian(child)
+    const { id } = await buildHistory(child, therapist, {
+      locked: false,
+      informant: 'guardian',
+      guardianId: carer.id,
+      startedById: null,
+    })
+    const stored = () => database().manager.findOneByOrFail(History, { id })
+    const save = (given: Partial<HistoryDetails>) =>
+      transact(systemActor('request'), async (tx, log) => {
+        const history = await stored()
+        const details = historyDetails({ enjoys: 'Dens', ...given })
+        await saveHistory(tx, log, { history, version: history.version, details, byId: null })
+      })
+    const send = () =>
+      transact(systemActor('request'), async (tx, log) => {
+        const history = await stored()
+        await lockHistory(tx, log, { history, version: history.version, lockedById: null })
+      })
+    return { id, save, send }
+  }
+  const texts = async () => (await alerts()).map(({ text }) => text)
+
+  it('are raised when a save ends their word, quoted, with the urgency of their row and a task', async () => {
+    const { id, save } = await answering()
+    await save({ anythingElse: 'He likes numb' })
+    await save({ anythingElse: 'He likes numbers. In May he had a seizure' })
+    expect(await alerts()).toEqual([])
+    await save({ anythingElse: 'He likes numbers. In May he had a seizure, and' })
+    const [alert, ...more] = await alerts()
+    expect(more).toEqual([])
+    expect(alert).toMatchObject({
+      flag: 'new-neurological-signs',
+      text: 'The family wrote: “seizure”.',
+      urgency: 'same_day',
+      origin: 'history',
+      originId: id,
+      holdsBooking: true,
+    })
+    expect(await tasks()).toHaveLength(1)
+  })
+
+  it('count for the last word too once the text rests, and once it is sent', async () => {
+    const resting = await answering()
+    await resting.save({ anythingElse: 'He had a seizure' })
+    expect(await alerts()).toEqual([])
+    await resting.save({ anythingElse: 'He had a seizure', pain: 1 })
+    expect(await texts()).toEqual(['The family wrote: “seizure”.'])
+
+    const sent = await answering()
+    await sent.save({ childsWords: 'My arm is numb' })
+    expect(await texts()).toHaveLength(1)
+    await sent.send()
+    expect(await texts()).toEqual(['The family wrote: “seizure”. Reported since: The family wrote: “numb”.'])
+  })
+
+  it('stand once, are added to what was answered, and come back only with new words', async () => {
+    const { save, send } = await answering()
+    await save({ numbness: 'yes', anythingElse: 'Since the seizure he is tired.' })
+    expect(await texts()).toEqual([
+      expect.stringMatching(/^There is numbness\..*Reported since: The family wrote: “seizure”\.$/),
+    ])
+    await save({ numbness: 'yes', anythingElse: 'Since the seizure he is very tired.' })
+    expect(await alerts()).toHaveLength(1)
+    await act((await alerts())[0]!.id)
+    await save({ numbness: 'yes', anythingElse: 'Since the seizure he is very tired. Sleeps well.' })
+    await send()
+    expect(await alerts()).toHaveLength(1)
+  })
+
+  it('are not seen in what is denied', async () => {
+    const { save, send } = await answering()
+    await save({ anythingElse: 'No seizures, headaches or numbness.' })
+    await send()
+    expect(await alerts()).toEqual([])
+  })
+
+  it('are looked for in what a family wrote, and not in what a therapist wrote down', async () => {
+    const { save } = await told()
+    await save({ anythingElse: 'The seizure of 2024 was looked at in hospital.' })
+    expect(await alerts()).toEqual([])
+  })
+})
+
+describe('signs in the comment of a questionnaire', () => {
+  const alertsOf = async (scene: AskingScene): Promise<AlertView[]> =>
+    (await scene.therapist.get(`/api/children/${scene.child.id}/alerts`)).body
+
+  it('are raised as a teacher or a family writes them, under the response, by who signed in', async () => {
+    const scene = await askingScene()
+    const school = await askTeacher(scene)
+    const at = pupilPage(scene.child, school.id)
+    const saved = await put(scene.asTeacher, at, 0, {
+      answers: someAnswers(),
+      comment: 'No pain. She drops things at lun',
+    })
+    expect(saved.status, saved.text).toBe(200)
+    const [alert] = await alertsOf(scene)
+    expect(alert).toMatchObject({
+      flag: 'other-hand-or-lost-skill',
+      text: 'The teacher wrote: “drops things”.',
+      origin: 'questionnaire',
+      raisedBy: scene.teacher.displayName,
+    })
+    const home = await askMother(scene)
+    await saveAndSend(scene.asCarer, ownPage(scene.child, home.id), {
+      answers: someAnswers(),
+      comment: 'Her face droops',
+    })
+    expect((await alertsOf(scene)).map(({ text }) => text).toSorted()).toEqual([
+      'The family wrote: “face droops”.',
+      'The teacher wrote: “drops things”.',
+    ])
+  })
+
+  it('are raised through a link with nobody named', async () => {
+    const scene = await askingScene()
+    await askByLink(scene)
+    const token = await linkToken(scene.grandfather.email!)
+    const saved = await byLink.save(token, 0, {
+      answers: someAnswers(),
+      comment: 'His hand hurts. He is brave.',
+    })
+    expect(saved.status, saved.text).toBe(200)
+    const [alert, ...more] = await alertsOf(scene)
+    expect(more).toEqual([])
+    expect(alert).toMatchObject({ flag: 'pain', urgency: 'safeguarding', raisedBy: null })
   })
 })
 

@@ -31,6 +31,7 @@ describe('warning signs in a referral', () => {
     ['At her last school she was told to write with the right hand.', ['pressure_to_switch']],
     ['Smudges her work and bumps elbows with her neighbour, loves drawing.', []],
     ['Left-handed, writes slowly, would like advice about scissors.', []],
+    ['Reverses numbers and paints with either hand.', []],
   ])('in "%s" finds %j', (reason, expected) => {
     expect(ids(reason)).toEqual(expected)
   })
@@ -41,6 +42,23 @@ describe('warning signs in a referral', () => {
     'There is not any numbness. She enjoys drawing.',
   ])('finds nothing in "%s", which says that it is not so', (reason) => {
     expect(ids(reason)).toEqual([])
+  })
+
+  it.each<[string, string[]]>([
+    ['No headaches, seizures or numbness.', []],
+    ['No headaches, no seizures, no pain.', []],
+    ['She hasn’t had any seizures and doesn’t have headaches.', []],
+    ['Seizures: none. Headaches? No.', []],
+    ['He never complains of pain.', []],
+    // What a denial does not reach.
+    ['No headaches but numbness in the left hand.', ['new_weakness']],
+    ['No pain and sudden weakness of the arm.', ['new_weakness']],
+    ['No pain, numb since Monday.', ['new_weakness']],
+    ['It does not stop hurting.', ['pain']],
+    ['Not only headaches, she drops things too.', ['new_weakness', 'other_hand_little_used']],
+    ['We are not sure whether it is numb.', ['new_weakness']],
+  ])('reads what is denied in "%s" as %j', (reason, expected) => {
+    expect(ids(reason)).toEqual(expected)
   })
 
   it('does not let a denial in one sentence hide what the next one says', () => {
