@@ -14,9 +14,10 @@ import { Alert } from '../entities/Alert.ts'
 import { Task } from '../entities/Task.ts'
 import { conflict } from '../errors.ts'
 import { findForChild } from '../queries/scope.ts'
+import { selectOne } from '../queries/sql.ts'
 import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
-import { askToLook, insertAlert } from './redFlags.ts'
+import { addToAlert, askToLook, insertAlert } from './redFlags.ts'
 import { addTask } from './tasks.ts'
 import { transact } from './transact.ts'
 import { updateIfCurrent } from './versions.ts'
@@ -41,14 +42,28 @@ export interface NewAlert {
 }
 
 /**
- * Puts a warning sign on the record, with a task unless it only asks to be kept in mind. A sign is a reason to look;
- * what it means is for the therapist to decide.
+ * Puts a warning sign on the record, with a task unless it only asks to be kept in mind; one that stands is added to. A
+ * sign is a reason to look; what it means is for the therapist to decide.
  */
 export const raiseAlert = async (
   tx: Tx,
   record: (fact: AuditFact) => void,
   { childId, therapistId, today, flag, text, level, urgency, task }: NewAlert,
 ): Promise<void> => {
+  const calledFor = urgency ?? (level === 'overdue' ? 'medical_review' : 'ask')
+  // As in `raiseFlags`: a sign stands once while nobody has acted on it.
+  await selectOne('SELECT id FROM children WHERE id = :childId FOR UPDATE', { childId }, tx)
+  const open = await selectOne<{ id: string; text: string; version: number }>(
+    `SELECT a.id, a.text, a.version FROM alerts a
+     WHERE a.childId = :childId AND a.flag = :flag AND a.actedAt IS NULL ORDER BY a.raisedAt, a.id LIMIT 1 FOR UPDATE`,
+    { childId, flag },
+    tx,
+  )
+  if (open?.text.includes(text)) return
+  if (open && (await addToAlert(tx, record, open, { words: text, childId, relation: null }))) {
+    await askToLook(tx, childId, [{ urgency: calledFor }])
+    return
+  }
   const id = randomUUID()
   await tx.insert(Alert, {
     id,
@@ -56,7 +71,7 @@ export const raiseAlert = async (
     flag,
     text,
     level,
-    urgency: urgency ?? (level === 'overdue' ? 'medical_review' : 'ask'),
+    urgency: calledFor,
     advice: null,
     origin: 'referral',
     originId: null,

@@ -42,6 +42,20 @@ interface Standing {
   version: number
 }
 
+/** Adds words to a sign that stands; false, with nothing done, where its text would grow too long. */
+export const addToAlert = async (
+  tx: Tx,
+  record: (fact: AuditFact) => void,
+  { id, text, version }: Pick<Standing, 'id' | 'text' | 'version'>,
+  { words, childId, relation }: { words: string; childId: string; relation: ChildRelation | null },
+): Promise<boolean> => {
+  const added = `${text} Reported since: ${words}`
+  if ([...added].length > longestText) return false
+  await updateIfCurrent(tx, Alert, id, version, { text: added })
+  record({ action: 'alert.added_to', objectType: 'alert', objectId: id, childId, relation })
+  return true
+}
+
 /**
  * Puts red flags on the record in the transaction that stores the answer. A flag stands once while nobody has acted on
  * it; a further sign is added to its text. It is never taken back when an answer changes, and what was acted on comes
@@ -63,17 +77,16 @@ export const raiseFlags = async (
     tx,
   )
   const touched: string[] = []
-  const raised: RedFlag[] = []
+  // What was added to counts too: it may stand from a referral, with a task that is not for today.
+  const told: RedFlag[] = []
   for (const flag of flags) {
     const same = standing.filter((alert) => alert.flag === flag.id)
     const open = same.find(({ actedAt }) => actedAt === null)
     const isNew = fresh.includes(flag.id)
     if (open && (open.text.includes(flag.words) || !isNew)) continue
     if (!open && !isNew && same.some((alert) => originId !== null && alert.originId === originId)) continue
-    const added = open ? `${open.text} Reported since: ${flag.words}` : flag.words
-    if (open && [...added].length <= longestText) {
-      await updateIfCurrent(tx, Alert, open.id, open.version, { text: added })
-      record({ action: 'alert.added_to', objectType: 'alert', objectId: open.id, childId, relation })
+    told.push(flag)
+    if (open && (await addToAlert(tx, record, open, { words: flag.words, childId, relation }))) {
       touched.push(open.id)
       continue
     }
@@ -82,9 +95,8 @@ export const raiseFlags = async (
     const detail = { flag: flag.id, origin }
     record({ action: 'alert.raised', objectType: 'alert', objectId: id, childId, relation, detail })
     touched.push(id)
-    raised.push(flag)
   }
-  if (raised.length > 0) await askToLook(tx, childId, raised)
+  if (told.length > 0) await askToLook(tx, childId, told)
   return touched
 }
 
