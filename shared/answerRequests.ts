@@ -49,6 +49,14 @@ export const requestStateLabels: Record<RequestState, string> = {
   cancelled: 'Withdrawn',
 }
 
+/** Why a link ended with a change of its carer; whoever asks anew sees it. */
+export const linkEndReasons = ['address', 'contact'] as const
+export type LinkEndReason = (typeof linkEndReasons)[number]
+export const linkEndLabels: Record<LinkEndReason, string> = {
+  address: 'ended: the carer’s e-mail address changed. Ask again, so that the link goes to the new one',
+  contact: 'ended: this carer may not be written to any more',
+}
+
 /** How families and teachers read what is asked. */
 export const requestTitles: Record<RequestedForm, string> = {
   history: 'How things began',
@@ -93,6 +101,8 @@ export const answerRequestSchema = body({
       is: 'teacher',
       then: (schema) => schema.test('signed-in', 'Teachers sign in to answer', (byLink) => byLink === false),
     }),
+  /** Somebody asked the carer whether this is their address: a link shows the questions to whoever gets it. */
+  addressConfirmed: boolean(),
 })
 export type AnswerRequestDetails = InferType<typeof answerRequestSchema>
 
@@ -138,6 +148,10 @@ export interface AnswerChoices {
     refused: string | null
     byLink: boolean
     signedIn: boolean
+    /** Where a link would go. */
+    email: string | null
+    /** The carer is known by their own sign-in: nobody needs to confirm the address. */
+    verified: boolean
   }[]
   teachers: { id: string; name: string }[]
   /** Why no teacher can be asked, in words; null when one can. */
@@ -157,6 +171,8 @@ export interface AnswerRequestView {
   byLink: boolean
   reminders: number
   state: RequestState
+  /** Why it ended by itself; null otherwise. */
+  cancelledWhy: LinkEndReason | null
   answeredAt: string | null
   /** The history or response that came back; null until something was saved. */
   answerId: string | null

@@ -8,7 +8,7 @@ import {
   VersionColumn,
   type Relation,
 } from 'typeorm'
-import type { AnswererKind, RequestedForm } from '../../shared/answerRequests.ts'
+import type { AnswererKind, LinkEndReason, RequestedForm } from '../../shared/answerRequests.ts'
 import { Child } from './Child.ts'
 import { Guardian } from './Guardian.ts'
 import { OutboxMessage } from './OutboxMessage.ts'
@@ -59,5 +59,9 @@ export class AnswerRequest {
   mail!: Relation<OutboxMessage | null>
   @Column('datetime', { precision: 6, nullable: true }) answeredAt!: Date | null
   @Column('datetime', { precision: 6, nullable: true }) cancelledAt!: Date | null
+  /** Null when somebody withdrew it. */
+  @Column('varchar', { length: 10, nullable: true }) cancelledWhy!: LinkEndReason | null
+  /** Wrong dates of birth given with its links, all together. */
+  @Column('int', { default: 0 }) wrongDates!: number
   @VersionColumn({ type: 'int' }) version!: number
 }

@@ -3,7 +3,7 @@ import { formsOfTheStart } from './1764580000000-formsOfTheStart.ts'
 
 const tables = [
   `CREATE TABLE \`questionnaire_forms\` (\`id\` varchar(40) NOT NULL, \`formKey\` varchar(32) NOT NULL, \`edition\` int NOT NULL, \`definition\` json NOT NULL, \`createdAt\` datetime(6) NOT NULL, \`createdById\` uuid NULL, \`retiredAt\` datetime(6) NULL, \`retiredById\` uuid NULL, UNIQUE INDEX \`IDX_12f058591305cba2e0a65ab965\` (\`formKey\`, \`edition\`), PRIMARY KEY (\`id\`)) ENGINE=InnoDB`,
-  `CREATE TABLE \`answer_requests\` (\`id\` uuid NOT NULL, \`childId\` uuid NOT NULL, \`asks\` varchar(16) NOT NULL, \`formId\` varchar(40) NULL, \`answerer\` varchar(10) NOT NULL, \`guardianId\` uuid NULL, \`teacherId\` uuid NULL, \`tokenHash\` binary(32) NULL, \`askedAt\` datetime(6) NOT NULL, \`askedById\` uuid NOT NULL, \`expiresAt\` datetime(6) NOT NULL, \`reminders\` int NOT NULL DEFAULT '0', \`remindedAt\` datetime(6) NULL, \`savedAt\` datetime(6) NULL, \`mailId\` uuid NULL, \`answeredAt\` datetime(6) NULL, \`cancelledAt\` datetime(6) NULL, \`version\` int NOT NULL, INDEX \`IDX_872db0726f1b36f741304e83fd\` (\`answeredAt\`, \`expiresAt\`), UNIQUE INDEX \`IDX_c9beb963ccfbb2874edb717ae4\` (\`tokenHash\`), PRIMARY KEY (\`id\`)) ENGINE=InnoDB`,
+  `CREATE TABLE \`answer_requests\` (\`id\` uuid NOT NULL, \`childId\` uuid NOT NULL, \`asks\` varchar(16) NOT NULL, \`formId\` varchar(40) NULL, \`answerer\` varchar(10) NOT NULL, \`guardianId\` uuid NULL, \`teacherId\` uuid NULL, \`tokenHash\` binary(32) NULL, \`askedAt\` datetime(6) NOT NULL, \`askedById\` uuid NOT NULL, \`expiresAt\` datetime(6) NOT NULL, \`reminders\` int NOT NULL DEFAULT '0', \`remindedAt\` datetime(6) NULL, \`savedAt\` datetime(6) NULL, \`mailId\` uuid NULL, \`answeredAt\` datetime(6) NULL, \`cancelledAt\` datetime(6) NULL, \`cancelledWhy\` varchar(10) NULL, \`wrongDates\` int NOT NULL DEFAULT '0', \`version\` int NOT NULL, INDEX \`IDX_872db0726f1b36f741304e83fd\` (\`answeredAt\`, \`expiresAt\`), UNIQUE INDEX \`IDX_c9beb963ccfbb2874edb717ae4\` (\`tokenHash\`), PRIMARY KEY (\`id\`)) ENGINE=InnoDB`,
   `CREATE TABLE \`conclusions\` (\`id\` uuid NOT NULL, \`childId\` uuid NOT NULL, \`authorId\` uuid NOT NULL, \`state\` varchar(26) NOT NULL, \`content\` json NOT NULL, \`evidence\` json NULL, \`signedAt\` datetime(6) NULL, \`countersignedAt\` datetime(6) NULL, \`countersignedById\` uuid NULL, \`replacesId\` uuid NULL, \`createdAt\` datetime(6) NOT NULL, \`version\` int NOT NULL, UNIQUE INDEX \`IDX_de40030b51eedeb2cc56327ec2\` (\`replacesId\`), PRIMARY KEY (\`id\`)) ENGINE=InnoDB`,
   `CREATE TABLE \`histories\` (\`id\` uuid NOT NULL, \`childId\` uuid NOT NULL, \`informant\` varchar(12) NOT NULL, \`respondentName\` varchar(120) NULL, \`answeredOn\` date NOT NULL, \`details\` json NOT NULL, \`requestId\` uuid NULL, \`guardianId\` uuid NULL, \`startedById\` uuid NULL, \`lockedAt\` datetime(6) NULL, \`lockedById\` uuid NULL, \`replacesId\` uuid NULL, \`createdAt\` datetime(6) NOT NULL, \`version\` int NOT NULL, UNIQUE INDEX \`IDX_accaec34a33138051cfd3f00ee\` (\`requestId\`), UNIQUE INDEX \`IDX_4a6b8f079a614b50c4cc664cdc\` (\`replacesId\`), PRIMARY KEY (\`id\`)) ENGINE=InnoDB`,
   `CREATE TABLE \`measures\` (\`id\` uuid NOT NULL, \`childId\` uuid NOT NULL, \`kind\` varchar(20) NOT NULL, \`methodVersion\` varchar(40) NOT NULL, \`measuredOn\` date NOT NULL, \`details\` json NOT NULL, \`score\` json NULL, \`notDoneReason\` varchar(300) NULL, \`comment\` varchar(1000) NULL, \`startedById\` uuid NOT NULL, \`lockedAt\` datetime(6) NULL, \`lockedById\` uuid NULL, \`replacesId\` uuid NULL, \`createdAt\` datetime(6) NOT NULL, \`version\` int NOT NULL, UNIQUE INDEX \`IDX_736212e41e6f759002829cec52\` (\`replacesId\`), PRIMARY KEY (\`id\`)) ENGINE=InnoDB`,
@@ -132,6 +132,18 @@ const unchangingMailGuard = `CREATE TRIGGER outbox_messages_keep BEFORE UPDATE O
 /** Names of the triggers; the boot checks that each is there. */
 export const assessmentGuardNames = guards.map(([name]) => name)
 
+/** Signs of referrals had names of their own; with those of the clinic's table one sign stands once. */
+const flagsOfReferrals = [
+  ['new_weakness', 'new-neurological-signs', 'same_day'],
+  ['preference_before_12_months', 'preference-before-12-months', 'priority'],
+  ['preference_12_to_18_months', 'preference-12-to-18-months', 'ask'],
+  ['other_hand_little_used', 'other-hand-or-lost-skill', 'medical_review'],
+  ['change_of_hand', 'change-of-hand', 'medical_review'],
+  ['pain', 'pain', 'safeguarding'],
+  ['pressure_to_switch', 'punished-for-hand', 'safeguarding'],
+  ['swaps_from_six', 'swaps-within-task', 'ask'],
+] as const
+
 /** Forms as data, requests for answers, histories, measures, conclusions, and where a warning sign was seen. */
 export class AddAssessment1764580000000 implements MigrationInterface {
   name = 'AddAssessment1764580000000'
@@ -142,6 +154,8 @@ export class AddAssessment1764580000000 implements MigrationInterface {
       `UPDATE alerts SET origin = 'referral', holdsBooking = (level = 'overdue'),
          urgency = CASE level WHEN 'overdue' THEN 'medical_review' ELSE 'ask' END`,
     )
+    for (const [was, flag, urgency] of flagsOfReferrals)
+      await runner.query('UPDATE alerts SET flag = ?, urgency = ? WHERE flag = ?', [flag, urgency, was])
     for (const { key, edition, definition } of formsOfTheStart)
       await runner.query(
         `INSERT INTO questionnaire_forms (id, formKey, edition, definition, createdAt)

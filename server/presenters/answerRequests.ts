@@ -43,6 +43,7 @@ export const presentAnswerRequest = (
     byLink: row.byLink,
     reminders: row.reminders,
     state,
+    cancelledWhy: row.cancelledWhy,
     answeredAt: row.answeredAt?.toISOString() ?? null,
     answerId: row.answerId,
     version: row.version,
@@ -75,6 +76,8 @@ export const presentAnswerChoices = (of: {
     refused: carerRefusal(carer, true),
     byLink: carerRefusal(carer, true) === null,
     signedIn: carerRefusal(carer, false) === null,
+    email: carer.email,
+    verified: carer.verified,
   })),
   teachers: of.observationShared ? of.teachers.map(({ id, name }) => ({ id, name })) : [],
   teachersRefused: !of.observationShared

@@ -10,6 +10,8 @@ import { flag, selectOne, selectRows } from './sql.ts'
 
 const signsIn =
   '(u.id IS NOT NULL AND u.disabledAt IS NULL AND u.passwordHash IS NOT NULL AND g.verifiedAt <= :scopeNow)'
+const verified = `(u.id IS NOT NULL AND g.verifiedAt IS NOT NULL AND g.verifiedAt <= :scopeNow
+  AND COALESCE(g.email, u.email) = u.email)`
 const carerColumns = `${restricted} AS restricted, ${ended} AS ended, g.safeToContact, ${comesOfAge} AS childOfAge,
   COALESCE(g.email, u.email) AS email, ${signsIn} AS signsIn`
 
@@ -27,19 +29,22 @@ const toCarer = (row: StoredCarer): CarerStanding => ({
 export interface CarerToAsk extends CarerStanding {
   id: string
   name: string
+  /** Known with a sign-in of their own, at this very address. */
+  verified: boolean
 }
 
 /** The child's carers and how each stands to being asked; ended links are left out. */
 export const listCarersToAsk = async (access: ChildAccess, tx?: Tx): Promise<CarerToAsk[]> => {
   const scope = within(access, 'g.childId')
-  const rows = await selectRows<StoredCarer & { id: string; name: string }>(
-    `SELECT g.id, g.name, ${carerColumns} FROM guardians g JOIN children c ON c.id = g.childId
+  const rows = await selectRows<StoredCarer & { id: string; name: string; verified: number }>(
+    `SELECT g.id, g.name, ${verified} AS verified, ${carerColumns}
+     FROM guardians g JOIN children c ON c.id = g.childId
        LEFT JOIN users u ON u.id = g.userId
      WHERE ${scope.sql} AND NOT ${ended} ORDER BY g.createdAt, g.id`,
     { ...scope.parameters, scopeNow: now() },
     tx,
   )
-  return rows.map((row) => ({ id: row.id, name: row.name, ...toCarer(row) }))
+  return rows.map((row) => ({ id: row.id, name: row.name, verified: flag(row.verified), ...toCarer(row) }))
 }
 
 // People meet their own child as family only, never as the child's teacher.

@@ -1,4 +1,4 @@
-import type { AnswererKind, RequestedForm } from '../../shared/answerRequests.ts'
+import type { AnswererKind, LinkEndReason, RequestedForm } from '../../shared/answerRequests.ts'
 import type { Day } from '../../shared/days.ts'
 import { isId } from '../../shared/fields.ts'
 import type { Viewer } from '../access/actor.ts'
@@ -58,6 +58,7 @@ export interface AnswerRequestRow {
   reminders: number
   answeredAt: Date | null
   cancelledAt: Date | null
+  cancelledWhy: LinkEndReason | null
   answerId: string | null
   version: number
 }
@@ -71,7 +72,8 @@ export const listAnswerRequests = async (
   const scope = within(access, 'r.childId')
   const rows = await selectRows<Omit<AnswerRequestRow, 'byLink'> & { byLink: number }>(
     `SELECT r.id, r.asks, ${formTitle} AS formTitle, r.answerer, ${askedOf} AS askedOf, r.askedAt, r.expiresAt,
-       r.tokenHash IS NOT NULL AS byLink, r.reminders, r.answeredAt, r.cancelledAt, ${answerId} AS answerId, r.version
+       r.tokenHash IS NOT NULL AS byLink, r.reminders, r.answeredAt, r.cancelledAt,
+       r.cancelledWhy, ${answerId} AS answerId, r.version
      FROM answer_requests r ${withPeople} ${withAnswers}
      WHERE ${scope.sql} ${onlyId === null ? '' : 'AND r.id = :onlyId'}
      ORDER BY r.askedAt DESC, r.id`,

@@ -27,7 +27,8 @@ export const playAsking = async (
     typeof of === 'number'
       ? { answerer: 'guardian' as const, guardianId: story.guardianIds[of] ?? null, teacherId: null }
       : { answerer: 'teacher' as const, guardianId: null, teacherId: actorOf(scene.people, of).viewer.id }
-  const details = { asks, formId, byLink, ...asked }
+  // In the scenario the clinic asked the carer for the address before it sent a link.
+  const details = { asks, formId, byLink, addressConfirmed: byLink, ...asked }
   story.requestIds.set(key, await askForAnswers(actor, access, details, { key: null, appUrl: scene.appUrl }))
   await deliverDue(accepting, scene.appUrl)
 }

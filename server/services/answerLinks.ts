@@ -1,12 +1,16 @@
 import type { AnswerDraft, AnswerLink } from '../../shared/answerRequests.ts'
+import { addWorkingDays } from '../../shared/days.ts'
 import type { Actor } from '../access/actor.ts'
 import type { Tx } from '../dataSource.ts'
 import { gone } from '../errors.ts'
 import { findRequestOfLink, lockRequest, type AnswerableRequest } from '../queries/answerRequests.ts'
+import { execute, selectOne } from '../queries/sql.ts'
 import { hashToken } from './accounts.ts'
 import { closeAnswers, keepAnswers, requestFact } from './answers.ts'
+import { currentTherapist } from './assignments.ts'
 import type { AuditFact } from './audit.ts'
-import { readSettings } from './settings.ts'
+import { clinicToday, readSettings } from './settings.ts'
+import { addTask } from './tasks.ts'
 import { countAttempt, countHit, forgiveHit, refuseWhileBlocked } from './throttles.ts'
 import { transact } from './transact.ts'
 
@@ -35,6 +39,29 @@ const answersRefused = () =>
     'These questions are closed: they were sent or withdrawn, their time is over, a newer e-mail took their place, or ' +
       'somebody else has signed in in this browser. Please call the clinic: they can send a new link.',
   )
+
+const wrongDatesPerTask = 10
+
+/** Every tenth wrong date on one request, through whichever of its links, is for the therapist to look into. */
+const countWrongDate = async (tx: Tx, { id, childId }: AnswerableRequest): Promise<void> => {
+  await execute(tx, 'UPDATE answer_requests SET wrongDates = wrongDates + 1 WHERE id = :id', { id })
+  const counted = await selectOne<{ wrongDates: number }>(
+    'SELECT wrongDates FROM answer_requests WHERE id = :id',
+    { id },
+    tx,
+  )
+  if (counted === null || counted.wrongDates % wrongDatesPerTask !== 0) return
+  await addTask(tx, {
+    childId,
+    kind: 'answer_link_guessed',
+    text:
+      'Somebody tried to open the link to the questions with a wrong date of birth ten times: ask the carer and ' +
+      'send a new link',
+    dueOn: addWorkingDays(clinicToday(await readSettings(tx)), 1),
+    assigneeId: await currentTherapist(tx, childId),
+    otherwise: 'clinicLead',
+  })
+}
 
 /**
  * Runs one act on the request of a link, under its lock. Throws 410 alike for every link that is used, expired,
@@ -66,6 +93,7 @@ const withLink = async <T>(
     await refuseWhileBlocked(guesses, tx)
     if (link.birthDate !== request.birthDate) {
       await countAttempt(guesses, tx)
+      await countWrongDate(tx, request)
       return refuse()
     }
     return { value: await act(tx, record, request) }

@@ -56,6 +56,11 @@ const checkAddressee = async (tx: Tx, access: ChildAccess, asked: AnswerRequestD
     if (!carer) throw invalid({ guardianId: 'Choose a carer from the list' })
     const refusal = carerRefusal(carer, asked.byLink)
     if (refusal !== null) throw invalid({ guardianId: refusal })
+    if (asked.byLink && !carer.verified && asked.addressConfirmed !== true)
+      throw invalid({
+        addressConfirmed:
+          'Ask the carer first whether this is their address: whoever gets the link meets the questions',
+      })
     return
   }
   if (!(await isConsentGiven(access, 'share_school_observation', tx)))
@@ -99,7 +104,10 @@ export const askForAnswers = async (
   const settings = await readSettings()
   return transact(actor, (tx, record) => {
     const request = ['answerRequest', access.childId, asked]
-    const factOf = (id: string) => fact(access, 'created', id)
+    const factOf = (id: string): AuditFact => ({
+      ...fact(access, 'created', id),
+      ...(asked.byLink && { detail: { addressConfirmed: asked.addressConfirmed === true } }),
+    })
     return createOnce(tx, actor, record, { key, request }, factOf, async (id) => {
       await lockChild(access, tx)
       await requireConsent(tx, access, 'assessment_treatment')
@@ -125,6 +133,8 @@ export const askForAnswers = async (
         mailId: null,
         answeredAt: null,
         cancelledAt: null,
+        cancelledWhy: null,
+        wrongDates: 0,
       })
       await sendAnswerMail(tx, await standingOf(tx, id), {
         kind: 'ask',

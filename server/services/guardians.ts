@@ -10,6 +10,7 @@ import { conflict, forbidden, notFound } from '../errors.ts'
 import { canRestrictGuardian } from '../policies/guardians.ts'
 import { findForChild } from '../queries/scope.ts'
 import { currentTherapist } from './assignments.ts'
+import { endLinksOf } from './answerLinkEnds.ts'
 import type { AuditFact } from './audit.ts'
 import { createOnce } from './once.ts'
 import { cancelDeliveriesToGuardian } from './letterDeliveries.ts'
@@ -76,7 +77,8 @@ export const addGuardian = (
   )
 
 /**
- * Changes what is known of a carer. Where writing is no longer safe nothing queued leaves; where parental
+ * Changes what is known of a carer. Where writing is no longer safe nothing queued leaves; links that went to an address
+ * of before end; where parental
  * responsibility has ended the consents that rest on it are looked at by the therapist. Throws StaleWrite.
  */
 export const changeGuardian = async (
@@ -90,7 +92,10 @@ export const changeGuardian = async (
   await transact(actor, async (tx, record) => {
     const before = await lockGuardian(tx, access, id)
     await updateIfCurrent(tx, Guardian, id, version, details)
-    if (before.safeToContact && !details.safeToContact) await cancelDeliveriesToGuardian(tx, id)
+    const isUnsafeNow = before.safeToContact && !details.safeToContact
+    if (isUnsafeNow) await cancelDeliveriesToGuardian(tx, id)
+    if (isUnsafeNow || before.email !== details.email)
+      await endLinksOf(tx, record, access, { guardianId: id, why: isUnsafeNow ? 'contact' : 'address' })
     if (before.parentalResponsibility === 'yes' && details.parentalResponsibility !== 'yes')
       await addTask(tx, {
         childId: access.childId,
@@ -120,6 +125,9 @@ export const restrictGuardian = (
       )
     if (!canRestrictGuardian(access, guardian)) throw forbidden('Only the clinic lead lifts a restriction.')
     await updateIfCurrent(tx, Guardian, id, guardian.version, { restricted, restrictedReason: reason })
-    if (restricted) await cancelDeliveriesToGuardian(tx, id)
+    if (restricted) {
+      await cancelDeliveriesToGuardian(tx, id)
+      await endLinksOf(tx, record, access, { guardianId: id, why: 'contact' })
+    }
     record(guardianFact(access, restricted ? 'guardian.restricted' : 'guardian.restriction_lifted', id))
   })

@@ -1,12 +1,14 @@
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import type { AccessPage } from '../../shared/auditEntries.ts'
+import { guardianSchema } from '../../shared/guardians.ts'
 import { emptyHistory } from '../../shared/histories.ts'
 import { setClock } from '../../server/clock.ts'
 import { database } from '../../server/dataSource.ts'
 import { hashToken } from '../../server/services/accounts.ts'
-import { client, signedInAs, startApp, stopApp } from '../support/app.ts'
+import { client, signedInAs, startApp, stopApp, type Client } from '../support/app.ts'
 import {
   aDayPasses,
+  asked,
   askByLink,
   askingScene,
   birthDate,
@@ -17,7 +19,7 @@ import {
   someAnswers,
   tasksOf,
 } from '../support/answers.ts'
-import { buildGuardian, giveConsent } from '../support/factories.ts'
+import { buildGuardian, buildUser, giveConsent } from '../support/factories.ts'
 import { startMail } from '../support/mail.ts'
 
 beforeAll(startApp)
@@ -195,6 +197,98 @@ describe('a link', () => {
     const later = new Date(Date.now() + 120_000)
     setClock(() => later)
     expect((await byLink.open(scene.token)).status).toBe(200)
+  })
+
+  it('gives the therapist a task after ten wrong birth dates, also over several links of one request', async () => {
+    const scene = await linkScene()
+    const guess = async (token: string, day: number) => {
+      await database().query('UPDATE throttles SET failures = 0, blockedUntil = NULL')
+      expect((await byLink.open(token, `2017-05-${day}`)).status).toBe(410)
+    }
+    for (const day of [10, 11, 12, 13]) await guess(scene.token, day)
+    await aDayPasses(scene.request.id)
+    await scene.therapist.post(requestsPath(scene.child, `/${scene.request.id}/remind`)).send({})
+    const newer = await linkToken(scene.email)
+    for (const day of [14, 15, 16, 17, 18]) await guess(newer, day)
+    expect(await tasksOf(scene.child)).toEqual([])
+    await guess(newer, 19)
+    expect(await tasksOf(scene.child)).toEqual([{ kind: 'answer_link_guessed', assigneeId: scene.holder.id }])
+    for (const day of [20, 21]) await guess(newer, day)
+    expect(await tasksOf(scene.child)).toHaveLength(1)
+  })
+
+  it.each([
+    ['corrected', { email: 'right@harrowmere.example' }, 'address'],
+    ['removed', { email: null }, 'address'],
+    ['marked as not safe to contact', { safeToContact: false }, 'contact'],
+  ] as const)(
+    'ends for good when the carer’s address is %s, and the list says so',
+    async (_what, change, why) => {
+      const scene = await linkScene()
+      const path = `/api/children/${scene.child.id}/guardians/${scene.grandfather.id}`
+      const { body: carers } = await scene.therapist.get(`/api/children/${scene.child.id}/guardians`)
+      const carer = carers.find(({ id }: { id: string }) => id === scene.grandfather.id)
+      const details = Object.fromEntries(
+        Object.keys(guardianSchema.fields).map((field) => [field, carer[field] ?? null]),
+      )
+      const put = (body: object, version: number) =>
+        scene.therapist.put(path).set('If-Match', `"${version}"`).send(body)
+      // Another change leaves the link alone.
+      const renamed = await put({ ...details, phone: '01632 960 111' }, carer.version)
+      expect(renamed.status, renamed.text).toBe(200)
+      expect((await byLink.open(scene.token)).status).toBe(200)
+      const changed = await put({ ...details, ...change }, renamed.body.version)
+      expect(changed.status, changed.text).toBe(200)
+      expect((await byLink.open(scene.token)).status).toBe(410)
+      expect(await seenRequest(scene, scene.request.id)).toMatchObject({
+        state: 'cancelled',
+        cancelledWhy: why,
+        can: { remind: false },
+      })
+      const mails = await database().query(
+        'SELECT state, LENGTH(mime) AS bytes FROM outbox_messages WHERE recipient = ?',
+        [scene.email],
+      )
+      expect(
+        mails.map(({ state, bytes }: { state: string; bytes: unknown }) => [state, Number(bytes)]),
+      ).toEqual([['cancelled', 0]])
+      const trail = await database().query(
+        "SELECT action, relation FROM audit_entries WHERE objectId = ? AND action = 'answerRequest.link_ended'",
+        [scene.request.id],
+      )
+      expect(trail).toEqual([{ action: 'answerRequest.link_ended', relation: 'assignedTherapist' }])
+    },
+  )
+
+  it('stays ended when its carer was restricted and the restriction is lifted', async () => {
+    const scene = await linkScene()
+    const restrict = (who: Client, restricted: boolean) =>
+      who
+        .post(`/api/children/${scene.child.id}/guardians/${scene.grandfather.id}/restrict`)
+        .send({ restricted, reason: 'Court order' })
+    expect((await restrict(scene.therapist, true)).status).toBeLessThan(300)
+    const lead = await signedInAs(await buildUser('clinicLead'))
+    const lifted = await restrict(lead, false)
+    expect(lifted.status, lifted.text).toBeLessThan(300)
+    expect((await byLink.open(scene.token)).status).toBe(410)
+    expect(await seenRequest(scene, scene.request.id)).toMatchObject({ cancelledWhy: 'contact' })
+  })
+
+  it('goes to an address that somebody confirmed, or to that of the carer’s own sign-in', async () => {
+    const scene = await askingScene()
+    const post = (given: object) =>
+      scene.therapist.post(requestsPath(scene.child)).send({ ...asked({ byLink: true }), ...given })
+    for (const addressConfirmed of [undefined, false]) {
+      const refused = await post({ guardianId: scene.grandfather.id, addressConfirmed })
+      expect(refused.status).toBe(422)
+      expect(refused.body.fields).toHaveProperty('addressConfirmed')
+    }
+    expect((await post({ guardianId: scene.grandfather.id, addressConfirmed: true })).status).toBe(201)
+    await database().query('UPDATE guardians SET email = ? WHERE id = ?', [
+      scene.carer.email,
+      scene.mother.id,
+    ])
+    expect((await post({ guardianId: scene.mother.id, addressConfirmed: undefined })).status).toBe(201)
   })
 
   it('gives no guesses back when the carer opens it in between', async () => {

@@ -171,8 +171,24 @@ describe('asking for answers', () => {
     // Carers who were added in the same moment have no order.
     expect(body.guardians).toEqual(
       expect.arrayContaining([
-        { id: scene.mother.id, name: scene.mother.name, refused: null, byLink: true, signedIn: true },
-        { id: scene.grandfather.id, name: 'Ambrose Tilling', refused: null, byLink: true, signedIn: false },
+        {
+          id: scene.mother.id,
+          name: scene.mother.name,
+          refused: null,
+          byLink: true,
+          signedIn: true,
+          email: scene.mother.email,
+          verified: true,
+        },
+        {
+          id: scene.grandfather.id,
+          name: 'Ambrose Tilling',
+          refused: null,
+          byLink: true,
+          signedIn: false,
+          email: scene.grandfather.email,
+          verified: false,
+        },
         expect.objectContaining({ refused: expect.stringContaining('not safe'), byLink: false }),
       ]),
     )

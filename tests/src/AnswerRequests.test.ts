@@ -1,7 +1,7 @@
 import { flushPromises, mount } from '@vue/test-utils'
 import { createPinia, setActivePinia } from 'pinia'
 import PrimeVue from 'primevue/config'
-import { afterEach, describe, expect, it } from 'vitest'
+import { afterEach, describe, expect, it, vi } from 'vitest'
 import AnswerRequestForm from '@/components/answerRequests/AnswerRequestForm.vue'
 import AnswerRequestList from '@/components/answerRequests/AnswerRequestList.vue'
 import AnswerLinkForm from '@/components/answerRequests/AnswerLinkForm.vue'
@@ -27,14 +27,32 @@ const choices: AnswerChoices = {
   blocked: null,
   forms: [{ id: 'three.v1', title: 'Three activities', informants: ['guardian', 'teacher'] }],
   guardians: [
-    { id: mother, name: 'Wren Marsh', refused: null, byLink: true, signedIn: true },
-    { id: father, name: 'Falk Marsh', refused: null, byLink: true, signedIn: false },
+    {
+      id: mother,
+      name: 'Wren Marsh',
+      refused: null,
+      byLink: true,
+      signedIn: true,
+      email: 'wren@marsh.example',
+      verified: true,
+    },
+    {
+      id: father,
+      name: 'Falk Marsh',
+      refused: null,
+      byLink: true,
+      signedIn: false,
+      email: 'falk@marsh.example',
+      verified: false,
+    },
     {
       id: 'x',
       name: 'Odd Marsh',
       refused: 'This carer may not be written to.',
       byLink: false,
       signedIn: false,
+      email: null,
+      verified: false,
     },
   ],
   teachers: [{ id: teacher, name: 'Ms Larch' }],
@@ -51,6 +69,7 @@ const request: AnswerRequestView = {
   byLink: false,
   reminders: 1,
   state: 'waiting',
+  cancelledWhy: null,
   answeredAt: null,
   answerId: null,
   version: 1,
@@ -81,10 +100,12 @@ function form(given: Partial<AnswerChoices> = {}) {
     await flushPromises()
   }
   const submit = async () => {
+    const before = sent.length
     await wrapper.get('form').trigger('submit')
-    await flushPromises()
-    // The check of the form runs in the background and answers a moment later.
-    await flushPromises()
+    // The check of the form runs in the background and answers a moment later: sent, or with a message.
+    await vi.waitFor(() => {
+      if (sent.length === before && wrapper.findAll('.field-error').length === 0) throw new Error('not yet')
+    })
   }
   return { wrapper, sent, choose, what, submit }
 }
@@ -97,6 +118,8 @@ describe('asking for answers', () => {
     await page.submit()
     await page.choose('Falk Marsh')
     expect(page.wrapper.text()).not.toContain('Signed in')
+    expect(page.wrapper.text()).toContain('falk@marsh.example')
+    await page.wrapper.get('input[type=checkbox]').setValue(true)
     await page.what('history')
     await page.submit()
     expect(page.sent).toEqual([
@@ -107,6 +130,7 @@ describe('asking for answers', () => {
         guardianId: mother,
         teacherId: null,
         byLink: false,
+        addressConfirmed: false,
       },
       {
         asks: 'history',
@@ -115,8 +139,21 @@ describe('asking for answers', () => {
         guardianId: father,
         teacherId: null,
         byLink: true,
+        addressConfirmed: true,
       },
     ])
+  })
+
+  it('asks whether the address was confirmed of a carer by link, anew for each, and not of one known by a sign-in', async () => {
+    const page = form()
+    const tick = () => page.wrapper.find('input[type=checkbox]')
+    await page.choose('Falk Marsh')
+    await tick().setValue(true)
+    await page.choose('Wren Marsh')
+    await page.choose('By a link in the e-mail, without signing in')
+    expect(tick().exists()).toBe(false)
+    await page.choose('Falk Marsh')
+    expect((tick().element as HTMLInputElement).checked).toBe(false)
   })
 
   it('offers no carer who may not be written to, and says why', () => {
@@ -173,6 +210,16 @@ describe('what was asked', () => {
     expect(lines[0]).toContain('Asked 1 Mar 2026; open until 29 Mar 2026; 1 reminder sent')
     expect(lines[2]).toContain('answered 5 Mar 2026')
     expect(wrapper.findAll('button')).toHaveLength(0)
+  })
+
+  it('says of a link that ended with its carer’s address why, and what to do', () => {
+    const ended = { ...request, state: 'cancelled', cancelledWhy: 'address' } as const
+    const wrapper = mount(AnswerRequestList, {
+      global: { plugins: plugins() },
+      props: { requests: [ended], timeZone: 'Europe/London', reminding: null },
+    })
+    opened.push(wrapper)
+    expect(wrapper.text()).toContain('e-mail address changed. Ask again')
   })
 
   it('offers a reminder and a way to withdraw, each naming the person', async () => {

@@ -60,6 +60,7 @@ export const requestsPath = (child: Pick<Child, 'id'>, rest = '') =>
 
 type Asked = Partial<Record<'asks' | 'formId' | 'answerer' | 'guardianId' | 'teacherId', string | null>> & {
   byLink?: boolean
+  addressConfirmed?: boolean
 }
 export const asked = (given: Asked) => ({
   asks: 'questionnaire',
@@ -68,6 +69,7 @@ export const asked = (given: Asked) => ({
   guardianId: null,
   teacherId: null,
   byLink: false,
+  addressConfirmed: given.byLink === true,
   ...given,
 })
 
@@ -158,6 +160,8 @@ export const buildRequest = async (
     mailId: null,
     answeredAt: null,
     cancelledAt: null,
+    cancelledWhy: null,
+    wrongDates: 0,
     ...given,
   })
   return { request, token }

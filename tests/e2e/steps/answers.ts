@@ -35,6 +35,9 @@ export const askCarer = async (
   await choose(section, /^What do you ask for/, asked.form)
   const way = asked.byLink ? 'By a link in the e-mail, without signing in' : 'Signed in'
   await answer(section, /^How do they answer/, way)
+  // Nobody needs to confirm the address of a carer's own sign-in.
+  const confirmed = section.getByLabel('I have confirmed this address with the carer')
+  if ((await confirmed.count()) > 0) await confirmed.check()
   await press(section, 'Send the questions')
   await seeRequest(therapist, asked.form, 'Waiting')
 }
