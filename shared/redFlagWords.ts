@@ -14,16 +14,6 @@ export interface QuotedFlag {
   quotes: string[]
 }
 
-const rowOf: Partial<Record<ReferralFlagId, RedFlagId>> = {
-  new_weakness: 'new-neurological-signs',
-  preference_before_12_months: 'preference-before-12-months',
-  preference_12_to_18_months: 'preference-12-to-18-months',
-  other_hand_little_used: 'other-hand-or-lost-skill',
-  change_of_hand: 'change-of-hand',
-  pain: 'pain',
-  pressure_to_switch: 'punished-for-hand',
-}
-
 const unfinishedWord = /[\p{L}\p{M}\p{N}'’-]+$/u
 
 /**
@@ -55,15 +45,14 @@ function quotedFlags(written: readonly WrittenText[], headachesPress: boolean): 
   )
   const others = found.some(
     ({ id, words }) =>
-      id === 'other_hand_little_used' ||
-      id === 'change_of_hand' ||
-      (id === 'new_weakness' && !isHeadache(words)),
+      id === 'other-hand-or-lost-skill' ||
+      id === 'change-of-hand' ||
+      (id === 'new-neurological-signs' && !isHeadache(words)),
   )
   const quotes = new Map<RedFlagId, string[]>()
   for (const { id, words } of found) {
     const alone = isHeadache(words) && !others && !headachesPress
-    const row = alone ? 'new-headaches' : rowOf[id]
-    if (row === undefined) continue
+    const row = alone ? 'new-headaches' : id
     const known = quotes.get(row) ?? []
     if (!known.some((quote) => quote.toLowerCase() === words.toLowerCase()))
       quotes.set(row, [...known, words])
@@ -84,12 +73,12 @@ export function flagsInHistoryWords(details: HistoryDetails, before?: HistoryDet
     ...(details.pain === null ? [] : (['pain'] as const)),
     ...(details.firstNoticedMonths === null
       ? []
-      : (['preference_before_12_months', 'preference_12_to_18_months'] as const)),
+      : (['preference-before-12-months', 'preference-12-to-18-months'] as const)),
   ]
   const asked: Partial<Record<keyof HistoryDetails, ReferralFlagId>> = {
-    injuryWhat: 'change_of_hand',
+    injuryWhat: 'change-of-hand',
     painWhere: 'pain',
-    lostSkillWhat: 'other_hand_little_used',
+    lostSkillWhat: 'other-hand-or-lost-skill',
   }
   const written = (['lostSkillWhat', 'injuryWhat', 'painWhere', 'childsWords', 'anythingElse'] as const).map(
     (field) => {

@@ -110,7 +110,7 @@ const noteChangeOfHand = async (
     childId,
     therapistId: await currentTherapist(tx, childId),
     today,
-    flag: 'change_of_hand',
+    flag: 'change-of-hand',
     level: 'due',
     text:
       `Writing hand recorded as ${writingHandLabels[to].toLowerCase()}, before as ` +

@@ -206,7 +206,7 @@ describe('warning signs in a referral', () => {
     })
     const { childId } = answer.body
     const alerts = await rowsFor(childId, 'alerts', 'flag, level, actedAt')
-    expect(alerts).toContainEqual({ flag: 'other_hand_little_used', level: 'overdue', actedAt: null })
+    expect(alerts).toContainEqual({ flag: 'other-hand-or-lost-skill', level: 'overdue', actedAt: null })
     const tasks = await rowsFor(childId, 'tasks', 'kind, assigneeId, forRole')
     expect(tasks).toContainEqual({ kind: 'red_flag', assigneeId: therapist.userId, forRole: null })
   })

@@ -98,10 +98,10 @@ describe('the demo’s assessments follow the scenario', () => {
     for (const { number } of children) {
       const told = histories.filter(({ child }) => child === number)
       const own = alertActions.filter(({ child }) => child === number)
-      // Pain has one name in referral and history, so it stands once.
-      const pain = own.some(({ flag, from }) => flag === 'pain' && from === 'referral') ? ['pain'] : []
+      // A sign has one name in referral and history, so it stands once.
+      const referred: string[] = own.filter(({ from }) => from === 'referral').map(({ flag }) => flag)
       const answered = own.filter(({ from }) => from === 'history').map(({ flag }) => flag)
-      const raised = told.flatMap(flagsOf).filter((flag) => !pain.includes(flag))
+      const raised = told.flatMap(flagsOf).filter((flag) => !referred.includes(flag))
       expect([number, answered.toSorted()]).toEqual([number, raised.toSorted()])
       for (const { flag, day } of own.filter(({ from }) => from === 'history')) {
         const days = told.filter((history) => flagsOf(history).some((id) => id === flag))

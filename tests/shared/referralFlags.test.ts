@@ -14,21 +14,21 @@ describe('warning signs in a referral', () => {
   it.each<[string, string[]]>([
     [
       'New weakness in the left hand with headaches, now writes with the right.',
-      ['new_weakness', 'change_of_hand'],
+      ['new-neurological-signs', 'change-of-hand'],
     ],
-    ['She has a weakness of the right arm since last week.', ['new_weakness']],
-    ['Had a seizure in the summer; since then the letters are smaller.', ['new_weakness']],
+    ['She has a weakness of the right arm since last week.', ['new-neurological-signs']],
+    ['Had a seizure in the summer; since then the letters are smaller.', ['new-neurological-signs']],
     [
       'Uses the left hand only since 8 months, the right is often fisted.',
-      ['preference_before_12_months', 'other_hand_little_used'],
+      ['preference-before-12-months', 'other-hand-or-lost-skill'],
     ],
-    ['Always reached with the left hand, from before her first birthday.', ['preference_before_12_months']],
-    ['Parents noticed he prefers the left from 14 months.', ['preference_12_to_18_months']],
+    ['Always reached with the left hand, from before her first birthday.', ['preference-before-12-months']],
+    ['Parents noticed he prefers the left from 14 months.', ['preference-12-to-18-months']],
     ['Parents noticed he prefers the left from 18 months.', []],
-    ['He hardly uses his right hand and drops things at lunch.', ['other_hand_little_used']],
-    ['Fractured the left arm in May, in plaster for six weeks.', ['change_of_hand']],
+    ['He hardly uses his right hand and drops things at lunch.', ['other-hand-or-lost-skill']],
+    ['Fractured the left arm in May, in plaster for six weeks.', ['change-of-hand']],
     ['Her hand hurts after ten minutes of writing.', ['pain']],
-    ['At her last school she was told to write with the right hand.', ['pressure_to_switch']],
+    ['At her last school she was told to write with the right hand.', ['punished-for-hand']],
     ['Smudges her work and bumps elbows with her neighbour, loves drawing.', []],
     ['Left-handed, writes slowly, would like advice about scissors.', []],
     ['Reverses numbers and paints with either hand.', []],
@@ -50,13 +50,14 @@ describe('warning signs in a referral', () => {
     ['She hasn’t had any seizures and doesn’t have headaches.', []],
     ['Seizures: none. Headaches? No.', []],
     ['He never complains of pain.', []],
+    ['Nobody has punished or smacked her; no one ever punished him.', []],
     // What a denial does not reach.
-    ['No headaches but numbness in the left hand.', ['new_weakness']],
-    ['No pain and sudden weakness of the arm.', ['new_weakness']],
-    ['No pain, numb since Monday.', ['new_weakness']],
+    ['No headaches but numbness in the left hand.', ['new-neurological-signs']],
+    ['No pain and sudden weakness of the arm.', ['new-neurological-signs']],
+    ['No pain, numb since Monday.', ['new-neurological-signs']],
     ['It does not stop hurting.', ['pain']],
-    ['Not only headaches, she drops things too.', ['new_weakness', 'other_hand_little_used']],
-    ['We are not sure whether it is numb.', ['new_weakness']],
+    ['Not only headaches, she drops things too.', ['new-neurological-signs', 'other-hand-or-lost-skill']],
+    ['We are not sure whether it is numb.', ['new-neurological-signs']],
   ])('reads what is denied in "%s" as %j', (reason, expected) => {
     expect(ids(reason)).toEqual(expected)
   })
@@ -68,12 +69,12 @@ describe('warning signs in a referral', () => {
   it('raises pain and pressure when they are ticked and the text is silent, and then quotes no words', () => {
     expect(flags('Please see this child soon.', ['pain_fatigue', 'pressure_to_switch'])).toMatchObject([
       { id: 'pain', words: null },
-      { id: 'pressure_to_switch', words: null },
+      { id: 'punished-for-hand', words: null },
     ])
   })
 
   it.each([
-    ['2020-03-03', ['swaps_from_six']],
+    ['2020-03-03', ['swaps-within-task']],
     ['2020-03-04', []],
   ])(
     'asks for a full assessment of an unsettled hand from the sixth birthday on (born %s)',
@@ -95,7 +96,7 @@ describe('warning signs in a referral', () => {
 
   it('quotes the words that raised a sign and marks new weakness as the most pressing', () => {
     const [first] = flags('There is sudden left-sided weakness since Monday.')
-    expect(first).toMatchObject({ id: 'new_weakness', level: 'overdue' })
+    expect(first).toMatchObject({ id: 'new-neurological-signs', level: 'overdue' })
     expect(first!.words).toContain('weakness')
     expect(first!.text).toMatch(/emergency/)
   })

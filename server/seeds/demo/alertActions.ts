@@ -33,7 +33,7 @@ export const alertActions: readonly DemoAlertAction[] = [
   },
   {
     child: 13,
-    flag: 'pressure_to_switch',
+    flag: 'punished-for-hand',
     from: 'referral',
     day: -80,
     time: '12:00',
@@ -43,7 +43,7 @@ export const alertActions: readonly DemoAlertAction[] = [
   },
   {
     child: 15,
-    flag: 'pressure_to_switch',
+    flag: 'punished-for-hand',
     from: 'referral',
     day: -104,
     time: '11:00',
@@ -63,7 +63,7 @@ export const alertActions: readonly DemoAlertAction[] = [
   },
   {
     child: 20,
-    flag: 'swaps_from_six',
+    flag: 'swaps-within-task',
     from: 'referral',
     day: -170,
     time: '12:10',
@@ -72,7 +72,7 @@ export const alertActions: readonly DemoAlertAction[] = [
   },
   {
     child: 31,
-    flag: 'swaps_from_six',
+    flag: 'swaps-within-task',
     from: 'referral',
     day: -30,
     time: '15:30',
@@ -81,7 +81,7 @@ export const alertActions: readonly DemoAlertAction[] = [
   },
   {
     child: 33,
-    flag: 'new_weakness',
+    flag: 'new-neurological-signs',
     from: 'referral',
     day: -405,
     time: '10:05',
@@ -120,7 +120,7 @@ export const alertActions: readonly DemoAlertAction[] = [
   },
   {
     child: 39,
-    flag: 'change_of_hand',
+    flag: 'change-of-hand',
     from: 'referral',
     day: -27,
     time: '10:50',

@@ -6,7 +6,6 @@ import type { HandUseAnswer } from '../../../shared/handUse.ts'
 import type { LetterSectionId } from '../../../shared/letters.ts'
 import type { Informant } from '../../../shared/questionnaires.ts'
 import type { RedFlagId } from '../../../shared/redFlagRows.ts'
-import type { ReferralFlagId } from '../../../shared/referralFlags.ts'
 import type { Priority, ReferralDetails } from '../../../shared/referrals.ts'
 import type { Hand, Role } from '../../../shared/roles.ts'
 import type { SampleDetails } from '../../../shared/samples.ts'
@@ -228,7 +227,7 @@ export interface DemoLetter {
 /** What was done about a red flag. The flag itself comes from the referral, a history or a measure. */
 export interface DemoAlertAction {
   child: number
-  flag: ReferralFlagId | RedFlagId
+  flag: RedFlagId
   from: 'referral' | 'history' | 'measure' | 'observation'
   day: Offset
   time: TimeOfDay
