@@ -4,6 +4,7 @@ import { seedLimit, type MeasureDraft, type MeasureStart } from '../../shared/me
 import { emptyDetails, lockProblems, methodVersions, scoreMeasure } from '../../shared/measureScores.ts'
 import {
   measureKindLabels,
+  skillKinds,
   type MeasureDetails,
   type MeasureScore,
   type SkillScore,
@@ -167,8 +168,7 @@ export const saveMeasure = async (
 /** Days within which tasks of skill are taken together (clinic rule): hands of a child change. */
 const daysTogether = 183
 
-const isSkill = (score: MeasureScore): score is SkillScore =>
-  score.kind === 'pegs' || score.kind === 'tapping' || score.kind === 'dots'
+const isSkill = (score: MeasureScore): score is SkillScore => skillKinds.some((kind) => kind === score.kind)
 
 const skillOf = ({ kind, index, interval, left, right }: SkillScore): HandSkill => {
   const trials = Math.min(left.trials, right.trials)
@@ -198,7 +198,11 @@ const flagsOf = async (
   // The list begins with the newest.
   const newest = others.filter(({ kind }, at) => others.findIndex((other) => other.kind === kind) === at)
   const own = skillOf(score)
-  return redFlagsOfSkill([own, ...newest], writingHand).filter(({ signs }) => signs.includes(own.task))
+  // In one order whichever was locked last, so that the same gap has the same words.
+  const together = [own, ...newest].toSorted(
+    (a, b) => skillKinds.indexOf(a.kind) - skillKinds.indexOf(b.kind),
+  )
+  return redFlagsOfSkill(together, writingHand).filter(({ signs }) => signs.includes(own.task))
 }
 
 /**

@@ -429,7 +429,7 @@ describe('skill on the other side than the writing hand', () => {
     await lockedCounts('tapping')
     const raised = await alerts()
     expect(raised).toHaveLength(1)
-    expect(raised[0]?.text).toMatch(/Moving pegs.*Tapping/)
+    expect(raised[0]?.text).toMatch(/Moving pegs\. Reported since: .*: Moving pegs, Tapping[^.]*\.$/)
   })
 
   it.each([
