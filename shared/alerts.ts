@@ -1,6 +1,7 @@
 import { type InferType } from 'yup'
 import type { Attention } from './attention.ts'
 import { body, choice, text } from './fields.ts'
+import type { Page } from './pages.ts'
 import { redFlagIds, type RedFlagUrgency } from './redFlagRows.ts'
 
 /** What was done about a warning sign: it stays on the record with who did it and when. */
@@ -54,4 +55,10 @@ export interface AlertView {
   actedBy: string | null
   action: string | null
   can: { act: boolean }
+}
+
+/** What waits for somebody first, the most urgent of it leading; then what was answered, the newest first. */
+export interface AlertPage extends Page<AlertView> {
+  /** How many of all wait for somebody. */
+  open: number
 }

@@ -3,6 +3,7 @@ import { dayField, type Day } from './days.ts'
 import { body, choice, optionalId, optionalText } from './fields.ts'
 import type { FormAnswers, FormView } from './forms.ts'
 import type { HistoryDetails } from './histories.ts'
+import type { Page } from './pages.ts'
 
 /** What the clinic asks for. */
 export const requestedForms = ['history', 'questionnaire'] as const
@@ -178,6 +179,12 @@ export interface AnswerRequestView {
   answerId: string | null
   version: number
   can: { cancel: boolean; remind: boolean }
+}
+
+/** The newest first. */
+export interface AnswerRequestPage extends Page<AnswerRequestView> {
+  /** How many of all can still be answered. */
+  waiting: number
 }
 
 /** A line of "to answer" for a carer or teacher. */

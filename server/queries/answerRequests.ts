@@ -8,8 +8,9 @@ import type { Tx } from '../dataSource.ts'
 import { notFound } from '../errors.ts'
 import { consentHolds } from './inForce.ts'
 import { calledName, spokenName } from './names.ts'
+import { selectPage, type PageOf, type PageSlice } from './pages.ts'
 import { ageOfMajority, childScope, ownLink, within } from './scope.ts'
-import { flag, selectOne, selectRows, type SqlParameters } from './sql.ts'
+import { count, flag, selectOne, selectRows, type SqlParameters } from './sql.ts'
 
 // The purposes are words of ours; parameters of their own would clash with those of a teacher's scope.
 export const agreed = (purpose: 'assessment_treatment' | 'share_school_observation') =>
@@ -63,23 +64,47 @@ export interface AnswerRequestRow {
   version: number
 }
 
-/** What was asked about this child, newest first. */
+type StoredRow = Omit<AnswerRequestRow, 'byLink'> & { byLink: number }
+const toRow = (row: StoredRow): AnswerRequestRow => ({ ...row, byLink: flag(row.byLink) })
+const rowColumns = `r.id, r.asks, ${formTitle} AS formTitle, r.answerer, ${askedOf} AS askedOf, r.askedAt, r.expiresAt,
+  r.tokenHash IS NOT NULL AS byLink, r.reminders, r.answeredAt, r.cancelledAt, r.cancelledWhy,
+  ${answerId} AS answerId, r.version`
+const rowTables = `FROM answer_requests r ${withPeople} ${withAnswers}`
+
+/** What was asked about this child, newest first. `waiting` counts those of the whole record that can be answered. */
 export const listAnswerRequests = async (
   access: ChildAccess,
-  onlyId: string | null = null,
-): Promise<AnswerRequestRow[]> => {
-  if (onlyId !== null && !isId(onlyId)) throw notFound()
+  slice: PageSlice,
+): Promise<PageOf<AnswerRequestRow> & { waiting: number }> => {
   const scope = within(access, 'r.childId')
-  const rows = await selectRows<Omit<AnswerRequestRow, 'byLink'> & { byLink: number }>(
-    `SELECT r.id, r.asks, ${formTitle} AS formTitle, r.answerer, ${askedOf} AS askedOf, r.askedAt, r.expiresAt,
-       r.tokenHash IS NOT NULL AS byLink, r.reminders, r.answeredAt, r.cancelledAt,
-       r.cancelledWhy, ${answerId} AS answerId, r.version
-     FROM answer_requests r ${withPeople} ${withAnswers}
-     WHERE ${scope.sql} ${onlyId === null ? '' : 'AND r.id = :onlyId'}
-     ORDER BY r.askedAt DESC, r.id`,
-    { ...scope.parameters, onlyId },
+  const [page, counted] = await Promise.all([
+    selectPage<StoredRow>(
+      {
+        select: rowColumns,
+        from: `${rowTables} WHERE ${scope.sql}`,
+        orderBy: 'r.askedAt DESC, r.id',
+        parameters: scope.parameters,
+      },
+      slice,
+    ),
+    selectOne<{ waiting: string }>(
+      `SELECT COUNT(*) AS waiting FROM answer_requests r WHERE ${scope.sql} AND ${stillOpen('r')}`,
+      { ...scope.parameters, scopeNow: now() },
+    ),
+  ])
+  return { rows: page.rows.map(toRow), total: page.total, waiting: counted ? count(counted.waiting) : 0 }
+}
+
+/** One request of this child; 404 for every other. */
+export const findAnswerRequest = async (access: ChildAccess, id: string): Promise<AnswerRequestRow> => {
+  if (!isId(id)) throw notFound()
+  const scope = within(access, 'r.childId')
+  const row = await selectOne<StoredRow>(
+    `SELECT ${rowColumns} ${rowTables} WHERE ${scope.sql} AND r.id = :requestId`,
+    { ...scope.parameters, requestId: id },
   )
-  return rows.map((row) => ({ ...row, byLink: flag(row.byLink) }))
+  if (!row) throw notFound()
+  return toRow(row)
 }
 
 /** A request as the one who answers meets it. */

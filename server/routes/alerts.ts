@@ -1,10 +1,11 @@
 import { Router } from 'express'
-import { alertActionSchema, alertRaisedSchema } from '../../shared/alerts.ts'
+import { alertActionSchema, alertRaisedSchema, type AlertPage } from '../../shared/alerts.ts'
 import { allow } from '../middleware/allow.ts'
-import { bodyOf, idempotencyKeyOf } from '../middleware/requestBody.ts'
+import { bodyOf, idempotencyKeyOf, pageOf } from '../middleware/requestBody.ts'
 import { accessOf } from '../middleware/requestContext.ts'
 import { alertPolicies } from '../policies/alerts.ts'
 import { presentAlert } from '../presenters/alerts.ts'
+import { presentPage } from '../presenters/pages.ts'
 import { findAlert, listAlerts } from '../queries/alerts.ts'
 import { actOnAlert, raiseByHand } from '../services/alerts.ts'
 import { recordChildRead } from '../services/audit.ts'
@@ -16,9 +17,14 @@ export const alertRoutes = (): Router => {
 
   router.get(base, allow(alertPolicies.list), async (req, res) => {
     const access = accessOf(req)
-    const alerts = await listAlerts(access)
-    await recordChildRead(req.actor, access, 'alerts.list', { detail: { ids: alerts.map(({ id }) => id) } })
-    res.json(alerts.map((alert) => presentAlert(alert, access)))
+    const page = pageOf(req)
+    const alerts = await listAlerts(access, page)
+    await recordChildRead(req.actor, access, 'alerts.list', {
+      detail: { ids: alerts.rows.map(({ id }) => id) },
+    })
+    const shown = presentPage(alerts, page, (alert) => presentAlert(alert, access))
+    const body: AlertPage = { ...shown, open: alerts.open }
+    res.json(body)
   })
 
   router.post(base, allow(alertPolicies.raise), async (req, res) => {

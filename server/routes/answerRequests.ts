@@ -1,10 +1,13 @@
 import { Router, type Request } from 'express'
-import { answerDraftSchema, answerRequestSchema } from '../../shared/answerRequests.ts'
+import {
+  answerDraftSchema,
+  answerRequestSchema,
+  type AnswerRequestPage,
+} from '../../shared/answerRequests.ts'
 import { emptySchema } from '../../shared/fields.ts'
 import { now } from '../clock.ts'
-import { notFound } from '../errors.ts'
 import { allow } from '../middleware/allow.ts'
-import { bodyOf, idempotencyKeyOf, ifMatchOf } from '../middleware/requestBody.ts'
+import { bodyOf, idempotencyKeyOf, ifMatchOf, pageOf } from '../middleware/requestBody.ts'
 import { accessOf, viewerOf } from '../middleware/requestContext.ts'
 import type { ChildPolicy, RolePolicy } from '../policies/policy.ts'
 import { answerRequestPolicies as policies } from '../policies/answerRequests.ts'
@@ -14,8 +17,9 @@ import {
   presentAnswerRequest,
   presentToAnswer,
 } from '../presenters/answerRequests.ts'
+import { presentPage } from '../presenters/pages.ts'
 import { listCarersToAsk, listTeachersToAsk } from '../queries/answerAddressees.ts'
-import { listAnswerRequests, listToAnswer } from '../queries/answerRequests.ts'
+import { findAnswerRequest, listAnswerRequests, listToAnswer } from '../queries/answerRequests.ts'
 import { findKeptAnswers } from '../queries/answers.ts'
 import { isConsentGiven } from '../queries/childFacts.ts'
 import { listForms } from '../queries/forms.ts'
@@ -33,18 +37,19 @@ const idOf = (req: Request) => String(req.params.requestId)
 const askingRoutes = (router: Router, { appUrl }: RouteSettings): void => {
   const show = async (req: Request, id: string) => {
     const access = accessOf(req)
-    const [row] = await listAnswerRequests(access, id)
-    if (!row) throw notFound()
-    return presentAnswerRequest(row, access, now())
+    return presentAnswerRequest(await findAnswerRequest(access, id), access, now())
   }
 
   router.get(base, allow(policies.list), async (req, res) => {
     const access = accessOf(req)
-    const rows = await listAnswerRequests(access)
+    const page = pageOf(req)
+    const requests = await listAnswerRequests(access, page)
     await recordChildRead(req.actor, access, 'answerRequest.listed', {
-      detail: { ids: rows.map(({ id }) => id) },
+      detail: { ids: requests.rows.map(({ id }) => id) },
     })
-    res.json(rows.map((row) => presentAnswerRequest(row, access, now())))
+    const shown = presentPage(requests, page, (row) => presentAnswerRequest(row, access, now()))
+    const body: AnswerRequestPage = { ...shown, waiting: requests.waiting }
+    res.json(body)
   })
 
   router.get('/children/:childId/answer-choices', allow(policies.choices), async (req, res) => {

@@ -1,11 +1,10 @@
 import { http } from '@/api/http.ts'
-import type { AlertAction, AlertRaised, AlertView } from '@shared/alerts.ts'
+import type { AlertAction, AlertPage, AlertRaised, AlertView } from '@shared/alerts.ts'
 
 const path = (childId: string) => `/children/${childId}/alerts`
 
 export const alertsApi = {
-  /** All of them, newest first, with what was done. */
-  forChild: (childId: string) => http.get<AlertView[]>(path(childId)),
+  forChild: (childId: string, page = 1) => http.get<AlertPage>(path(childId), { query: { page } }),
   raise: (childId: string, raised: AlertRaised, idempotencyKey: string) =>
     http.post<AlertView>(path(childId), raised, { idempotencyKey }),
   act: (childId: string, alertId: string, action: AlertAction) =>

@@ -4,6 +4,7 @@ import type {
   AnswerLink,
   AnswerPage,
   AnswerRequestDetails,
+  AnswerRequestPage,
   AnswerRequestView,
   ToAnswer,
 } from '@shared/answerRequests.ts'
@@ -13,7 +14,7 @@ const path = (childId: string) => `/children/${childId}/answer-requests`
 
 /** What the clinic asks of carers and teachers. */
 export const answerRequestsApi = {
-  forChild: (childId: string) => http.get<AnswerRequestView[]>(path(childId)),
+  forChild: (childId: string, page = 1) => http.get<AnswerRequestPage>(path(childId), { query: { page } }),
   choices: (childId: string) => http.get<AnswerChoices>(`/children/${childId}/answer-choices`),
   ask: (childId: string, asked: AnswerRequestDetails, idempotencyKey: string) =>
     http.post<AnswerRequestView>(path(childId), asked, { idempotencyKey }),

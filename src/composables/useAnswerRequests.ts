@@ -1,5 +1,5 @@
-import { useQuery } from '@pinia/colada'
-import { ref, toValue, type MaybeRefOrGetter } from 'vue'
+import { useQuery, useQueryCache } from '@pinia/colada'
+import { ref, toValue, watch, type MaybeRefOrGetter } from 'vue'
 import { answerRequestsApi } from '@/api/answerRequests.ts'
 import { newIdempotencyKey } from '@/api/http.ts'
 import { useAction } from '@/composables/useAction.ts'
@@ -11,10 +11,18 @@ import type { AnswerRequestDetails, AnswerRequestView } from '@shared/answerRequ
 export function useAnswerRequests(child: MaybeRefOrGetter<string>) {
   const childId = () => toValue(child)
   const confirm = useConfirmStep()
-  const requests = useQuery({
-    key: () => childKey(childId(), 'answer-requests'),
-    query: () => answerRequestsApi.forChild(childId()),
+  const page = ref<number>(1)
+  watch(childId, () => {
+    page.value = 1
   })
+  const requests = useQuery({
+    key: () => childKey(childId(), 'answer-requests', page.value),
+    query: () => answerRequestsApi.forChild(childId(), page.value),
+    placeholderData: (previous) => previous,
+  })
+  const cache = useQueryCache()
+  // All pages: what is new moves the rest, and the first one holds the counts.
+  const renew = () => cache.invalidateQueries({ key: childKey(childId(), 'answer-requests') })
   const choices = useQuery({
     key: () => childKey(childId(), 'answer-choices'),
     query: () => answerRequestsApi.choices(childId()),
@@ -30,7 +38,8 @@ export function useAnswerRequests(child: MaybeRefOrGetter<string>) {
   const ask = (asked: AnswerRequestDetails) => answerRequestsApi.ask(childId(), asked, key)
   const asked = async () => {
     asking.value = false
-    await requests.refetch()
+    page.value = 1
+    await renew()
   }
 
   const reminding = ref<string | null>(null)
@@ -38,13 +47,13 @@ export function useAnswerRequests(child: MaybeRefOrGetter<string>) {
     reminding.value = id
     try {
       await answerRequestsApi.remind(childId(), id)
-      await requests.refetch()
+      await renew()
     } finally {
       reminding.value = null
     }
   })
   const cancelling = useAction(async ({ id, version }: AnswerRequestView) => {
-    await answerRequestsApi.cancel(childId(), id, version).finally(() => requests.refetch())
+    await answerRequestsApi.cancel(childId(), id, version).finally(renew)
   })
   const cancel = async (request: AnswerRequestView) => {
     const yes = await confirm({
@@ -54,5 +63,5 @@ export function useAnswerRequests(child: MaybeRefOrGetter<string>) {
     })
     if (yes) await cancelling.run(request)
   }
-  return { requests, choices, asking, begin, ask, asked, reminding, reminder, cancelling, cancel }
+  return { requests, page, choices, asking, begin, ask, asked, reminding, reminder, cancelling, cancel }
 }

@@ -123,7 +123,10 @@ describe('asking for answers', () => {
     await askMother(scene)
     const body = asked({ guardianId: scene.mother.id })
     const lead = await signedInAs(await buildUser('clinicLead'))
-    expect((await lead.get(requestsPath(scene.child))).body[0].can).toEqual({ cancel: true, remind: true })
+    expect((await lead.get(requestsPath(scene.child))).body.rows[0].can).toEqual({
+      cancel: true,
+      remind: true,
+    })
     for (const role of ['therapist', 'administrator'] as const) {
       const other = await signedInAs(await buildUser(role))
       expect((await other.get(requestsPath(scene.child))).status).toBe(404)
@@ -224,7 +227,7 @@ describe('asking for answers', () => {
     const carer = await signedInAs(scene.carer)
     const therapist = await signedInAs(scene.holder)
     expect((await carer.get(ownPage(scene.child, request.id))).body.code).toBe('link_ended')
-    expect((await therapist.get(requestsPath(scene.child))).body[0].state).toBe('expired')
+    expect((await therapist.get(requestsPath(scene.child))).body.rows[0].state).toBe('expired')
     await askMother({ ...scene, therapist })
   })
 })

@@ -49,7 +49,8 @@ const lock = (id: string, version: number) =>
     .post(at(`/${id}/lock`))
     .set('If-Match', `"${version}"`)
     .send({})
-const alerts = async (): Promise<AlertView[]> => (await anna.get(`/api/children/${child.id}/alerts`)).body
+const alerts = async (): Promise<AlertView[]> =>
+  (await anna.get(`/api/children/${child.id}/alerts`)).body.rows
 
 describe('a history', () => {
   it('is begun empty, saved as it is told, and closed with what is still missing', async () => {

@@ -49,7 +49,7 @@ beforeEach(async () => {
 })
 
 const record = (path = '') => `/api/children/${child.id}${path}`
-const alerts = async (): Promise<AlertView[]> => (await anna.get(record('/alerts'))).body
+const alerts = async (): Promise<AlertView[]> => (await anna.get(record('/alerts'))).body.rows
 const flags = async () => (await alerts()).map(({ flag }) => flag).toSorted()
 const act = (id: string, action = 'Spoke to the mother; the family doctor sees them today.') =>
   anna.post(record(`/alerts/${id}/action`)).send({ action })
@@ -432,7 +432,7 @@ describe('signs in the words of a family', () => {
 
 describe('signs in the comment of a questionnaire', () => {
   const alertsOf = async (scene: AskingScene): Promise<AlertView[]> =>
-    (await scene.therapist.get(`/api/children/${scene.child.id}/alerts`)).body
+    (await scene.therapist.get(`/api/children/${scene.child.id}/alerts`)).body.rows
 
   it('are raised as a teacher or a family writes them, under the response, by who signed in', async () => {
     const scene = await askingScene()

@@ -4,7 +4,7 @@ import PrimeVue from 'primevue/config'
 import { describe, expect, it } from 'vitest'
 import { createMemoryHistory, createRouter } from 'vue-router'
 import AlertPanel from '@/components/alerts/AlertPanel.vue'
-import type { AlertAction, AlertView } from '@shared/alerts.ts'
+import type { AlertAction, AlertPage, AlertView } from '@shared/alerts.ts'
 
 const alert = (given: Partial<AlertView>): AlertView => ({
   id: 'a',
@@ -44,7 +44,15 @@ const answered = alert({
   can: { act: false },
 })
 
-async function panel(alerts: AlertView[]) {
+const pageOf = (rows: AlertView[]): AlertPage => ({
+  rows,
+  total: rows.length,
+  page: 1,
+  size: 25,
+  open: rows.filter(({ actedAt }) => actedAt === null).length,
+})
+
+async function panel(alerts: AlertView[], given: Partial<AlertPage> = {}) {
   const acts: [string, AlertAction][] = []
   const Nothing = { render: () => null }
   const router = createRouter({
@@ -61,7 +69,7 @@ async function panel(alerts: AlertView[]) {
     attachTo: document.body,
     props: {
       childId: 'child',
-      alerts,
+      page: { ...pageOf(alerts), ...given },
       act: async (id: string, action: AlertAction) => {
         acts.push([id, action])
       },
@@ -73,6 +81,15 @@ async function panel(alerts: AlertView[]) {
 }
 
 describe('the panel of warning signs', () => {
+  it('leads to older signs, counts those of the whole record, and says where the open ones are', async () => {
+    const { view } = await panel([answered], { total: 60, open: 27, page: 3 })
+    expect(view.text()).toContain('What waits for somebody is on the first page.')
+    expect(view.text()).toContain('Answered (33)')
+    expect(view.text()).toContain('Page 3 of 3')
+    await view.get('nav button').trigger('click')
+    expect(view.emitted('go')).toEqual([[2]])
+  })
+
   it('puts the most urgent open sign first, says what is usually done and what it holds back', async () => {
     const { view } = await panel([alert({}), answered, urgent])
     const [first, second] = view.findAll('ul')[0]!.findAll('li')

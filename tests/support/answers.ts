@@ -86,7 +86,7 @@ export const askByLink = (scene: AskingScene, given: Asked = {}) =>
   ask(scene, { guardianId: scene.grandfather.id, byLink: true, ...given })
 
 export const seenRequest = async (scene: AskingScene, id: string): Promise<AnswerRequestView> => {
-  const list: AnswerRequestView[] = (await scene.therapist.get(requestsPath(scene.child))).body
+  const list: AnswerRequestView[] = (await scene.therapist.get(requestsPath(scene.child))).body.rows
   const found = list.find((request) => request.id === id)
   if (!found) throw new Error('The request is not listed')
   return found

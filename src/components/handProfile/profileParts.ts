@@ -1,5 +1,5 @@
-import type { AlertView } from '@shared/alerts.ts'
-import type { AnswerRequestView } from '@shared/answerRequests.ts'
+import type { AlertPage } from '@shared/alerts.ts'
+import type { AnswerRequestPage } from '@shared/answerRequests.ts'
 import { conclusionStateLabels, type ConclusionView } from '@shared/conclusions.ts'
 import type { HandProfileView } from '@shared/handProfile.ts'
 import type { HistoryView } from '@shared/histories.ts'
@@ -19,16 +19,14 @@ export const currentConclusion = (conclusions: readonly ConclusionView[]): Concl
   null
 
 /** How many still wait for an answer, of all that were asked. */
-function askedWords(requests: readonly AnswerRequestView[]): string {
-  if (requests.length === 0) return 'nobody'
-  const waiting = requests.filter(({ state }) => state === 'waiting' || state === 'begun').length
+function askedWords({ total, waiting }: AnswerRequestPage): string {
+  if (total === 0) return 'nobody'
   return waiting === 0 ? 'all back or ended' : `${waiting} waiting`
 }
 
-function signWords(alerts: readonly AlertView[]): string {
-  const open = alerts.filter(({ actedAt }) => actedAt === null).length
+function signWords({ total, open }: AlertPage): string {
   if (open > 0) return `${open} open`
-  return alerts.length === 0 ? 'none' : 'none open'
+  return total === 0 ? 'none' : 'none open'
 }
 
 function concludedWords(conclusions: readonly ConclusionView[]): string {
@@ -47,8 +45,8 @@ export interface ProfilePart {
 export const profileContents = (read: {
   profile: HandProfileView | undefined
   histories: HistoryView[] | undefined
-  requests: AnswerRequestView[] | undefined
-  alerts: AlertView[] | undefined
+  requests: AnswerRequestPage | undefined
+  alerts: AlertPage | undefined
   conclusions: ConclusionView[] | undefined
 }): ProfilePart[] => [
   {
