@@ -11,11 +11,11 @@ const outOf = (part: ReachingScore['crossing']) =>
   part === null ? 'None counted' : `${part.count} of ${part.of}`
 
 function reachingRaw({ reaches }: ReachingDetails, score: ReachingScore): LateralDetails['raw'] {
-  const used = score.preferred === null ? 'the hand used more' : `the ${score.preferred} hand`
+  const used = score.preferred === null ? 'Hand used more' : `${sideWords[score.preferred]} hand`
   return [
-    { label: `Reaches of ${used} across to the far side`, value: outOf(score.crossing) },
-    { label: `Reaches of ${used} on its own side`, value: outOf(score.nearSide) },
-    { label: `Reaches of ${used} to the middle`, value: outOf(score.midline) },
+    { label: `${used} to the far side`, value: outOf(score.crossing) },
+    { label: `${used} on its own side`, value: outOf(score.nearSide) },
+    { label: `${used} to the middle`, value: outOf(score.midline) },
     ...reaches.map(({ place, hand, swapped }, index) => ({
       label: `Reach ${index + 1}, place ${place} (${placeWords[place - 1]})`,
       value: hand === null ? 'Lost' : `${sideWords[hand]}${swapped ? ', changed hands on the way' : ''}`,
