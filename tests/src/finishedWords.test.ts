@@ -57,3 +57,35 @@ describe('what is finished on the hand profile', () => {
     expect(text).not.toMatch(/Locked|Closed|Draft/)
   })
 })
+
+describe('what a family or school has begun', () => {
+  const begun = { lockedAt: null, lockedBy: null }
+  const shown = (list: Component, props: object) =>
+    mount(list, {
+      props: { childId: 'child', ...props },
+      global: { plugins: [createPinia(), PrimeVue], stubs: { RouterLink: RouterLinkStub } },
+    }).text()
+
+  it('stands without a result while it is being answered', () => {
+    const text = shown(QuestionnaireList, { questionnaires: [{ ...response('asked'), ...begun }] })
+    expect(text).toContain('Being answered')
+    expect(text).toContain('10 of 10 answered')
+    expect(text).not.toMatch(/Draft|100\.0|, left/)
+  })
+
+  it('is called never sent once its request has ended', () => {
+    const left = { ...begun, leftOver: true }
+    expect(shown(QuestionnaireList, { questionnaires: [{ ...response('asked'), ...left }] })).toContain(
+      'Never sent',
+    )
+    const text = shown(HistoryList, { histories: [{ ...history('guardian'), ...left }] })
+    expect(text).toContain('Never sent')
+    expect(text).not.toContain('With the family')
+  })
+
+  it('shows the result of a draft that staff are writing', () => {
+    const text = shown(QuestionnaireList, { questionnaires: [{ ...response(null), ...begun }] })
+    expect(text).toContain('Draft')
+    expect(text).toContain('100.0, left')
+  })
+})
