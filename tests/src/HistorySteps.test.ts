@@ -139,6 +139,21 @@ describe('the history on a phone', () => {
     expect(view.findAll('.urgent')).toHaveLength(1)
   })
 
+  it('turns to what calls for help today and not past it', async () => {
+    const { view, choose, press } = await steps(pageOf({}, 0))
+    for (let part = 0; part < partOf('new-signs'); part += 1) await press('Next')
+    await choose('Has one side of the face begun to droop', 'Yes')
+    const turnedTo: Element[] = []
+    Element.prototype.scrollIntoView = function (this: Element) {
+      turnedTo.push(this)
+    }
+    await press('Next')
+    const [reached] = turnedTo
+    const note = view.find('.urgent').element
+    expect(reached?.compareDocumentPosition(note)).toBe(Node.DOCUMENT_POSITION_FOLLOWING)
+    expect(reached?.textContent).toContain(`Part ${partOf('new-signs') + 2} of`)
+  })
+
   it('asks on only where an answer calls for it', async () => {
     const { view, choose, press } = await steps(pageOf({}))
     for (let part = 0; part < partOf('changes'); part += 1) await press('Next')
