@@ -73,7 +73,8 @@ const reachingHeadline = (score: Extract<MeasureScore, { kind: 'reaching' }>) =>
   return score.lost > 0 ? `${counts}, ${score.lost} lost` : counts
 }
 const skillHeadline = (score: SkillScore) => {
-  if (score.index === null) return `${plural(score.left.trials, 'trial', 'trials')} left, ${score.right.trials} right`
+  if (score.index === null)
+    return `${plural(score.left.trials, 'trial', 'trials')} left, ${score.right.trials} right`
   const words = betterHand(score, score.index)
   const value = formatQuotient(score.index)
   return words === noClearDifference ? `${words} (${value})` : `${words}, ${value}`
