@@ -20,15 +20,17 @@ export interface Clinic extends ClinicAddress {
 // Seeding takes some 20 s on a quiet machine, several times that on a busy one.
 const patienceInMs = 240_000
 
-/** Starts the built product the way `npm start` does, with a data folder and ports of its own and the demo clinic. */
+/** Starts the built product the way `npm start` does (the same flags as start.sh), with a data folder and ports of its own and the demo clinic. */
 export const startClinic = async (): Promise<Clinic> => {
   const dataDir = mkdtempSync(join(tmpdir(), 'fanflower-e2e-'))
   const [port, inboxPort, databasePort] = [await findFreePort(), await findFreePort(), await findFreePort()]
-  const server = spawn(process.execPath, ['--enable-source-maps', 'dist-server/main.js'], {
+  const flags = ['--max-semi-space-size=8', '--enable-source-maps']
+  const server = spawn(process.execPath, [...flags, 'dist-server/main.js'], {
     env: {
       ...process.env,
       VITEST: '',
       NODE_ENV: 'production',
+      MALLOC_ARENA_MAX: '2',
       DATA_DIR: dataDir,
       PORT: String(port),
       INBOX_PORT: String(inboxPort),
