@@ -50,11 +50,15 @@ interface BegunRow {
   on: Day
   what: string
   informant: Informant | null
+  /** 1 while the answers are with a family or a teacher. */
+  asked: number
 }
 
-const begunWords = ({ kind, on, what, informant }: BegunRow) => {
+const begunWords = ({ kind, on, what, informant, asked }: BegunRow) => {
   const name = kind === 'measure' ? (measureKindLabels[what as MeasureKind] ?? 'Measure') : what
-  return `${name}${informant ? ` (${informantLabels[informant].toLowerCase()})` : ''}, begun for ${formatDay(on)}`
+  const who = informant ? ` (${informantLabels[informant].toLowerCase()})` : ''
+  const next = flag(asked) ? ': still with them, so wait or withdraw the questions' : ''
+  return `${name}${who}, begun for ${formatDay(on)}${next}`
 }
 
 /**
@@ -65,12 +69,12 @@ export const listUnfinished = async (access: ChildAccess, tx?: Tx): Promise<Unfi
   const scoped = (column: string) => within(access, column).sql
   const rows = await selectRows<BegunRow>(
     `SELECT 'questionnaire' AS kind, q.id, q.answeredOn AS \`on\`, JSON_VALUE(f.definition, '$.title') AS what,
-       q.informant
+       q.informant, (r.id IS NOT NULL) AS asked
      FROM questionnaire_responses q JOIN questionnaire_forms f ON f.id = q.formVersion
        LEFT JOIN answer_requests r ON r.id = q.requestId
      WHERE ${scoped('q.childId')} AND q.lockedAt IS NULL
        AND (r.id IS NULL OR (r.cancelledAt IS NULL AND r.expiresAt > :evidenceNow))
-     UNION ALL SELECT 'measure', m.id, m.measuredOn, m.kind, NULL
+     UNION ALL SELECT 'measure', m.id, m.measuredOn, m.kind, NULL, 0
      FROM measures m WHERE ${scoped('m.childId')} AND m.lockedAt IS NULL
      ORDER BY \`on\`, id`,
     { ...within(access, 'q.childId').parameters, evidenceNow: now() },
