@@ -493,7 +493,9 @@ describe('signing', () => {
       informant: 'guardian',
       requestId: request.id,
     })
-    expect((await act('sign', id, version)).body.fields.unfinished).toContain('wait or withdraw the questions')
+    expect((await act('sign', id, version)).body.fields.unfinished).toContain(
+      'wait or withdraw the questions',
+    )
     await database().query('UPDATE answer_requests SET cancelledAt = ? WHERE id = ?', [
       new Date(),
       request.id,
