@@ -176,7 +176,8 @@ export const redFlagRows: Record<RedFlagId, RedFlagRow> = {
     urgency: 'ask',
     action: 'Consider an assessment of coordination. Left-handedness is not the cause.',
     holdsBooking: false,
-    source: 'Darvik, Loras & Pedersen 2018, Front Psychol 9:1948: an association, not a cause',
+    source:
+      'Darvik, Loras & Pedersen 2018, Front Psychol 9:1948: 14.7 % left-handed with a coordination disorder, 8.1 % without; an association, not a cause',
   },
   'late-milestones': {
     id: 'late-milestones',

@@ -101,6 +101,11 @@ describe('flags of a history', () => {
     expect([at(71), at(72), at(null)]).toEqual([[], ['swaps-within-task'], []])
   })
 
+  // FACT-3: Front Psychol 2018, 9:1948 (title and abstract read; authors from memory).
+  it('of wide motor difficulty states the published shares as an association', () => {
+    expect(redFlagRows['wide-motor-difficulty'].source).toMatch(/14\.7 %.*8\.1 %.*association, not a cause/)
+  })
+
   it('of wide motor difficulty is for left-handers and those who have no settled hand', () => {
     const of = (writingHand: 'left' | 'right' | 'swaps' | null) =>
       raised({ wideMotorDifficulty: 'yes' }, { ageMonths: 100, writingHand })
