@@ -6,6 +6,7 @@ import { createMemoryHistory, createRouter } from 'vue-router'
 import { conclusionsApi } from '@/api/conclusions.ts'
 import ConclusionDraftPage from '@/components/conclusions/ConclusionDraftPage.vue'
 import ConclusionSignedPage from '@/components/conclusions/ConclusionSignedPage.vue'
+import EvidencePicker from '@/components/conclusions/EvidencePicker.vue'
 import {
   differingParts,
   evidenceGroups,
@@ -256,6 +257,17 @@ describe('evidence', () => {
       ['Questionnaires', ['answers']],
       ['Measures', ['reach', 'older']],
     ])
+  })
+
+  it('keeps everything seen on one day together; only what is older is folded away', () => {
+    const seen = ['2026-03-03', '2026-03-02', '2026-03-02', '2026-03-02', '2026-03-02', '2026-03-01']
+    const choices = seen.map((on, n) => ({ ...reached, id: `m${n}`, words: `Measure ${n}`, on }))
+    const picker = mount(EvidencePicker, {
+      props: { choices, modelValue: [] },
+      global: { plugins: [PrimeVue] },
+    })
+    expect(picker.findAll('details label').map((label) => label.text())).toEqual(['Measure 5'])
+    expect(picker.findAll('label').filter((label) => label.text().startsWith('Measure'))).toHaveLength(6)
   })
 
   it('is never chosen twice, and can be let go', () => {
