@@ -19,8 +19,7 @@ interface StoredResponse {
   formId: string
   formKey: string
   edition: number
-  /** Null but for one row of each form. */
-  definition: string | null
+  definition: string
   retiredAt: Date | null
   informant: Informant
   respondentName: string | null
@@ -62,12 +61,12 @@ export interface QuestionnaireRecord extends Omit<StoredResponse, Read> {
   leftOver: boolean
 }
 
-const toRecord = (stored: StoredResponse, definition: FormDefinition): QuestionnaireRecord => {
+const toRecord = (stored: StoredResponse): QuestionnaireRecord => {
   const {
     formId,
     formKey,
     edition,
-    definition: _text,
+    definition,
     retiredAt,
     answers,
     score,
@@ -75,7 +74,13 @@ const toRecord = (stored: StoredResponse, definition: FormDefinition): Questionn
     leftOver: over,
     ...rest
   } = stored
-  const form = { id: formId, key: formKey, edition, definition, retiredAt }
+  const form = {
+    id: formId,
+    key: formKey,
+    edition,
+    definition: fromJson<FormDefinition>(definition),
+    retiredAt,
+  }
   const given = fromJson<FormAnswers>(answers)
   return {
     ...rest,
@@ -99,8 +104,7 @@ const selectResponses = async (
 ) => {
   const scope = within(access, 'q.childId')
   const rows = await selectRows<StoredResponse>(
-    `SELECT q.id, q.childId, f.id AS formId, f.formKey, f.edition,
-       IF(ROW_NUMBER() OVER (PARTITION BY f.id ORDER BY q.id) = 1, f.definition, NULL) AS definition, f.retiredAt, q.informant,
+    `SELECT q.id, q.childId, f.id AS formId, f.formKey, f.edition, f.definition, f.retiredAt, q.informant,
        q.respondentName, q.answeredOn, q.answers, q.comment, q.cutOffSet, q.score, q.lockedAt,
        u.displayName AS lockedBy, q.requestId, q.replacesId, n.id AS replacedById,
        (n.lockedAt IS NOT NULL) AS superseded, ${leftOver('r')} AS leftOver, q.version
@@ -113,16 +117,7 @@ const selectResponses = async (
     { ...scope.parameters, ...parameters, requestNow: now() },
     tx,
   )
-  // A form is read once, however many answers there are to it.
-  const definitions = new Map(
-    rows.flatMap(({ formId, definition }) =>
-      definition === null ? [] : [[formId, fromJson<FormDefinition>(definition)] as const],
-    ),
-  )
-  return rows.flatMap((row) => {
-    const definition = definitions.get(row.formId)
-    return definition ? [toRecord(row, definition)] : []
-  })
+  return rows.map(toRecord)
 }
 
 /** Every response of a child, newest first. */
